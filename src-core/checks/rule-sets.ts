@@ -1,0 +1,2 @@
+export type RuleSetName = 'european' | 'united-states' | 'australian';
+export type RuleKey = string;

@@ -1,0 +1,128 @@
+/**
+ * What the program asks of its machine. The page knows nothing else of it: the same interface is
+ * carried over IPC in the desktop window and over HTTP by the loopback host.
+ *
+ * The page knows sites by id, never by path. Every method may reject with a `HostError`.
+ */
+
+/** One site in the list. `problem` is a sentence if its file cannot be read. */
+export interface SiteEntry {
+  readonly id: string;
+  readonly name: string;
+  readonly savedAt: string;
+  readonly bytes: number;
+  readonly bays: number | null;
+  readonly problem: string | null;
+}
+
+/** A site as it lies on disk. */
+export interface SiteOnDisk {
+  readonly id: string;
+  /** The site's file, whole, as text. */
+  readonly text: string;
+  /** Changes with every save; a save carries the revision it was read at. */
+  readonly revision: string;
+  readonly savedAt: string;
+  /** Edits journalled after the last save, if the program ended before it; null if none. */
+  readonly recovered: RecoveredEdits | null;
+}
+
+export interface RecoveredEdits {
+  /** The site's body as it was after the last edit that reached the journal. */
+  readonly body: string;
+  readonly editedAt: string;
+  readonly edits: readonly string[];
+  /** Journal lines that were damaged and could not be used. */
+  readonly damagedLines: number;
+}
+
+export interface SaveRequest {
+  readonly id: string;
+  /** The site as JSON text, as `writeSite` gives it; the host puts the envelope round it. */
+  readonly body: string;
+  /** Revision the site was read at; null for a new site. */
+  readonly baseRevision: string | null;
+}
+
+export interface Saved {
+  readonly revision: string;
+  readonly savedAt: string;
+}
+
+/** An earlier state of a site that was kept when it was replaced. */
+export interface Generation {
+  readonly id: string;
+  readonly savedAt: string;
+  readonly bytes: number;
+}
+
+export interface JournalRequest {
+  readonly id: string;
+  readonly baseRevision: string | null;
+  /** The whole body after the edit; the host keeps only what changed. */
+  readonly body: string;
+  /** What was done, in words. */
+  readonly edit: string;
+}
+
+export interface Preferences {
+  readonly theme: 'system' | 'light' | 'dark';
+  /** Text scale in per cent. */
+  readonly textScale: number;
+  readonly recentSiteIds: readonly string[];
+  readonly person: string;
+  readonly locale: string;
+}
+
+export interface About {
+  readonly version: string;
+  readonly carrier: 'window' | 'browser';
+  readonly sitesFolder: string;
+  /** Sentences the user must be told once, such as a preferences file that was set aside. */
+  readonly notices: readonly string[];
+}
+
+export interface Host {
+  about(): Promise<About>;
+  listSites(): Promise<readonly SiteEntry[]>;
+  readSite(id: string): Promise<SiteOnDisk>;
+  saveSite(request: SaveRequest): Promise<Saved>;
+  /** Puts the site aside in the removed folder; it can be brought back by hand. */
+  removeSite(id: string, baseRevision: string): Promise<void>;
+  /** Takes a site file's text from elsewhere under a new id if its own is taken; returns the id. */
+  importSite(text: string): Promise<string>;
+  /** Adds the demo site that ships with the program; returns its id. */
+  addDemoSite(): Promise<string>;
+  listGenerations(id: string): Promise<readonly Generation[]>;
+  readGeneration(id: string, generationId: string): Promise<string>;
+  appendJournal(request: JournalRequest): Promise<void>;
+  clearJournal(id: string): Promise<void>;
+  readPreferences(): Promise<Preferences>;
+  savePreferences(change: Partial<Preferences>): Promise<Preferences>;
+  /** Saves the page as PDF; null where the host has none and the page's own print is used. */
+  savePdf: ((name: string) => Promise<{ readonly saved: boolean }>) | null;
+  /** Lets the user choose the sites folder; null where the host has none. */
+  chooseSitesFolder: (() => Promise<About>) | null;
+}
+
+export const HOST_ERROR_CODES = [
+  'not-found',
+  'stale',
+  'unreadable',
+  'newer-version',
+  'too-large',
+  'disk-full',
+  'no-permission',
+  'folder-gone',
+  'timed-out',
+  'bad-request',
+  'refused',
+  'failed',
+] as const;
+export type HostErrorCode = (typeof HOST_ERROR_CODES)[number];
+
+/** What crosses the boundary when a call fails: a code and a sentence that says what, where and how to mend it. */
+export interface HostFailure {
+  readonly code: HostErrorCode;
+  readonly message: string;
+}
