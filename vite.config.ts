@@ -1,6 +1,6 @@
 import { fileURLToPath } from 'node:url';
 import { svelte } from '@sveltejs/vite-plugin-svelte';
-import { defineConfig } from 'vite';
+import { defineConfig } from 'vitest/config';
 
 const path = (relative: string) => fileURLToPath(new URL(relative, import.meta.url));
 
@@ -67,5 +67,37 @@ export default defineConfig({
       await builder.build(main);
       await builder.build(preload);
     },
+  },
+  test: {
+    // The projects share nothing of the page's own settings but the Svelte compiler.
+    projects: [
+      {
+        root: path('.'),
+        test: { name: 'core', include: ['test/core/**/*.test.ts', 'test/reference/**/*.test.ts', 'test/*.test.ts'], testTimeout: 60_000 },
+      },
+      {
+        root: path('.'),
+        test: {
+          name: 'main',
+          include: ['test/main/**/*.test.ts', 'test/storage/**/*.test.ts'],
+          testTimeout: 120_000,
+          server: { deps: { inline: ['electron-store'] } },
+        },
+        resolve: { alias: { electron: path('test/main/electron-stand-in.ts') } },
+      },
+      { root: path('.'), plugins: [svelte()], test: { name: 'renderer', include: ['test/renderer/**/*.test.ts'], testTimeout: 60_000 } },
+      {
+        root: path('.'),
+        test: {
+          name: 'end-to-end',
+          include: ['test/e2e/**/*.test.ts'],
+          globalSetup: [path('test/e2e/setup.ts')],
+          testTimeout: 120_000,
+          hookTimeout: 120_000,
+          // One browser at a time: the machine may have only two cores.
+          fileParallelism: false,
+        },
+      },
+    ],
   },
 });
