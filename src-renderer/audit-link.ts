@@ -1,0 +1,131 @@
+/**
+ * Carries the site to the audit worker and the findings back. Where no worker can be had the same
+ * work is done at once on the page's own thread.
+ */
+import { auditRun } from '../src-core/audit/audit';
+import type { RunAudit } from '../src-core/audit/types';
+import type { Id, Site } from '../src-core/site/site';
+import { writeSite } from '../src-core/site/write';
+import { runsTouched, sameButRuns, type FromWorker, type ToWorker } from './audit-protocol';
+
+/** The part of a `Worker` that is used. */
+export interface WorkerLike {
+  postMessage(message: ToWorker): void;
+  onmessage: ((event: MessageEvent<FromWorker>) => void) | null;
+  onerror: ((event: ErrorEvent) => void) | null;
+  terminate(): void;
+}
+
+export interface AuditListener {
+  /** Findings of one run of the newest site. */
+  audited(audit: RunAudit): void;
+  /** Every run of the newest site has been audited. */
+  done(): void;
+  /** The audit of a run itself failed: a fault of the program, told to the user, never a pass. */
+  trouble(runId: Id, message: string): void;
+}
+
+export class AuditLink {
+  #site: Site | null = null;
+  #version = 0;
+  #ask = 0;
+  #waiting = new Map<number, { site: Site; resolve: (body: string) => void }>();
+  /** Version in which each run's findings last became out of date. */
+  #touchedAt = new Map<Id, number>();
+  #worker: WorkerLike | null;
+
+  constructor(
+    makeWorker: (() => WorkerLike) | null,
+    private readonly today: () => string,
+    private readonly listener: AuditListener,
+  ) {
+    this.#worker = this.#start(makeWorker);
+  }
+
+  /** Makes this the site that is audited. Only what changed since the last one is sent and checked. */
+  update(site: Site): void {
+    const before = this.#site;
+    if (site === before) return;
+    this.#site = site;
+    this.#version += 1;
+    for (const runId of runsTouched(before, site)) this.#touchedAt.set(runId, this.#version);
+    if (this.#worker === null) {
+      this.#auditHere(before, site);
+      return;
+    }
+    const old = new Map(before?.runs.map((run) => [run.id, run]));
+    this.#worker.postMessage({
+      kind: 'change',
+      version: this.#version,
+      today: this.today(),
+      rest: before !== null && sameButRuns(before, site) ? null : { ...site, runs: [] },
+      order: site.runs.map((run) => run.id),
+      runs: site.runs.filter((run) => old.get(run.id) !== run),
+    });
+  }
+
+  /** The site as text, written off the page's thread where it is the one last sent. */
+  async write(site: Site): Promise<string> {
+    const worker = this.#worker;
+    if (worker === null || site !== this.#site) return writeSite(site);
+    const ask = ++this.#ask;
+    return new Promise((resolve) => {
+      this.#waiting.set(ask, { site, resolve });
+      worker.postMessage({ kind: 'write', ask });
+    });
+  }
+
+  close(): void {
+    this.#worker?.terminate();
+    this.#worker = null;
+  }
+
+  #start(makeWorker: (() => WorkerLike) | null): WorkerLike | null {
+    if (makeWorker === null) return null;
+    try {
+      const worker = makeWorker();
+      worker.onmessage = (event) => this.#take(event.data);
+      worker.onerror = () => this.#goOnHere();
+      return worker;
+    } catch {
+      // A page that may not start workers checks on its own thread instead; the findings are the same.
+      return null;
+    }
+  }
+
+  #take(message: FromWorker): void {
+    if (message.kind === 'written') {
+      this.#waiting.get(message.ask)?.resolve(message.body);
+      this.#waiting.delete(message.ask);
+    } else if (message.kind === 'done') {
+      if (message.version === this.#version) this.listener.done();
+    } else {
+      const runId = message.kind === 'audit' ? message.audit.runId : message.runId;
+      // Findings of a run that has been edited since are out of date; newer ones are on their way.
+      if (message.version < (this.#touchedAt.get(runId) ?? Infinity)) return;
+      if (message.kind === 'audit') this.listener.audited(message.audit);
+      else this.listener.trouble(runId, message.message);
+    }
+  }
+
+  /** The worker could not be loaded or broke down: take its work over. */
+  #goOnHere(): void {
+    this.close();
+    const site = this.#site;
+    if (site === null) return;
+    for (const asked of this.#waiting.values()) asked.resolve(writeSite(asked.site));
+    this.#waiting.clear();
+    this.#auditHere(null, site);
+  }
+
+  #auditHere(before: Site | null, site: Site): void {
+    for (const runId of runsTouched(before, site)) {
+      try {
+        this.listener.audited(auditRun(site, runId, this.today()));
+      } catch (error) {
+        this.listener.trouble(runId, error instanceof Error ? error.message : String(error));
+      }
+    }
+    this.listener.done();
+  }
+}

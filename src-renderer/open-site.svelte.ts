@@ -1,0 +1,374 @@
+/**
+ * The site being edited: its value and history, what is selected, its findings, and whether it is
+ * on disk. Every part of the page reads this and changes the site only through it.
+ */
+import { createContext } from 'svelte';
+import { SvelteMap } from 'svelte/reactivity';
+import type { BayAudit, FrameAudit, LevelAudit, RunAudit } from '../src-core/audit/types';
+import type { Host } from '../src-core/host';
+import { movePlacement } from '../src-core/site/edits';
+import type { Id, Site } from '../src-core/site/site';
+import { formatQuantity, type Reading } from '../src-core/units/format';
+import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
+import { VERDICT_WORDS } from '../src-core/words/verdict-words';
+import { AuditLink, type WorkerLike } from './audit-link';
+import { bayPlace, framePlace, levelPlace, nameOfPlace, placementPlace } from './places';
+import { Saving, type SavedState } from './saving.svelte';
+import { amend, record, redo, startHistory, undo, type UndoHistory } from './undo-history';
+
+export interface Selection {
+  readonly runId: Id | null;
+  readonly bayId: Id | null;
+  /** Null for the floor of the bay, or where nothing is chosen. */
+  readonly levelId: Id | null;
+  readonly placementIds: readonly Id[];
+}
+
+/** Where a unit load goes: x from the left upright's face, on a beam level or on the floor of a bay. */
+export type Target =
+  | { readonly levelId: Id; readonly atMm: number; readonly towardsFrontMm?: number }
+  | { readonly levelId: null; readonly bayId: Id; readonly atMm: number; readonly towardsFrontMm?: number };
+
+/** What the side panel is asked to show, and the field in it that is to be filled. */
+export interface Task {
+  readonly kind: string;
+  readonly id: Id;
+  readonly field: string | null;
+}
+
+export interface OpenSiteOptions {
+  readonly host: Host;
+  readonly id: string;
+  readonly site: Site;
+  readonly revision: string | null;
+  readonly savedAt: string | null;
+  readonly locale?: string;
+  /** Null where there are no workers: the audit then runs at once. */
+  readonly makeWorker?: (() => WorkerLike) | null;
+  /** ISO date of today. */
+  readonly today?: () => string;
+}
+
+const NOTHING: Selection = { runId: null, bayId: null, levelId: null, placementIds: [] };
+
+export class OpenSite {
+  readonly id: string;
+  readonly saving: Saving;
+  /** Findings by run id. A run that has just been made has none until the audit has seen it. */
+  readonly audits = new SvelteMap<Id, RunAudit>();
+  /** Runs whose audit broke down, with what it said. They have no findings and pass nothing. */
+  readonly auditTroubles = new SvelteMap<Id, string>();
+  /** True while findings of some run are older than the site. */
+  auditing = $state(false);
+  /** The unit load picked up by click or key that waits for its target. */
+  carried = $state<Id | null>(null);
+  task = $state.raw<Task | null>(null);
+  /** What the status region says. */
+  said = $state('');
+  viewUnits = $state<UnitSystem | null>(null);
+  locale = $state('en-GB');
+  /** Text typed into fields that could not be taken over yet, by field, so that it outlives the form. */
+  readonly drafts = new Map<string, string>();
+
+  #history = $state.raw<UndoHistory<Site>>() as UndoHistory<Site>;
+  /** A change that is shown and checked but not made yet, while something is dragged or carried. */
+  #trial = $state.raw<Site | null>(null);
+  #wanted = $state.raw<Selection>(NOTHING);
+  #link: AuditLink;
+  #lastMerge: { key: string; at: number } | null = null;
+  #toSay: ToSay | null = null;
+
+  /** The site as it is shown: with the trial move, where one is going on. */
+  site = $derived(this.#trial ?? this.#history.value);
+  /** What is selected and still exists. */
+  selection = $derived(existing(this.site, this.#wanted));
+  canUndo = $derived(this.#history.past.length > 0);
+  canRedo = $derived(this.#history.future.length > 0);
+  /** Name of the edit that undo would take back. */
+  undoName = $derived(this.#history.past.at(-1)?.name ?? null);
+  redoName = $derived(this.#history.future[0]?.name ?? null);
+  steps = $derived(this.#history.past.length);
+  saved = $derived.by((): SavedState => this.saving.stateOf(this.#history.value));
+  reading = $derived<Reading>({ units: this.viewUnits ?? this.site.units, locale: this.locale });
+  run = $derived(this.site.runs.find((run) => run.id === this.selection.runId) ?? null);
+  bay = $derived(this.run?.bays.find((bay) => bay.id === this.selection.bayId) ?? null);
+  level = $derived(this.bay?.levels.find((level) => level.id === this.selection.levelId) ?? null);
+  runAudit = $derived(this.audits.get(this.selection.runId ?? '') ?? null);
+  bayAudit = $derived<BayAudit | null>(this.runAudit?.bays.find((bay) => bay.bayId === this.selection.bayId) ?? null);
+  levelAudit = $derived<LevelAudit | null>(this.bayAudit?.levels.find((level) => level.levelId === this.selection.levelId) ?? null);
+
+  constructor(options: OpenSiteOptions) {
+    this.id = options.id;
+    this.#history = startHistory(options.site);
+    this.locale = options.locale ?? 'en-GB';
+    this.#link = new AuditLink(options.makeWorker ?? null, options.today ?? todayHere, {
+      audited: (audit) => this.#audited(audit),
+      trouble: (runId, message) => {
+        this.audits.delete(runId);
+        this.auditTroubles.set(runId, message);
+      },
+      done: () => {
+        this.auditing = false;
+      },
+    });
+    this.saving = new Saving({
+      host: options.host,
+      id: options.id,
+      revision: options.revision,
+      savedAt: options.savedAt,
+      onDisk: options.revision === null ? null : options.site,
+      write: (site) => this.#link.write(site),
+    });
+    this.#check();
+    const run = options.site.runs[0];
+    if (run) this.select({ runId: run.id });
+  }
+
+  // ------------------------------------------------------------ looking
+
+  /** Selects; what is named brings its run, bay and level along, and takes the rest back. */
+  select = (part: Partial<Selection>): void => {
+    this.#wanted = completed(this.site, { ...this.selection }, part);
+    if (this.carried !== null && part.placementIds && !part.placementIds.includes(this.carried)) this.putBack();
+  };
+
+  frameAudit = (frameId: Id): FrameAudit | null => {
+    for (const run of this.audits.values()) {
+      const found = run.frames.find((frame) => frame.frameId === frameId);
+      if (found) return found;
+    }
+    return null;
+  };
+
+  say = (text: string): void => {
+    // The same words twice are said twice only if the text differs.
+    this.said = text === this.said ? `${text}\u00a0` : text;
+  };
+
+  // ------------------------------------------------------------ changing
+
+  /**
+   * The one way in which the site changes. Edits with the same `merge` key within a second are one
+   * step of undo, for nudges and typing.
+   */
+  edit = (name: string, change: (site: Site) => Site, merge: string | null = null): void => {
+    this.dropTrial();
+    const before = this.#history.value;
+    const after = change(before);
+    if (after === before) return;
+    const now = Date.now();
+    const goesOn = merge !== null && this.#lastMerge?.key === merge && now - this.#lastMerge.at < 1000;
+    // The value on disk stays a step of its own, or undo could not come back to it.
+    this.#history = goesOn && before !== this.saving.onDisk ? amend(this.#history, after) : record(this.#history, name, after);
+    this.#lastMerge = merge === null ? null : { key: merge, at: now };
+    this.#changed(name);
+  };
+
+  undo = (): void => {
+    this.dropTrial();
+    const name = this.undoName;
+    if (name === null) return;
+    this.#history = undo(this.#history);
+    this.#lastMerge = null;
+    this.#changed(`Undo: ${name}`);
+    this.say(`Undone: ${name}.`);
+  };
+
+  redo = (): void => {
+    this.dropTrial();
+    const name = this.redoName;
+    if (name === null) return;
+    this.#history = redo(this.#history);
+    this.#lastMerge = null;
+    this.#changed(`Redo: ${name}`);
+    this.say(`Done again: ${name}.`);
+  };
+
+  // ------------------------------------------------------------ moving goods
+
+  /** The one command behind dragging, keys, clicks and the menu. Positions are whole millimetres. */
+  move = (placementId: Id, target: Target, merge: string | null = null): void => {
+    this.dropTrial();
+    const from = placementPlace(this.site, placementId);
+    if (from === null) return;
+    this.edit(`Move ${from.unitLoad.name}`, (site) => moved(site, placementId, target), merge);
+    if (this.carried === placementId) this.carried = null;
+    const to = placementPlace(this.site, placementId);
+    if (to === null) return;
+    this.select({ runId: to.run.id, bayId: to.bay.id, levelId: to.level?.id ?? null, placementIds: [placementId] });
+    const place = nameOfPlace(to.bay, to.level);
+    const text = `${to.unitLoad.name} moved to ${place}, ${formatQuantity(lengthOf(to.placement.atMm), this.reading)} from the left upright.`;
+    this.#sayWithVerdict({ runId: to.run.id, bayId: to.bay.id, levelId: to.level?.id ?? null, text });
+  };
+
+  /** Shows and checks a move without making it; `keepTrial` makes it, `dropTrial` takes it back. */
+  tryMove = (placementId: Id, target: Target): void => {
+    if (placementPlace(this.#history.value, placementId) === null) return;
+    this.#trial = moved(this.#history.value, placementId, target);
+    this.#check();
+  };
+
+  /** Makes the move that was tried, exactly as `move` would have. */
+  keepTrial = (placementId: Id): void => {
+    const there = this.#trial && placementPlace(this.#trial, placementId);
+    if (!there) return;
+    const { atMm, towardsFrontMm } = there.placement;
+    this.move(
+      placementId,
+      there.level ? { levelId: there.level.id, atMm, towardsFrontMm } : { levelId: null, bayId: there.bay.id, atMm, towardsFrontMm },
+    );
+  };
+
+  dropTrial = (): void => {
+    if (this.#trial === null) return;
+    this.#trial = null;
+    this.#check();
+  };
+
+  pickUp = (placementId: Id): void => {
+    const found = placementPlace(this.site, placementId);
+    if (found === null) return;
+    this.carried = placementId;
+    this.say(
+      `${found.unitLoad.name} picked up. Choose a place with the arrow keys or by clicking, Enter puts it down, Escape puts it back.`,
+    );
+  };
+
+  putBack = (): void => {
+    this.dropTrial();
+    if (this.carried === null) return;
+    const found = placementPlace(this.site, this.carried);
+    this.carried = null;
+    if (found) this.say(`${found.unitLoad.name} put back.`);
+  };
+
+  // ------------------------------------------------------------ forms
+
+  /** Opens the form that holds a field, named `kind:id:field` as findings name what is missing. */
+  openField = (field: string): void => {
+    const [kind = '', id = '', ...rest] = field.split(':');
+    const bay = bayPlace(this.site, id) ?? levelPlace(this.site, id) ?? placementPlace(this.site, id);
+    const frame = framePlace(this.site, id);
+    if (bay) this.select({ runId: bay.run.id, bayId: bay.bay.id });
+    if (levelPlace(this.site, id)) this.select({ levelId: id });
+    if (placementPlace(this.site, id)) this.select({ placementIds: [id] });
+    if (frame) this.select({ runId: frame.run.id });
+    this.task = { kind, id, field: rest.join(':') || null };
+  };
+
+  openTask = (kind: string, id: Id): void => {
+    this.task = { kind, id, field: null };
+  };
+
+  closeTask = (): void => {
+    this.task = null;
+  };
+
+  // ------------------------------------------------------------ disk
+
+  save = async (): Promise<boolean> => {
+    this.putBack();
+    const done = await this.saving.save(this.#history.value);
+    this.say(done ? 'All changes saved.' : `Not saved. ${this.saving.failure?.message ?? ''}`);
+    return done;
+  };
+
+  close = (): void => {
+    this.saving.close();
+    this.#link.close();
+  };
+
+  #changed(name: string): void {
+    this.#check();
+    this.saving.edited(this.#history.value, name);
+  }
+
+  #check(): void {
+    this.auditing = true;
+    const site = this.#trial ?? this.#history.value;
+    for (const runId of this.audits.keys()) if (!site.runs.some((run) => run.id === runId)) this.audits.delete(runId);
+    this.#link.update(site);
+  }
+
+  #audited(audit: RunAudit): void {
+    this.auditTroubles.delete(audit.runId);
+    this.audits.set(audit.runId, audit);
+    if (this.#toSay?.runId === audit.runId) this.#sayNow(this.#toSay);
+  }
+
+  /** Says what was done together with what it did to the level, as soon as that is known. */
+  #sayWithVerdict(toSay: ToSay): void {
+    if (this.auditing) this.#toSay = toSay;
+    else this.#sayNow(toSay);
+  }
+
+  #sayNow({ runId, bayId, levelId, text }: ToSay): void {
+    this.#toSay = null;
+    const bay = this.audits.get(runId)?.bays.find((one) => one.bayId === bayId);
+    const level = bay?.levels.find((one) => one.levelId === levelId);
+    const words = [text];
+    if (level) words.push(`Level: ${VERDICT_WORDS[level.verdict]}.`);
+    if (bay) words.push(`Bay: ${VERDICT_WORDS[bay.verdict]}.`);
+    this.say(words.join(' '));
+  }
+}
+
+interface ToSay {
+  readonly runId: Id;
+  readonly bayId: Id;
+  readonly levelId: Id | null;
+  readonly text: string;
+}
+
+export const [useOpenSite, setOpenSite, hasOpenSite] = createContext<OpenSite>();
+
+const moved = (site: Site, placementId: Id, target: Target): Site =>
+  movePlacement(site, placementId, { ...target, atMm: Math.round(target.atMm) });
+
+function todayHere(): string {
+  const now = new Date();
+  return `${now.getFullYear()}-${String(now.getMonth() + 1).padStart(2, '0')}-${String(now.getDate()).padStart(2, '0')}`;
+}
+
+/** The selection as far as it still stands in the site; where its bay is gone, the nearest that is left. */
+function existing(site: Site, wanted: Selection): Selection {
+  const run = site.runs.find((one) => one.id === wanted.runId) ?? site.runs[0];
+  if (run === undefined) return NOTHING;
+  const bay = run.bays.find((one) => one.id === wanted.bayId) ?? run.bays[0];
+  if (bay === undefined) return { ...NOTHING, runId: run.id };
+  const level = bay.levels.find((one) => one.id === wanted.levelId) ?? null;
+  const standing = new Set([...bay.levels.flatMap((one) => one.placements), ...bay.onFloor].map((one) => one.id));
+  const placementIds = wanted.placementIds.filter((id) => standing.has(id));
+  return { runId: run.id, bayId: bay.id, levelId: level?.id ?? null, placementIds };
+}
+
+function completed(site: Site, now: Selection, part: Partial<Selection>): Selection {
+  const named = part.placementIds?.[0];
+  const standing = named === undefined ? null : placementPlace(site, named);
+  if (standing) {
+    const placementIds = part.placementIds ?? [];
+    return { runId: standing.run.id, bayId: standing.bay.id, levelId: standing.level?.id ?? null, placementIds };
+  }
+  if (part.levelId) {
+    const there = levelPlace(site, part.levelId);
+    if (there) return { runId: there.run.id, bayId: there.bay.id, levelId: part.levelId, placementIds: [] };
+  }
+  if (part.bayId && part.bayId !== now.bayId) {
+    const there = bayPlace(site, part.bayId);
+    const levelId = part.levelId === null ? null : sameLevel(site, now, part.bayId);
+    if (there) return { runId: there.run.id, bayId: part.bayId, levelId, placementIds: [] };
+  }
+  if (part.runId && part.runId !== now.runId) {
+    const bay = site.runs.find((run) => run.id === part.runId)?.bays[0];
+    return { runId: part.runId, bayId: bay?.id ?? null, levelId: bay?.levels[0]?.id ?? null, placementIds: [] };
+  }
+  return { ...now, ...('levelId' in part ? { levelId: part.levelId ?? null } : {}), placementIds: part.placementIds ?? [] };
+}
+
+/** Walking from bay to bay stays on the level one was on. */
+function sameLevel(site: Site, now: Selection, bayId: Id): Id | null {
+  const from = levelPlace(site, now.levelId);
+  const bay = bayPlace(site, bayId)?.bay;
+  if (bay === undefined) return null;
+  return (bay.levels[from?.levelIndex ?? 0] ?? bay.levels.at(-1))?.id ?? null;
+}

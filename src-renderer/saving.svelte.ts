@@ -1,0 +1,140 @@
+/**
+ * Keeps the open site safe: every edit to the journal within two seconds, saves that carry the
+ * revision the site was read at, and the truth about which value is on disk.
+ */
+import type { Host, HostFailure } from '../src-core/host';
+import type { Site } from '../src-core/site/site';
+import { failureOf } from './host';
+
+export type SavedState = 'saved' | 'unsaved' | 'saving' | 'failed';
+
+/** Longest time an edit waits for its place in the journal, ms; the rest of the two seconds is for the disk. */
+const JOURNAL_AFTER = 500;
+/** Wait before a journal that could not be written is tried again, ms. */
+const JOURNAL_AGAIN = 5000;
+
+export interface SavingOptions {
+  readonly host: Host;
+  readonly id: string;
+  readonly revision: string | null;
+  readonly savedAt: string | null;
+  /** The value that lies on disk; null if what is open is not on disk yet. */
+  readonly onDisk: Site | null;
+  readonly write: (site: Site) => Promise<string>;
+}
+
+export class Saving {
+  /** The value that lies on disk, compared by identity. */
+  onDisk = $state.raw<Site | null>(null);
+  savedAt = $state.raw<string | null>(null);
+  busy = $state(false);
+  /** Why the last save failed; null after one that did not. */
+  failure = $state.raw<HostFailure | null>(null);
+  /** Why edits do not reach the journal at the moment; null while they do. */
+  journalFailure = $state.raw<HostFailure | null>(null);
+  revision: string | null;
+
+  readonly id: string;
+  #host: Host;
+  #write: (site: Site) => Promise<string>;
+  /** Saves and journal entries reach the host one after another, in order. */
+  #queue: Promise<unknown> = Promise.resolve();
+  #current: Site | null;
+  #unjournalled: string[] = [];
+  #timer: ReturnType<typeof setTimeout> | null = null;
+  #closed = false;
+
+  constructor(options: SavingOptions) {
+    this.#host = options.host;
+    this.#write = options.write;
+    this.id = options.id;
+    this.revision = options.revision;
+    this.savedAt = options.savedAt;
+    this.onDisk = options.onDisk;
+    this.#current = options.onDisk;
+  }
+
+  stateOf(site: Site): SavedState {
+    if (this.busy) return 'saving';
+    if (site === this.onDisk) return 'saved';
+    return this.failure === null ? 'unsaved' : 'failed';
+  }
+
+  /** Tells of an edit, an undo or a redo; the journal gets it soon. */
+  edited(site: Site, name: string): void {
+    this.#current = site;
+    this.#unjournalled.push(name);
+    this.#journalIn(JOURNAL_AFTER);
+  }
+
+  /** @returns whether the site is on disk now */
+  save = (site: Site): Promise<boolean> => {
+    this.#current = site;
+    return this.#inTurn(async () => {
+      this.busy = true;
+      try {
+        const body = await this.#write(site);
+        const saved = await this.#host.saveSite({ id: this.id, body, baseRevision: this.revision });
+        this.revision = saved.revision;
+        this.savedAt = saved.savedAt;
+        this.onDisk = site;
+        this.failure = null;
+        // The save cleared the journal; what was edited meanwhile has to go in again.
+        if (this.#current !== site) this.#journalIn(0);
+        else this.#unjournalled = [];
+        return true;
+      } catch (error) {
+        this.failure = failureOf(error);
+        return false;
+      } finally {
+        this.busy = false;
+      }
+    });
+  };
+
+  /** Resolves when every edit so far is in the journal or on disk, or could not be put there. */
+  settled = async (): Promise<void> => {
+    if (this.#unjournalled.length > 0) await this.#journal();
+    await this.#queue;
+  };
+
+  close(): void {
+    this.#closed = true;
+    if (this.#timer !== null) clearTimeout(this.#timer);
+  }
+
+  #journalIn(wait: number): void {
+    if (this.#timer !== null || this.#closed) return;
+    this.#timer = setTimeout(() => {
+      this.#timer = null;
+      void this.#journal();
+    }, wait);
+  }
+
+  #journal(): Promise<void> {
+    return this.#inTurn(async () => {
+      const site = this.#current;
+      if (site === null) return;
+      const names = this.#unjournalled;
+      this.#unjournalled = [];
+      try {
+        if (site === this.onDisk) await this.#host.clearJournal(this.id);
+        else {
+          const body = await this.#write(site);
+          await this.#host.appendJournal({ id: this.id, baseRevision: this.revision, body, edit: names.join('; ') });
+        }
+        this.journalFailure = null;
+      } catch (error) {
+        this.journalFailure = failureOf(error);
+        this.#unjournalled = [...names, ...this.#unjournalled];
+        this.#journalIn(JOURNAL_AGAIN);
+      }
+    });
+  }
+
+  #inTurn<T>(task: () => Promise<T>): Promise<T> {
+    const result = this.#queue.then(task);
+    this.#queue = result.catch(() => undefined);
+    return result;
+  }
+}
