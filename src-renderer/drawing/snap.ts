@@ -1,0 +1,61 @@
+/**
+ * Where a unit load catches as it is moved along a beam level. Lengths in mm; positions are those
+ * of its left edge from the left upright's face, as a placement keeps them.
+ */
+
+export interface Standing {
+  readonly at: number;
+  readonly width: number;
+}
+
+export interface Opening {
+  /** Free width between the uprights. */
+  readonly entry: number;
+  /** Gap asked for to uprights and neighbours. */
+  readonly gap: number;
+  /** Width of the unit load that is moved. */
+  readonly width: number;
+  /** The other unit loads of the level. */
+  readonly others: readonly Standing[];
+}
+
+export type Catch = 'left upright' | 'right upright' | 'neighbour' | 'middle of the beam' | 'step';
+
+export interface Place {
+  readonly at: number;
+  readonly by: Catch;
+}
+
+/** Free places keep to whole steps; finer ones are typed. */
+const STEP = 10;
+/** Two places nearer than this are one place, mm. */
+const SAME = 1;
+
+export const overlaps = (a: Standing, b: Standing): boolean => a.at < b.at + b.width - SAME && b.at < a.at + a.width - SAME;
+
+/** The places where the unit load keeps its gaps, from left to right; none overlaps another unit load. */
+export function catchingPlaces({ entry, gap, width, others }: Opening): readonly Place[] {
+  const wanted: Place[] = [
+    { at: gap, by: 'left upright' },
+    { at: entry - gap - width, by: 'right upright' },
+    { at: (entry - width) / 2, by: 'middle of the beam' },
+    ...others.flatMap((other): Place[] => [
+      { at: other.at - gap - width, by: 'neighbour' },
+      { at: other.at + other.width + gap, by: 'neighbour' },
+    ]),
+  ];
+  const free = wanted.filter(({ at }) => at >= 0 && at + width <= entry && !others.some((other) => overlaps({ at, width }, other)));
+  const ordered = free.toSorted((a, b) => a.at - b.at);
+  return ordered.filter((place, i) => i === 0 || place.at - (ordered[i - 1]?.at ?? -Infinity) > SAME);
+}
+
+/** The catching place within `reach` of `at`, else `at` on a whole step and kept between the uprights. */
+export function snap(at: number, opening: Opening, reach: number): Place {
+  let nearest: Place | null = null;
+  for (const place of catchingPlaces(opening)) {
+    if (Math.abs(place.at - at) <= reach && (!nearest || Math.abs(place.at - at) < Math.abs(nearest.at - at))) nearest = place;
+  }
+  if (nearest) return nearest;
+  const last = Math.max(0, opening.entry - opening.width);
+  return { at: Math.max(0, Math.min(last, Math.round(at / STEP) * STEP)), by: 'step' };
+}
