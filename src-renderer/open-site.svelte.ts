@@ -12,22 +12,13 @@ import { formatQuantity, type Reading } from '../src-core/units/format';
 import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
 import { VERDICT_WORDS } from '../src-core/words/verdict-words';
 import { AuditLink, type WorkerLike } from './audit-link';
-import { bayPlace, framePlace, levelPlace, nameOfPlace, placementPlace } from './places';
+import { bayPlace, framePlace, levelPlace, nameOfPlace, placementPlace, targetOf, type Target } from './places';
 import { Saving, type SavedState } from './saving.svelte';
+import { completed, existing, NOTHING, type Selection } from './selection';
 import { amend, record, redo, startHistory, undo, type UndoHistory } from './undo-history';
 
-export interface Selection {
-  readonly runId: Id | null;
-  readonly bayId: Id | null;
-  /** Null for the floor of the bay, or where nothing is chosen. */
-  readonly levelId: Id | null;
-  readonly placementIds: readonly Id[];
-}
-
-/** Where a unit load goes: x from the left upright's face, on a beam level or on the floor of a bay. */
-export type Target =
-  | { readonly levelId: Id; readonly atMm: number; readonly towardsFrontMm?: number }
-  | { readonly levelId: null; readonly bayId: Id; readonly atMm: number; readonly towardsFrontMm?: number };
+export type { Target } from './places';
+export type { Selection } from './selection';
 
 /** What the side panel is asked to show, and the field in it that is to be filled. */
 export interface Task {
@@ -49,8 +40,6 @@ export interface OpenSiteOptions {
   readonly today?: () => string;
 }
 
-const NOTHING: Selection = { runId: null, bayId: null, levelId: null, placementIds: [] };
-
 export class OpenSite {
   readonly id: string;
   readonly saving: Saving;
@@ -68,12 +57,14 @@ export class OpenSite {
   viewUnits = $state<UnitSystem | null>(null);
   locale = $state('en-GB');
   /** Text typed into fields that could not be taken over yet, by field, so that it outlives the form. */
-  readonly drafts = new Map<string, string>();
+  readonly drafts = new SvelteMap<string, string>();
 
   #history = $state.raw<UndoHistory<Site>>() as UndoHistory<Site>;
   /** A change that is shown and checked but not made yet, while something is dragged or carried. */
   #trial = $state.raw<Site | null>(null);
   #wanted = $state.raw<Selection>(NOTHING);
+  /** Where one was before, for going back. */
+  #trail = $state.raw<readonly Selection[]>([]);
   #link: AuditLink;
   #lastMerge: { key: string; at: number } | null = null;
   #toSay: ToSay | null = null;
@@ -83,6 +74,7 @@ export class OpenSite {
   /** What is selected and still exists. */
   selection = $derived(existing(this.site, this.#wanted));
   canUndo = $derived(this.#history.past.length > 0);
+  canGoBack = $derived(this.#trail.length > 0);
   canRedo = $derived(this.#history.future.length > 0);
   /** Name of the edit that undo would take back. */
   undoName = $derived(this.#history.past.at(-1)?.name ?? null);
@@ -128,7 +120,9 @@ export class OpenSite {
 
   /** Selects; what is named brings its run, bay and level along, and takes the rest back. */
   select = (part: Partial<Selection>): void => {
-    this.#wanted = completed(this.site, { ...this.selection }, part);
+    const before = this.selection;
+    this.#wanted = completed(this.site, before, part);
+    if (before.bayId !== null && this.selection.bayId !== before.bayId) this.#trail = [...this.#trail.slice(-99), before];
     if (this.carried !== null && part.placementIds && !part.placementIds.includes(this.carried)) this.putBack();
   };
 
@@ -138,6 +132,28 @@ export class OpenSite {
       if (found) return found;
     }
     return null;
+  };
+
+  /** Back to the bay one came from. */
+  goBack = (): void => {
+    const last = this.#trail.at(-1);
+    if (last === undefined) return;
+    this.#trail = this.#trail.slice(0, -1);
+    this.#wanted = last;
+    this.sayWhere();
+  };
+
+  switchUnits = (): void => {
+    this.viewUnits = this.reading.units === 'metric' ? 'us' : 'metric';
+    this.say(this.viewUnits === 'us' ? 'Shown in pounds and inches.' : 'Shown in kilograms and millimetres.');
+  };
+
+  sayWhere = (): void => {
+    const { run, bay, level } = this;
+    if (run === null || bay === null) return;
+    const audit = level === null ? this.bayAudit : this.levelAudit;
+    const verdict = audit === null ? '' : ` ${VERDICT_WORDS[audit.verdict].word}.`;
+    this.say(`${run.name}, ${nameOfPlace(bay, level)}.${verdict}`);
   };
 
   say = (text: string): void => {
@@ -211,12 +227,14 @@ export class OpenSite {
   /** Makes the move that was tried, exactly as `move` would have. */
   keepTrial = (placementId: Id): void => {
     const there = this.#trial && placementPlace(this.#trial, placementId);
-    if (!there) return;
-    const { atMm, towardsFrontMm } = there.placement;
-    this.move(
-      placementId,
-      there.level ? { levelId: there.level.id, atMm, towardsFrontMm } : { levelId: null, bayId: there.bay.id, atMm, towardsFrontMm },
-    );
+    if (there) this.move(placementId, targetOf(there));
+  };
+
+  /** Puts down what is carried where it was tried, or where it stood. */
+  putDown = (): void => {
+    if (this.carried === null) return;
+    if (this.#trial === null) this.putBack();
+    else this.keepTrial(this.carried);
   };
 
   dropTrial = (): void => {
@@ -293,7 +311,8 @@ export class OpenSite {
   #audited(audit: RunAudit): void {
     this.auditTroubles.delete(audit.runId);
     this.audits.set(audit.runId, audit);
-    if (this.#toSay?.runId === audit.runId) this.#sayNow(this.#toSay);
+    const toSay = this.#toSay;
+    if (toSay?.runId === audit.runId) this.#sayNow(toSay);
   }
 
   /** Says what was done together with what it did to the level, as soon as that is known. */
@@ -307,8 +326,8 @@ export class OpenSite {
     const bay = this.audits.get(runId)?.bays.find((one) => one.bayId === bayId);
     const level = bay?.levels.find((one) => one.levelId === levelId);
     const words = [text];
-    if (level) words.push(`Level: ${VERDICT_WORDS[level.verdict]}.`);
-    if (bay) words.push(`Bay: ${VERDICT_WORDS[bay.verdict]}.`);
+    if (level) words.push(`Level: ${VERDICT_WORDS[level.verdict].word.toLowerCase()}.`);
+    if (bay) words.push(`Bay: ${VERDICT_WORDS[bay.verdict].word.toLowerCase()}.`);
     this.say(words.join(' '));
   }
 }
@@ -328,47 +347,4 @@ const moved = (site: Site, placementId: Id, target: Target): Site =>
 function todayHere(): string {
   const now = new Date();
   return `${now.getFullYear()}-${String(now.getMonth() + 1).padStart(2, '0')}-${String(now.getDate()).padStart(2, '0')}`;
-}
-
-/** The selection as far as it still stands in the site; where its bay is gone, the nearest that is left. */
-function existing(site: Site, wanted: Selection): Selection {
-  const run = site.runs.find((one) => one.id === wanted.runId) ?? site.runs[0];
-  if (run === undefined) return NOTHING;
-  const bay = run.bays.find((one) => one.id === wanted.bayId) ?? run.bays[0];
-  if (bay === undefined) return { ...NOTHING, runId: run.id };
-  const level = bay.levels.find((one) => one.id === wanted.levelId) ?? null;
-  const standing = new Set([...bay.levels.flatMap((one) => one.placements), ...bay.onFloor].map((one) => one.id));
-  const placementIds = wanted.placementIds.filter((id) => standing.has(id));
-  return { runId: run.id, bayId: bay.id, levelId: level?.id ?? null, placementIds };
-}
-
-function completed(site: Site, now: Selection, part: Partial<Selection>): Selection {
-  const named = part.placementIds?.[0];
-  const standing = named === undefined ? null : placementPlace(site, named);
-  if (standing) {
-    const placementIds = part.placementIds ?? [];
-    return { runId: standing.run.id, bayId: standing.bay.id, levelId: standing.level?.id ?? null, placementIds };
-  }
-  if (part.levelId) {
-    const there = levelPlace(site, part.levelId);
-    if (there) return { runId: there.run.id, bayId: there.bay.id, levelId: part.levelId, placementIds: [] };
-  }
-  if (part.bayId && part.bayId !== now.bayId) {
-    const there = bayPlace(site, part.bayId);
-    const levelId = part.levelId === null ? null : sameLevel(site, now, part.bayId);
-    if (there) return { runId: there.run.id, bayId: part.bayId, levelId, placementIds: [] };
-  }
-  if (part.runId && part.runId !== now.runId) {
-    const bay = site.runs.find((run) => run.id === part.runId)?.bays[0];
-    return { runId: part.runId, bayId: bay?.id ?? null, levelId: bay?.levels[0]?.id ?? null, placementIds: [] };
-  }
-  return { ...now, ...('levelId' in part ? { levelId: part.levelId ?? null } : {}), placementIds: part.placementIds ?? [] };
-}
-
-/** Walking from bay to bay stays on the level one was on. */
-function sameLevel(site: Site, now: Selection, bayId: Id): Id | null {
-  const from = levelPlace(site, now.levelId);
-  const bay = bayPlace(site, bayId)?.bay;
-  if (bay === undefined) return null;
-  return (bay.levels[from?.levelIndex ?? 0] ?? bay.levels.at(-1))?.id ?? null;
 }

@@ -1,6 +1,11 @@
 /** Where things are in a site, as the page asks for it: null where the id is not there (any more). */
 import type { Bay, Frame, Id, Level, Placement, Run, Site, UnitLoad } from '../src-core/site/site';
 
+/** Where a unit load goes: x from the left upright's face, on a beam level or on the floor of a bay. */
+export type Target =
+  | { readonly levelId: Id; readonly atMm: number; readonly towardsFrontMm?: number }
+  | { readonly levelId: null; readonly bayId: Id; readonly atMm: number; readonly towardsFrontMm?: number };
+
 export interface BayPlace {
   readonly run: Run;
   readonly bay: Bay;
@@ -19,6 +24,12 @@ export interface PlacementPlace extends BayPlace {
   readonly level: Level | null;
   readonly placement: Placement;
   readonly unitLoad: UnitLoad;
+}
+
+/** The place a unit load stands at, as a target that can be changed a little. */
+export function targetOf(place: PlacementPlace): Target {
+  const { atMm, towardsFrontMm } = place.placement;
+  return place.level ? { levelId: place.level.id, atMm, towardsFrontMm } : { levelId: null, bayId: place.bay.id, atMm, towardsFrontMm };
 }
 
 export function bayPlace(site: Site, bayId: Id | null): BayPlace | null {

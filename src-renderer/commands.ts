@@ -1,0 +1,271 @@
+/**
+ * Every command as data: its name, its keys, when it is allowed, what it does. Keys, the menu and
+ * the command list all read this one table, so that none of them can say something else.
+ */
+import { changeBay, changeLevel, nudge } from './goods-moves';
+import { copyGoods, cutGoods, deleteGoods, duplicateGoods, mirrorGoods, pasteGoods, spaceEvenly } from './goods-edits';
+import { pressed, type KeyPress } from './keys';
+import type { OpenSite } from './open-site.svelte';
+import { allBays, framePlace } from './places';
+import { addBayAfter, addLevelOnTop, duplicateBayHere, duplicateLevelHere, removeBayHere, removeLevelHere } from './rack-edits';
+import type { Screen, Shell } from './shell.svelte';
+
+export interface Surroundings {
+  readonly shell: Shell;
+  readonly open: OpenSite;
+}
+
+export const GROUPS = ['Site', 'Edit', 'Goods', 'Rack', 'Go to', 'View', 'Help'] as const;
+
+export interface Command {
+  readonly id: string;
+  /** What it does, as it stands in the menu and the command list. */
+  readonly name: string | ((at: Surroundings) => string);
+  readonly group: (typeof GROUPS)[number];
+  readonly keys: readonly string[];
+  /** Keys without a modifier that act only while the drawing has the focus, so that typing is never mistaken. */
+  readonly inDrawing: boolean;
+  readonly when: (at: Surroundings) => boolean;
+  readonly run: (at: Surroundings) => void;
+}
+
+type Allowed = (at: Surroundings) => boolean;
+
+const always: Allowed = () => true;
+const onRack: Allowed = ({ shell }) => shell.screen === 'rack';
+const hasBay: Allowed = (at) => onRack(at) && at.open.bay !== null;
+const hasLevel: Allowed = (at) => hasBay(at) && at.open.level !== null;
+const carrying: Allowed = (at) => onRack(at) && at.open.carried !== null;
+const hasGoods: Allowed = (at) => onRack(at) && at.open.selection.placementIds.length > 0;
+const hasOne: Allowed = (at) => onRack(at) && at.open.selection.placementIds.length === 1;
+const movable: Allowed = (at) => hasGoods(at) || carrying(at);
+const free: Allowed = (at) => hasBay(at) && !movable(at);
+
+const command = (
+  id: string,
+  group: Command['group'],
+  name: Command['name'],
+  keys: readonly string[],
+  when: Allowed,
+  run: (at: Surroundings) => void,
+  inDrawing = false,
+): Command => ({ id, group, name, keys, when, run, inDrawing });
+
+const inDrawing = (...given: Parameters<typeof command>): Command => ({ ...command(...given), inDrawing: true });
+
+const screen = (id: Screen, name: string, keys: readonly string[] = []) =>
+  command(
+    `show-${id}`,
+    'Go to',
+    name,
+    keys,
+    ({ shell }) => shell.screen !== id,
+    ({ shell }) => shell.show(id),
+  );
+
+const NUDGES: readonly (readonly [prefix: string, mm: number])[] = [
+  ['', 10],
+  ['Shift+', 1],
+  ['Alt+', 100],
+];
+
+export const COMMANDS: readonly Command[] = [
+  // ------------------------------------------------------------ site
+  command('save', 'Site', 'Save', ['Mod+S'], always, ({ open }) => void open.save()),
+  screen('history', 'Earlier states'),
+  command('site-form', 'Site', 'Site name, units and place', [], always, ({ shell, open }) => {
+    shell.show('rules');
+    open.openTask('site', open.site.id);
+  }),
+  command('export', 'Site', 'Save a copy as a file…', [], always, ({ shell }) => void shell.exportFile()),
+  command('leave', 'Site', 'All sites', [], always, ({ shell }) => shell.leave()),
+
+  // ------------------------------------------------------------ edit
+  command(
+    'undo',
+    'Edit',
+    ({ open }) => (open.undoName === null ? 'Undo' : `Undo: ${open.undoName}`),
+    ['Mod+Z'],
+    ({ open }) => open.canUndo,
+    ({ open }) => open.undo(),
+  ),
+  command(
+    'redo',
+    'Edit',
+    ({ open }) => (open.redoName === null ? 'Redo' : `Redo: ${open.redoName}`),
+    ['Mod+Shift+Z', 'Mod+Y'],
+    ({ open }) => open.canRedo,
+    ({ open }) => open.redo(),
+  ),
+  command('copy', 'Edit', 'Copy goods', ['Mod+C'], hasGoods, ({ open }) => copyGoods(open)),
+  command('cut', 'Edit', 'Cut goods', ['Mod+X'], hasGoods, ({ open }) => cutGoods(open)),
+  command('paste', 'Edit', 'Paste goods on this level', ['Mod+V'], hasBay, ({ open }) => pasteGoods(open)),
+  command('duplicate', 'Edit', 'Duplicate goods', ['Mod+D'], hasGoods, ({ open }) => duplicateGoods(open)),
+  command('delete', 'Edit', 'Take goods off', ['Delete', 'Backspace'], hasGoods, ({ open }) => deleteGoods(open)),
+  command('select-all', 'Edit', 'Select all goods of this level', ['Mod+A'], hasBay, ({ open }) =>
+    open.select({ placementIds: (open.level?.placements ?? open.bay?.onFloor ?? []).map((one) => one.id) }),
+  ),
+
+  // ------------------------------------------------------------ goods
+  command('add-goods', 'Goods', 'Add goods…', ['Mod+G', 'Insert'], hasBay, ({ open }) => open.openTask('add-goods', open.bay?.id ?? '')),
+  inDrawing(
+    'pick-up',
+    'Goods',
+    'Pick up, to put down elsewhere',
+    ['Enter', 'Space'],
+    (at) => hasOne(at) && !carrying(at),
+    ({ open }) => open.pickUp(open.selection.placementIds[0] ?? ''),
+  ),
+  inDrawing('put-down', 'Goods', 'Put down here', ['Enter', 'Space'], carrying, ({ open }) => open.putDown()),
+  command('put-back', 'Goods', 'Put back', ['Escape'], carrying, ({ open }) => open.putBack()),
+  command('move-to', 'Goods', 'Move to…', ['Mod+M'], hasOne, ({ shell }) => shell.ask({ kind: 'move-to' })),
+  ...NUDGES.flatMap(([prefix, mm]) => [
+    inDrawing(`left-${mm}`, 'Goods', `Move left by ${mm} mm`, [`${prefix}ArrowLeft`], movable, ({ open }) => nudge(open, -mm)),
+    inDrawing(`right-${mm}`, 'Goods', `Move right by ${mm} mm`, [`${prefix}ArrowRight`], movable, ({ open }) => nudge(open, mm)),
+  ]),
+  inDrawing('goods-up', 'Goods', 'Move to the level above', ['ArrowUp'], movable, ({ open }) => changeLevel(open, 1)),
+  inDrawing('goods-down', 'Goods', 'Move to the level below', ['ArrowDown'], movable, ({ open }) => changeLevel(open, -1)),
+  inDrawing('goods-bay-left', 'Goods', 'Move to the bay on the left', ['Shift+PageUp'], movable, ({ open }) => changeBay(open, -1)),
+  inDrawing('goods-bay-right', 'Goods', 'Move to the bay on the right', ['Shift+PageDown'], movable, ({ open }) => changeBay(open, 1)),
+  inDrawing('mirror', 'Goods', 'Turn left for right', ['M'], hasGoods, ({ open }) => mirrorGoods(open)),
+  inDrawing('space-evenly', 'Goods', 'Space the level’s goods evenly', ['E'], hasLevel, ({ open }) => spaceEvenly(open)),
+  command(
+    'unselect',
+    'Goods',
+    'Select nothing',
+    ['Escape'],
+    (at) => hasGoods(at) && !carrying(at),
+    ({ open }) => open.select({ placementIds: [] }),
+  ),
+
+  // ------------------------------------------------------------ rack
+  command('new-run', 'Rack', 'New run of bays…', [], always, ({ shell }) => shell.ask({ kind: 'new-run' })),
+  command('add-bay', 'Rack', 'Add an empty bay to the right', [], hasBay, ({ open }) => addBayAfter(open)),
+  command('duplicate-bay', 'Rack', 'Duplicate this bay', ['Mod+Shift+D'], hasBay, ({ open }) => duplicateBayHere(open)),
+  command('remove-bay', 'Rack', 'Remove this bay', [], hasBay, ({ open }) => removeBayHere(open)),
+  command('add-level', 'Rack', 'Add a level on top', [], hasBay, ({ open }) => addLevelOnTop(open)),
+  command('duplicate-level', 'Rack', 'Duplicate this level on top', [], hasLevel, ({ open }) => duplicateLevelHere(open)),
+  command('remove-level', 'Rack', 'Remove this level', [], hasLevel, ({ open }) => removeLevelHere(open)),
+  command('fill-run', 'Rack', 'Give other bays this bay’s goods or levels…', [], hasBay, ({ shell }) => shell.ask({ kind: 'fill-run' })),
+  command('bay-form', 'Rack', 'Bay: clear entry and notice', [], hasBay, ({ open }) => open.openTask('bay', open.bay?.id ?? '')),
+  command('level-form', 'Rack', 'Level: height, beams, locks and deck', [], hasLevel, ({ open }) =>
+    open.openTask('level', open.level?.id ?? ''),
+  ),
+  command('left-frame', 'Rack', 'Frame left of this bay', [], hasBay, ({ open }) => openFrame(open, 0)),
+  command('right-frame', 'Rack', 'Frame right of this bay', [], hasBay, ({ open }) => openFrame(open, 1)),
+  command(
+    'run-form',
+    'Rack',
+    'Run: floor, neighbours behind',
+    [],
+    ({ open }) => open.run !== null,
+    ({ shell, open }) => {
+      shell.show('rack');
+      open.openTask('run', open.run?.id ?? '');
+    },
+  ),
+
+  // ------------------------------------------------------------ go to
+  command('find', 'Go to', 'Find a bay or goods by name…', ['Mod+F'], always, ({ shell }) => shell.ask({ kind: 'find' })),
+  command('next-bay', 'Go to', 'Next bay', ['PageDown'], hasBay, ({ open }) => walkBay(open, 1)),
+  command('previous-bay', 'Go to', 'Previous bay', ['PageUp'], hasBay, ({ open }) => walkBay(open, -1)),
+  inDrawing('bay-right', 'Go to', 'Bay to the right', ['ArrowRight'], free, ({ open }) => walkBay(open, 1)),
+  inDrawing('bay-left', 'Go to', 'Bay to the left', ['ArrowLeft'], free, ({ open }) => walkBay(open, -1)),
+  inDrawing('level-up', 'Go to', 'Level above', ['ArrowUp'], free, ({ open }) => walkLevel(open, 1)),
+  inDrawing('level-down', 'Go to', 'Level below', ['ArrowDown'], free, ({ open }) => walkLevel(open, -1)),
+  command(
+    'back',
+    'Go to',
+    'Back to where I was',
+    ['Mod+B'],
+    ({ open }) => open.canGoBack,
+    ({ open, shell }) => {
+      shell.show('rack');
+      open.goBack();
+    },
+  ),
+  screen('rack', 'Bay'),
+  screen('run', 'Run elevation with frame loads'),
+  screen('layout', 'Layout of runs and bays'),
+  screen('libraries', 'Libraries: goods, notices, ratings', ['Mod+L']),
+  screen('rules', 'Rules'),
+
+  // ------------------------------------------------------------ view
+  command(
+    'units',
+    'View',
+    ({ open }) => (open.reading.units === 'metric' ? 'Show pounds and inches' : 'Show kilograms and millimetres'),
+    ['Mod+U'],
+    always,
+    ({ open }) => open.switchUnits(),
+  ),
+  command('preferences', 'View', 'Light or dark, text size, numbers…', ['Mod+,'], always, ({ shell }) =>
+    shell.ask({ kind: 'preferences' }),
+  ),
+  command('commands', 'View', 'All commands', ['Mod+K'], always, ({ shell }) => shell.ask({ kind: 'commands' })),
+
+  // ------------------------------------------------------------ help
+  command('show-help', 'Help', 'Help, cautions and about', ['F1'], always, ({ shell }) => shell.show('help')),
+];
+
+function openFrame(open: OpenSite, side: 0 | 1): void {
+  const { run, bay } = open;
+  const frame = run && bay ? run.frames[run.bays.indexOf(bay) + side] : undefined;
+  if (frame && framePlace(open.site, frame.id)) open.openTask('frame', frame.id);
+}
+
+/** Walks through the bays of all runs. */
+function walkBay(open: OpenSite, by: 1 | -1): void {
+  const bays = allBays(open.site);
+  const here = bays.findIndex(({ bay }) => bay.id === open.selection.bayId);
+  const next = bays[here + by];
+  if (next === undefined) open.say(by > 0 ? 'This is the last bay of the site.' : 'This is the first bay of the site.');
+  else {
+    open.select({ runId: next.run.id, bayId: next.bay.id });
+    open.sayWhere();
+  }
+}
+
+function walkLevel(open: OpenSite, by: 1 | -1): void {
+  const levels = open.bay?.levels ?? [];
+  const here = levels.findIndex((level) => level.id === open.selection.levelId);
+  if (here + by < -1 || here + by >= levels.length) return;
+  open.select({ levelId: levels[here + by]?.id ?? null });
+  open.sayWhere();
+}
+
+/** The command that a key press asks for here; null where it means nothing. */
+export function commandFor(
+  event: KeyPress,
+  at: Surroundings,
+  focus: { inField: boolean; inDrawing: boolean },
+  mac: boolean,
+): Command | null {
+  for (const one of COMMANDS) {
+    const chord = one.keys.find((key) => pressed(event, key, mac));
+    if (chord === undefined || !one.when(at)) continue;
+    if (one.inDrawing && !focus.inDrawing) continue;
+    if (focus.inField && KEPT_BY_FIELDS.includes(chord)) continue;
+    return one;
+  }
+  return null;
+}
+
+/** Keys that belong to text while a field has the focus. */
+const KEPT_BY_FIELDS: readonly string[] = [
+  'Mod+Z',
+  'Mod+Shift+Z',
+  'Mod+Y',
+  'Mod+C',
+  'Mod+X',
+  'Mod+V',
+  'Mod+A',
+  'Delete',
+  'Backspace',
+  'Insert',
+  'Escape',
+  'PageUp',
+  'PageDown',
+];
+
+export const nameOf = (one: Command, at: Surroundings): string => (typeof one.name === 'string' ? one.name : one.name(at));

@@ -1,0 +1,253 @@
+/** The program round the open site: list of sites, which screen and dialog are up, preferences. */
+import { createContext } from 'svelte';
+import type { About, Generation, Host, HostFailure, Preferences, RecoveredEdits, SiteEntry } from '../src-core/host';
+import { newSite } from '../src-core/site/new-site';
+import type { Site } from '../src-core/site/site';
+import { writeSite } from '../src-core/site/write';
+import type { WorkerLike } from './audit-link';
+import { failureOf } from './host';
+import { newId } from './ids';
+import { OpenSite } from './open-site.svelte';
+import { readBody, readSiteFile, type FileReading } from './site-text';
+
+export type Screen = 'rack' | 'run' | 'layout' | 'libraries' | 'rules' | 'history' | 'help';
+
+export type Dialog =
+  | { readonly kind: 'commands' | 'find' | 'move-to' | 'new-run' | 'new-site' | 'preferences' | 'stale' | 'leave' | 'fill-run' }
+  | { readonly kind: 'recovered'; readonly recovered: RecoveredEdits; readonly site: Site | null; readonly problem: string | null }
+  | { readonly kind: 'remove-site'; readonly entry: SiteEntry }
+  | { readonly kind: 'problems'; readonly name: string; readonly problems: readonly string[] };
+
+export class Shell {
+  readonly host: Host;
+  open = $state.raw<OpenSite | null>(null);
+  screen = $state<Screen>('rack');
+  dialog = $state.raw<Dialog | null>(null);
+  sites = $state.raw<readonly SiteEntry[] | null>(null);
+  about = $state.raw<About | null>(null);
+  preferences = $state.raw<Preferences | null>(null);
+  /** What last went wrong outside an open site, said until it is put away. */
+  trouble = $state.raw<HostFailure | null>(null);
+  busy = $state(false);
+
+  #makeWorker: (() => WorkerLike) | null;
+  #today: (() => string) | undefined;
+
+  constructor(host: Host, makeWorker: (() => WorkerLike) | null, today?: () => string) {
+    this.host = host;
+    this.#makeWorker = makeWorker;
+    this.#today = today;
+  }
+
+  start = (): Promise<void> =>
+    this.#attempt(async () => {
+      this.preferences = await this.host.readPreferences();
+      this.about = await this.host.about();
+      this.sites = await this.host.listSites();
+    });
+
+  refresh = (): Promise<void> =>
+    this.#attempt(async () => {
+      this.sites = await this.host.listSites();
+    });
+
+  openSite = (id: string): Promise<void> =>
+    this.#attempt(async () => {
+      const onDisk = await this.host.readSite(id);
+      const reading = readSiteFile(onDisk.text);
+      if (!reading.ok) {
+        this.#showProblems(this.sites?.find((entry) => entry.id === id)?.name ?? id, reading);
+        return;
+      }
+      this.#take(reading.site, id, onDisk.revision, onDisk.savedAt);
+      if (onDisk.recovered !== null) {
+        const body = readBody(onDisk.recovered.body);
+        const problem = body.ok ? null : body.problems.join(' ');
+        this.dialog = { kind: 'recovered', recovered: onDisk.recovered, site: body.ok ? body.site : null, problem };
+      }
+      await this.#remember(id);
+    });
+
+  newSite = (name: string): Promise<void> =>
+    this.#attempt(async () => {
+      const site = newSite(newId(), name.trim());
+      const saved = await this.host.saveSite({ id: site.id, body: writeSite(site), baseRevision: null });
+      this.#take(site, site.id, saved.revision, saved.savedAt);
+      await this.#remember(site.id);
+    });
+
+  openDemo = (): Promise<void> =>
+    this.#attempt(async () => {
+      const id = await this.host.addDemoSite();
+      this.sites = await this.host.listSites();
+      await this.openSite(id);
+    });
+
+  importFile = (file: File): Promise<void> =>
+    this.#attempt(async () => {
+      const text = await file.text();
+      const reading = readSiteFile(text);
+      if (!reading.ok) {
+        this.#showProblems(file.name, reading);
+        return;
+      }
+      const id = await this.host.importSite(text);
+      this.sites = await this.host.listSites();
+      await this.openSite(id);
+    });
+
+  /** Puts a site aside. Its revision is read first, so that one that changed meanwhile is noticed. */
+  removeSite = (entry: SiteEntry): Promise<void> =>
+    this.#attempt(async () => {
+      const { revision } = await this.host.readSite(entry.id);
+      await this.host.removeSite(entry.id, revision);
+      this.sites = await this.host.listSites();
+    });
+
+  /** Back to the list of sites; asks first where something is not saved. */
+  leave = (): void => {
+    if (this.open === null) return;
+    if (this.open.saved === 'saved') void this.closeSite();
+    else this.dialog = { kind: 'leave' };
+  };
+
+  closeSite = async (): Promise<void> => {
+    const open = this.open;
+    this.dialog = null;
+    if (open === null) return;
+    await open.saving.settled();
+    open.close();
+    this.open = null;
+    this.screen = 'rack';
+    await this.refresh();
+  };
+
+  /** Leaves without the unsaved edits: they are taken out of the journal as well. */
+  discardAndClose = async (): Promise<void> => {
+    const open = this.open;
+    if (open === null) return;
+    await open.saving.settled();
+    await this.#attempt(() => this.host.clearJournal(open.id));
+    open.close();
+    this.open = null;
+    this.dialog = null;
+    this.screen = 'rack';
+    await this.refresh();
+  };
+
+  /** Reads the other program's state in place of ours. */
+  reopen = async (): Promise<void> => {
+    const open = this.open;
+    if (open === null) return;
+    await this.discardAndClose();
+    await this.openSite(open.id);
+  };
+
+  /** Our state over the other program's; theirs stays among the earlier states. */
+  saveOver = async (): Promise<void> => {
+    const open = this.open;
+    if (open === null) return;
+    await this.#attempt(async () => {
+      const { revision } = await this.host.readSite(open.id);
+      open.saving.revision = revision;
+      this.dialog = null;
+      await open.save();
+    });
+  };
+
+  saveCopy = (): Promise<void> =>
+    this.#attempt(async () => {
+      const open = this.open;
+      if (open === null) return;
+      const copy: Site = { ...open.site, id: newId(), name: `${open.site.name} (copy)` };
+      const saved = await this.host.saveSite({ id: copy.id, body: writeSite(copy), baseRevision: null });
+      await open.saving.settled();
+      await this.host.clearJournal(open.id);
+      this.dialog = null;
+      this.#take(copy, copy.id, saved.revision, saved.savedAt);
+    });
+
+  generations = (): Promise<readonly Generation[]> => (this.open === null ? Promise.resolve([]) : this.host.listGenerations(this.open.id));
+
+  readGeneration = async (generationId: string): Promise<FileReading> =>
+    readSiteFile(await this.host.readGeneration(this.open?.id ?? '', generationId));
+
+  /** Hands the site's file, as it lies on disk after saving, to the browser's own save dialog. */
+  exportFile = (): Promise<void> =>
+    this.#attempt(async () => {
+      const open = this.open;
+      if (open === null || (open.saved !== 'saved' && !(await open.save()))) return;
+      const { text } = await this.host.readSite(open.id);
+      const address = URL.createObjectURL(new Blob([text], { type: 'application/json' }));
+      const link = Object.assign(document.createElement('a'), { href: address, download: `${fileNameOf(open.site.name)}.tallybeam.json` });
+      link.click();
+      setTimeout(() => URL.revokeObjectURL(address), 10_000);
+    });
+
+  chooseFolder = (): Promise<void> =>
+    this.#attempt(async () => {
+      if (this.host.chooseSitesFolder === null) return;
+      this.about = await this.host.chooseSitesFolder();
+      this.sites = await this.host.listSites();
+    });
+
+  savePreferences = (change: Partial<Preferences>): Promise<void> =>
+    this.#attempt(async () => {
+      this.preferences = await this.host.savePreferences(change);
+      if (change.locale !== undefined && this.open !== null) this.open.locale = change.locale;
+    });
+
+  show = (screen: Screen): void => {
+    this.dialog = null;
+    this.screen = screen;
+  };
+
+  ask = (dialog: Dialog): void => {
+    this.dialog = dialog;
+  };
+
+  close = (): void => {
+    this.dialog = null;
+  };
+
+  #take(site: Site, id: string, revision: string, savedAt: string): void {
+    this.open?.close();
+    this.dialog = null;
+    this.screen = 'rack';
+    this.open = new OpenSite({
+      host: this.host,
+      id,
+      site,
+      revision,
+      savedAt,
+      locale: this.preferences?.locale ?? 'en-GB',
+      makeWorker: this.#makeWorker,
+      ...(this.#today === undefined ? {} : { today: this.#today }),
+    });
+  }
+
+  #showProblems(name: string, reading: Extract<FileReading, { ok: false }>): void {
+    this.dialog = { kind: 'problems', name, problems: reading.problems };
+  }
+
+  async #remember(id: string): Promise<void> {
+    const recent = [id, ...(this.preferences?.recentSiteIds ?? []).filter((one) => one !== id)].slice(0, 12);
+    this.preferences = await this.host.savePreferences({ recentSiteIds: recent });
+  }
+
+  async #attempt(task: () => Promise<void>): Promise<void> {
+    this.busy = true;
+    this.trouble = null;
+    try {
+      await task();
+    } catch (error) {
+      this.trouble = failureOf(error);
+    } finally {
+      this.busy = false;
+    }
+  }
+}
+
+const fileNameOf = (name: string): string => name.replace(/[^\p{L}\p{N}]+/gu, '-').replace(/^-|-$/g, '') || 'site';
+
+export const [useShell, setShell] = createContext<Shell>();
