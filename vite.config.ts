@@ -8,6 +8,7 @@ const path = (relative: string) => fileURLToPath(new URL(relative, import.meta.u
 export default defineConfig({
   root: path('src-renderer'),
   base: './',
+  cacheDir: path('node_modules/.vite'),
   publicDir: false,
   plugins: [svelte()],
   worker: { format: 'es' },
