@@ -1,0 +1,125 @@
+/**
+ * A bay as it is drawn: uprights, beams, and goods with their outline, each at its place in mm.
+ * x runs from the left upright's inner face to the right, y upwards from the floor.
+ */
+import type { Bay, Id, Level, Placement, Run, UnitLoad } from '../../src-core/site/site';
+import type { Libraries, Weighed } from './libraries';
+import { outlineOf, type Outline } from './outline';
+import { overlaps } from './snap';
+
+/** Sizes at which members are drawn whose type is not known, mm. */
+const DRAWN_UPRIGHT = 100;
+const DRAWN_BEAM = 110;
+/** Room drawn above the topmost beam where nothing taller stands there, mm. */
+const DRAWN_HEADROOM = 1000;
+
+export interface GoodsDrawn {
+  readonly placementId: Id;
+  readonly name: string;
+  readonly unitLoad: UnitLoad;
+  /** Left edge from the left upright's face. */
+  readonly at: number;
+  readonly mirrored: boolean;
+  readonly outline: Outline;
+  readonly weighed: Weighed;
+  readonly trouble: 'overlap' | 'off the end' | null;
+}
+
+export interface LevelDrawn {
+  /** Null for the floor. */
+  readonly levelId: Id | null;
+  /** 0 for the floor, 1 for the lowest beam level. */
+  readonly number: number;
+  /** Top of the beam above the floor. */
+  readonly height: number;
+  readonly beamHeight: number;
+  /** Free height above, up to the next beam's underside or the top of the drawing. */
+  readonly room: number;
+  readonly goods: readonly GoodsDrawn[];
+}
+
+export interface BayDrawn {
+  readonly bayId: Id;
+  readonly name: string;
+  readonly entry: number;
+  readonly leftUpright: Upright;
+  readonly rightUpright: Upright;
+  /** Top of everything drawn. */
+  readonly height: number;
+  /** The floor first, then the beam levels from the lowest up. */
+  readonly levels: readonly LevelDrawn[];
+}
+
+export interface Upright {
+  readonly frameId: Id;
+  readonly width: number;
+  readonly height: number;
+}
+
+function goodsDrawn(placements: readonly Placement[], entry: number, { unitLoads }: Libraries): readonly GoodsDrawn[] {
+  const standing = placements.map((placement) => {
+    const drawn = unitLoads.get(placement.unitLoadId);
+    return { placement, drawn, at: placement.atMm, width: drawn?.unitLoad.widthMm ?? 0 };
+  });
+  return standing.flatMap(({ placement, drawn, at, width }, i): GoodsDrawn[] => {
+    if (drawn === undefined) return [];
+    const { unitLoad, pallet, grossKg, pieces } = drawn;
+    const offTheEnd = at < 0 || at + width > entry;
+    const overlapping = standing.some((other, j) => i !== j && overlaps({ at, width }, other));
+    return [
+      {
+        placementId: placement.id,
+        name: unitLoad.name,
+        unitLoad,
+        at,
+        mirrored: placement.mirrored,
+        outline: outlineOf(unitLoad, pallet, placement.mirrored),
+        weighed: { grossKg, pieces },
+        trouble: overlapping ? 'overlap' : offTheEnd ? 'off the end' : null,
+      },
+    ];
+  });
+}
+
+const tallest = (goods: readonly GoodsDrawn[]): number => Math.max(0, ...goods.map((one) => one.outline.height));
+
+function upright(run: Run, index: number, { frameTypes }: Libraries): Upright {
+  const frame = run.frames[index];
+  if (frame === undefined) throw new RangeError(`run ${run.id} has no frame ${index}`);
+  const type = frameTypes.get(frame.typeId ?? '');
+  return { frameId: frame.id, width: type?.uprightWidthMm ?? DRAWN_UPRIGHT, height: frame.heightMm };
+}
+
+const beamHeight = (level: Level, { beamTypes }: Libraries): number => beamTypes.get(level.beamTypeId ?? '')?.heightMm ?? DRAWN_BEAM;
+
+/** The bay `run.bays[index]` as it is drawn. */
+export function bayDrawn(run: Run, bay: Bay, libraries: Libraries): BayDrawn {
+  const index = run.bays.indexOf(bay);
+  const leftUpright = upright(run, index, libraries);
+  const rightUpright = upright(run, index + 1, libraries);
+  const rows = [
+    { level: null, height: 0, beam: 0, goods: goodsDrawn(bay.onFloor, bay.clearEntryMm, libraries) },
+    ...bay.levels.map((level) => ({
+      level,
+      height: level.heightMm,
+      beam: beamHeight(level, libraries),
+      goods: goodsDrawn(level.placements, bay.clearEntryMm, libraries),
+    })),
+  ];
+  // Room for any of its goods on top, so that the drawing keeps its size while they are moved about.
+  const top = (rows.at(-1)?.height ?? 0) + Math.max(tallest(rows.flatMap((row) => row.goods)), DRAWN_HEADROOM);
+  const height = Math.max(top, leftUpright.height, rightUpright.height);
+  const levels = rows.map((row, i): LevelDrawn => {
+    const above = rows[i + 1];
+    const ceiling = above ? above.height - above.beam : height;
+    return {
+      levelId: row.level?.id ?? null,
+      number: i,
+      height: row.height,
+      beamHeight: row.beam,
+      room: Math.max(0, ceiling - row.height),
+      goods: row.goods,
+    };
+  });
+  return { bayId: bay.id, name: bay.name, entry: bay.clearEntryMm, leftUpright, rightUpright, height, levels };
+}

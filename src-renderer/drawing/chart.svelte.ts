@@ -1,0 +1,101 @@
+/**
+ * A chart.js chart on a canvas: made when the canvas appears, fed when its curves or the theme
+ * change, destroyed when it goes. The plot fills the canvas between two insets, so that pixels on it
+ * and on the drawing above are the same x.
+ */
+import {
+  Chart,
+  Filler,
+  LinearScale,
+  LineController,
+  LineElement,
+  PointElement,
+  type ChartConfiguration,
+  type ChartDataset,
+} from 'chart.js';
+import { untrack } from 'svelte';
+import type { Attachment } from 'svelte/attachments';
+import type { Point } from './outline';
+import { inksAt, type Inks } from './theme.svelte';
+
+Chart.register(LineController, LineElement, PointElement, LinearScale, Filler);
+
+export type CurveLook = 'front' | 'rear' | 'limit' | 'exceeded limit' | 'ghost';
+
+export interface Curve {
+  readonly look: CurveLook;
+  readonly points: readonly Point[];
+  /** Filled down to the zero line. */
+  readonly filled: boolean;
+}
+
+export interface Plot {
+  readonly curves: readonly Curve[];
+  readonly span: number;
+  readonly least: number;
+  readonly most: number;
+  /** Positive values drawn downwards, as a beam sags. */
+  readonly downwards: boolean;
+  /** Pixels left free at the left and right of the plot, the same for everything on the x axis. */
+  readonly inset: number;
+}
+
+/** Dash patterns tell the beams apart without colour. */
+const DASHES: Record<CurveLook, number[]> = { front: [], rear: [9, 4], limit: [3, 3], 'exceeded limit': [3, 3], ghost: [2, 4] };
+
+const LINE_WIDTH: Record<CurveLook, number> = { front: 1.75, rear: 1.75, limit: 1.25, 'exceeded limit': 1.5, ghost: 1 };
+
+function lineColour(look: CurveLook, inks: Inks): string {
+  if (look === 'limit' || look === 'ghost') return inks.soft;
+  return look === 'exceeded limit' ? inks.over : inks.load;
+}
+
+const datasetOf = (curve: Curve, inks: Inks): ChartDataset<'line', { x: number; y: number }[]> => ({
+  // chart.js keeps notes on the arrays it is given, so it gets its own.
+  data: curve.points.map(({ x, y }) => ({ x, y })),
+  borderColor: lineColour(curve.look, inks),
+  borderWidth: LINE_WIDTH[curve.look],
+  borderDash: DASHES[curve.look],
+  borderJoinStyle: 'round',
+  pointRadius: 0,
+  pointHitRadius: 0,
+  tension: 0,
+  fill: curve.filled ? 'origin' : false,
+  backgroundColor: inks.loadFill,
+});
+
+function configOf(plot: Plot, inks: Inks): ChartConfiguration<'line', { x: number; y: number }[]> {
+  return {
+    type: 'line',
+    data: { datasets: plot.curves.map((curve) => datasetOf(curve, inks)) },
+    options: {
+      animation: false,
+      parsing: false,
+      normalized: true,
+      responsive: true,
+      maintainAspectRatio: false,
+      events: [],
+      layout: { autoPadding: false, padding: { left: plot.inset, right: plot.inset, top: 0, bottom: 0 } },
+      plugins: { legend: { display: false }, tooltip: { enabled: false } },
+      scales: {
+        x: { type: 'linear', display: false, min: 0, max: plot.span },
+        y: { type: 'linear', display: false, min: plot.least, max: plot.most, reverse: plot.downwards },
+      },
+    },
+  };
+}
+
+/** `<canvas {@attach chartOf(() => plot)}>`; the function is read again whenever what it reads changes. */
+export function chartOf(plot: () => Plot): Attachment<HTMLCanvasElement> {
+  return (canvas) => {
+    const first = untrack(() => configOf(plot(), inksAt(canvas)));
+    const chart = new Chart(canvas, first);
+    $effect(() => {
+      const { data, options } = configOf(plot(), inksAt(canvas));
+      chart.data = data;
+      if (options) chart.options = options;
+      chart.update('none');
+    });
+    return () => chart.destroy();
+  };
+}

@@ -1,0 +1,194 @@
+/**
+ * The four diagrams of a level as they are drawn: which curves, which limits, the worst place, and
+ * what each says in words. Forces are shown as the masses that weigh them, as people state loads.
+ */
+import type { LevelEffects } from '../../src-core/audit/types';
+import { solveBeam, type BeamAnswer } from '../../src-core/statics/beam';
+import { curvesOf } from '../../src-core/statics/curves';
+import { massWeighing, quantity, weightOf, type Quantity } from '../../src-core/units/quantity';
+import type { Curve, Plot } from './chart.svelte';
+import type { Point } from './outline';
+
+/** Which beams are shown: the pair together, both apart, or one. */
+export type BeamView = 'pair' | 'both' | 'front' | 'rear';
+export type BeamName = 'pair' | 'front' | 'rear';
+export const DIAGRAMS = ['intensity', 'shear', 'bending', 'deflection'] as const;
+export type DiagramName = (typeof DIAGRAMS)[number];
+
+export interface BeamShown {
+  readonly beam: BeamName;
+  readonly answer: BeamAnswer;
+  /** Deflection of what is drawn over that of the answer: the pair's load is solved on one beam, and sags half as much on two. */
+  readonly sagFactor: number;
+}
+
+/** A greatest value and where it is; `from` and `to` differ on a plateau. */
+export interface Peak {
+  readonly beam: BeamName;
+  readonly value: number;
+  readonly from: number;
+  readonly to: number;
+}
+
+export interface Limit {
+  readonly kind: 'even load' | 'span limit';
+  readonly value: number;
+  readonly exceeded: boolean;
+}
+
+export interface Diagram {
+  readonly name: DiagramName;
+  readonly plot: Omit<Plot, 'inset'>;
+  readonly peaks: readonly Peak[];
+  readonly limits: readonly Limit[];
+  /** False where only the shape is known: deflection without the beam's EI. */
+  readonly measured: boolean;
+}
+
+/** What the notice's evenly spread load does to the drawn beam. */
+export interface EvenLoad {
+  readonly shear: number;
+  readonly bending: number;
+  readonly deflection: number;
+}
+
+/** Room left in a diagram beyond its greatest value, as a share of it, for the figure at the peak. */
+const HEADROOM = 0.32;
+const FOOTROOM = 0.06;
+
+/** Front and rear beam do the same work, within the rounding of the computation. */
+export function alike({ front, rear }: LevelEffects): boolean {
+  const same = (a: number, b: number) => Math.abs(a - b) <= 1e-9 * Math.max(Math.abs(a), Math.abs(b), 1e-9);
+  return (
+    same(front.resultant, rear.resultant) && same(front.reactionLeft, rear.reactionLeft) && same(front.sagging.moment, rear.sagging.moment)
+  );
+}
+
+export function beamsShown(effects: LevelEffects, view: BeamView): readonly BeamShown[] {
+  const front: BeamShown = { beam: 'front', answer: effects.front, sagFactor: 1 };
+  const rear: BeamShown = { beam: 'rear', answer: effects.rear, sagFactor: 1 };
+  if (view === 'both') return [front, rear];
+  if (view === 'front') return [front];
+  if (view === 'rear') return [rear];
+  return [{ beam: 'pair', answer: effects.whole, sagFactor: 1 / 2 }];
+}
+
+/** Value of one diagram at a point of a beam, in the unit in which it is shown. */
+const READ: Record<DiagramName, (point: ReturnType<typeof curvesOf>[number], sagFactor: number) => number> = {
+  intensity: (point) => massWeighing(point.intensity),
+  shear: (point) => massWeighing(point.shear),
+  bending: (point) => massWeighing(point.moment),
+  deflection: (point, sagFactor) => point.deflection * sagFactor,
+};
+
+const KIND = { intensity: 'lineMass', shear: 'mass', bending: 'massMoment', deflection: 'length' } as const;
+
+export const valueOf = (name: DiagramName, value: number): Quantity => quantity(KIND[name], value);
+
+export function curvePoints(shown: BeamShown, name: DiagramName): readonly Point[] {
+  return curvesOf(shown.answer).map((point) => ({ x: point.x, y: READ[name](point, shown.sagFactor) }));
+}
+
+function peakOf({ beam, answer, sagFactor }: BeamShown, name: DiagramName, points: readonly Point[]): Peak | null {
+  switch (name) {
+    case 'intensity': {
+      const top = points.reduce((most, point) => (point.y > most.y ? point : most), { x: 0, y: -Infinity });
+      return points.length > 0 ? { beam, value: top.y, from: top.x, to: top.x } : null;
+    }
+    case 'shear':
+      return { beam, value: massWeighing(answer.shear.force), from: answer.shear.at, to: answer.shear.at };
+    case 'bending': {
+      const { sagging, hogging } = answer;
+      const hogs = -hogging.moment > sagging.moment && hogging.at !== null;
+      if (hogs && hogging.at !== null) return { beam, value: massWeighing(hogging.moment), from: hogging.at, to: hogging.at };
+      return { beam, value: massWeighing(sagging.moment), from: sagging.from, to: sagging.to };
+    }
+    case 'deflection':
+      return { beam, value: answer.deflection.sag * sagFactor, from: answer.deflection.at, to: answer.deflection.at };
+  }
+}
+
+/** The rated mass evenly spread over the pair, on what is drawn: one beam carries half of it. */
+export function evenLoad(effects: LevelEffects, ratedKg: number, view: BeamView): EvenLoad {
+  const { span } = effects.front;
+  const beams = view === 'pair' ? 2 : 1;
+  const w = weightOf(ratedKg) / 2 / span;
+  const load = { lines: [{ from: 0, to: span, wFrom: w, wTo: w }], points: [] };
+  const one = solveBeam({ span, rigidity: effects.rigidity, left: effects.end, right: effects.end }, load);
+  return {
+    shear: massWeighing(one.reactionLeft) * beams,
+    bending: massWeighing(one.sagging.moment) * beams,
+    deflection: one.deflection.sag,
+  };
+}
+
+export interface DiagramWishes {
+  readonly effects: LevelEffects;
+  readonly view: BeamView;
+  /** Rating of the pair, kg; null = none. */
+  readonly ratedKg: number | null;
+  /** Deflection limit of the rule set, mm; null = not shown. */
+  readonly sagLimit: number | null;
+}
+
+function limitsOf(name: DiagramName, wishes: DiagramWishes, peaks: readonly Peak[]): readonly Limit[] {
+  const most = Math.max(0, ...peaks.map((peak) => Math.abs(peak.value)));
+  const limit = (kind: Limit['kind'], value: number): Limit => ({ kind, value, exceeded: most > value * (1 + 1e-12) });
+  const limits: Limit[] = [];
+  if (name !== 'intensity' && wishes.ratedKg !== null)
+    limits.push(limit('even load', evenLoad(wishes.effects, wishes.ratedKg, wishes.view)[name]));
+  if (name === 'deflection' && wishes.effects.rigidityKnown && wishes.sagLimit !== null) limits.push(limit('span limit', wishes.sagLimit));
+  return limits;
+}
+
+/** Where along the span a limit is drawn: shear is limited at the supports only. */
+function limitCurves(name: DiagramName, limit: Limit, span: number): readonly Curve[] {
+  const look = limit.exceeded ? 'exceeded limit' : 'limit';
+  const stretch = (from: number, to: number, y: number): Curve => ({
+    look,
+    filled: false,
+    points: [
+      { x: from, y },
+      { x: to, y },
+    ],
+  });
+  if (name !== 'shear') return [stretch(0, span, limit.value)];
+  const reach = span * 0.14;
+  return [stretch(0, reach, limit.value), stretch(span - reach, span, -limit.value)];
+}
+
+export function diagramOf(name: DiagramName, wishes: DiagramWishes): Diagram {
+  const { span } = wishes.effects.front;
+  const shown = beamsShown(wishes.effects, wishes.view);
+  const lines = shown.map((beam) => ({ beam, points: curvePoints(beam, name) }));
+  const peaks = lines.flatMap(({ beam, points }) => peakOf(beam, name, points) ?? []);
+  const limits = limitsOf(name, wishes, peaks);
+  const beamCurves = lines.map(({ beam, points }): Curve => ({
+    look: beam.beam === 'rear' ? 'rear' : 'front',
+    points,
+    filled: beam.beam !== 'rear' || lines.length === 1,
+  }));
+  const curves = [...limits.flatMap((limit) => limitCurves(name, limit, span)), ...beamCurves];
+  const values = [0, ...curves.flatMap((curve) => curve.points.map((point) => point.y))];
+  const [low, high] = [Math.min(...values), Math.max(...values)];
+  const extent = Math.max(high - low, 1e-9);
+  const twoSided = low < 0;
+  return {
+    name,
+    plot: {
+      curves,
+      span,
+      least: low - extent * (twoSided ? 0.16 : FOOTROOM),
+      most: high + extent * (twoSided ? 0.2 : HEADROOM),
+      downwards: name === 'deflection',
+    },
+    peaks,
+    limits,
+    measured: name !== 'deflection' || wishes.effects.rigidityKnown,
+  };
+}
+
+/** The peak that decides: the greatest in size. */
+export function worstPeak(diagram: Diagram): Peak | null {
+  return diagram.peaks.reduce<Peak | null>((worst, peak) => (!worst || Math.abs(peak.value) > Math.abs(worst.value) ? peak : worst), null);
+}

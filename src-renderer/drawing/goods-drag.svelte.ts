@@ -1,0 +1,114 @@
+/**
+ * Dragging goods in the bay's drawing. Every move of the pointer is tried on the open site, so that
+ * drawing and verdict show it; letting go keeps it, Escape or a lost pointer takes it back.
+ */
+import type { Id } from '../../src-core/site/site';
+import type { OpenSite, Target } from '../open-site.svelte';
+import type { BayDrawn } from './bay-model';
+import { dropAt, type Carrying, type Drop } from './drop';
+
+/** A press that moves less than this is a click, px. */
+const SLACK = 4;
+
+export interface DragSurface {
+  readonly element: HTMLElement;
+  /** The bay as it is drawn now, with what it would carry. */
+  readonly carrying: (placementId: Id) => Carrying | null;
+}
+
+interface Press {
+  readonly placementId: Id;
+  readonly pointerId: number;
+  readonly x: number;
+  readonly y: number;
+  /** Pointer right of the goods' left edge, px. */
+  readonly grab: number;
+}
+
+export const targetOfDrop = (bay: BayDrawn, { level, place }: Drop): Target =>
+  level.levelId === null ? { levelId: null, bayId: bay.bayId, atMm: place.at } : { levelId: level.levelId, atMm: place.at };
+
+export class GoodsDrag {
+  dragging = $state<Id | null>(null);
+  /** Where it stands while it is dragged or carried, for the tag beside it. */
+  drop = $state.raw<Drop | null>(null);
+  #press: Press | null = null;
+  #justDragged = false;
+
+  constructor(
+    private readonly open: OpenSite,
+    private readonly surface: () => DragSurface | null,
+  ) {}
+
+  press = (event: PointerEvent, placementId: Id): void => {
+    const surface = this.surface();
+    if (event.button !== 0 || surface === null || this.open.carried !== null) return;
+    const carrying = surface.carrying(placementId);
+    const goods = carrying?.bay.levels.flatMap((level) => level.goods).find((one) => one.placementId === placementId);
+    if (!carrying || !goods) return;
+    const { left, top } = surface.element.getBoundingClientRect();
+    const [x, y] = [event.clientX - left, event.clientY - top];
+    this.#press = { placementId, pointerId: event.pointerId, x, y, grab: x - carrying.scale.x(goods.at) };
+    this.#justDragged = false;
+  };
+
+  move = (event: PointerEvent): void => {
+    const surface = this.surface();
+    if (surface === null) return;
+    const { left, top } = surface.element.getBoundingClientRect();
+    const [x, y] = [event.clientX - left, event.clientY - top];
+    const press = this.#press;
+    if (press !== null && event.pointerId === press.pointerId) {
+      if (this.dragging === null && Math.hypot(x - press.x, y - press.y) < SLACK) return;
+      if (this.dragging === null) this.#begin(press, surface);
+      this.#try(press.placementId, surface, x - press.grab, y, event.altKey);
+    } else if (this.open.carried !== null) {
+      const carrying = surface.carrying(this.open.carried);
+      if (carrying) this.#try(this.open.carried, surface, x - (carrying.width * carrying.scale.rate) / 2, y, event.altKey);
+    }
+  };
+
+  release = (event: PointerEvent): void => {
+    if (this.#press?.pointerId !== event.pointerId) return;
+    const { dragging } = this;
+    this.#end();
+    if (dragging === null) return;
+    this.#justDragged = true;
+    this.open.keepTrial(dragging);
+  };
+
+  cancel = (): void => {
+    if (this.dragging === null) return;
+    this.#end();
+    this.open.dropTrial();
+  };
+
+  /** True for the click that ends a drag, which is no click of its own. */
+  swallowClick = (): boolean => {
+    const swallow = this.#justDragged;
+    this.#justDragged = false;
+    return swallow;
+  };
+
+  #begin(press: Press, surface: DragSurface): void {
+    this.dragging = press.placementId;
+    // The surface, not the goods: they may be drawn anew on another level while the pointer is down.
+    surface.element.setPointerCapture(press.pointerId);
+    this.open.select({ placementIds: [press.placementId] });
+  }
+
+  #end(): void {
+    this.#press = null;
+    this.dragging = null;
+    this.drop = null;
+  }
+
+  #try(placementId: Id, surface: DragSurface, px: number, py: number, freely: boolean): void {
+    const carrying = surface.carrying(placementId);
+    const drop = carrying && dropAt(carrying, px, py, freely);
+    if (!carrying || !drop) return;
+    const same = this.drop !== null && this.drop.level.levelId === drop.level.levelId && this.drop.place.at === drop.place.at;
+    this.drop = drop;
+    if (!same) this.open.tryMove(placementId, targetOfDrop(carrying.bay, drop));
+  }
+}

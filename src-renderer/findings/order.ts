@@ -1,0 +1,48 @@
+/** Findings in order of weight, and by where they belong. */
+import type { BayAudit, FrameAudit, LevelAudit, RunAudit } from '../../src-core/audit/types';
+import { compareVerdicts, type Finding } from '../../src-core/checks/finding';
+import { CHECK_WORDS } from '../../src-core/words/check-names';
+
+/** Worst first; of equal verdicts what counts before what only informs, then the most used. */
+export function byWeight(findings: readonly Finding[]): readonly Finding[] {
+  return findings.toSorted(
+    (a, b) => Number(b.counts) - Number(a.counts) || compareVerdicts(b.verdict, a.verdict) || (b.utilisation ?? -1) - (a.utilisation ?? -1),
+  );
+}
+
+/** Name of the finding: its check, and the member it was made on. */
+export function titleOf({ check, place }: Finding): string {
+  const where = [place.beam && `${place.beam} beam`, place.end && `${place.end} end`, place.post && `${place.post} post`].filter(
+    (part) => part !== undefined,
+  );
+  const name = CHECK_WORDS[check].name;
+  return where.length > 0 ? `${name}, ${where.join(', ')}` : name;
+}
+
+/** Tells findings of one audit apart, for keyed lists that keep what was opened open. */
+export function keyOf({ check, place }: Finding, index: number): string {
+  return [check, place.levelId, place.placementId, place.frameId, place.bayId, place.beam, place.end, place.post, index].join('|');
+}
+
+export interface FindingGroup {
+  readonly heading: string;
+  readonly findings: readonly Finding[];
+}
+
+export interface Audits {
+  readonly run: RunAudit | null;
+  readonly bay: BayAudit | null;
+  readonly level: LevelAudit | null;
+  readonly frames: readonly (FrameAudit | null)[];
+}
+
+/** What stands beside the drawing: the chosen level first, then its bay, its two frames, and the run. */
+export function groupsOf({ run, bay, level, frames }: Audits, levelName: string): readonly FindingGroup[] {
+  const groups = [
+    { heading: levelName, findings: level?.findings ?? [] },
+    { heading: 'This bay', findings: bay?.findings ?? [] },
+    { heading: 'Its frames', findings: frames.flatMap((frame) => frame?.findings ?? []) },
+    { heading: 'The run', findings: run?.findings ?? [] },
+  ];
+  return groups.filter((group) => group.findings.length > 0).map((group) => ({ ...group, findings: byWeight(group.findings) }));
+}

@@ -1,0 +1,54 @@
+import { expect, test } from 'vitest';
+import { peakIntensity, skylineOf, summed } from '../../src-renderer/drawing/skyline';
+import type { GoodsDrawn } from '../../src-renderer/drawing/bay-model';
+
+const line = (from: number, to: number, wFrom: number, wTo = wFrom) => ({ from, to, wFrom, wTo });
+const goods = (lines: readonly ReturnType<typeof line>[], change: Partial<GoodsDrawn> = {}) =>
+  ({
+    at: 100,
+    mirrored: false,
+    unitLoad: { widthMm: 800 },
+    weighed: { grossKg: 1, pieces: { lines, points: [{ at: 200, force: 300 }] } },
+    ...change,
+  }) as unknown as GoodsDrawn;
+const place = { x: (mm: number) => mm / 10, base: 50, rate: 10 };
+
+test('pieces that lie over one another add, and gaps stay gaps', () => {
+  expect(summed([line(0, 800, 1), line(200, 400, 2, 4), line(900, 1000, 1)])).toEqual([
+    line(0, 200, 1),
+    line(200, 400, 3, 5),
+    line(400, 800, 1),
+    line(900, 1000, 1),
+  ]);
+});
+
+test('the peak counts the pallet under the goods, and a point load as spread over 150 mm', () => {
+  expect(peakIntensity({ lines: [line(0, 800, 1), line(0, 800, 0, 3)], points: [] })).toBe(4);
+  expect(peakIntensity({ lines: [], points: [{ at: 0, force: 300 }] })).toBe(2);
+  expect(peakIntensity(null)).toBe(0);
+});
+
+test('one stretch under load is one polygon standing on the beam', () => {
+  const { areas, arrows } = skylineOf(goods([line(0, 400, 1), line(400, 800, 2)]), place);
+  expect(areas).toEqual([
+    [
+      { x: 10, y: 50 },
+      { x: 10, y: 40 },
+      { x: 50, y: 40 },
+      { x: 50, y: 30 },
+      { x: 90, y: 30 },
+      { x: 90, y: 50 },
+    ],
+  ]);
+  expect(arrows).toEqual([{ x: 30, height: 20 }]);
+});
+
+test('mirrored goods press the other way round', () => {
+  const { areas, arrows } = skylineOf(goods([line(0, 400, 1)], { mirrored: true }), place);
+  expect(areas[0]?.map((point) => point.x)).toEqual([90, 90, 50, 50]);
+  expect(arrows[0]?.x).toBe(70);
+});
+
+test('goods of unknown load have no skyline', () => {
+  expect(skylineOf(goods([], { weighed: { grossKg: null, pieces: null } }), place)).toEqual({ areas: [], arrows: [] });
+});
