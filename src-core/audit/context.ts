@@ -39,9 +39,8 @@ export interface GoodsWork {
   readonly pieces: BeamLoad | null;
   /** Centre of mass of goods and pallet in front of the unit load's own middle, mm. */
   readonly centreTowardsFrontMm: number;
+  /** What must be entered or mended before `grossKg` and `pieces` are known. */
   readonly missing: readonly Missing[];
-  /** Why the shape cannot be laid out, as a sentence; null where it can or only a mass is missing. */
-  readonly fault: string | null;
 }
 
 export interface StandingLoad {
@@ -68,6 +67,8 @@ export interface LevelWork {
   readonly goods: readonly StandingLoad[];
   /** Between the supports, mm; null where it needs a frame type that is not known. */
   readonly span: number | null;
+  /** From the left support to the left upright's face, mm; null where the span is. */
+  readonly offset: number | null;
   /** Between the middles of the two beams, mm; null where the frame type is not known. */
   readonly beamDistance: number | null;
   readonly totalKg: number | null;

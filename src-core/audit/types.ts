@@ -2,12 +2,15 @@
 import type { CheckName, Finding, Verdict } from '../checks/finding';
 import type { Id } from '../site/site';
 import type { BeamAnswer, BeamEnd } from '../statics/beam';
+import type { BeamLoad } from '../statics/load';
 
 /** What the goods of a level do to its beams. Forces in N on one beam; `whole` is the pair together. */
 export interface LevelEffects {
   readonly front: BeamAnswer;
   readonly rear: BeamAnswer;
   readonly whole: BeamAnswer;
+  /** The intensity diagrams under which they were found, x from the left support. */
+  readonly loads: { readonly front: BeamLoad; readonly rear: BeamLoad; readonly whole: BeamLoad };
   /** EI of one beam in N·mm². Where it is not known deflections are only relative. */
   readonly rigidity: number;
   readonly rigidityKnown: boolean;

@@ -11,7 +11,6 @@ export interface LevelRatingInput {
   readonly beamLength: number;
   readonly notice: {
     readonly id: string;
-    readonly name: string;
     /** From the lowest level up; the last entry serves all levels above it. */
     readonly levelKg: readonly (number | null)[];
     readonly from: string;
