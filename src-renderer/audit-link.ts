@@ -3,10 +3,12 @@
  * work is done at once on the page's own thread.
  */
 import { auditRun } from '../src-core/audit/audit';
+import { createAuditCache } from '../src-core/audit/cache';
 import type { RunAudit } from '../src-core/audit/types';
 import type { Id, Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
-import { runsTouched, sameButRuns, type FromWorker, type ToWorker } from './audit-protocol';
+import type { FromWorker, ToWorker } from './audit-protocol';
+import { applyAuditChange, changeOf, runsTouched } from './site-change';
 
 /** The part of a `Worker` that is used. */
 export interface WorkerLike {
@@ -25,13 +27,30 @@ export interface AuditListener {
   trouble(runId: Id, message: string): void;
 }
 
+interface Asked {
+  readonly site: Site;
+  readonly resolve: (body: string) => void;
+  readonly reject: (error: unknown) => void;
+}
+
+function writeHere({ site, resolve, reject }: Asked): void {
+  try {
+    resolve(writeSite(site));
+  } catch (error) {
+    reject(error);
+  }
+}
+
 export class AuditLink {
   #site: Site | null = null;
   #version = 0;
   #ask = 0;
-  #waiting = new Map<number, { site: Site; resolve: (body: string) => void }>();
+  #waiting = new Map<number, Asked>();
   /** Version in which each run's findings last became out of date. */
   #touchedAt = new Map<Id, number>();
+  /** Findings as the worker last sent them, which its next change builds on. */
+  #received = new Map<Id, RunAudit>();
+  #cache = createAuditCache();
   #worker: WorkerLike | null;
 
   constructor(
@@ -53,15 +72,7 @@ export class AuditLink {
       this.#auditHere(before, site);
       return;
     }
-    const old = new Map(before?.runs.map((run) => [run.id, run]));
-    this.#worker.postMessage({
-      kind: 'change',
-      version: this.#version,
-      today: this.today(),
-      rest: before !== null && sameButRuns(before, site) ? null : { ...site, runs: [] },
-      order: site.runs.map((run) => run.id),
-      runs: site.runs.filter((run) => old.get(run.id) !== run),
-    });
+    this.#worker.postMessage({ kind: 'change', version: this.#version, today: this.today(), change: changeOf(before, site) });
   }
 
   /** The site as text, written off the page's thread where it is the one last sent. */
@@ -69,8 +80,8 @@ export class AuditLink {
     const worker = this.#worker;
     if (worker === null || site !== this.#site) return writeSite(site);
     const ask = ++this.#ask;
-    return new Promise((resolve) => {
-      this.#waiting.set(ask, { site, resolve });
+    return new Promise((resolve, reject) => {
+      this.#waiting.set(ask, { site, resolve, reject });
       worker.postMessage({ kind: 'write', ask });
     });
   }
@@ -78,6 +89,8 @@ export class AuditLink {
   close(): void {
     this.#worker?.terminate();
     this.#worker = null;
+    for (const asked of this.#waiting.values()) writeHere(asked);
+    this.#waiting.clear();
   }
 
   #start(makeWorker: (() => WorkerLike) | null): WorkerLike | null {
@@ -95,17 +108,27 @@ export class AuditLink {
 
   #take(message: FromWorker): void {
     if (message.kind === 'written') {
-      this.#waiting.get(message.ask)?.resolve(message.body);
+      const asked = this.#waiting.get(message.ask);
       this.#waiting.delete(message.ask);
+      if (asked === undefined) return;
+      // A site that cannot be written says why here, where the save can tell it.
+      if (message.body === null) writeHere(asked);
+      else asked.resolve(message.body);
     } else if (message.kind === 'done') {
       if (message.version === this.#version) this.listener.done();
+    } else if (message.kind === 'trouble') {
+      if (this.#upToDate(message.runId, message.version)) this.listener.trouble(message.runId, message.message);
     } else {
-      const runId = message.kind === 'audit' ? message.audit.runId : message.runId;
-      // Findings of a run that has been edited since are out of date; newer ones are on their way.
-      if (message.version < (this.#touchedAt.get(runId) ?? Infinity)) return;
-      if (message.kind === 'audit') this.listener.audited(message.audit);
-      else this.listener.trouble(runId, message.message);
+      const { runId } = message.change.run;
+      const audit = applyAuditChange(this.#received.get(runId), message.change);
+      this.#received.set(runId, audit);
+      if (this.#upToDate(runId, message.version)) this.listener.audited(audit);
     }
+  }
+
+  /** Findings of a run that has been edited since are out of date; newer ones are on their way. */
+  #upToDate(runId: Id, version: number): boolean {
+    return version >= (this.#touchedAt.get(runId) ?? Infinity);
   }
 
   /** The worker could not be loaded or broke down: take its work over. */
@@ -113,15 +136,13 @@ export class AuditLink {
     this.close();
     const site = this.#site;
     if (site === null) return;
-    for (const asked of this.#waiting.values()) asked.resolve(writeSite(asked.site));
-    this.#waiting.clear();
     this.#auditHere(null, site);
   }
 
   #auditHere(before: Site | null, site: Site): void {
     for (const runId of runsTouched(before, site)) {
       try {
-        this.listener.audited(auditRun(site, runId, this.today()));
+        this.listener.audited(auditRun(site, runId, this.today(), this.#cache));
       } catch (error) {
         this.listener.trouble(runId, error instanceof Error ? error.message : String(error));
       }

@@ -1,9 +1,15 @@
 /** Runs the audit off the page's thread, one run at a time so that a newer edit never waits long. */
 import { auditRun } from '../src-core/audit/audit';
-import type { Id, Run, Site } from '../src-core/site/site';
+import { createAuditCache } from '../src-core/audit/cache';
+import type { RunAudit } from '../src-core/audit/types';
+import type { Id, Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
-import { runsTouched, type FromWorker, type ToWorker } from './audit-protocol';
+import type { FromWorker, ToWorker } from './audit-protocol';
+import { applyChange, auditChangeOf, runsTouched } from './site-change';
 
+const cache = createAuditCache();
+/** Findings as they were last sent. */
+const sent = new Map<Id, RunAudit>();
 let site: Site | null = null;
 let version = 0;
 let today = '';
@@ -13,17 +19,14 @@ let working = false;
 const post = (message: FromWorker) => self.postMessage(message);
 
 function take(message: Extract<ToWorker, { kind: 'change' }>): void {
-  const rest = message.rest ?? site;
-  if (rest === null) return;
-  const known = new Map<Id, Run>((site?.runs ?? []).map((run) => [run.id, run]));
-  for (const run of message.runs) known.set(run.id, run);
-  const next: Site = { ...rest, runs: message.order.flatMap((id) => known.get(id) ?? []) };
-  const touched = runsTouched(message.rest === null ? site : null, next);
+  const next = applyChange(site, message.change);
+  const touched = runsTouched(site, next);
   // What was just edited comes first; what was still waiting and exists stays in line.
-  due = [...touched, ...due.filter((id) => !touched.includes(id) && message.order.includes(id))];
+  due = [...touched, ...due.filter((id) => !touched.includes(id) && next.runs.some((run) => run.id === id))];
   site = next;
   version = message.version;
   today = message.today;
+  for (const id of sent.keys()) if (!next.runs.some((run) => run.id === id)) sent.delete(id);
   if (!working) void work();
 }
 
@@ -33,7 +36,9 @@ async function work(): Promise<void> {
     const runId = due.shift();
     if (runId === undefined || site === null) break;
     try {
-      post({ kind: 'audit', version, audit: auditRun(site, runId, today) });
+      const audit = auditRun(site, runId, today, cache);
+      post({ kind: 'audit', version, change: auditChangeOf(sent.get(runId), audit) });
+      sent.set(runId, audit);
     } catch (error) {
       post({ kind: 'trouble', version, runId, message: error instanceof Error ? error.message : String(error) });
     }
@@ -47,5 +52,13 @@ async function work(): Promise<void> {
 self.onmessage = (event: MessageEvent<ToWorker>) => {
   const message = event.data;
   if (message.kind === 'change') take(message);
-  else if (site !== null) post({ kind: 'written', ask: message.ask, body: writeSite(site) });
+  else post({ kind: 'written', ask: message.ask, body: written() });
 };
+
+function written(): string | null {
+  try {
+    return site === null ? null : writeSite(site);
+  } catch {
+    return null;
+  }
+}

@@ -1,0 +1,156 @@
+/** The site's libraries as the page lists them: where they stand, what they are called, a first entry of each. */
+import type { BeamType, Floor, FrameType, Id, LoadNotice, Pallet, Site, UnitLoad } from '../../src-core/site/site';
+import { newId } from '../ids';
+import type { OpenSite } from '../open-site.svelte';
+import type { LibraryKind } from '../used-by';
+import { NO_SOURCE } from './options';
+
+export interface LibraryItem {
+  unitLoad: UnitLoad;
+  pallet: Pallet;
+  notice: LoadNotice;
+  beamType: BeamType;
+  frameType: FrameType;
+  floor: Floor;
+}
+
+type ListKey = 'unitLoads' | 'pallets' | 'notices' | 'beamTypes' | 'frameTypes' | 'floors';
+
+export const LIBRARIES: readonly { readonly kind: LibraryKind; readonly list: ListKey; readonly title: string; readonly item: string }[] = [
+  { kind: 'unitLoad', list: 'unitLoads', title: 'Unit loads', item: 'unit load' },
+  { kind: 'pallet', list: 'pallets', title: 'Pallets', item: 'pallet' },
+  { kind: 'notice', list: 'notices', title: 'Load notices', item: 'load notice' },
+  { kind: 'beamType', list: 'beamTypes', title: 'Beam types', item: 'beam type' },
+  { kind: 'frameType', list: 'frameTypes', title: 'Frame types', item: 'frame type' },
+  { kind: 'floor', list: 'floors', title: 'Floors', item: 'floor' },
+];
+
+export const libraryOf = (kind: LibraryKind) => LIBRARIES.find((one) => one.kind === kind) ?? raise(kind);
+const raise = (kind: string): never => {
+  throw new RangeError(`there is no library of ${kind}`);
+};
+
+export const itemsOf = <K extends LibraryKind>(site: Site, kind: K): readonly LibraryItem[K][] =>
+  site[libraryOf(kind).list] as readonly unknown[] as readonly LibraryItem[K][];
+
+/** The site with its library of one kind in a new state. */
+export const withItems = <K extends LibraryKind>(site: Site, kind: K, items: readonly LibraryItem[K][]): Site => ({
+  ...site,
+  [libraryOf(kind).list]: items,
+});
+
+export function editItem<K extends LibraryKind>(site: Site, kind: K, id: Id, part: Partial<LibraryItem[K]>): Site {
+  return withItems(
+    site,
+    kind,
+    itemsOf(site, kind).map((item) => (item.id === id ? { ...item, ...part } : item)),
+  );
+}
+
+/** Every number not known, so that nothing passes before it has been entered. */
+const FRESH: { readonly [K in LibraryKind]: (id: Id, name: string) => LibraryItem[K] } = {
+  unitLoad: (id, name) => ({
+    id,
+    name,
+    widthMm: 1200,
+    depthMm: 800,
+    heightMm: 1200,
+    goodsKg: null,
+    massUncertaintyPercent: 0,
+    massSource: NO_SOURCE,
+    palletId: null,
+    palletFace: 'width',
+    bearing: { kind: 'even' },
+    across: { kind: 'even' },
+    contact: 'flat',
+    chocked: 'unknown',
+    leanMm: 0,
+  }),
+  pallet: (id, name) => ({
+    id,
+    name,
+    lengthMm: 1200,
+    widthMm: 800,
+    heightMm: 144,
+    massKg: null,
+    boards: 'along-length',
+    runners: [],
+    ratedKg: null,
+    source: NO_SOURCE,
+  }),
+  notice: (id, name) => ({
+    id,
+    name,
+    maker: '',
+    issued: '',
+    levelKg: [],
+    unitLoadsPerLevel: null,
+    unitLoadKg: null,
+    bayKg: null,
+    frameKg: null,
+    firstBeamMm: null,
+    greatestGapMm: null,
+    levels: null,
+    beamTypeId: null,
+    source: { ...NO_SOURCE, kind: 'notice' },
+  }),
+  beamType: (id, name) => ({
+    id,
+    name,
+    maker: '',
+    heightMm: 120,
+    widthMm: 50,
+    massKgPerM: null,
+    connectorsKg: null,
+    ratings: [],
+    endKg: null,
+    secondMomentMm4: null,
+    sectionModulusMm3: null,
+    elasticModulusNPerMm2: null,
+    designStressNPerMm2: null,
+    connectorNmmPerRad: null,
+    source: NO_SOURCE,
+  }),
+  frameType: (id, name) => ({
+    id,
+    name,
+    maker: '',
+    depthMm: 1100,
+    uprightWidthMm: 100,
+    massKg: null,
+    table: [],
+    plateWidthMm: null,
+    plateDepthMm: null,
+    source: NO_SOURCE,
+  }),
+  floor: (id, name) => ({
+    id,
+    name,
+    kind: 'unknown',
+    legN: null,
+    pressureNPerMm2: null,
+    legPairN: null,
+    areaNPerMm2: null,
+    thicknessMm: null,
+    source: NO_SOURCE,
+  }),
+};
+
+export const freshItem = <K extends LibraryKind>(kind: K, id: Id, name: string): LibraryItem[K] => FRESH[kind](id, name);
+
+/** A name that no other entry has: "Load notice 3". */
+export function freeName(site: Site, kind: LibraryKind): string {
+  const { item } = libraryOf(kind);
+  const taken = new Set(itemsOf(site, kind).map((one) => one.name));
+  const base = item.charAt(0).toUpperCase() + item.slice(1);
+  for (let number = taken.size + 1; ; number++) if (!taken.has(`${base} ${number}`)) return `${base} ${number}`;
+}
+
+/** Adds a fresh entry, and what else hangs on it, as one edit. */
+export function addLibraryItem(open: OpenSite, kind: LibraryKind, also: (site: Site, id: Id) => Site = (site) => site): Id {
+  const id = newId();
+  const name = freeName(open.site, kind);
+  open.edit(`Add ${name}`, (site) => also(withItems(site, kind, [...itemsOf(site, kind), freshItem(kind, id, name)]), id));
+  open.say(`${name} added.`);
+  return id;
+}

@@ -1,0 +1,86 @@
+/** Choices that forms offer, in the trade's words. */
+import type { BearingShape, Damage, Deck, DepthShape, Floor, Pallet, Rules, Slope, Source, UnitLoad } from '../../src-core/site/site';
+
+interface Option<V> {
+  readonly value: V;
+  readonly name: string;
+}
+
+export const SOURCE_KINDS: readonly Option<Source['kind']>[] = [
+  { value: 'notice', name: 'load notice' },
+  { value: 'maker', name: 'maker or supplier' },
+  { value: 'drawing', name: 'drawing' },
+  { value: 'engineer', name: 'engineer' },
+  { value: 'weighed', name: 'weighed' },
+  { value: 'measured', name: 'measured' },
+  { value: 'declared', name: 'declared by the sender' },
+  { value: 'wms', name: 'warehouse system' },
+  { value: 'estimated', name: 'estimated' },
+  { value: 'unknown', name: 'not known' },
+];
+
+export const BEARING_KINDS: readonly Option<BearingShape['kind']>[] = [
+  { value: 'even', name: 'even over its width' },
+  { value: 'stepped', name: 'stepped, in columns' },
+  { value: 'sloped', name: 'sloped' },
+  { value: 'profile', name: 'profile of the pile' },
+  { value: 'bearers', name: 'on bearers' },
+  { value: 'feet', name: 'on feet' },
+];
+
+export const SLOPE_WAYS: readonly Option<Slope['by']>[] = [
+  { value: 'intensities', name: 'left and right intensity' },
+  { value: 'heights', name: 'left and right height' },
+  { value: 'ratio', name: 'right over left' },
+  { value: 'end-and-slope', name: 'one end and its change' },
+];
+
+export const DEPTH_KINDS: readonly Option<DepthShape['kind']>[] = [
+  { value: 'even', name: 'even over its depth' },
+  { value: 'stepped', name: 'stepped, front to rear' },
+  { value: 'sloped', name: 'sloped, front to rear' },
+  { value: 'centre', name: 'centre of mass stated' },
+];
+
+export const CONTACTS: readonly Option<UnitLoad['contact']>[] = [
+  { value: 'flat', name: 'flat base or pallet' },
+  { value: 'feet', name: 'small feet' },
+  { value: 'wheels', name: 'wheels' },
+  { value: 'rims', name: 'rims, such as standing drums' },
+  { value: 'lying-round', name: 'round goods lying' },
+];
+
+export const PALLET_BOARDS: readonly Option<Pallet['boards']>[] = [
+  { value: 'along-length', name: 'along the longer side' },
+  { value: 'along-width', name: 'along the shorter side' },
+  { value: 'full', name: 'closed underside' },
+  { value: 'none', name: 'feet only' },
+];
+
+export const DECK_KINDS: readonly Option<Deck['kind']>[] = [
+  { value: 'none', name: 'none: goods stand on the beams' },
+  { value: 'support-bars', name: 'pallet support bars' },
+  { value: 'mesh', name: 'mesh deck' },
+  { value: 'panels', name: 'shelf panels' },
+];
+
+export const FLOOR_KINDS: readonly Option<Floor['kind']>[] = [
+  { value: 'ground-slab', name: 'slab on the ground' },
+  { value: 'suspended', name: 'suspended floor' },
+  { value: 'unknown', name: 'not known' },
+];
+
+export const DAMAGE_MEMBERS: readonly Option<Damage['member']>[] = [
+  { value: 'upright-front', name: 'front upright' },
+  { value: 'upright-rear', name: 'rear upright' },
+  { value: 'bracing', name: 'bracing' },
+  { value: 'base-plate', name: 'base plate' },
+];
+
+export const RULE_SETS: readonly Option<Rules['set']>[] = [
+  { value: 'european', name: 'European' },
+  { value: 'united-states', name: 'United States' },
+  { value: 'australian', name: 'Australian' },
+];
+
+export const NO_SOURCE: Source = { kind: 'unknown', detail: '', person: '', date: '' };

@@ -1,0 +1,107 @@
+/**
+ * What differs between two states of a site or of its findings, by identity, so that only that much
+ * crosses to the audit worker and back. What did not change keeps its identity on the other side,
+ * which is what the audit's memory goes by.
+ */
+import type { BayAudit, FrameAudit, RunAudit } from '../src-core/audit/types';
+import type { Bay, Frame, Id, Run, Site } from '../src-core/site/site';
+
+/** A list by id: its order, and the entries that are new or changed. */
+interface ListChange<T> {
+  readonly order: readonly Id[];
+  readonly changed: readonly T[];
+}
+
+interface RunChange {
+  /** The run without its bays and frames. */
+  readonly run: Run;
+  readonly bays: ListChange<Bay>;
+  readonly frames: ListChange<Frame>;
+}
+
+export interface SiteChange {
+  /** Every part of the site but its runs that is new or changed. */
+  readonly rest: Partial<Site>;
+  readonly order: readonly Id[];
+  readonly runs: readonly RunChange[];
+}
+
+function listChange<T>(before: readonly T[], after: readonly T[], idOf: (one: T) => Id): ListChange<T> {
+  const known = new Set<T>(before);
+  return { order: after.map(idOf), changed: after.filter((one) => !known.has(one)) };
+}
+
+function applyList<T>(before: readonly T[], { order, changed }: ListChange<T>, idOf: (one: T) => Id): readonly T[] {
+  const byId = new Map([...before, ...changed].map((one) => [idOf(one), one]));
+  return order.flatMap((id) => byId.get(id) ?? []);
+}
+
+const idOf = (one: { readonly id: Id }): Id => one.id;
+
+export function changeOf(before: Site | null, after: Site): SiteChange {
+  const rest: Record<string, unknown> = {};
+  for (const key of Object.keys(after) as (keyof Site)[]) if (key !== 'runs' && after[key] !== before?.[key]) rest[key] = after[key];
+  const old = new Map(before?.runs.map((run) => [run.id, run]));
+  const changed = after.runs.filter((run) => old.get(run.id) !== run);
+  return {
+    rest,
+    order: after.runs.map(idOf),
+    runs: changed.map((run) => {
+      const was = old.get(run.id);
+      return {
+        run: { ...run, bays: [], frames: [] },
+        bays: listChange(was?.bays ?? [], run.bays, idOf),
+        frames: listChange(was?.frames ?? [], run.frames, idOf),
+      };
+    }),
+  };
+}
+
+/** @param before the state that the change was made from; null for the first */
+export function applyChange(before: Site | null, { rest, order, runs }: SiteChange): Site {
+  const byId = new Map(before?.runs.map((run) => [run.id, run]));
+  for (const { run, bays, frames } of runs) {
+    const was = byId.get(run.id);
+    byId.set(run.id, { ...run, bays: applyList(was?.bays ?? [], bays, idOf), frames: applyList(was?.frames ?? [], frames, idOf) });
+  }
+  return { ...before, ...rest, runs: order.flatMap((id) => byId.get(id) ?? []) } as Site;
+}
+
+export interface AuditChange {
+  /** The run's audit without its bays and frames. */
+  readonly run: RunAudit;
+  readonly bays: ListChange<BayAudit>;
+  readonly frames: ListChange<FrameAudit>;
+}
+
+const bayIdOf = (bay: BayAudit): Id => bay.bayId;
+const frameIdOf = (frame: FrameAudit): Id => frame.frameId;
+
+export const auditChangeOf = (before: RunAudit | undefined, after: RunAudit): AuditChange => ({
+  run: { ...after, bays: [], frames: [] },
+  bays: listChange(before?.bays ?? [], after.bays, bayIdOf),
+  frames: listChange(before?.frames ?? [], after.frames, frameIdOf),
+});
+
+export const applyAuditChange = (before: RunAudit | undefined, { run, bays, frames }: AuditChange): RunAudit => ({
+  ...run,
+  bays: applyList(before?.bays ?? [], bays, bayIdOf),
+  frames: applyList(before?.frames ?? [], frames, frameIdOf),
+});
+
+/** Ids of the runs whose findings an edit may change: themselves and whoever stands back to back with them. */
+export function runsTouched(before: Site | null, after: Site): readonly Id[] {
+  const all = after.runs.map(idOf);
+  const { rest, runs } = changeOf(before, after);
+  if (before === null || Object.keys(rest).length > 0) return all;
+  const changed = new Set(runs.map(({ run }) => run.id));
+  for (const run of before.runs) if (!all.includes(run.id)) changed.add(run.id);
+  const touched = new Set(changed);
+  for (const run of after.runs) {
+    const other = run.backToBack?.runId;
+    if (other === undefined) continue;
+    if (changed.has(other)) touched.add(run.id);
+    if (changed.has(run.id)) touched.add(other);
+  }
+  return all.filter((id) => touched.has(id));
+}
