@@ -2,10 +2,11 @@
  * A bay as it is drawn: uprights, beams, and goods with their outline, each at its place in mm.
  * x runs from the left upright's inner face to the right, y upwards from the floor.
  */
+import { TOUCH } from '../../src-core/checks/placement';
 import type { Bay, Id, Level, Placement, Run, UnitLoad } from '../../src-core/site/site';
 import type { Libraries, Weighed } from './libraries';
 import { outlineOf, type Outline } from './outline';
-import { overlaps } from './snap';
+import { overlaps, type Standing } from './snap';
 
 /** Sizes at which members are drawn whose type is not known, mm. */
 const DRAWN_UPRIGHT = 100;
@@ -20,6 +21,9 @@ export interface GoodsDrawn {
   /** Left edge from the left upright's face. */
   readonly at: number;
   readonly mirrored: boolean;
+  /** Outline across the rack, mm in front of the middle of the pair of beams. */
+  readonly rear: number;
+  readonly front: number;
   readonly outline: Outline;
   readonly weighed: Weighed;
   readonly trouble: 'overlap' | 'off the end' | null;
@@ -56,16 +60,24 @@ export interface Upright {
   readonly height: number;
 }
 
+type Stand = Standing & Pick<GoodsDrawn, 'rear' | 'front'>;
+
+/** Whether goods stand in one another, along the bay and across the rack; one behind the other they do not. */
+export const standIn = (a: Stand, b: Stand): boolean => overlaps(a, b) && Math.min(a.front, b.front) - Math.max(a.rear, b.rear) > TOUCH;
+
 function goodsDrawn(placements: readonly Placement[], entry: number, { unitLoads }: Libraries): readonly GoodsDrawn[] {
   const standing = placements.map((placement) => {
     const drawn = unitLoads.get(placement.unitLoadId);
-    return { placement, drawn, at: placement.atMm, width: drawn?.unitLoad.widthMm ?? 0 };
+    const half = (drawn?.unitLoad.depthMm ?? 0) / 2;
+    const { atMm: at, towardsFrontMm } = placement;
+    return { placement, drawn, at, width: drawn?.unitLoad.widthMm ?? 0, rear: towardsFrontMm - half, front: towardsFrontMm + half };
   });
-  return standing.flatMap(({ placement, drawn, at, width }, i): GoodsDrawn[] => {
+  return standing.flatMap((one, i): GoodsDrawn[] => {
+    const { placement, drawn, at, width, rear, front } = one;
     if (drawn === undefined) return [];
     const { unitLoad, pallet, grossKg, pieces } = drawn;
-    const offTheEnd = at < 0 || at + width > entry;
-    const overlapping = standing.some((other, j) => i !== j && overlaps({ at, width }, other));
+    const offTheEnd = at < -TOUCH || at + width > entry + TOUCH;
+    const overlapping = standing.some((other, j) => i !== j && standIn(one, other));
     return [
       {
         placementId: placement.id,
@@ -73,6 +85,8 @@ function goodsDrawn(placements: readonly Placement[], entry: number, { unitLoads
         unitLoad,
         at,
         mirrored: placement.mirrored,
+        rear,
+        front,
         outline: outlineOf(unitLoad, pallet, placement.mirrored),
         weighed: { grossKg, pieces },
         trouble: overlapping ? 'overlap' : offTheEnd ? 'off the end' : null,

@@ -2,6 +2,7 @@
 import type { Id } from '../../src-core/site/site';
 import type { BayDrawn, GoodsDrawn, LevelDrawn } from './bay-model';
 import { bandOf, levelAt, type BayScale } from './bay-scale';
+import type { Gaps } from './gaps';
 import { catchingPlaces, snap, type Opening, type Place } from './snap';
 
 /** How near a catching place pulls, px. */
@@ -17,18 +18,22 @@ export interface Drop {
 export interface Carrying {
   readonly bay: BayDrawn;
   readonly scale: BayScale;
-  /** Gap asked for to uprights and neighbours, mm. */
-  readonly gap: number;
+  /** Gaps asked for at a level, by its height. */
+  readonly gapsAt: (height: number) => Gaps;
   readonly placementId: Id;
   readonly width: number;
+  /** Its outline across the rack, which it keeps. */
+  readonly rear: number;
+  readonly front: number;
 }
 
-const openingOf = ({ bay, gap, placementId, width }: Carrying, level: LevelDrawn): Opening => ({
+const openingOf = ({ bay, gapsAt, placementId, width, rear, front }: Carrying, level: LevelDrawn): Opening => ({
   entry: bay.entry,
-  gap,
+  gaps: gapsAt(level.height),
   width,
+  // What stands wholly in front of or behind it is no neighbour along the level.
   others: level.goods
-    .filter((goods) => goods.placementId !== placementId)
+    .filter((goods) => goods.placementId !== placementId && goods.rear < front && goods.front > rear)
     .map((goods) => ({ at: goods.at, width: goods.unitLoad.widthMm })),
 });
 

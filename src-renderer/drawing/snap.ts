@@ -3,6 +3,9 @@
  * of its left edge from the left upright's face, as a placement keeps them.
  */
 
+import { TOUCH } from '../../src-core/checks/placement';
+import type { Gaps } from './gaps';
+
 export interface Standing {
   readonly at: number;
   readonly width: number;
@@ -11,8 +14,8 @@ export interface Standing {
 export interface Opening {
   /** Free width between the uprights. */
   readonly entry: number;
-  /** Gap asked for to uprights and neighbours. */
-  readonly gap: number;
+  /** Gaps asked for, to uprights and to neighbours. */
+  readonly gaps: Gaps;
   /** Width of the unit load that is moved. */
   readonly width: number;
   /** The other unit loads of the level. */
@@ -31,17 +34,19 @@ const STEP = 10;
 /** Two places nearer than this are one place, mm. */
 const SAME = 1;
 
-export const overlaps = (a: Standing, b: Standing): boolean => a.at < b.at + b.width - SAME && b.at < a.at + a.width - SAME;
+/** Whether two stretches lie over one another; those that touch do not. */
+export const overlaps = (a: Standing, b: Standing): boolean => a.at < b.at + b.width - TOUCH && b.at < a.at + a.width - TOUCH;
 
 /** The places where the unit load keeps its gaps, from left to right; none overlaps another unit load. */
-export function catchingPlaces({ entry, gap, width, others }: Opening): readonly Place[] {
+export function catchingPlaces({ entry, gaps, width, others }: Opening): readonly Place[] {
+  // Placements stand on whole millimetres: rounded so that a gap of 3 in is never taken short.
   const wanted: Place[] = [
-    { at: gap, by: 'left upright' },
-    { at: entry - gap - width, by: 'right upright' },
-    { at: (entry - width) / 2, by: 'middle of the beam' },
+    { at: Math.ceil(gaps.upright), by: 'left upright' },
+    { at: Math.floor(entry - gaps.upright - width), by: 'right upright' },
+    { at: Math.round((entry - width) / 2), by: 'middle of the beam' },
     ...others.flatMap((other): Place[] => [
-      { at: other.at - gap - width, by: 'neighbour' },
-      { at: other.at + other.width + gap, by: 'neighbour' },
+      { at: Math.floor(other.at - gaps.loads - width), by: 'neighbour' },
+      { at: Math.ceil(other.at + other.width + gaps.loads), by: 'neighbour' },
     ]),
   ];
   const free = wanted.filter(({ at }) => at >= 0 && at + width <= entry && !others.some((other) => overlaps({ at, width }, other)));

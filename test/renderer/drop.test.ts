@@ -5,7 +5,7 @@ import { bayOf, goods } from './make-bay';
 
 const bay = bayOf([[], [goods('a', 75), goods('b', 950)], []]);
 const scale = bayScale(bay, { width: 390, tallest: 800, left: 50, right: 50, top: 10, bottom: 5 });
-const carrying: Carrying = { bay, scale, gap: 75, placementId: 'a', width: 800 };
+const carrying: Carrying = { bay, scale, gapsAt: () => ({ upright: 75, loads: 75 }), placementId: 'a', width: 800, rear: -600, front: 600 };
 
 test('let go over another level it lands there, caught by the upright', () => {
   const drop = dropAt(carrying, scale.x(60), scale.y(3200));
@@ -47,4 +47,10 @@ test('every target is a place where the goods stand clear of the others', () => 
 test('goods are found by their id, and none for none', () => {
   expect(findGoods(bay, 'b')?.at).toBe(950);
   expect(findGoods(bay, null)).toBeNull();
+});
+
+test('goods of half the depth catch past one that stands behind them', () => {
+  const behind = bayOf([[], [{ ...goods('rear half', 950), rear: -600, front: 0 }], []]);
+  const before = { ...carrying, bay: behind, rear: 0, front: 600 };
+  expect(dropAt(before, scale.x(955), scale.y(1600))?.place).toEqual({ at: 950, by: 'middle of the beam' });
 });

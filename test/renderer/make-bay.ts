@@ -8,6 +8,8 @@ export const goods = (placementId: string, at: number, widthMm = 800, height = 1
     unitLoad: { widthMm },
     at,
     mirrored: false,
+    rear: -600,
+    front: 600,
     outline: { goods: [], pallet: [], width: widthMm, height },
     weighed: { grossKg: 500, pieces: null },
     trouble: null,

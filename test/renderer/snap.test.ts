@@ -2,7 +2,7 @@ import { expect, test } from 'vitest';
 import { catchingPlaces, overlaps, snap } from '../../src-renderer/drawing/snap';
 
 // 2 700 mm entry for three 800 mm pallets and four gaps of 75 mm: 3 × 800 + 4 × 75 = 2 700.
-const empty = { entry: 2700, gap: 75, width: 800, others: [] };
+const empty = { entry: 2700, gaps: { upright: 75, loads: 75 }, width: 800, others: [] };
 
 test('an empty level catches at both uprights and in the middle of the beam', () => {
   expect(catchingPlaces(empty)).toEqual([
@@ -37,4 +37,11 @@ test('it never leaves the opening, and a load wider than it stands at the left u
 test('touching unit loads do not overlap', () => {
   expect(overlaps({ at: 0, width: 800 }, { at: 800, width: 800 })).toBe(false);
   expect(overlaps({ at: 0, width: 800 }, { at: 790, width: 800 })).toBe(true);
+});
+
+test('a gap of 3 in is kept in whole millimetres and never taken short', () => {
+  const inches = { ...empty, gaps: { upright: 76.2, loads: 76.2 }, others: [{ at: 77, width: 800 }] };
+  const places = catchingPlaces(inches).map((place) => place.at);
+  // 77 + 800 + 76.2 = 953.2 up to 954; 2 700 − 76.2 − 800 = 1 823.8 down to 1 823.
+  expect(places).toEqual([954, 1823]);
 });
