@@ -37,7 +37,7 @@ const SAME = 1;
 /** Whether two stretches lie over one another; those that touch do not. */
 export const overlaps = (a: Standing, b: Standing): boolean => a.at < b.at + b.width - TOUCH && b.at < a.at + a.width - TOUCH;
 
-/** The places where the unit load keeps its gaps, from left to right; none overlaps another unit load. */
+/** The places where the unit load keeps its gaps, from left to right. */
 export function catchingPlaces({ entry, gaps, width, others }: Opening): readonly Place[] {
   // Placements stand on whole millimetres: rounded so that a gap of 3 in is never taken short.
   const wanted: Place[] = [
@@ -49,7 +49,11 @@ export function catchingPlaces({ entry, gaps, width, others }: Opening): readonl
       { at: Math.ceil(other.at + other.width + gaps.loads), by: 'neighbour' },
     ]),
   ];
-  const free = wanted.filter(({ at }) => at >= 0 && at + width <= entry && !others.some((other) => overlaps({ at, width }, other)));
+  const keepsGaps = (at: number) =>
+    at >= gaps.upright - TOUCH &&
+    at + width <= entry - gaps.upright + TOUCH &&
+    !others.some((other) => overlaps({ at: at - gaps.loads, width: width + 2 * gaps.loads }, other));
+  const free = wanted.filter(({ at }) => keepsGaps(at));
   const ordered = free.toSorted((a, b) => a.at - b.at);
   return ordered.filter((place, i) => i === 0 || place.at - (ordered[i - 1]?.at ?? -Infinity) > SAME);
 }
