@@ -1,8 +1,8 @@
 /** Resolves the site's unit loads: weighed with their pallets, laid out along the beam and across it. */
 import type { Missing } from '../checks/finding';
-import { centreTowardsFront } from '../goods/across';
+import { acrossProblem, centreTowardsFront } from '../goods/across';
 import { goodsIntensity } from '../goods/bearing-shape';
-import type { Id, Pallet, UnitLoad } from '../site/site';
+import type { Id, UnitLoad } from '../site/site';
 import type { BeamLoad } from '../statics/load';
 import { weightOf } from '../units/quantity';
 import type { GoodsWork, SiteContext } from './context';
@@ -19,6 +19,7 @@ export function goodsWork(context: SiteContext, unitLoadId: Id): GoodsWork {
   // What stands on bearers or feet brings its pallet down through them too.
   const laid = goodsIntensity({
     widthMm: unitLoad.widthMm,
+    depthMm: unitLoad.depthMm,
     goodsKg: bears && unitLoad.goodsKg !== null ? unitLoad.goodsKg + (palletKg ?? 0) : unitLoad.goodsKg,
     bearing: unitLoad.bearing,
   });
@@ -29,15 +30,20 @@ export function goodsWork(context: SiteContext, unitLoadId: Id): GoodsWork {
       how: 'Weigh an empty one, damp as it is used.',
       field: `pallet:${pallet.id}:massKg`,
     });
+  const acrossFault = acrossProblem(unitLoad.depthMm, unitLoad.across);
+  if (acrossFault !== null)
+    missing.push({ input: `depth shape of ${unitLoad.name}`, how: acrossFault, field: `unitLoad:${unitLoad.id}:across` });
+  const goodsCentre = acrossFault === null ? centreTowardsFront(unitLoad.depthMm, unitLoad.across) : 0;
+  const unknown = { unitLoad, pallet, goodsKg: null, palletKg, grossKg: null, pieces: null, centreTowardsFrontMm: goodsCentre, missing };
   if (!laid.ok) {
-    if (unitLoad.goodsKg === null) missing.push(massMissing(unitLoad));
-    else missing.push({ input: `bearing shape of ${unitLoad.name}`, how: laid.message, field: `unit-load:${unitLoad.id}:bearing` });
-    return { ...unknownGoods(unitLoad, pallet, palletKg), missing };
+    if (laid.problem === 'mass-missing') missing.push(massMissing(unitLoad));
+    else missing.push({ input: `bearing shape of ${unitLoad.name}`, how: laid.message, field: `unitLoad:${unitLoad.id}:bearing` });
+    // The goods alone lie further off the middle than together with a pallet: the safe side.
+    return unknown;
   }
   const goodsKg = bears ? laid.massKg - (palletKg ?? 0) : laid.massKg;
-  if (palletKg === null) return { ...unknownGoods(unitLoad, pallet, palletKg), goodsKg, missing };
+  if (palletKg === null || acrossFault !== null) return { ...unknown, goodsKg };
   const grossKg = goodsKg + palletKg;
-  const goodsCentre = centreTowardsFront(unitLoad.depthMm, unitLoad.across);
   return {
     unitLoad,
     pallet,
@@ -50,22 +56,10 @@ export function goodsWork(context: SiteContext, unitLoadId: Id): GoodsWork {
   };
 }
 
-const unknownGoods = (unitLoad: UnitLoad, pallet: Pallet | null, palletKg: number | null): GoodsWork => ({
-  unitLoad,
-  pallet,
-  goodsKg: null,
-  palletKg,
-  grossKg: null,
-  pieces: null,
-  // The goods alone are further off the middle than together with a pallet: the safe side.
-  centreTowardsFrontMm: centreTowardsFront(unitLoad.depthMm, unitLoad.across),
-  missing: [],
-});
-
 const massMissing = (unitLoad: UnitLoad): Missing => ({
   input: `mass of ${unitLoad.name}`,
   how: 'Weigh it with its pallet, or take its gross mass from the delivery papers. An unknown mass is never taken as zero.',
-  field: `unit-load:${unitLoad.id}:goodsKg`,
+  field: `unitLoad:${unitLoad.id}:goodsKg`,
 });
 
 /** A pallet's own mass lies evenly under its goods. */

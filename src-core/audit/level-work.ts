@@ -19,6 +19,9 @@ export interface BayFrame {
   readonly type: FrameType | null;
 }
 
+/** Symmetric goods come out of their sums this near the middle, and stay inside the ends this nearly. */
+const ROUNDING_MM = 1e-9;
+
 /** What a bay's levels stand in and between. */
 interface Surroundings {
   readonly context: SiteContext;
@@ -93,7 +96,7 @@ function standing(goods: GoodsWork, placement: Placement, distance: number | nul
     rearMm: placement.towardsFrontMm - depthMm / 2,
     frontMm: placement.towardsFrontMm + depthMm / 2,
     centreMm,
-    frontShare: centreMm === 0 ? 0.5 : distance === null ? null : frontShare(centreMm, distance),
+    frontShare: Math.abs(centreMm) < ROUNDING_MM ? 0.5 : distance === null ? null : frontShare(centreMm, distance),
   };
 }
 
@@ -148,13 +151,18 @@ function effectsOf(
             id: placement.id,
             load: pieces,
             widthMm: unitLoad.widthMm,
-            at: offset + Math.min(Math.max(placement.atMm, 0), span - unitLoad.widthMm),
+            at: offset + placement.atMm,
             mirrored: placement.mirrored,
             frontShare: share,
           },
         ],
   );
-  const loads = pairLoads(standingGoods);
+  const superposed = pairLoads(standingGoods);
+  const loads = {
+    whole: between(superposed.whole, span),
+    front: between(superposed.front, span),
+    rear: between(superposed.rear, span),
+  };
   const known = rigidityOf(beamType);
   const rigidity = known ?? NOMINAL_RIGIDITY;
   const stiffness = known === null ? null : (beamType?.connectorNmmPerRad ?? null);
@@ -177,6 +185,16 @@ function effectsOf(
     rigidity,
     rigidityKnown: known !== null,
     end: endOf(stiffness, 1),
+  };
+}
+
+/** Goods that fill the level exactly may reach past its ends by their rounding, which no beam can carry. */
+function between(load: BeamLoad, span: number): BeamLoad {
+  const clamp = (x: number) => Math.min(Math.max(x, 0), span);
+  if (load.lines.every(({ from, to }) => from >= 0 && to <= span) && load.points.every(({ at }) => at >= 0 && at <= span)) return load;
+  return {
+    lines: load.lines.map((line) => ({ ...line, from: clamp(line.from), to: clamp(line.to) })).filter(({ from, to }) => from < to),
+    points: load.points.map((point) => ({ ...point, at: clamp(point.at) })),
   };
 }
 

@@ -232,7 +232,7 @@ function sectionNumbers(type: BeamType | null, { level, index }: LevelWork) {
         : {
             input: `${what} of ${type.name}`,
             how: 'Ask the maker, or take it from the data sheet.',
-            field: `beam-type:${type.id}:${field}`,
+            field: `beamType:${type.id}:${field}`,
           },
   });
   return {

@@ -100,5 +100,5 @@ function whatIsMissing({ notice, beamType, level, nothingNamed }: LevelRatingInp
     beamType.ratings.length === 0
       ? `Ask the maker of ${beamType.name} for the rating of a pair at this span.`
       : `The table of ${beamType.name} ends before the length of this beam, and no rating is taken from beyond a table. Ask the maker for one.`;
-  return { input, how, field: `beam-type:${beamType.id}:ratings` };
+  return { input, how, field: `beamType:${beamType.id}:ratings` };
 }

@@ -36,7 +36,7 @@ test('beyond the last row there is no rating', () => {
     {
       input: 'rated capacity of level 2',
       how: 'The table of B 120 ends before the length of this beam, and no rating is taken from beyond a table. Ask the maker for one.',
-      field: 'beam-type:t:ratings',
+      field: 'beamType:t:ratings',
     },
   ]);
 });
@@ -61,7 +61,7 @@ test('a notice that does not state the level leaves the maker’s table', () => 
 test.each<[string, Partial<LevelRatingInput>, string]>([
   ['a notice without this level', { notice: notice(2000, null) }, 'notice:n:levelKg'],
   ['a notice without levels', { notice: notice() }, 'notice:n:levelKg'],
-  ['a beam type without a table', { beamType: table() }, 'beam-type:t:ratings'],
+  ['a beam type without a table', { beamType: table() }, 'beamType:t:ratings'],
   ['neither', {}, 'bay:b:noticeId'],
 ])('%s gives no rating and names the field to fill', (_, change, field) => {
   const found = rating(change);

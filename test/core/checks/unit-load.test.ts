@@ -11,7 +11,7 @@ const load = (placementId: string, massKg: number | null): Weighed => ({
   name: `Pallet ${placementId}`,
   massKg,
   from: 'weighed',
-  missing: massKg === null ? [{ input: `mass of Pallet ${placementId}`, how: 'Weigh it.', field: `unit-load:${placementId}:goodsKg` }] : [],
+  missing: massKg === null ? [{ input: `mass of Pallet ${placementId}`, how: 'Weigh it.', field: `unitLoad:${placementId}:goodsKg` }] : [],
 });
 
 test('three pallets of 800 kg against 833 kg give one finding, for the heaviest', () => {
@@ -40,7 +40,7 @@ test('a unit load exactly at its limit is not over', () => {
 test('an unknown mass is not assessable and is never taken as zero', () => {
   const found = unitLoad({ place, goods: [load('a', 100), load('b', null)], limit, closeAbove: 0.9 });
   expect(found.map(({ verdict }) => verdict)).toEqual(['not-assessable']);
-  expect(found[0]?.missing.map(({ field }) => field)).toEqual(['unit-load:b:goodsKg']);
+  expect(found[0]?.missing.map(({ field }) => field)).toEqual(['unitLoad:b:goodsKg']);
   expect(found[0]?.utilisation).toBeNull();
 });
 

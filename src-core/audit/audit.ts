@@ -1,0 +1,163 @@
+/**
+ * Every check over a bay, a run or a whole site. This is the only place that joins the site with its
+ * checks. Checks that the site leaves out are not run and are listed with their reasons.
+ */
+import { worstVerdict, type Finding, type Place } from '../checks/finding';
+import type { Bay, Id, Run, Site } from '../site/site';
+import { bayFindings, runFindings } from './bay-checks';
+import { bayContentsFindings } from './bay';
+import { createAuditCache, type AuditCache } from './cache';
+import { contextOf, type BayWork, type FrameWork, type SiteContext } from './context';
+import { frameAudit } from './frame';
+import { levelFindings } from './geometry';
+import { auditLevel } from './level';
+import { bayContents } from './level-work';
+import type { BayAudit, FrameAudit, LevelAudit, RunAudit, SiteAudit } from './types';
+import { governingOf } from './verdict';
+
+/**
+ * @param today ISO date, for clocks such as that of amber damage
+ * @param cache keeps parts for the next audit of the edited site; without one everything is made anew
+ * @throws RangeError if the site has no such run
+ */
+export function auditRun(site: Site, runId: Id, today: string, cache: AuditCache = createAuditCache()): RunAudit {
+  const audit = runAuditor(site, runId, today, cache);
+  const { run } = audit;
+  const bays = run.bays.map((_, index) => audit.bay(index));
+  const frames = run.frames.map((_, index) => audit.frame(index));
+  const findings = runFindings(audit.context, { run, place: { runId }, bays: run.bays.map((_, index) => audit.work(index)) });
+  return {
+    runId,
+    verdict: worstVerdict([...bays, ...frames, ...counting(findings)].map(({ verdict }) => verdict)),
+    bays,
+    frames,
+    findings,
+    notChecked: site.rules.leftOut,
+  };
+}
+
+/**
+ * One bay with its levels and its two frames, and nothing else of its run but the neighbours they need.
+ * @throws RangeError if the site has no such run or bay
+ */
+export function auditBay(site: Site, runId: Id, bayId: Id, today: string, cache: AuditCache = createAuditCache()): BayAudit {
+  const audit = runAuditor(site, runId, today, cache);
+  const index = audit.run.bays.findIndex(({ id }) => id === bayId);
+  if (index < 0) throw new RangeError(`no bay "${bayId}" in run "${runId}"`);
+  return audit.bay(index);
+}
+
+/** A site without runs has nothing that could be within. */
+export function auditSite(site: Site, today: string, cache: AuditCache = createAuditCache()): SiteAudit {
+  const runs = site.runs.map(({ id }) => auditRun(site, id, today, cache));
+  return { verdict: worstVerdict(runs.map(({ verdict }) => verdict)), runs };
+}
+
+interface RunAuditor {
+  readonly context: SiteContext;
+  readonly run: Run;
+  readonly work: (index: number) => BayWork;
+  readonly frame: (index: number) => FrameAudit;
+  readonly bay: (index: number) => BayAudit;
+}
+
+function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): RunAuditor {
+  const context = cache.remember('context', site, [today], () => contextOf(site, today));
+  const run = context.runs.get(runId);
+  if (run === undefined) throw new RangeError(`no run "${runId}" in the site`);
+  const behind = run.backToBack === null ? null : (context.runs.get(run.backToBack.runId) ?? null);
+  const libraries = [site.pallets, site.unitLoads, site.notices, site.beamTypes, site.frameTypes, site.rules, runId];
+  const surroundings = [...libraries, site.floors, site.seismic, site.outdoors, today, run.floorId, run.twoDeep, run.backToBack, behind];
+
+  const work = (index: number): BayWork => {
+    const [bay, left, right] = bayAt(run, index);
+    const typeOf = (typeId: Id | null) => (typeId === null ? null : (context.frameTypes.get(typeId) ?? null));
+    const frameTypes = [typeOf(left.typeId), typeOf(right.typeId)] as const;
+    const place: Place = { runId, bayId: bay.id };
+    const contents = cache.remember('contents', bay, [left, right, ...libraries], () =>
+      bayContents(context, place, bay, [
+        { frame: left, type: frameTypes[0] },
+        { frame: right, type: frameTypes[1] },
+      ]),
+    );
+    const notice = bay.noticeId === null ? null : (context.notices.get(bay.noticeId) ?? null);
+    return { run, bay, index, place, notice, frames: [left, right], frameTypes, ...contents };
+  };
+
+  const neighbours = (index: number) => [run.bays[index - 1], run.bays[index], run.bays[index + 1]];
+
+  const frame = (index: number): FrameAudit => {
+    const one = run.frames[index];
+    if (one === undefined) throw new RangeError(`run "${runId}" has no frame ${index}`);
+    const from = [
+      run.bays[index - 1],
+      run.bays[index],
+      run.frames[index - 1],
+      run.frames[index + 1],
+      index,
+      run.frames.length,
+      ...surroundings,
+    ];
+    return cache.remember('frame', one, from, () => {
+      const input: FrameWork = {
+        run,
+        frame: one,
+        index,
+        place: { runId, frameId: one.id },
+        type: one.typeId === null ? null : (context.frameTypes.get(one.typeId) ?? null),
+        left: index > 0 ? work(index - 1) : null,
+        right: index < run.bays.length ? work(index) : null,
+      };
+      return frameAudit(context, input);
+    });
+  };
+
+  const bay = (index: number): BayAudit => {
+    const [one, left, right] = bayAt(run, index);
+    const own = cache.remember('bay', one, [left, right, index, ...neighbours(index), ...surroundings], () =>
+      ownAudit(context, work(index)),
+    );
+    const frames = [frame(index), frame(index + 1)];
+    return cache.remember('whole bay', one, [own, ...frames], () => withFrames(one, own, frames));
+  };
+  return { context, run, work, frame, bay };
+}
+
+function bayAt(run: Run, index: number): readonly [Bay, Run['frames'][number], Run['frames'][number]] {
+  const bay = run.bays[index];
+  const left = run.frames[index];
+  const right = run.frames[index + 1];
+  if (bay === undefined || left === undefined || right === undefined)
+    throw new RangeError(
+      `run "${run.id}" has ${run.bays.length} bays and ${run.frames.length} frames; bay ${index} needs a frame on each side`,
+    );
+  return [bay, left, right];
+}
+
+interface OwnAudit {
+  readonly levels: readonly LevelAudit[];
+  readonly findings: readonly Finding[];
+}
+
+/** A bay's levels and the bay itself, without its frames. */
+function ownAudit(context: SiteContext, work: BayWork): OwnAudit {
+  return {
+    levels: work.levels.map((level) => auditLevel(context, work, level, levelFindings(context, work, level))),
+    findings: [...bayContentsFindings(context, work), ...bayFindings(context, work)],
+  };
+}
+
+function withFrames(bay: Bay, { levels, findings }: OwnAudit, frames: readonly FrameAudit[]): BayAudit {
+  const parts = [...levels, ...frames];
+  const total = levels.reduce<number | null>((sum, { totalKg }) => (sum === null || totalKg === null ? null : sum + totalKg), 0);
+  return {
+    bayId: bay.id,
+    verdict: worstVerdict([...parts.map(({ verdict }) => verdict), ...counting(findings).map(({ verdict }) => verdict)]),
+    governing: governingOf([...findings, ...parts.flatMap(({ governing }) => governing ?? [])]),
+    totalKg: total,
+    levels,
+    findings,
+  };
+}
+
+const counting = (findings: readonly Finding[]): readonly Finding[] => findings.filter(({ counts }) => counts);
