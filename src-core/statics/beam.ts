@@ -64,7 +64,7 @@ export interface BeamAnswer {
  * Source: any text on strength of materials; semi-rigid ends by compatibility (see beam-ends.ts).
  * @example 4 kN at the middle of a pinned 2.4 m beam → reactions 2 kN, moment PL/4 = 2.4 kN·m
  */
-export function solveBeam(beam: Beam, given: BeamLoad): BeamAnswer {
+export function solveBeam(beam: Beam, load: BeamLoad): BeamAnswer {
   const { span, rigidity } = beam;
   if (!(rigidity > 0 && rigidity < Infinity)) throw new RangeError(`rigidity EI must be above 0 N·mm², got ${rigidity}`);
   const pieces = cutIntoPieces(load, span);
@@ -140,7 +140,7 @@ function segmentsOf(pieces: Pieces, sections: Sections, span: number, rigidity: 
       wTo: pieces.wTo[i] as number,
       shear: (b - a) / span,
       moment: (y * a + x * b) / span,
-      rotation: ((2 * y * y - x * x - 2 * x * y) * a + (span * span - 3 * x * x) * b + a3 - b3) / (6 * span * rigidity),
+      rotation: ((3 * y * y - span * span) * a + (span * span - 3 * x * x) * b + a3 - b3) / (6 * span * rigidity),
       deflection: i === 0 ? 0 : (x * y * ((span + y) * a + (span + x) * b) - y * a3 - x * b3) / (6 * span * rigidity),
     });
   }

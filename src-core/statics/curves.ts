@@ -1,7 +1,8 @@
-import { stateAt, type BeamAnswer } from './beam';
-import { shearRoots } from './roots';
+/** Intensity, shear, moment and deflection along a solved beam, as points to draw. */
+import type { BeamAnswer } from './beam';
+import { deflectionIn, intensityIn, momentIn, shearIn } from './segment';
 
-/** One place of a beam's diagrams: mm, N/mm, N, N·mm, mm. */
+/** x in mm from the left support; N/mm, N, N·mm, mm; signs as in beam.ts. */
 export interface CurvePoint {
   readonly x: number;
   readonly intensity: number;
@@ -11,23 +12,35 @@ export interface CurvePoint {
 }
 
 /**
- * Points for drawing the four diagrams. Every breakpoint, the place of the greatest moment and of the
- * greatest deflection are among them; where intensity or shear jumps, two points stand at one x.
- * @param pointsPerSegment how many steps each piece is drawn in, 1 or more; values are exact at each point
+ * Points in ascending x. Every breakpoint and every extreme is among them; at a breakpoint there are two
+ * at one x, the state just left and just right of it, so that jumps stand upright. Point loads show as
+ * jumps of the shear, not in the intensity. The supports' reactions are the first and the last value.
+ * @param pointsPerSegment evenly spaced ones inside each segment, besides its two ends
  */
-export function curvesOf(answer: BeamAnswer, pointsPerSegment = 16): readonly CurvePoint[] {
-  if (!(pointsPerSegment >= 1)) throw new RangeError(`a piece must be drawn in 1 or more steps, got ${pointsPerSegment}`);
-  return answer.segments.flatMap((segment) => {
-    const h = segment.to - segment.from;
-    const steps = Array.from({ length: pointsPerSegment + 1 }, (_, i) => (i === pointsPerSegment ? h : (h * i) / pointsPerSegment));
-    const sag = answer.deflection.at - segment.from;
-    const places = [...steps, ...shearRoots(segment.shear, segment.intensity, segment.slope, h), ...(sag > 0 && sag < h ? [sag] : [])];
-    return [...new Set(places)]
-      .sort((a, b) => a - b)
-      .map((s) => {
-        const { intensity, shear, moment, deflectionEI } = stateAt(segment, s);
-        const x = s === h ? segment.to : segment.from + s;
-        return { x, intensity, shear, moment, deflection: deflectionEI / answer.rigidity };
+export function curvesOf(answer: BeamAnswer, pointsPerSegment = 24): readonly CurvePoint[] {
+  const { span, segments, sagging, deflection, rigidity } = answer;
+  const extremes = [sagging.from, sagging.to, deflection.at];
+  const points: CurvePoint[] = [];
+  segments.forEach((segment, index) => {
+    const { from, length } = segment;
+    // `from + length` may differ from the next segment's start in the last digit.
+    const end = segments[index + 1]?.from ?? span;
+    const places = [0, length];
+    for (let i = 1; i <= pointsPerSegment; i++) places.push((length * i) / (pointsPerSegment + 1));
+    for (const x of extremes) if (x > from && x < end) places.push(x - from);
+    places.sort((a, b) => a - b);
+    let before = -1;
+    for (const s of places) {
+      if (s === before) continue;
+      before = s;
+      points.push({
+        x: s === length ? end : from + s,
+        intensity: intensityIn(segment, s),
+        shear: shearIn(segment, s),
+        moment: momentIn(segment, s),
+        deflection: deflectionIn(segment, s, rigidity),
       });
+    }
   });
+  return points;
 }

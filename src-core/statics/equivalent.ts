@@ -1,6 +1,7 @@
+/** Uniform loads that would do the same to a beam as its own load does. */
 import type { BeamAnswer } from './beam';
 
-/** Evenly spread loads, in N over the whole span of one pinned beam, that do the same to it. */
+/** Totals over the full span of one beam with pinned ends, N. */
 export interface EquivalentLoads {
   readonly total: number;
   readonly bending: number;
@@ -9,21 +10,20 @@ export interface EquivalentLoads {
 }
 
 /**
- * The uniform load that bends, shears and sags a beam as this load does: 8 M/L, 2 R and
- * 384 EI δ / (5 L³). Meant for pinned ends; EI cancels, so any rigidity used in the solution serves.
- * End shear counts a load that stands over a support, since the connector carries it too.
- * @returns N over the span
- * @throws RangeError if the rigidity is not above 0
- * Source: peak values of the uniform load on a pinned beam matched (WL/8, W/2, 5WL³/384EI).
- * @example 4 kN at the middle of a pinned 2.4 m beam → bending 8 kN, since PL/4 = WL/8
+ * By bending 8M/L, by end shear 2R with R the greater reaction (any load over a support included), by
+ * deflection 384·EI·δ/(5L³); the total is the resultant itself.
+ * For a beam with held ends these are still the loads on a pinned beam; what a uniform load does to the
+ * held beam is the caller's to divide by.
+ * @param rigidity EI that the answer was solved with, N·mm²; for pinned ends it cancels
+ * Accuracy: as the answer's. Source: peak effects matched with those of a uniform load, wL²/8 and 5wL⁴/384EI.
+ * @example 4 kN at the middle → bending 8 kN, since PL/4 = WL/8; end shear 4 kN; deflection 6.4 kN
  */
-export function equivalentLoads(answer: BeamAnswer, rigidity: number = answer.rigidity): EquivalentLoads {
-  if (!(rigidity > 0)) throw new RangeError(`a beam's rigidity must be above 0 N·mm², got ${rigidity}`);
-  const { span } = answer;
+export function equivalentLoads(answer: BeamAnswer, rigidity: number): EquivalentLoads {
+  const { span, resultant, sagging, reactionLeft, reactionRight, deflection } = answer;
   return {
-    total: answer.resultant,
-    bending: (8 * answer.sagging.moment) / span,
-    endShear: 2 * Math.max(answer.reactionLeft, answer.reactionRight),
-    deflection: (384 * rigidity * answer.deflection.sag) / (5 * span ** 3),
+    total: resultant,
+    bending: (8 * sagging.moment) / span,
+    endShear: 2 * Math.max(reactionLeft, reactionRight),
+    deflection: ((384 / 5) * (rigidity * deflection.sag)) / span / span / span,
   };
 }

@@ -10,16 +10,7 @@
  * Accuracy: exact formula, a few units in the last place. Source: Bernstein form; the integral of
  * uᵏ(1−u)⁴⁻ᵏ is k!(4−k)!/5!. Example: all lines 1 → 1.
  */
-export function integralOfProduct(
-  a0: number,
-  a1: number,
-  b0: number,
-  b1: number,
-  c0: number,
-  c1: number,
-  d0: number,
-  d1: number,
-): number {
+export function integralOfProduct(a0: number, a1: number, b0: number, b1: number, c0: number, c1: number, d0: number, d1: number): number {
   const p0 = a0 * b0;
   const p1 = a0 * b1 + a1 * b0;
   const p2 = a1 * b1;

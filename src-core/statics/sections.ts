@@ -5,7 +5,7 @@
  * support, those right of it by their distance b from the right support (influence lines):
  *
  *     L·M = y·A + x·B          L·V = B − A
- *     6L·EI·θ = (2L² − 6Lx + 3x²)·A + (L² − 3x²)·B + A₃ − B₃
+ *     6L·EI·θ = (3y² − L²)·A + (L² − 3x²)·B + A₃ − B₃
  *     6L·EI·δ = x·y·((L + y)·A + (L + x)·B) − y·A₃ − x·B₃
  *
  * with A₃ = Σ W·a³ of the loads on the left, B₃ = Σ W·b³ of those on the right, and on a pinned beam

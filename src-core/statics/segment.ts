@@ -25,16 +25,14 @@ export function intensityIn(segment: Segment, s: number): number {
   return s === length ? wTo : wFrom === wTo ? wFrom : wFrom + (wTo - wFrom) * (s / length);
 }
 
-export const shearIn = (segment: Segment, s: number): number =>
-  segment.shear - s * (segment.wFrom + s * (slopeOf(segment) / 2));
+export const shearIn = (segment: Segment, s: number): number => segment.shear - s * (segment.wFrom + s * (slopeOf(segment) / 2));
 
 export const momentIn = (segment: Segment, s: number): number =>
   segment.moment + s * (segment.shear - s * (segment.wFrom / 2 + s * (slopeOf(segment) / 6)));
 
 /** @param rigidity EI, N·mm² */
 export const rotationIn = (segment: Segment, s: number, rigidity: number): number =>
-  segment.rotation -
-  (s * (segment.moment + s * (segment.shear / 2 - s * (segment.wFrom / 6 + s * (slopeOf(segment) / 24))))) / rigidity;
+  segment.rotation - (s * (segment.moment + s * (segment.shear / 2 - s * (segment.wFrom / 6 + s * (slopeOf(segment) / 24))))) / rigidity;
 
 /** @param rigidity EI, N·mm² */
 export const deflectionIn = (segment: Segment, s: number, rigidity: number): number =>
