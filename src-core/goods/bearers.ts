@@ -1,117 +1,141 @@
-/** Goods on bearers or feet: who carries how much. */
+/** Goods on bearers or feet: what each of them carries. */
 import type { BeamLoad } from '../statics/load';
 import { FITS_MM } from './across';
 
-type Carried =
-  | { readonly ok: true; readonly load: BeamLoad }
-  | { readonly ok: false; readonly problem: 'bearers' | 'feet' | 'shares'; readonly message: string };
+export interface Bearer {
+  readonly centreMm: number;
+  readonly widthMm: number;
+  readonly share: number | null;
+}
+
+export interface Foot {
+  readonly xMm: number;
+  readonly share: number | null;
+}
+
 type Problem = 'bearers' | 'feet' | 'shares';
+interface Fault {
+  readonly ok: false;
+  readonly problem: Problem;
+  readonly message: string;
+}
+type Carried = { readonly ok: true; readonly load: BeamLoad } | Fault;
+type Shares = { readonly ok: true; readonly shares: readonly number[] } | Fault;
 
-const wrong = (problem: Problem, message: string) => ({ ok: false, problem, message }) as const;
+const fault = (problem: Problem, message: string): Fault => ({ ok: false, problem, message });
 
-/** Shares typed as decimals or per cents agree to this. */
+/** Shares typed as decimals or per cents add up to 1 within this. */
 const SHARES_FIT = 1e-6;
 
+/** How the supports are spoken of. */
+interface Called {
+  readonly one: string;
+  readonly many: string;
+}
+const BEARERS: Called = { one: 'bearer', many: 'bearers' };
+const FEET: Called = { one: 'foot', many: 'feet' };
+
 /**
- * Shares of even goods over their supports, by statics: with two supports by moments, overhangs
- * included; with more, the goods are taken as simple spans between neighbouring supports (each carries
- * half of the spans beside it and its own overhang), as loose goods bridge from bearer to bearer.
- * @param at the supports' middles, mm from the left edge, ascending
- * @returns null if the goods would tip off
- * @example bearers at 100 and 700 under 800 mm → 1/2 each
+ * Shares of goods that lie evenly over their width, by statics. Two supports share by moments, overhangs
+ * included. On three or more the goods are taken as simple spans between neighbouring supports, the
+ * outer spans with their overhangs, as loose goods bridge from one to the next. Either way the shares
+ * act together at the goods' middle.
+ * @param at the supports' middles, mm from the goods' left edge, ascending, no two alike
+ * @returns one share each, 1 together; null if the goods would tip, or lift off one of them
+ * @example at 100 and 700 under 800 mm → 1/2 each; at 0, 400 and 800 → 1/4, 1/2, 1/4
  */
-export function sharesByStatics(at: readonly number[], width: number): readonly number[] | null {
-  const [first, second] = at;
-  if (first === undefined) return null;
-  if (second === undefined) return Math.abs(first - width / 2) <= FITS_MM ? [1] : null;
-  if (at.length === 2) {
-    const right = (width / 2 - first) / (second - first);
-    return right >= 0 && right <= 1 ? [1 - right, right] : null;
+function sharesByStatics(at: readonly number[], width: number): readonly number[] | null {
+  if (at.length === 1) return Math.abs((at[0] as number) - width / 2) <= FITS_MM ? [1] : null;
+  const shares = at.map(() => 0);
+  const last = at.length - 2;
+  for (let i = 0; i <= last; i++) {
+    const left = at[i] as number;
+    const right = at[i + 1] as number;
+    const from = i === 0 ? 0 : left;
+    const to = i === last ? width : right;
+    const part = (to - from) / width;
+    const middle = (from + to) / 2;
+    shares[i] = (shares[i] as number) + (part * (right - middle)) / (right - left);
+    shares[i + 1] = (shares[i + 1] as number) + (part * (middle - left)) / (right - left);
   }
-  return at.map((x, i) => {
-    const from = i === 0 ? 0 : ((at[i - 1] as number) + x) / 2;
-    const to = i === at.length - 1 ? width : (x + (at[i + 1] as number)) / 2;
-    return (to - from) / width;
-  });
+  return shares.every((share) => share >= -Number.EPSILON) ? shares.map((share) => Math.max(share, 0)) : null;
 }
 
-/** The shares as given, or by statics; each support's own place in the list is kept. */
-function sharesOf(
-  at: readonly number[],
-  given: readonly (number | null)[],
-  width: number,
-  name: 'bearer' | 'foot',
-): readonly number[] | ReturnType<typeof wrong> {
+/** The shares as given, or by statics where none is given; in the order of the list. */
+function sharesOf(at: readonly number[], given: readonly (number | null)[], width: number, called: Called): Shares {
   const known = given.filter((share) => share !== null);
-  if (known.length === 0) {
-    const order = at.map((_, i) => i).sort((a, b) => (at[a] as number) - (at[b] as number));
-    const sorted = order.map((i) => at[i] as number);
-    if (sorted.some((x, i) => i > 0 && x === sorted[i - 1]))
-      return wrong('shares', `Two of the ${name === 'foot' ? 'feet' : 'bearers'} stand at one place. Move one, or give shares.`);
-    const shares = sharesByStatics(sorted, width);
-    if (shares === null)
-      return wrong(
-        'shares',
-        `The goods would tip off: their middle does not lie between the ${name === 'foot' ? 'feet' : 'bearers'}. Move them, or give shares.`,
-      );
-    const result: number[] = [];
-    for (const [place, i] of order.entries()) result[i] = shares[place] as number;
-    return result;
-  }
+  if (known.length === 0) return defaultShares(at, width, called);
   if (known.length < given.length)
-    return wrong('shares', `Some shares are given and others are not. Give every ${name} its share, or none.`);
-  if (known.some((share) => !(share >= 0))) return wrong('shares', 'A share must be 0 or more.');
+    return fault('shares', `Some shares are given and others are not. Give every ${called.one} its share, or none.`);
+  const bad = known.findIndex((share) => !(share >= 0));
+  if (bad >= 0) return fault('shares', `The share of ${called.one} ${bad + 1} must be 0 or more; it is ${known[bad]}.`);
   const sum = known.reduce((total, share) => total + share, 0);
-  if (Math.abs(sum - 1) > SHARES_FIT)
-    return wrong(
+  if (!(Math.abs(sum - 1) <= SHARES_FIT))
+    return fault(
       'shares',
-      `The shares add up to ${Number(sum.toPrecision(6))}, not to 1. Mend them so that together they carry the whole load.`,
+      `The shares add up to ${Number(sum.toPrecision(6))}, not to 1. Change them so that together they carry the whole load.`,
     );
-  return known.map((share) => share / sum);
+  return { ok: true, shares: known.map((share) => share / sum) };
 }
 
-/** Load of 1 N in all, on bearers as rectangles. */
-export function bearersOf(bearers: readonly { centreMm: number; widthMm: number; share: number | null }[], width: number): Carried {
-  if (bearers.length === 0) return wrong('bearers', 'There is no bearer. Add at least two under the goods.');
+function defaultShares(at: readonly number[], width: number, { one, many }: Called): Shares {
+  const order = at.map((_, i) => i).sort((a, b) => (at[a] as number) - (at[b] as number));
+  const sorted = order.map((i) => at[i] as number);
+  if (sorted.some((x, i) => i > 0 && x === sorted[i - 1]))
+    return fault('shares', `Two of the ${many} stand at one place. Move one of them, or give every ${one} its share.`);
+  const shares = sharesByStatics(sorted, width);
+  if (shares === null)
+    return fault(
+      'shares',
+      at.length === 1
+        ? `The goods would tip: their only ${one} does not stand under their middle. Move it there, or add another.`
+        : `Even goods would tip or lift off one of the ${many}. Move the ${many} further out, or give every ${one} its share.`,
+    );
+  const inPlace = at.map(() => 0);
+  order.forEach((i, place) => (inPlace[i] = shares[place] as number));
+  return { ok: true, shares: inPlace };
+}
+
+/** Load of 1 N in all, on bearers as rectangles; x in mm from the goods' left edge. */
+export function bearersOf(bearers: readonly Bearer[], width: number): Carried {
+  if (bearers.length === 0) return fault('bearers', 'There is no bearer. Add at least two under the goods.');
   for (const [i, { centreMm, widthMm }] of bearers.entries()) {
-    if (!(widthMm > 0)) return wrong('bearers', `Bearer ${i + 1} must be wider than 0 mm; it is ${widthMm} mm wide.`);
+    if (!(widthMm > 0)) return fault('bearers', `Bearer ${i + 1} must be wider than 0 mm; it is ${widthMm} mm wide.`);
     if (!(centreMm - widthMm / 2 >= -FITS_MM && centreMm + widthMm / 2 <= width + FITS_MM))
-      return wrong(
+      return fault(
         'bearers',
-        `Bearer ${i + 1} stands beyond the goods, which are ${width} mm wide: it reaches from ${centreMm - widthMm / 2} to ${centreMm + widthMm / 2} mm.`,
+        `Bearer ${i + 1} reaches from ${centreMm - widthMm / 2} to ${centreMm + widthMm / 2} mm, beyond the goods, which are ${width} mm wide. Move it under them.`,
       );
   }
-  const shares = sharesOf(
+  const found = sharesOf(
     bearers.map(({ centreMm }) => centreMm),
     bearers.map(({ share }) => share),
     width,
-    'bearer',
+    BEARERS,
   );
-  if (!Array.isArray(shares)) return shares as ReturnType<typeof wrong>;
+  if (!found.ok) return found;
   const lines = bearers.map(({ centreMm, widthMm }, i) => {
     const from = Math.max(0, centreMm - widthMm / 2);
     const to = Math.min(width, centreMm + widthMm / 2);
-    const w = (shares[i] as number) / (to - from);
+    const w = (found.shares[i] as number) / (to - from);
     return { from, to, wFrom: w, wTo: w };
   });
   return { ok: true, load: { lines, points: [] } };
 }
 
-/** Load of 1 N in all, on feet as points. */
-export function feetOf(feet: readonly { xMm: number; share: number | null }[], width: number): Carried {
-  if (feet.length === 0) return wrong('feet', 'There is no foot. Add at least two under the goods.');
+/** Load of 1 N in all, on feet as points; x in mm from the goods' left edge. */
+export function feetOf(feet: readonly Foot[], width: number): Carried {
+  if (feet.length === 0) return fault('feet', 'There is no foot. Add at least two under the goods.');
   for (const [i, { xMm }] of feet.entries())
     if (!(xMm >= -FITS_MM && xMm <= width + FITS_MM))
-      return wrong('feet', `Foot ${i + 1} stands at ${xMm} mm, beyond the goods, which are ${width} mm wide.`);
-  const shares = sharesOf(
+      return fault('feet', `Foot ${i + 1} stands at ${xMm} mm, beyond the goods, which are ${width} mm wide. Move it under them.`);
+  const found = sharesOf(
     feet.map(({ xMm }) => xMm),
     feet.map(({ share }) => share),
     width,
-    'foot',
+    FEET,
   );
-  if (!Array.isArray(shares)) return shares as ReturnType<typeof wrong>;
-  return {
-    ok: true,
-    load: { lines: [], points: feet.map(({ xMm }, i) => ({ at: Math.min(Math.max(xMm, 0), width), force: shares[i] as number })) },
-  };
+  if (!found.ok) return found;
+  const points = feet.map(({ xMm }, i) => ({ at: Math.min(Math.max(xMm, 0), width), force: found.shares[i] as number }));
+  return { ok: true, load: { lines: [], points } };
 }

@@ -28,7 +28,7 @@ export type GoodsLaid =
     }
   | { readonly ok: false; readonly problem: GoodsProblem; readonly message: string };
 
-export const wrong = (problem: GoodsProblem, message: string) => ({ ok: false, problem, message }) as const;
+const wrong = (problem: GoodsProblem, message: string) => ({ ok: false, problem, message }) as const;
 
 /** A shape before it is scaled: intensities in kg per mm if `absolute`, else only in proportion. */
 interface Outline {
@@ -42,7 +42,8 @@ const KG_PER_MM = 1e-3;
 const KG_PER_MM3 = 1e-9;
 
 /**
- * Lays goods out along the beam. Pieces always integrate to `massKg`.
+ * Lays goods out along the beam. Pieces always integrate to `massKg`: a given mass scales the shape, and
+ * what the shape's own figures come to is told beside it as `foundKg`. Stretches without load are left out.
  * @returns pieces in N and N/mm, or what is wrong with the shape, where, and how to mend it
  * Source: statics; masses weigh 9.80665 N a kg.
  * @example 800 kg even over 800 mm → one piece of 9.80665 N/mm
@@ -65,16 +66,20 @@ export function goodsIntensity(goods: GoodsOnBeam): GoodsLaid {
       foundKg: null,
     };
   }
-  const shape = outlineOf(bearing, width, goods.depthMm ?? null);
+  const depth = goods.depthMm !== undefined && goods.depthMm > 0 ? goods.depthMm : null;
+  const shape = outlineOf(bearing, width, depth);
   if (!shape.ok) return shape;
   const area = shape.lines.reduce((sum, { from, to, wFrom, wTo }) => sum + ((to - from) * (wFrom + wTo)) / 2, 0);
   if (!(area > 0))
     return wrong('empty-shape', 'The shape is flat: it holds no goods anywhere. Give at least one place a height or a mass.');
+  if (!(area < Infinity)) return wrong('empty-shape', 'The figures of the shape are too great to add up. Check their units.');
   const foundKg = shape.absolute ? area : null;
   const massKg = goodsKg ?? foundKg;
   if (massKg === null) return MASS_MISSING;
   const scale = (massKg / area) * STANDARD_GRAVITY;
-  const lines = shape.lines.map(({ from, to, wFrom, wTo }) => ({ from, to, wFrom: wFrom * scale, wTo: wTo * scale }));
+  const lines = shape.lines
+    .filter(({ wFrom, wTo }) => wFrom > 0 || wTo > 0)
+    .map(({ from, to, wFrom, wTo }) => ({ from, to, wFrom: wFrom * scale, wTo: wTo * scale }));
   return { ok: true, pieces: { lines, points: [] }, massKg, foundKg };
 }
 
@@ -113,7 +118,7 @@ function stepped(columns: readonly SteppedColumn[], width: number, depth: number
     if (!(kg >= 0 && kg < Infinity)) return wrong('columns', `Column ${i + 1} must hold 0 kg or more; it comes to ${kg} kg.`);
     // The last column ends where the goods end, so that the rounding of the sum leaves no gap.
     const to = i === columns.length - 1 ? width : edge + column.widthMm;
-    const w = kg / column.widthMm;
+    const w = kg / (to - edge);
     if (to > edge) lines.push({ from: edge, to, wFrom: w, wTo: w });
     edge = to;
   }
@@ -147,12 +152,16 @@ function sloped(slope: Slope, width: number): Shaped {
       absolute = true;
     }
   }
-  if (!(left >= 0 && right >= 0 && left < Infinity && right < Infinity))
-    return wrong(
-      'slope',
-      `A slope may not fall below zero: its ${left >= 0 ? 'right' : 'left'} end does. Raise that end, or let the slope be gentler.`,
-    );
+  if (!(left >= 0 && left < Infinity)) return badSlope('left', left, absolute);
+  if (!(right >= 0 && right < Infinity)) return badSlope('right', right, absolute);
   return { ok: true, lines: [{ from: 0, to: width, wFrom: left, wTo: right }], absolute };
+}
+
+/** @param value kg per mm if `absolute` */
+function badSlope(end: 'left' | 'right', value: number, absolute: boolean): Shaped {
+  if (!Number.isFinite(value)) return wrong('slope', `The ${end} end of the slope is not a number. Enter its figures again.`);
+  const shown = absolute ? ` It comes to ${Number((value / KG_PER_MM).toPrecision(6))} kg/m.` : '';
+  return wrong('slope', `The ${end} end of the slope falls below zero.${shown} Raise that end, or make the slope gentler.`);
 }
 
 function profile(
