@@ -1,5 +1,6 @@
 /** Whole random sites that the strict reader takes, for property tests. */
 import * as fc from 'fast-check';
+import { LOADED_BY } from '../src-core/checks/clearance-rules';
 import { CHECKS } from '../src-core/checks/finding';
 import { RULE_KEYS } from '../src-core/checks/rule-sets';
 import { RULES } from '../src-core/checks/rule-table';
@@ -292,6 +293,7 @@ export function arbitrarySite(): fc.Arbitrary<Site> {
         id: nextId('r'),
         name: any(name),
         floorId: oneOf(floors),
+        loadedBy: any(fc.constantFrom(...LOADED_BY)),
         twoDeep: any(answer),
         backToBack: null,
         frames: Array.from({ length: bays.length + 1 }, frame),

@@ -175,6 +175,7 @@ export const makeRun = (bays: readonly Bay[] = [], part: Partial<Run> = {}, fram
   id: anId('run'),
   name: 'A',
   floorId: null,
+  loadedBy: 'class-400',
   twoDeep: 'no',
   backToBack: null,
   frames: Array.from({ length: bays.length + 1 }, (_, i) => makeFrame({ name: `A-F${i + 1}`, ...frame })),

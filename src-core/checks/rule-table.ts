@@ -44,6 +44,7 @@ const inches = (count: number) => count * MM_PER_INCH;
 const poundsForce = (count: number) => count * KG_PER_POUND * STANDARD_GRAVITY;
 
 const EN_15620 = 'EN 15620:2008 §5.4.2, class 400; compare EN 15620:2021';
+const EN_15620_300 = 'EN 15620:2008 §6.4, class 300; compare EN 15620:2021';
 const US_CUSTOM = 'customary in the United States';
 const SOUTHERN = 'South African rack users’ training note (secondary); not an Australian document';
 const STRAIGHTEDGE = 'FEM 10.2.04 and EN 15635 as restated by straightedge instructions (secondary)';
@@ -108,6 +109,17 @@ export const RULES = {
       practice(50, NOT_STATED),
     ),
   },
+  blockLength: {
+    label: 'Length of a pallet’s end block, front to rear',
+    kind: 'length',
+    least: 0,
+    most: 1000,
+    ...sets(
+      memory(145, 'EN 13698-1, blocks of 145 mm'),
+      practice(inches(5.5), 'block pallets; stringers run through'),
+      practice(145, NOT_STATED),
+    ),
+  },
   deckFootprint: {
     label: 'Share of a deck panel below which a base counts as concentrated',
     kind: 'ratio',
@@ -136,6 +148,12 @@ export const RULES = {
   clearanceAboveTo6m: clearance('Above the load, levels above 3 m up to 6 m', memory(100, EN_15620), inches(4), 100),
   clearanceAboveTo9m: clearance('Above the load, levels above 6 m up to 9 m', memory(125, EN_15620), inches(4), 125),
   clearanceAboveTo13m: clearance('Above the load, levels above 9 m up to 13 m', memory(150, EN_15620), inches(4), 125),
+  clearanceUprightTo15m: clearance('Load to upright, levels above 13 m up to 15 m', memory(100, EN_15620_300), inches(3), 75),
+  clearanceLoadsTo15m: clearance('Load to load, levels above 13 m up to 15 m', memory(100, EN_15620_300), inches(4), 100),
+  clearanceAboveTo15m: clearance('Above the load, levels above 13 m up to 15 m', memory(175, EN_15620_300), inches(4), 125),
+  clearanceUprightRising: clearance('Load to upright, driver rising with the load', memory(75, EN_15620_300), inches(3), 75),
+  clearanceLoadsRising: clearance('Load to load, driver rising with the load', memory(75, EN_15620_300), inches(4), 100),
+  clearanceAboveRising: clearance('Above the load, driver rising with the load', memory(75, EN_15620_300), inches(4), 100),
   clearanceBackToBack: {
     label: 'Clearance between loads standing back to back',
     kind: 'length',
@@ -156,6 +174,13 @@ export const RULES = {
   },
 
   // ---------------------------------------------------------------- frames, base and stability
+  levelMatch: {
+    label: 'Beams of neighbouring bays count as one level within',
+    kind: 'length',
+    least: 0,
+    most: 500,
+    ...alike(practice(50, 'about one step of the uprights’ holes')),
+  },
   interpolatedWarn: {
     label: 'Close begins above, for an interpolated frame rating',
     kind: 'ratio',

@@ -1,4 +1,5 @@
 /** The site as it stands in its file: rules, racks and libraries, key by key in canonical order. */
+import { LOADED_BY } from '../checks/clearance-rules';
 import { CHECKS } from '../checks/finding';
 import { RULE_KEYS, type RuleKey, type RuleSetName } from '../checks/rule-sets';
 import { RULES } from '../checks/rule-table';
@@ -113,6 +114,7 @@ export const run = record<Run>(
     id: ownId('run'),
     name: aName,
     floorId: nullable(reference('floor')),
+    loadedBy: choice(LOADED_BY),
     twoDeep: answer,
     backToBack: nullable(
       record('tie to the run behind', { runId: reference('run'), gapMm: aLengthOrZero, rowSpacers: answer }),

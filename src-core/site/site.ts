@@ -8,6 +8,7 @@
  *
  * Left and right are as seen from the aisle, standing in front of the bay; front is the aisle side.
  */
+import type { LoadedBy } from '../checks/clearance-rules';
 import type { CheckName } from '../checks/finding';
 import type { RuleKey, RuleSetName } from '../checks/rule-sets';
 import type { BearingShape, DepthShape } from '../goods/shapes';
@@ -189,9 +190,11 @@ export interface Run {
   readonly id: Id;
   readonly name: string;
   readonly floorId: Id | null;
+  /** What puts the goods away: the class of truck decides the clearances. */
+  readonly loadedBy: LoadedBy;
   /** Deep goods stored two behind one another. */
   readonly twoDeep: Answer;
-  /** The run behind this one, tied by row spacers; null = stands alone. */
+  /** The run behind this one, its back to this one's; null = stands alone. The gap is free, from frame to frame. */
   readonly backToBack: { readonly runId: Id; readonly gapMm: number; readonly rowSpacers: Answer } | null;
   readonly frames: readonly Frame[];
   readonly bays: readonly Bay[];

@@ -1,4 +1,5 @@
 /** Choices that forms offer, in the trade's words. */
+import { LOADED_BY, LOADED_BY_WORDS, type LoadedBy } from '../../src-core/checks/clearance-rules';
 import type { BearingShape, Damage, Deck, DepthShape, Floor, Pallet, Rules, Slope, Source, UnitLoad } from '../../src-core/site/site';
 
 interface Option<V> {
@@ -56,6 +57,8 @@ export const PALLET_BOARDS: readonly Option<Pallet['boards']>[] = [
   { value: 'full', name: 'closed underside' },
   { value: 'none', name: 'feet only' },
 ];
+
+export const LOADED_BY_OPTIONS: readonly Option<LoadedBy>[] = LOADED_BY.map((value) => ({ value, name: LOADED_BY_WORDS[value] }));
 
 export const DECK_KINDS: readonly Option<Deck['kind']>[] = [
   { value: 'none', name: 'none: goods stand on the beams' },
