@@ -8,7 +8,7 @@ import { weightOf } from '../units/quantity';
 import type { GoodsWork, SiteContext } from './context';
 
 /** @throws RangeError if the site has no such unit load or pallet, which a read site always has */
-export function goodsWork(context: SiteContext, unitLoadId: Id): GoodsWork {
+export function goodsWork(context: Pick<SiteContext, 'unitLoads' | 'pallets'>, unitLoadId: Id): GoodsWork {
   const unitLoad = context.unitLoads.get(unitLoadId);
   if (unitLoad === undefined) throw new RangeError(`no unit load "${unitLoadId}" in the site`);
   const pallet = unitLoad.palletId === null ? null : context.pallets.get(unitLoad.palletId);

@@ -4,9 +4,10 @@
  */
 import { TOUCH } from '../../src-core/checks/placement';
 import type { Bay, Id, Level, Placement, Run, UnitLoad } from '../../src-core/site/site';
-import type { Libraries, Weighed } from './libraries';
+import type { Libraries } from './libraries';
 import { outlineOf, type Outline } from './outline';
 import { overlaps, type Standing } from './snap';
+import type { Weighed } from './weigh';
 
 /** Sizes at which members are drawn whose type is not known, mm. */
 const DRAWN_UPRIGHT = 100;

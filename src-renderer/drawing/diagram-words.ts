@@ -12,8 +12,10 @@ export const DIAGRAM_TITLES: Readonly<Record<DiagramName, string>> = {
 
 export const BEAM_NAMES: Readonly<Record<BeamName, string>> = { pair: 'both beams together', front: 'front beam', rear: 'rear beam' };
 
-/** "1 382 mm", or "between 1 200 and 1 500 mm" on a plateau. */
-export function placeWords({ from, to }: Pick<Peak, 'from' | 'to'>, reading: Reading): string {
+/** "at 1 382 mm", "at the left support", or "between 1 200 mm and 1 500 mm" on a plateau. */
+export function placeWords({ from, to }: Pick<Peak, 'from' | 'to'>, span: number, reading: Reading): string {
+  if (to < 0.5) return 'at the left support';
+  if (from > span - 0.5) return 'at the right support';
   if (to - from < 0.5) return `at ${formatQuantity(lengthOf(from), reading)}`;
   return `between ${formatQuantity(lengthOf(from), reading)} and ${formatQuantity(lengthOf(to), reading)}`;
 }
@@ -24,13 +26,14 @@ export const peakFigure = (diagram: Diagram, peak: Peak, reading: Reading): stri
 /** The label at the peak: figure and place, without repeating the unit of length. */
 export function peakLabel(diagram: Diagram, peak: Peak, reading: Reading): string {
   const beam = peak.beam === 'pair' ? '' : `${peak.beam} `;
-  if (!diagram.measured) return `${beam}most ${placeWords(peak, reading)}`;
-  return `${beam}${peakFigure(diagram, peak, reading)} ${placeWords(peak, reading)}`;
+  if (!diagram.measured) return `${beam}most ${placeWords(peak, diagram.plot.span, reading)}`;
+  return `${beam}${peakFigure(diagram, peak, reading)} ${placeWords(peak, diagram.plot.span, reading)}`;
 }
 
+/** "rated even load 506 kg·m": what the rating, evenly spread, does to what is drawn. */
 export function limitWords(limit: Limit, diagram: Diagram, reading: Reading, sagDivisor: number | null): string {
-  const name = limit.kind === 'even load' ? 'rating, evenly spread' : `span ÷ ${sagDivisor ?? '?'}`;
-  return diagram.measured ? `${name}: ${formatQuantity(valueOf(diagram.name, limit.value), reading)}` : name;
+  const name = limit.kind === 'even load' ? 'rated even load' : `span/${sagDivisor ?? '?'}`;
+  return diagram.measured ? `${name} ${formatQuantity(valueOf(diagram.name, limit.value), reading)}` : name;
 }
 
 /** One sentence with the governing value and how it stands to its limits. */
@@ -44,12 +47,12 @@ export function diagramSentence(diagram: Diagram, reading: Reading, sagDivisor: 
       even && even.value > 0
         ? `, ${formatValue({ value: worst.value / even.value, kind: 'ratio' }, reading).number} times that under the rating evenly spread`
         : '';
-    return `${title}, shape only because the beam’s section is not known: greatest ${placeWords(worst, reading)} on the ${BEAM_NAMES[worst.beam]}${ratio}.`;
+    return `${title}, shape only because the beam’s section is not known: greatest ${placeWords(worst, diagram.plot.span, reading)} on the ${BEAM_NAMES[worst.beam]}${ratio}.`;
   }
   const of = worst.beam === 'pair' ? 'both beams together' : `the ${BEAM_NAMES[worst.beam]}`;
   const limits = diagram.limits.map(
-    (limit) => `${limit.exceeded ? 'beyond' : 'within'} ${limitWords(limit, diagram, reading, sagDivisor).replace(':', ',')}`,
+    (limit) => `${limit.exceeded ? 'beyond' : 'within'} ${limitWords(limit, diagram, reading, sagDivisor)}`,
   );
   const against = limits.length > 0 ? `; ${limits.join('; ')}` : '';
-  return `${title} of ${of}: greatest ${peakFigure(diagram, worst, reading)} ${placeWords(worst, reading)}${against}.`;
+  return `${title} of ${of}: greatest ${peakFigure(diagram, worst, reading)} ${placeWords(worst, diagram.plot.span, reading)}${against}.`;
 }

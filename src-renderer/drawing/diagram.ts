@@ -53,7 +53,7 @@ export interface EvenLoad {
 }
 
 /** Room left in a diagram beyond its greatest value, as a share of it, for the figure at the peak. */
-const HEADROOM = 0.32;
+const HEADROOM = 0.42;
 const FOOTROOM = 0.06;
 
 /** Front and rear beam do the same work, within the rounding of the computation. */
@@ -168,18 +168,21 @@ export function diagramOf(name: DiagramName, wishes: DiagramWishes): Diagram {
     points,
     filled: beam.beam !== 'rear' || lines.length === 1,
   }));
-  const curves = [...limits.flatMap((limit) => limitCurves(name, limit, span)), ...beamCurves];
+  // Drawn from the last to the first: fills lie under every line.
+  const curves = [
+    ...limits.flatMap((limit) => limitCurves(name, limit, span)),
+    ...beamCurves.toSorted((a, b) => Number(a.filled) - Number(b.filled)),
+  ];
   const values = [0, ...curves.flatMap((curve) => curve.points.map((point) => point.y))];
   const [low, high] = [Math.min(...values), Math.max(...values)];
   const extent = Math.max(high - low, 1e-9);
-  const twoSided = low < 0;
   return {
     name,
     plot: {
       curves,
       span,
-      least: low - extent * (twoSided ? 0.16 : FOOTROOM),
-      most: high + extent * (twoSided ? 0.2 : HEADROOM),
+      least: low - extent * FOOTROOM,
+      most: high + extent * HEADROOM,
       downwards: name === 'deflection',
     },
     peaks,

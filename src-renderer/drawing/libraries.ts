@@ -1,15 +1,6 @@
 /** The parts of a site's libraries that are drawn, by id; the same object as long as the site keeps its libraries. */
-import { contextOf } from '../../src-core/audit/context';
-import { goodsWork } from '../../src-core/audit/goods';
 import type { BeamType, FrameType, Id, Pallet, Site, UnitLoad } from '../../src-core/site/site';
-import type { BeamLoad } from '../../src-core/statics/load';
-
-/** What the core found a unit load to weigh, and how it presses on the beam. */
-export interface Weighed {
-  readonly grossKg: number | null;
-  /** N, x in mm from the unit load's own left edge; null where it is not known. */
-  readonly pieces: BeamLoad | null;
-}
+import { weigh, type Weighed } from './weigh';
 
 export interface DrawnUnitLoad extends Weighed {
   readonly unitLoad: UnitLoad;
@@ -22,13 +13,18 @@ export interface Libraries {
   readonly frameTypes: ReadonlyMap<Id, FrameType>;
 }
 
-function gather(site: Site): Libraries {
-  // What unit loads weigh does not depend on the day.
-  const context = contextOf(site, '');
+function gather({ unitLoads, pallets, beamTypes, frameTypes }: Site): Libraries {
+  const byId = <T extends { readonly id: Id }>(all: readonly T[]) => new Map(all.map((one) => [one.id, one]));
+  const palletOf = byId(pallets);
   return {
-    unitLoads: new Map(site.unitLoads.map(({ id }) => [id, goodsWork(context, id)])),
-    beamTypes: context.beamTypes,
-    frameTypes: context.frameTypes,
+    unitLoads: new Map(
+      unitLoads.map((unitLoad) => {
+        const pallet = palletOf.get(unitLoad.palletId ?? '') ?? null;
+        return [unitLoad.id, { unitLoad, pallet, ...weigh(unitLoad, pallet) }];
+      }),
+    ),
+    beamTypes: byId(beamTypes),
+    frameTypes: byId(frameTypes),
   };
 }
 

@@ -3,7 +3,8 @@
  * resultants are drawn, never both as loads: the resultant stands for the diagram, not beside it.
  */
 import type { StandingLoad } from '../../src-core/audit/context';
-import { reduce } from '../../src-core/statics/reduction';
+import { pairLoads } from '../../src-core/goods/pair';
+import { partsOf as reduceInParts, reduce, type Reduction } from '../../src-core/statics/reduction';
 import type { BeamLoad, LineLoad } from '../../src-core/statics/load';
 import { massWeighing } from '../../src-core/units/quantity';
 import type { BeamView } from './diagram';
@@ -22,73 +23,74 @@ export interface Part {
   readonly area: readonly Point[];
 }
 
+/** One unit load's load on what is shown. */
 export interface Stretch {
   readonly id: string;
   readonly name: string;
+  /** Its left edge, mm from the left support. */
+  readonly at: number;
+  /** x from its left edge. */
   readonly load: BeamLoad;
 }
 
-/** The goods' loads on what is shown, x from the left support; "both" beams give the pair. */
+/** The goods' loads on what is shown; "both" beams give the pair. */
 export function stretchesOf(goods: readonly StandingLoad[], view: BeamView, supportToFace: number): readonly Stretch[] {
-  return goods.flatMap(({ placement, goods: work, fromMm, toMm, frontShare }): Stretch[] => {
-    const { pieces } = work;
-    if (pieces === null) return [];
-    const share = view === 'front' ? (frontShare ?? 0.5) : view === 'rear' ? 1 - (frontShare ?? 0.5) : 1;
-    const place = (x: number) => supportToFace + (placement.mirrored ? toMm - x : fromMm + x);
-    const lines = pieces.lines.map((line) =>
-      placement.mirrored
-        ? { from: place(line.to), to: place(line.from), wFrom: line.wTo * share, wTo: line.wFrom * share }
-        : { from: place(line.from), to: place(line.to), wFrom: line.wFrom * share, wTo: line.wTo * share },
-    );
-    const points = pieces.points.map((point) => ({ at: place(point.at), force: point.force * share }));
-    return [{ id: placement.id, name: work.unitLoad.name, load: { lines, points } }];
+  return goods.flatMap(({ placement, goods: work, fromMm, frontShare }): Stretch[] => {
+    if (work.pieces === null || frontShare === null) return [];
+    const { name, widthMm: width } = work.unitLoad;
+    const one = { id: placement.id, load: work.pieces, widthMm: width, at: 0, mirrored: placement.mirrored, frontShare };
+    const { whole, front, rear } = pairLoads([one]);
+    return [{ id: placement.id, name, at: supportToFace + fromMm, load: { pair: whole, both: whole, front, rear }[view] }];
   });
 }
 
-/** A straight piece as the rectangle under it and the triangle on top; either may be missing. */
-function rectangleAndTriangle({
-  from,
-  to,
-  wFrom,
-  wTo,
-}: LineLoad): readonly { readonly name: string; readonly line: LineLoad; readonly base: number }[] {
-  const low = Math.min(wFrom, wTo);
-  const rectangle = { name: 'rectangle', line: { from, to, wFrom: low, wTo: low }, base: 0 };
-  const triangle = { name: 'triangle', line: { from, to, wFrom: wFrom - low, wTo: wTo - low }, base: low };
-  return [...(low > 0 ? [rectangle] : []), ...(wFrom !== wTo ? [triangle] : [])];
-}
-
-function areaOf({ from, to, wFrom, wTo }: LineLoad, base: number): readonly Point[] {
-  const kg = massWeighing;
+function areaOf({ from, to, wFrom, wTo }: LineLoad, at: number, base = 0): readonly Point[] {
+  const [low, left, right] = [base, base + wFrom, base + wTo].map(massWeighing) as [number, number, number];
   const corners = [
-    { x: from, y: kg(base) },
-    { x: from, y: kg(base + wFrom) },
-    { x: to, y: kg(base + wTo) },
-    { x: to, y: kg(base) },
+    { x: at + from, y: low },
+    { x: at + from, y: left },
+    { x: at + to, y: right },
+    { x: at + to, y: low },
   ];
   // A triangle has one corner twice.
   return corners.filter((corner, i) => i === 0 || corner.x !== corners[i - 1]?.x || corner.y !== corners[i - 1]?.y);
 }
 
-function part(key: string, label: string, load: BeamLoad, area: readonly Point[]): Part[] {
-  const { resultant, centroid } = reduce(load);
-  return centroid === null ? [] : [{ key, label, massKg: massWeighing(resultant), at: centroid, area }];
+const topOf = ({ at, load }: Stretch): readonly Point[] => summed(load.lines).flatMap((line) => areaOf(line, at));
+
+function part(key: string, label: string, { resultant, centroid }: Reduction, at: number, area: readonly Point[]): Part[] {
+  return centroid === null ? [] : [{ key, label, massKg: massWeighing(resultant), at: at + centroid, area }];
 }
 
-const topOf = (lines: readonly LineLoad[]): readonly Point[] => summed(lines).flatMap((line) => areaOf(line, 0));
+const shifted = ({ at, load }: Stretch): BeamLoad => ({
+  lines: load.lines.map((line) => ({ ...line, from: at + line.from, to: at + line.to })),
+  points: load.points.map((point) => ({ ...point, at: at + point.at })),
+});
+
+/** A triangle stands on the rectangle of its piece, where there is one. */
+function piecesOf(stretch: Stretch): readonly Part[] {
+  const { id, name, at, load } = stretch;
+  const lines = summed(load.lines).flatMap((line, i) =>
+    reduceInParts({ lines: [line], points: [] }).flatMap((piece) => {
+      const base = piece.shape === 'triangle' ? Math.min(line.wFrom, line.wTo) : 0;
+      return part(`${id} ${i} ${piece.shape}`, `${name}, ${piece.shape}`, piece, at, areaOf(piece, at, base));
+    }),
+  );
+  const points = reduceInParts({ lines: [], points: load.points });
+  return [...lines, ...points.flatMap((point, i) => part(`${id} point ${i}`, `${name}, foot`, point, at, []))];
+}
 
 export function partsOf(stretches: readonly Stretch[], division: Division): readonly Part[] {
-  if (division === 'whole') {
-    const load = { lines: stretches.flatMap(({ load }) => load.lines), points: stretches.flatMap(({ load }) => load.points) };
-    return part('whole', 'All goods', load, topOf(load.lines));
+  if (division === 'pieces') return stretches.flatMap(piecesOf);
+  if (division === 'unit loads') {
+    return stretches.flatMap((stretch) => part(stretch.id, stretch.name, reduce(stretch.load), stretch.at, topOf(stretch)));
   }
-  if (division === 'unit loads') return stretches.flatMap(({ id, name, load }) => part(id, name, load, topOf(load.lines)));
-  return stretches.flatMap(({ id, name, load }) => [
-    ...summed(load.lines).flatMap((line, i) =>
-      rectangleAndTriangle(line).flatMap((piece) =>
-        part(`${id} ${i} ${piece.name}`, `${name}, ${piece.name}`, { lines: [piece.line], points: [] }, areaOf(piece.line, piece.base)),
-      ),
-    ),
-    ...load.points.flatMap((point, i) => part(`${id} point ${i}`, `${name}, foot`, { lines: [], points: [point] }, [])),
-  ]);
+  const loads = stretches.map(shifted);
+  const whole = { lines: loads.flatMap(({ lines }) => lines), points: loads.flatMap(({ points }) => points) };
+  return part('whole', 'All goods', reduce(whole), 0, stretches.flatMap(topOf));
+}
+
+/** Feet and other point loads, for the arrows that stand for them in the intensity diagram. */
+export function pointsOf(stretches: readonly Stretch[]): readonly { readonly at: number; readonly massKg: number }[] {
+  return stretches.flatMap(({ at, load }) => load.points.map((point) => ({ at: at + point.at, massKg: massWeighing(point.force) })));
 }

@@ -2,33 +2,38 @@
  * The load skyline: a unit load's intensity as shapes standing on the beam, in px.
  * Heights are in proportion to the intensity (N/mm), at one rate for all that is compared.
  */
+import { pairLoads } from '../../src-core/goods/pair';
 import type { BeamLoad, LineLoad } from '../../src-core/statics/load';
+import { cutIntoPieces } from '../../src-core/statics/pieces';
+import { weightOf } from '../../src-core/units/quantity';
 import type { BayDrawn, GoodsDrawn } from './bay-model';
 import type { Point } from './outline';
+import { clamp } from './scale';
 
 export interface Skyline {
   /** One polygon a stretch under load. */
   readonly areas: readonly (readonly Point[])[];
   /** Point loads, each as an arrow's foot and height. */
   readonly arrows: readonly { readonly x: number; readonly height: number }[];
+  /** Middles of the stretches that are cut off, to be marked as such. */
+  readonly cuts: readonly number[];
 }
 
 /** A point load is drawn as high as if it were spread over this length, mm. */
 const POINT_SPREAD = 150;
 
-const along = (line: LineLoad, x: number): number => line.wFrom + ((line.wTo - line.wFrom) * (x - line.from)) / (line.to - line.from);
-
-/** Pieces that add where they lie over one another, as pieces side by side from left to right. */
+/** Straight pieces cut where they begin and end, side by side from left to right; what lies over one another adds. */
 export function summed(lines: readonly LineLoad[]): readonly LineLoad[] {
-  const breaks = [...new Set(lines.flatMap((line) => [line.from, line.to]))].sort((a, b) => a - b);
-  return breaks.slice(1).flatMap((to, i): LineLoad[] => {
-    const from = breaks[i] ?? to;
-    const over = lines.filter((line) => line.from <= from && line.to >= to);
-    if (over.length === 0) return [];
-    const sum = (x: number) => over.reduce((total, line) => total + along(line, x), 0);
-    return [{ from, to, wFrom: sum(from), wTo: sum(to) }];
-  });
+  const end = Math.max(0, ...lines.map((line) => line.to));
+  if (end === 0) return [];
+  const { count, x, wFrom, wTo } = cutIntoPieces({ lines, points: [] }, end);
+  const pieces = Array.from({ length: count }, (_, i) => ({ from: x[i] ?? 0, to: x[i + 1] ?? 0, wFrom: wFrom[i] ?? 0, wTo: wTo[i] ?? 0 }));
+  return pieces.filter((line) => line.wFrom + line.wTo > 0);
 }
+
+/** A unit load's load as it stands, turned left for right where it is mirrored; x from its left edge. */
+export const asStanding = (load: BeamLoad, widthMm: number, mirrored: boolean): BeamLoad =>
+  pairLoads([{ id: '', load, widthMm, at: 0, mirrored, frontShare: 0.5 }]).whole;
 
 /** Greatest intensity of a load, N/mm, a point load taken as spread. */
 export function peakIntensity(load: BeamLoad | null): number {
@@ -37,9 +42,26 @@ export function peakIntensity(load: BeamLoad | null): number {
   return Math.max(0, ...summed(load.lines).flatMap((line) => [line.wFrom, line.wTo]), ...points);
 }
 
-/** Greatest intensity in a bay, for a common rate of its skylines. */
-export function peakOfBay(bay: BayDrawn): number {
-  return Math.max(0, ...bay.levels.flatMap((level) => level.goods.map((goods) => peakIntensity(goods.weighed.pieces))));
+/** Share of a level's room that goods of the greatest mean intensity fill, at least and at most; peaks rise above it. */
+const FILLED = { least: 0.36, most: 0.6 };
+/** Share of the room at which a peak is cut off, so that narrow feet do not flatten all the rest. */
+export const CUT = 0.94;
+
+const meanIntensity = (goods: GoodsDrawn): number => weightOf(goods.weighed.grossKg ?? 0) / goods.unitLoad.widthMm;
+
+/**
+ * px per N/mm for the skylines of these bays, one rate for all so that they compare: as high as the
+ * lowest level's room allows.
+ * @param scale px per mm of the drawing
+ */
+export function skylineRate(bays: readonly BayDrawn[], scale: number): number {
+  const beams = bays.flatMap((bay) => bay.levels.filter((level) => level.levelId !== null));
+  const room = Math.min(...beams.map((level) => level.room)) * scale;
+  const goods = beams.flatMap((level) => level.goods);
+  const mean = Math.max(0, ...goods.map(meanIntensity));
+  const peak = Math.max(0, ...goods.map((one) => peakIntensity(one.weighed.pieces)));
+  if (!Number.isFinite(room) || peak === 0) return 0;
+  return room * clamp(CUT / peak, FILLED.least / mean, FILLED.most / mean);
 }
 
 export interface SkylinePlace {
@@ -49,27 +71,34 @@ export interface SkylinePlace {
   readonly base: number;
   /** px per N/mm. */
   readonly rate: number;
+  /** px above the beam at which peaks are cut off. */
+  readonly cut: number;
 }
 
 /** The skyline of one unit load where it stands; empty where its load is not known. */
-export function skylineOf(goods: GoodsDrawn, { x, base, rate }: SkylinePlace): Skyline {
-  const load = goods.weighed.pieces;
-  if (load === null) return { areas: [], arrows: [] };
-  const { at, mirrored } = goods;
-  const place = (local: number) => x(at + (mirrored ? goods.unitLoad.widthMm - local : local));
+export function skylineOf(goods: GoodsDrawn, { x, base, rate, cut }: SkylinePlace): Skyline {
+  const { pieces } = goods.weighed;
+  if (pieces === null) return { areas: [], arrows: [], cuts: [] };
+  const load = asStanding(pieces, goods.unitLoad.widthMm, goods.mirrored);
+  const place = (local: number) => x(goods.at + local);
+  const top = (w: number) => base - Math.min(cut, w * rate);
   const areas: Point[][] = [];
+  const cuts: number[] = [];
   let end = NaN;
   for (const line of summed(load.lines)) {
-    const top = [
-      { x: place(line.from), y: base - line.wFrom * rate },
-      { x: place(line.to), y: base - line.wTo * rate },
+    const from = place(line.from);
+    const to = place(line.to);
+    const edge = [
+      { x: from, y: top(line.wFrom) },
+      { x: to, y: top(line.wTo) },
     ];
+    if (Math.max(line.wFrom, line.wTo) * rate > cut + 0.01) cuts.push((from + to) / 2);
     const area = areas.at(-1);
     // Its last point is the foot of the stretch so far; a stretch that goes on moves it along.
-    if (area && line.from === end) area.splice(-1, 1, ...top, { x: place(line.to), y: base });
-    else areas.push([{ x: place(line.from), y: base }, ...top, { x: place(line.to), y: base }]);
+    if (area && line.from === end) area.splice(-1, 1, ...edge, { x: to, y: base });
+    else areas.push([{ x: from, y: base }, ...edge, { x: to, y: base }]);
     end = line.to;
   }
-  const arrows = load.points.map((point) => ({ x: place(point.at), height: (point.force / POINT_SPREAD) * rate }));
-  return { areas, arrows };
+  const arrows = load.points.map((point) => ({ x: place(point.at), height: Math.min(cut, (point.force / POINT_SPREAD) * rate) }));
+  return { areas, arrows, cuts };
 }

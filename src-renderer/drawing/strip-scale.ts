@@ -1,8 +1,9 @@
 /** The one scale at which all bays of a run stand in the strip. */
 import type { BayDrawn } from './bay-model';
+import { skylineRate } from './skyline';
 
 /** px: the strip is at most this high, and a usual bay about this wide. */
-const TALLEST = 92;
+const TALLEST = 108;
 const WIDEST = 92;
 
 export interface StripScale {
@@ -13,11 +14,9 @@ export interface StripScale {
   readonly height: number;
 }
 
-export function stripScale(bays: readonly BayDrawn[], peak: number): StripScale {
+export function stripScale(bays: readonly BayDrawn[]): StripScale {
   const highest = Math.max(1, ...bays.map((bay) => bay.height));
   const widest = Math.max(1, ...bays.map((bay) => bay.entry));
   const rate = Math.min(TALLEST / highest, WIDEST / widest);
-  const rooms = bays.flatMap((bay) => bay.levels.filter((level) => level.levelId !== null).map((level) => level.room));
-  const room = Math.min(...rooms);
-  return { rate, skyline: peak > 0 && Number.isFinite(room) ? (0.8 * room * rate) / peak : 0, height: Math.ceil(highest * rate) + 2 };
+  return { rate, skyline: skylineRate(bays, rate), height: Math.ceil(highest * rate) + 2 };
 }

@@ -1,6 +1,7 @@
 /** Findings in order of weight, and by where they belong. */
 import type { BayAudit, FrameAudit, LevelAudit, RunAudit } from '../../src-core/audit/types';
-import { compareVerdicts, type Finding } from '../../src-core/checks/finding';
+import { compareVerdicts, type Finding, type Missing } from '../../src-core/checks/finding';
+import type { Id, Run } from '../../src-core/site/site';
 import { CHECK_WORDS } from '../../src-core/words/check-names';
 
 /** Worst first; of equal verdicts what counts before what only informs, then the most used. */
@@ -45,4 +46,37 @@ export function groupsOf({ run, bay, level, frames }: Audits, levelName: string)
     { heading: 'The run', findings: run?.findings ?? [] },
   ];
   return groups.filter((group) => group.findings.length > 0).map((group) => ({ ...group, findings: byWeight(group.findings) }));
+}
+
+/** Beside the run's elevation: the chosen frame, every other frame that is not within, what bays and run say of themselves. */
+export function runGroups(run: Run, audit: RunAudit, chosenFrameId: Id | null): readonly FindingGroup[] {
+  const frames = audit.frames
+    .filter((frame) => frame.frameId === chosenFrameId || (chosenFrameId === null && frame.verdict !== 'within'))
+    .map((frame) => ({ heading: `Frame ${run.frames.find(({ id }) => id === frame.frameId)?.name ?? ''}`, findings: frame.findings }));
+  const index = run.frames.findIndex(({ id }) => id === chosenFrameId);
+  const beside = chosenFrameId === null ? run.bays : run.bays.slice(Math.max(0, index - 1), index + 1);
+  const bays = beside.map((bay) => {
+    const findings = audit.bays.find(({ bayId }) => bayId === bay.id)?.findings ?? [];
+    return {
+      heading: `Bay ${bay.name}`,
+      findings: chosenFrameId === null ? findings.filter(({ verdict }) => verdict !== 'within') : findings,
+    };
+  });
+  return [...frames, { heading: 'The run', findings: audit.findings }, ...bays]
+    .filter((group) => group.findings.length > 0)
+    .map((group) => ({ ...group, findings: byWeight(group.findings) }));
+}
+
+/** What is missing, each input once, in the order in which findings ask for it, with the checks that wait for it. */
+export function missingOf(groups: readonly FindingGroup[]): readonly (Missing & { readonly checks: readonly string[] })[] {
+  const byField = new Map<string, Missing & { checks: string[] }>();
+  for (const { check, missing } of groups.flatMap((group) => group.findings)) {
+    for (const one of missing) {
+      const known = byField.get(one.field) ?? { ...one, checks: [] };
+      const name = CHECK_WORDS[check].name;
+      if (!known.checks.includes(name)) known.checks.push(name);
+      byField.set(one.field, known);
+    }
+  }
+  return [...byField.values()];
 }

@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest';
 import type { Finding } from '../../src-core/checks/finding';
-import { byWeight, groupsOf, keyOf, titleOf } from '../../src-renderer/findings/order';
+import { byWeight, groupsOf, keyOf, missingOf, titleOf } from '../../src-renderer/findings/order';
 
 const finding = (change: Partial<Finding>): Finding => ({
   check: 'beam-bending',
@@ -48,4 +48,10 @@ test('groups without findings are not shown, and the chosen level comes first', 
 test('keys tell findings of the same check on front and rear apart', () => {
   const [front, rear] = (['front', 'rear'] as const).map((beam) => finding({ place: { runId: 'r', beam } }));
   expect(front && rear && keyOf(front, 0) !== keyOf(rear, 0)).toBe(true);
+});
+
+test('an input that several checks wait for is asked for once, with their names', () => {
+  const missing = { input: 'mass of drums', how: 'Weigh one.', field: 'unit-load:u1:goodsKg' };
+  const findings = [finding({ check: 'level-total', missing: [missing] }), finding({ check: 'bay-total', missing: [missing] })];
+  expect(missingOf([{ heading: 'Level 1', findings }])).toEqual([{ ...missing, checks: ['Level total', 'Bay total'] }]);
 });

@@ -1,6 +1,7 @@
 import { expect, test } from 'vitest';
-import { peakIntensity, skylineOf, summed } from '../../src-renderer/drawing/skyline';
+import { peakIntensity, skylineOf, summed, skylineRate } from '../../src-renderer/drawing/skyline';
 import type { GoodsDrawn } from '../../src-renderer/drawing/bay-model';
+import { bayOf, goods as drawnGoods } from './make-bay';
 
 const line = (from: number, to: number, wFrom: number, wTo = wFrom) => ({ from, to, wFrom, wTo });
 const goods = (lines: readonly ReturnType<typeof line>[], change: Partial<GoodsDrawn> = {}) =>
@@ -11,7 +12,7 @@ const goods = (lines: readonly ReturnType<typeof line>[], change: Partial<GoodsD
     weighed: { grossKg: 1, pieces: { lines, points: [{ at: 200, force: 300 }] } },
     ...change,
   }) as unknown as GoodsDrawn;
-const place = { x: (mm: number) => mm / 10, base: 50, rate: 10 };
+const place = { x: (mm: number) => mm / 10, base: 50, rate: 10, cut: Infinity };
 
 test('pieces that lie over one another add, and gaps stay gaps', () => {
   expect(summed([line(0, 800, 1), line(200, 400, 2, 4), line(900, 1000, 1)])).toEqual([
@@ -45,10 +46,27 @@ test('one stretch under load is one polygon standing on the beam', () => {
 
 test('mirrored goods press the other way round', () => {
   const { areas, arrows } = skylineOf(goods([line(0, 400, 1)], { mirrored: true }), place);
-  expect(areas[0]?.map((point) => point.x)).toEqual([90, 90, 50, 50]);
+  expect(areas[0]?.map((point) => point.x)).toEqual([50, 50, 90, 90]);
   expect(arrows[0]?.x).toBe(70);
 });
 
 test('goods of unknown load have no skyline', () => {
-  expect(skylineOf(goods([], { weighed: { grossKg: null, pieces: null } }), place)).toEqual({ areas: [], arrows: [] });
+  expect(skylineOf(goods([], { weighed: { grossKg: null, pieces: null } }), place)).toEqual({ areas: [], arrows: [], cuts: [] });
+});
+
+test('peaks beyond the room are cut off there and marked, the rest keeps its height', () => {
+  const { areas, cuts } = skylineOf(goods([line(0, 400, 1), line(400, 800, 9)]), { ...place, cut: 40 });
+  expect(areas[0]?.map((point) => point.y)).toEqual([50, 40, 40, 10, 10, 50]);
+  expect(cuts).toEqual([70]);
+});
+
+test('narrow feet do not flatten the skylines of everything else', () => {
+  const even = drawnGoods('even', 75);
+  const feet = drawnGoods('feet', 950);
+  const weigh = (wide: number, mm: number) => ({ grossKg: 500, pieces: { lines: [line(0, mm, wide)], points: [] } });
+  const bay = (extra: GoodsDrawn[]) => bayOf([[], [{ ...even, weighed: weigh(6, 800) }, ...extra], []]);
+  const alone = skylineRate([bay([])], 0.1);
+  const beside = skylineRate([bay([{ ...feet, weighed: weigh(80, 60) }])], 0.1);
+  expect(beside).toBeGreaterThan(0.3 * alone);
+  expect(skylineRate([bayOf()], 0.1)).toBe(0);
 });
