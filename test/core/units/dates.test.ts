@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
-import { addDays, addMonths, daysBetween } from '../../../src-core/visit/dates';
+import { addDays, addMonths, daysBetween } from '../../../src-core/units/dates';
 
 // Expected days: from a printed perpetual calendar, counted by hand.
 test.each([
