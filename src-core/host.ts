@@ -9,6 +9,8 @@
 export interface SiteEntry {
   readonly id: string;
   readonly name: string;
+  /** Revision of the file as it was when listed; an unreadable file can be replaced or removed by it. Null if there is none. */
+  readonly revision: string | null;
   readonly savedAt: string;
   readonly bytes: number;
   readonly bays: number | null;
@@ -32,6 +34,11 @@ export interface RecoveredEdits {
   readonly body: string;
   readonly editedAt: string;
   readonly edits: readonly string[];
+  /**
+   * Revision the edits were made on. Where it is not the site's present one, someone saved the site
+   * since: a save of these edits has to carry this revision, so that the host asks.
+   */
+  readonly baseRevision: string | null;
   /** Journal lines that were damaged and could not be used. */
   readonly damagedLines: number;
 }
@@ -89,8 +96,12 @@ export interface Host {
   saveSite(request: SaveRequest): Promise<Saved>;
   /** Puts the site aside in the removed folder; it can be brought back by hand. */
   removeSite(id: string, baseRevision: string): Promise<void>;
-  /** Takes a site file's text from elsewhere under a new id if its own is taken; returns the id. */
-  importSite(text: string): Promise<string>;
+  /**
+   * Takes a site file's text from elsewhere, under a new id if its own is taken; returns the id.
+   * Rejects with `altered` if its checksum does not match; `unchecked` takes it all the same, for a
+   * file that the user says was edited by hand.
+   */
+  importSite(text: string, unchecked?: boolean): Promise<string>;
   /** Adds the demo site that ships with the program; returns its id. */
   addDemoSite(): Promise<string>;
   listGenerations(id: string): Promise<readonly Generation[]>;
@@ -109,6 +120,7 @@ export const HOST_ERROR_CODES = [
   'not-found',
   'stale',
   'unreadable',
+  'altered',
   'newer-version',
   'too-large',
   'disk-full',
@@ -121,7 +133,7 @@ export const HOST_ERROR_CODES = [
 ] as const;
 export type HostErrorCode = (typeof HOST_ERROR_CODES)[number];
 
-/** What crosses the boundary when a call fails: a code and a sentence that says what, where and how to mend it. */
+/** What every rejected call gives, and what crosses the boundary when a call fails: a code and a sentence that says what, where and how to mend it. */
 export interface HostFailure {
   readonly code: HostErrorCode;
   readonly message: string;
