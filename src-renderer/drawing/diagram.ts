@@ -4,7 +4,7 @@
  */
 import type { LevelEffects } from '../../src-core/audit/types';
 import { solveBeam, type BeamAnswer } from '../../src-core/statics/beam';
-import { curvesOf } from '../../src-core/statics/curves';
+import { curvesOf, type CurvePoint } from '../../src-core/statics/curves';
 import { massWeighing, quantity, weightOf, type Quantity } from '../../src-core/units/quantity';
 import type { Curve, Plot } from './chart.svelte';
 import type { Point } from './outline';
@@ -18,8 +18,6 @@ export type DiagramName = (typeof DIAGRAMS)[number];
 export interface BeamShown {
   readonly beam: BeamName;
   readonly answer: BeamAnswer;
-  /** Deflection of what is drawn over that of the answer: the pair's load is solved on one beam, and sags half as much on two. */
-  readonly sagFactor: number;
 }
 
 /** A greatest value and where it is; `from` and `to` differ on a plateau. */
@@ -65,20 +63,20 @@ export function alike({ front, rear }: LevelEffects): boolean {
 }
 
 export function beamsShown(effects: LevelEffects, view: BeamView): readonly BeamShown[] {
-  const front: BeamShown = { beam: 'front', answer: effects.front, sagFactor: 1 };
-  const rear: BeamShown = { beam: 'rear', answer: effects.rear, sagFactor: 1 };
+  const front: BeamShown = { beam: 'front', answer: effects.front };
+  const rear: BeamShown = { beam: 'rear', answer: effects.rear };
   if (view === 'both') return [front, rear];
   if (view === 'front') return [front];
   if (view === 'rear') return [rear];
-  return [{ beam: 'pair', answer: effects.whole, sagFactor: 1 / 2 }];
+  return [{ beam: 'pair', answer: effects.whole }];
 }
 
 /** Value of one diagram at a point of a beam, in the unit in which it is shown. */
-const READ: Record<DiagramName, (point: ReturnType<typeof curvesOf>[number], sagFactor: number) => number> = {
+const READ: Record<DiagramName, (point: CurvePoint) => number> = {
   intensity: (point) => massWeighing(point.intensity),
   shear: (point) => massWeighing(point.shear),
   bending: (point) => massWeighing(point.moment),
-  deflection: (point, sagFactor) => point.deflection * sagFactor,
+  deflection: (point) => point.deflection,
 };
 
 const KIND = { intensity: 'lineMass', shear: 'mass', bending: 'massMoment', deflection: 'length' } as const;
@@ -86,10 +84,10 @@ const KIND = { intensity: 'lineMass', shear: 'mass', bending: 'massMoment', defl
 export const valueOf = (name: DiagramName, value: number): Quantity => quantity(KIND[name], value);
 
 export function curvePoints(shown: BeamShown, name: DiagramName): readonly Point[] {
-  return curvesOf(shown.answer).map((point) => ({ x: point.x, y: READ[name](point, shown.sagFactor) }));
+  return curvesOf(shown.answer).map((point) => ({ x: point.x, y: READ[name](point) }));
 }
 
-function peakOf({ beam, answer, sagFactor }: BeamShown, name: DiagramName, points: readonly Point[]): Peak | null {
+function peakOf({ beam, answer }: BeamShown, name: DiagramName, points: readonly Point[]): Peak | null {
   switch (name) {
     case 'intensity': {
       const top = points.reduce((most, point) => (point.y > most.y ? point : most), { x: 0, y: -Infinity });
@@ -104,7 +102,7 @@ function peakOf({ beam, answer, sagFactor }: BeamShown, name: DiagramName, point
       return { beam, value: massWeighing(sagging.moment), from: sagging.from, to: sagging.to };
     }
     case 'deflection':
-      return { beam, value: answer.deflection.sag * sagFactor, from: answer.deflection.at, to: answer.deflection.at };
+      return { beam, value: answer.deflection.sag, from: answer.deflection.at, to: answer.deflection.at };
   }
 }
 
