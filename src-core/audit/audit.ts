@@ -9,6 +9,7 @@ import { bayContentsFindings } from './bay';
 import { createAuditCache, type AuditCache } from './cache';
 import { contextOf, type BayWork, type FrameWork, type SiteContext } from './context';
 import { frameAudit } from './frame';
+import { goodsWork } from './goods';
 import { levelFindings } from './geometry';
 import { auditLevel } from './level';
 import { bayContents } from './level-work';
@@ -67,7 +68,24 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
   if (run === undefined) throw new RangeError(`no run "${runId}" in the site`);
   const behind = run.backToBack === null ? null : (context.runs.get(run.backToBack.runId) ?? null);
   const libraries = [site.pallets, site.unitLoads, site.notices, site.beamTypes, site.frameTypes, site.rules, runId];
-  const surroundings = [...libraries, site.floors, site.seismic, site.outdoors, today, run.floorId, run.twoDeep, run.backToBack, behind];
+  const surroundings = [
+    ...libraries,
+    site.floors,
+    site.seismic,
+    site.outdoors,
+    today,
+    run.floorId,
+    run.loadedBy,
+    run.twoDeep,
+    run.backToBack,
+    behind,
+  ];
+
+  const goodsOf = (id: Id) => {
+    const unitLoad = context.unitLoads.get(id);
+    if (unitLoad === undefined) throw new RangeError(`no unit load "${id}" in the site`);
+    return cache.remember('goods', unitLoad, [site.pallets], () => goodsWork(context, id));
+  };
 
   const work = (index: number): BayWork => {
     const [bay, left, right] = bayAt(run, index);
@@ -75,10 +93,16 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
     const frameTypes = [typeOf(left.typeId), typeOf(right.typeId)] as const;
     const place: Place = { runId, bayId: bay.id };
     const contents = cache.remember('contents', bay, [left, right, ...libraries], () =>
-      bayContents(context, place, bay, [
-        { frame: left, type: frameTypes[0] },
-        { frame: right, type: frameTypes[1] },
-      ]),
+      bayContents(
+        context,
+        place,
+        bay,
+        [
+          { frame: left, type: frameTypes[0] },
+          { frame: right, type: frameTypes[1] },
+        ],
+        goodsOf,
+      ),
     );
     const notice = bay.noticeId === null ? null : (context.notices.get(bay.noticeId) ?? null);
     return { run, bay, index, place, notice, frames: [left, right], frameTypes, ...contents };

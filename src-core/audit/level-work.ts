@@ -37,13 +37,16 @@ export interface BayContents {
   readonly onFloor: readonly StandingLoad[];
 }
 
-export function bayContents(context: SiteContext, place: Place, bay: Bay, frames: readonly [BayFrame, BayFrame]): BayContents {
-  const resolved = new Map<Id, GoodsWork>();
-  const goodsOf = (id: Id): GoodsWork => {
-    const known = resolved.get(id) ?? goodsWork(context, id);
-    resolved.set(id, known);
-    return known;
-  };
+/**
+ * @param goodsOf gives the site's unit loads, resolved
+ */
+export function bayContents(
+  context: SiteContext,
+  place: Place,
+  bay: Bay,
+  frames: readonly [BayFrame, BayFrame],
+  goodsOf: (unitLoadId: Id) => GoodsWork = (id) => goodsWork(context, id),
+): BayContents {
   const around = { context, place, clearEntry: bay.clearEntryMm, frames, goodsOf };
   return {
     levels: bay.levels.map((level, index) => levelWork(around, level, index)),

@@ -40,11 +40,19 @@ export function auditLevel(context: SiteContext, bay: BayWork, work: LevelWork, 
   };
 }
 
-export const weighed = ({ placement: { id }, goods: { unitLoad: load, pallet, grossKg, missing } }: StandingLoad): Weighed => ({
+export const weighed = ({
+  placement: { id },
+  goods: { unitLoad: load, pallet, grossKg, missing },
+  frontShare,
+}: StandingLoad): Weighed & { readonly frontShare: number | null } => ({
   placementId: id,
+  frontShare,
   name: load.name,
   massKg: grossKg,
-  from: pallet === null ? sourceWords(load.massSource) : `${sourceWords(load.massSource)}; with pallet ${pallet.name}`,
+  // Origins are words for whoever opens the calculation; few do.
+  get from() {
+    return pallet === null ? sourceWords(load.massSource) : `${sourceWords(load.massSource)}; with pallet ${pallet.name}`;
+  },
   missing,
 });
 
@@ -64,7 +72,13 @@ export function statedBy(bay: BayWork, field: 'unitLoadKg' | 'unitLoadsPerLevel'
   const { notice } = bay;
   if (notice === null) return { value: null, from: '', missing: [noticeMissing(bay)] };
   const value = notice[field];
-  return { value, from: noticeWords(notice), missing: value === null ? [{ input, how, field: `notice:${notice.id}:${field}` }] : [] };
+  return {
+    value,
+    get from() {
+      return noticeWords(notice);
+    },
+    missing: value === null ? [{ input, how, field: `notice:${notice.id}:${field}` }] : [],
+  };
 }
 
 const noticeMissing = ({ bay }: BayWork): Missing => ({
@@ -78,6 +92,7 @@ function goodsFindings(context: SiteContext, bay: BayWork, work: LevelWork, rate
   const { rules } = context;
   const { closeAbove } = rules.value;
   const level = levelName(index);
+  const loads = goods.map(weighed);
   const found: Finding[] = [];
   if (asked(context, 'placement')) found.push(...placement({ place, level, clearEntry: bay.bay.clearEntryMm, goods: goods.map(outline) }));
   if (asked(context, 'tipping'))
@@ -98,7 +113,7 @@ function goodsFindings(context: SiteContext, bay: BayWork, work: LevelWork, rate
     );
   if (asked(context, 'unit-load')) {
     const limit = statedBy(bay, 'unitLoadKg', 'greatest unit load', 'Read it from the load notice, or ask the maker for it in writing.');
-    found.push(...unitLoad({ place, goods: goods.map(weighed), limit, closeAbove }));
+    found.push(...unitLoad({ place, goods: loads, limit, closeAbove }));
   }
   if (asked(context, 'positions')) found.push(positions({ place, level, count: goods.length, allowed: numberMadeFor(bay) }));
   if (asked(context, 'level-total'))
@@ -106,7 +121,7 @@ function goodsFindings(context: SiteContext, bay: BayWork, work: LevelWork, rate
       levelTotal({
         place,
         level,
-        goods: goods.map((one) => ({ ...weighed(one), frontShare: one.frontShare })),
+        goods: loads,
         rated,
         missingShare: frameMissing(bay),
         closeAbove,
@@ -135,7 +150,7 @@ function ratingOf(bay: BayWork, { level, index, beamType }: LevelWork): LevelRat
     level: inside(levelName(index)),
     index,
     beamLength: bay.bay.clearEntryMm,
-    notice: notice === null ? null : { id: notice.id, levelKg: notice.levelKg, from: noticeWords(notice) },
+    notice: notice === null ? null : { id: notice.id, levelKg: notice.levelKg, from: () => noticeWords(notice) },
     beamType:
       beamType === null
         ? null
@@ -143,13 +158,13 @@ function ratingOf(bay: BayWork, { level, index, beamType }: LevelWork): LevelRat
             id: beamType.id,
             name: beamType.name,
             ratings: beamType.ratings,
-            from: `table of ${beamType.name}; ${sourceWords(beamType.source)}`,
+            from: () => `table of ${beamType.name}; ${sourceWords(beamType.source)}`,
           },
-    nothingNamed: {
+    nothingNamed: () => ({
       input: `rated capacity of ${inside(levelName(index))}`,
       how: 'Enter the bay’s load notice, or the level’s beam type with its maker’s table.',
       field: level.beamTypeId === null ? `bay:${bay.bay.id}:noticeId` : `level:${level.id}:beamTypeId`,
-    },
+    }),
   });
 }
 
@@ -160,7 +175,8 @@ function beamFindings(context: SiteContext, bay: BayWork, work: LevelWork, rated
   const complement = asked(context, 'full-complement') ? complementOf(context, bay, work, rated, pair) : null;
   const counts = complement === null || !complement.judged;
   const section = sectionNumbers(work.beamType, work);
-  const from = work.beamType === null ? '' : `section of ${work.beamType.name}; ${sourceWords(work.beamType.source)}`;
+  const { beamType } = work;
+  const from = () => (beamType === null ? '' : `data of ${beamType.name}; ${sourceWords(beamType.source)}`);
   const found: Finding[] = [];
   for (const check of BEAM_CHECKS) {
     if (!asked(context, check)) continue;
@@ -178,13 +194,13 @@ function beamCheck(
   { beamType }: LevelWork,
   counts: boolean,
   section: Section,
-  from: string,
+  from: () => string,
 ): Finding {
   switch (check) {
     case 'beam-bending':
       return beamBending(pair, counts);
     case 'beam-end-shear':
-      return beamEndShear(pair, { kg: beamType?.endKg ?? null, from: beamType === null ? '' : sourceWords(beamType.source) }, counts);
+      return beamEndShear(pair, { kg: beamType?.endKg ?? null, from }, counts);
     case 'beam-deflection':
       return beamDeflection(pair, counts);
     case 'section-stress':
@@ -222,8 +238,8 @@ function sectionNumbers(type: BeamType | null, { level, index }: LevelWork) {
     what: string,
   ): SectionNumber => ({
     value: type === null ? null : type[field],
-    missing:
-      type === null
+    get missing() {
+      return type === null
         ? {
             input: `beam type of ${inside(levelName(index))}`,
             how: 'Choose the beam type, or add it with its maker’s data.',
@@ -233,7 +249,8 @@ function sectionNumbers(type: BeamType | null, { level, index }: LevelWork) {
             input: `${what} of ${type.name}`,
             how: 'Ask the maker, or take it from the data sheet.',
             field: `beamType:${type.id}:${field}`,
-          },
+          };
+    },
   });
   return {
     sectionModulusMm3: number('sectionModulusMm3', 'section modulus'),
@@ -309,10 +326,15 @@ function complementOf(context: SiteContext, bay: BayWork, work: LevelWork, rated
     level: levelName(work.index),
     on: context.site.rules.fullComplement,
     number: numberMadeFor(bay),
-    goods: work.goods.map((one) => {
-      const { name, massKg, from } = weighed(one);
-      return { name, massKg: massKg ?? 0, from, left: one.fromMm, width: one.goods.unitLoad.widthMm };
-    }),
+    goods: work.goods.map((one) => ({
+      name: one.goods.unitLoad.name,
+      massKg: one.goods.grossKg ?? 0,
+      get from() {
+        return weighed(one).from;
+      },
+      left: one.fromMm,
+      width: one.goods.unitLoad.widthMm,
+    })),
     clearEntry: bay.bay.clearEntryMm,
     even: pair === null ? null : worseOf(pair),
     rated,

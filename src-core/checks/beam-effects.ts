@@ -74,7 +74,7 @@ function byEvenLoad(
  * By end shear a notice proves half the pair's rating at the two beam ends of one side. A maker's value
  * for one beam end takes its place, and then counts for a full complement too.
  */
-export function beamEndShear(input: PairInput, end: { readonly kg: number | null; readonly from: string }, counts: boolean): Finding {
+export function beamEndShear(input: PairInput, end: { readonly kg: number | null; readonly from: () => string }, counts: boolean): Finding {
   const { rated, rules, level } = input;
   const worse = worseBeam(input, 'endShear');
   const { reactionLeft, reactionRight } = worse.beam.answer;
@@ -88,7 +88,7 @@ export function beamEndShear(input: PairInput, end: { readonly kg: number | null
       ...compared(onEnd, massOf(endKg), rules.value.closeAbove),
       says: () =>
         say`${level} puts ${onEnd} on the ${place.end} end of ${nameOf(input, worse.side)}. Its maker states ${massOf(endKg)} for one end.`,
-      worked: () => endValueSteps(input, worse, { kg: endKg, from: end.from }),
+      worked: () => endValueSteps(input, worse, { kg: endKg, from: end.from() }),
       notes: () => otherBeam(input, worse),
     });
   }

@@ -27,30 +27,40 @@ interface FindingParts {
   readonly notes?: () => readonly Text[];
 }
 
+/** Where a finding keeps what writes its texts; hidden, so that a finding reads and clones as plain data. */
+const WRITERS = Symbol('writers');
+type Writers = Pick<FindingParts, 'says' | 'worked' | 'notes'>;
+
+// One getter for all findings: with one of its own, each finding would weigh four times as much.
+const written = (part: keyof Writers): PropertyDescriptor => ({
+  enumerable: true,
+  get(this: { readonly [WRITERS]: Writers }) {
+    return this[WRITERS][part]?.() ?? [];
+  },
+});
+const TEXTS = { says: written('says'), worked: written('worked'), notes: written('notes') };
+
 /**
  * A finding whose sentence, worked calculation and notes are written when they are read: the audit of
  * a large site makes a hundred thousand findings and shows a few. To a reader it is plain data, and it
  * clones and serialises as such.
  */
-export const finding = (parts: FindingParts): Finding => ({
-  check: parts.check,
-  place: parts.place,
-  verdict: parts.verdict,
-  utilisation: parts.utilisation ?? null,
-  demand: parts.demand ?? null,
-  allowed: parts.allowed ?? null,
-  missing: parts.missing ?? [],
-  counts: parts.counts ?? true,
-  get says() {
-    return parts.says();
-  },
-  get worked() {
-    return parts.worked?.() ?? [];
-  },
-  get notes() {
-    return parts.notes?.() ?? [];
-  },
-});
+export function finding(parts: FindingParts): Finding {
+  const made = {
+    check: parts.check,
+    place: parts.place,
+    verdict: parts.verdict,
+    utilisation: parts.utilisation ?? null,
+    demand: parts.demand ?? null,
+    allowed: parts.allowed ?? null,
+    missing: parts.missing ?? NONE,
+    counts: parts.counts ?? true,
+  };
+  Object.defineProperty(made, WRITERS, { value: parts satisfies Writers });
+  return Object.defineProperties(made as Finding, TEXTS);
+}
+
+const NONE: readonly Missing[] = [];
 
 /** The finding of a check that lacks inputs: names each, and never passes. */
 export const notAssessable = (

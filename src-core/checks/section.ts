@@ -25,7 +25,7 @@ function lacking(check: CheckName, place: Place, numbers: readonly SectionNumber
 }
 
 /** Greatest bending stress against the maker's design stress; stated loads, without load factors. */
-export function sectionStress(input: PairInput, modulus: SectionNumber, design: SectionNumber, from: string): Finding {
+export function sectionStress(input: PairInput, modulus: SectionNumber, design: SectionNumber, origin: () => string): Finding {
   if (modulus.value === null || design.value === null) return lacking('section-stress', input.place, [modulus, design]);
   const sectionModulus = quantity('sectionModulus', modulus.value);
   const allowed = quantity('stress', design.value);
@@ -45,14 +45,14 @@ export function sectionStress(input: PairInput, modulus: SectionNumber, design: 
         formula: 'M / W_el',
         values: [
           { symbol: 'M', is: 'greatest bending moment', quantity: momentOf(moment), from: 'line above' },
-          { symbol: 'W_el', is: 'section modulus of one beam', quantity: sectionModulus, from },
+          { symbol: 'W_el', is: 'section modulus of one beam', quantity: sectionModulus, from: origin() },
         ],
         result: { symbol: 'sigma', quantity: stress },
         source: 'strength of materials',
       },
       utilisationStep(
         { symbol: 'sigma', is: 'greatest bending stress', quantity: stress, from: 'line above' },
-        { symbol: 'f_d', is: 'design stress', quantity: allowed, from },
+        { symbol: 'f_d', is: 'design stress', quantity: allowed, from: origin() },
         'maker’s design stress',
       ),
     ],
@@ -61,7 +61,7 @@ export function sectionStress(input: PairInput, modulus: SectionNumber, design: 
 }
 
 /** Greatest sag in mm against the span over the rule set's divisor. */
-export function sectionDeflection(input: PairInput, second: SectionNumber, modulus: SectionNumber, from: string): Finding {
+export function sectionDeflection(input: PairInput, second: SectionNumber, modulus: SectionNumber, origin: () => string): Finding {
   if (second.value === null || modulus.value === null) return lacking('section-deflection', input.place, [second, modulus]);
   const { rules, span } = input;
   const worse = worseBy(input, ({ answer }) => answer.deflection.sag);
@@ -85,8 +85,8 @@ export function sectionDeflection(input: PairInput, second: SectionNumber, modul
           what: 'Flexural rigidity of one beam',
           formula: 'E · I',
           values: [
-            { symbol: 'E', is: 'elastic modulus', quantity: elastic, from },
-            { symbol: 'I', is: 'second moment of area of one beam', quantity: secondMoment, from },
+            { symbol: 'E', is: 'elastic modulus', quantity: elastic, from: origin() },
+            { symbol: 'I', is: 'second moment of area of one beam', quantity: secondMoment, from: origin() },
           ],
           result: { symbol: 'EI', quantity: rigidity },
           source: 'strength of materials',
