@@ -159,10 +159,9 @@ export const date: Field<string> = (() => {
 })();
 
 export function choice<T extends string>(values: readonly T[]): Field<T> {
-  const expects = `one of ${listed(
-    values.map((value) => `"${value}"`),
-    'or',
-  )}`;
+  // The checks and rules are many; a message that names them all would not be read.
+  const quoted = values.map((value) => `"${value}"`);
+  const expects = `one of ${values.length > 12 ? `${quoted.slice(0, 6).join(', ')} or ${values.length - 6} others` : listed(quoted, 'or')}`;
   const known: ReadonlySet<unknown> = new Set(values);
   return {
     expects,

@@ -96,3 +96,28 @@ export function findEntry<K extends Library>(site: Site, library: K, id: Id): Li
   const entries: readonly LibraryEntry<K>[] = site[library];
   return entries.find((entry) => entry.id === id) ?? missing(ENTRY_NOUNS[library], id);
 }
+
+/** Every id in the site, in the order of its file. */
+export function everyId(site: Site): readonly Id[] {
+  const ids: Id[] = [site.id];
+  const add = (entries: readonly { readonly id: Id }[]) => {
+    for (const { id } of entries) ids.push(id);
+  };
+  for (const library of LIBRARIES) add(site[library]);
+  for (const run of site.runs) {
+    ids.push(run.id);
+    for (const frame of run.frames) {
+      ids.push(frame.id);
+      add(frame.damages);
+    }
+    for (const bay of run.bays) {
+      ids.push(bay.id);
+      for (const level of bay.levels) {
+        ids.push(level.id);
+        add(level.placements);
+      }
+      add(bay.onFloor);
+    }
+  }
+  return ids;
+}
