@@ -1,5 +1,5 @@
 /** Moving what is selected by steps: along the level, to the level above or below, between bays. */
-import { movePlacement, type PlaceTarget } from '../src-core/site/edits';
+import { movePlacement } from '../src-core/site/edits';
 import type { Id, Level } from '../src-core/site/site';
 import type { OpenSite } from './open-site.svelte';
 import { placementPlace, targetOf, type PlacementPlace, type Target } from './places';
@@ -19,7 +19,7 @@ export function nudge(open: OpenSite, byMm: number): void {
     `Move ${ids.length} unit loads`,
     (site) =>
       places.reduce(
-        (next, place) => movePlacement(next, place.placement.id, { ...targetOf(place), atMm: place.placement.atMm + byMm } as PlaceTarget),
+        (next, place) => movePlacement(next, place.placement.id, { ...targetOf(place), atMm: place.placement.atMm + byMm }),
         site,
       ),
     `nudge ${ids.join(' ')}`,
@@ -70,6 +70,8 @@ function tryAt(open: OpenSite, place: PlacementPlace, target: Target): void {
   open.tryMove(place.placement.id, target);
   const there = placementPlace(open.site, place.placement.id);
   if (there === null) return;
+  // The drawing follows what is carried, into another bay as well.
+  open.select({ bayId: there.bay.id, levelId: there.level?.id ?? null });
   const number = there.level === null ? 'floor' : `level ${there.bay.levels.indexOf(there.level) + 1}`;
   open.say(`Bay ${there.bay.name}, ${number}, ${there.placement.atMm} mm.`);
 }

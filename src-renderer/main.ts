@@ -1,6 +1,6 @@
 import { mount } from 'svelte';
 import App from './App.svelte';
-import { connect } from './connect';
+import { connect } from './host';
 import { Shell } from './shell.svelte';
 import './tokens.css';
 import './base.css';

@@ -7,7 +7,7 @@ import { SvelteMap } from 'svelte/reactivity';
 import type { BayAudit, FrameAudit, LevelAudit, RunAudit } from '../src-core/audit/types';
 import type { Host } from '../src-core/host';
 import { movePlacement } from '../src-core/site/edits';
-import type { Id, Site } from '../src-core/site/site';
+import type { Id, Placement, Site } from '../src-core/site/site';
 import { formatQuantity, type Reading } from '../src-core/units/format';
 import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
 import { VERDICT_WORDS } from '../src-core/words/verdict-words';
@@ -56,6 +56,11 @@ export class OpenSite {
   said = $state('');
   viewUnits = $state<UnitSystem | null>(null);
   locale = $state('en-GB');
+  /** What was last put on a level, to be offered first. */
+  lastGoods: Id | null = null;
+  copied: readonly Omit<Placement, 'id'>[] = [];
+  /** ISO date of today. */
+  readonly today: () => string;
   /** Text typed into fields that could not be taken over yet, by field, so that it outlives the form. */
   readonly drafts = new SvelteMap<string, string>();
 
@@ -93,7 +98,8 @@ export class OpenSite {
     this.id = options.id;
     this.#history = startHistory(options.site);
     this.locale = options.locale ?? 'en-GB';
-    this.#link = new AuditLink(options.makeWorker ?? null, options.today ?? todayHere, {
+    this.today = options.today ?? todayHere;
+    this.#link = new AuditLink(options.makeWorker ?? null, this.today, {
       audited: (audit) => this.#audited(audit),
       trouble: (runId, message) => {
         this.audits.delete(runId);
@@ -166,18 +172,28 @@ export class OpenSite {
   /**
    * The one way in which the site changes. Edits with the same `merge` key within a second are one
    * step of undo, for nudges and typing.
+   * @returns why the change was refused, as a sentence; null if it was made
    */
-  edit = (name: string, change: (site: Site) => Site, merge: string | null = null): void => {
+  edit = (name: string, change: (site: Site) => Site, merge: string | null = null): string | null => {
     this.dropTrial();
     const before = this.#history.value;
-    const after = change(before);
-    if (after === before) return;
+    let after: Site;
+    try {
+      after = change(before);
+    } catch (error) {
+      // The core refuses what could not stand in a site file, in a sentence for whoever typed it.
+      if (!(error instanceof RangeError)) throw error;
+      this.say(error.message);
+      return error.message;
+    }
+    if (after === before) return null;
     const now = Date.now();
     const goesOn = merge !== null && this.#lastMerge?.key === merge && now - this.#lastMerge.at < 1000;
     // The value on disk stays a step of its own, or undo could not come back to it.
     this.#history = goesOn && before !== this.saving.onDisk ? amend(this.#history, after) : record(this.#history, name, after);
     this.#lastMerge = merge === null ? null : { key: merge, at: now };
     this.#changed(name);
+    return null;
   };
 
   undo = (): void => {
@@ -203,18 +219,20 @@ export class OpenSite {
   // ------------------------------------------------------------ moving goods
 
   /** The one command behind dragging, keys, clicks and the menu. Positions are whole millimetres. */
-  move = (placementId: Id, target: Target, merge: string | null = null): void => {
+  move = (placementId: Id, target: Target, merge: string | null = null): string | null => {
     this.dropTrial();
     const from = placementPlace(this.site, placementId);
-    if (from === null) return;
-    this.edit(`Move ${from.unitLoad.name}`, (site) => moved(site, placementId, target), merge);
+    if (from === null) return null;
+    const refused = this.edit(`Move ${from.unitLoad.name}`, (site) => moved(site, placementId, target), merge);
+    if (refused !== null) return refused;
     if (this.carried === placementId) this.carried = null;
     const to = placementPlace(this.site, placementId);
-    if (to === null) return;
+    if (to === null) return null;
     this.select({ runId: to.run.id, bayId: to.bay.id, levelId: to.level?.id ?? null, placementIds: [placementId] });
     const place = nameOfPlace(to.bay, to.level);
-    const text = `${to.unitLoad.name} moved to ${place}, ${formatQuantity(lengthOf(to.placement.atMm), this.reading)} from the left upright.`;
-    this.#sayWithVerdict({ runId: to.run.id, bayId: to.bay.id, levelId: to.level?.id ?? null, text });
+    const at = formatQuantity(lengthOf(to.placement.atMm), this.reading);
+    this.sayDone(`${to.unitLoad.name} moved to ${place}, ${at} from the left upright.`);
+    return null;
   };
 
   /** Shows and checks a move without making it; `keepTrial` makes it, `dropTrial` takes it back. */
@@ -315,7 +333,13 @@ export class OpenSite {
     if (toSay?.runId === audit.runId) this.#sayNow(toSay);
   }
 
-  /** Says what was done together with what it did to the level, as soon as that is known. */
+  /** Says what was done here together with the verdicts it led to, as soon as they are known. */
+  sayDone = (text: string): void => {
+    const { runId, bayId, levelId } = this.selection;
+    if (runId === null || bayId === null) this.say(text);
+    else this.#sayWithVerdict({ runId, bayId, levelId, text });
+  };
+
   #sayWithVerdict(toSay: ToSay): void {
     if (this.auditing) this.#toSay = toSay;
     else this.#sayNow(toSay);

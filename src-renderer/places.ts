@@ -1,10 +1,8 @@
 /** Where things are in a site, as the page asks for it: null where the id is not there (any more). */
+import type { PlaceTarget } from '../src-core/site/edits';
 import type { Bay, Frame, Id, Level, Placement, Run, Site, UnitLoad } from '../src-core/site/site';
 
-/** Where a unit load goes: x from the left upright's face, on a beam level or on the floor of a bay. */
-export type Target =
-  | { readonly levelId: Id; readonly atMm: number; readonly towardsFrontMm?: number }
-  | { readonly levelId: null; readonly bayId: Id; readonly atMm: number; readonly towardsFrontMm?: number };
+export type Target = PlaceTarget;
 
 export interface BayPlace {
   readonly run: Run;

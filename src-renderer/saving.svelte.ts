@@ -40,7 +40,11 @@ export class Saving {
   /** Saves and journal entries reach the host one after another, in order. */
   #queue: Promise<unknown> = Promise.resolve();
   #current: Site | null;
-  #unjournalled: string[] = [];
+  /** Names of the edits since the last save, and how many of them are in the journal. */
+  #edits: string[] = [];
+  #journalled = 0;
+  /** Number of edits that are on disk, counted since the site was opened. */
+  #onDiskEdits = 0;
   #timer: ReturnType<typeof setTimeout> | null = null;
   #closed = false;
 
@@ -63,13 +67,14 @@ export class Saving {
   /** Tells of an edit, an undo or a redo; the journal gets it soon. */
   edited(site: Site, name: string): void {
     this.#current = site;
-    this.#unjournalled.push(name);
+    this.#edits.push(name);
     this.#journalIn(JOURNAL_AFTER);
   }
 
   /** @returns whether the site is on disk now */
   save = (site: Site): Promise<boolean> => {
     this.#current = site;
+    const covered = this.#onDiskEdits + this.#edits.length;
     return this.#inTurn(async () => {
       this.busy = true;
       try {
@@ -79,9 +84,9 @@ export class Saving {
         this.savedAt = saved.savedAt;
         this.onDisk = site;
         this.failure = null;
-        // The save cleared the journal; what was edited meanwhile has to go in again.
-        if (this.#current !== site) this.#journalIn(0);
-        else this.#unjournalled = [];
+        // The save cleared the journal; what was edited meanwhile has to go in, perhaps again.
+        this.#forget(covered);
+        if (this.#edits.length > 0) this.#journalIn(0);
         return true;
       } catch (error) {
         this.failure = failureOf(error);
@@ -94,9 +99,14 @@ export class Saving {
 
   /** Resolves when every edit so far is in the journal or on disk, or could not be put there. */
   settled = async (): Promise<void> => {
-    if (this.#unjournalled.length > 0) await this.#journal();
+    if (this.unjournalled) await this.#journal();
     await this.#queue;
   };
+
+  /** Whether some edit is neither in the journal nor on disk yet. */
+  get unjournalled(): boolean {
+    return this.#edits.length > this.#journalled;
+  }
 
   close(): void {
     this.#closed = true;
@@ -114,22 +124,31 @@ export class Saving {
   #journal(): Promise<void> {
     return this.#inTurn(async () => {
       const site = this.#current;
-      if (site === null) return;
-      const names = this.#unjournalled;
-      this.#unjournalled = [];
+      if (site === null || !this.unjournalled) return;
+      const count = this.#edits.length;
       try {
-        if (site === this.onDisk) await this.#host.clearJournal(this.id);
-        else {
+        if (site === this.onDisk) {
+          await this.#host.clearJournal(this.id);
+          this.#forget(this.#onDiskEdits + count);
+        } else {
           const body = await this.#write(site);
-          await this.#host.appendJournal({ id: this.id, baseRevision: this.revision, body, edit: names.join('; ') });
+          const edit = this.#edits.slice(this.#journalled, count).join('; ');
+          await this.#host.appendJournal({ id: this.id, baseRevision: this.revision, body, edit });
+          this.#journalled = count;
         }
         this.journalFailure = null;
       } catch (error) {
         this.journalFailure = failureOf(error);
-        this.#unjournalled = [...names, ...this.#unjournalled];
         this.#journalIn(JOURNAL_AGAIN);
       }
     });
+  }
+
+  /** The journal is empty now, and the site on disk holds the edits up to this one. */
+  #forget(edits: number): void {
+    this.#edits = this.#edits.slice(edits - this.#onDiskEdits);
+    this.#onDiskEdits = edits;
+    this.#journalled = 0;
   }
 
   #inTurn<T>(task: () => Promise<T>): Promise<T> {

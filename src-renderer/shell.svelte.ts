@@ -15,7 +15,8 @@ export type Screen = 'rack' | 'run' | 'layout' | 'libraries' | 'rules' | 'histor
 export type Dialog =
   | { readonly kind: 'commands' | 'find' | 'move-to' | 'new-run' | 'new-site' | 'preferences' | 'stale' | 'leave' | 'fill-run' }
   | { readonly kind: 'recovered'; readonly recovered: RecoveredEdits; readonly site: Site | null; readonly problem: string | null }
-  | { readonly kind: 'remove-site'; readonly entry: SiteEntry }
+  | { readonly kind: 'remove-site' | 'mend-site'; readonly entry: SiteEntry }
+  | { readonly kind: 'altered'; readonly name: string; readonly text: string }
   | { readonly kind: 'problems'; readonly name: string; readonly problems: readonly string[] };
 
 export class Shell {
@@ -91,17 +92,43 @@ export class Shell {
         this.#showProblems(file.name, reading);
         return;
       }
-      const id = await this.host.importSite(text);
-      this.sites = await this.host.listSites();
-      await this.openSite(id);
+      try {
+        await this.#takeIn(text, false);
+      } catch (error) {
+        // A file that was edited by hand can be taken knowingly; everything in it was read as strictly.
+        if (failureOf(error).code !== 'altered') throw error;
+        this.dialog = { kind: 'altered', name: file.name, text };
+      }
     });
 
-  /** Puts a site aside. Its revision is read first, so that one that changed meanwhile is noticed. */
+  /** Takes a file that does not match its checksum, because the user says it was edited by hand. */
+  importUnchecked = (text: string): Promise<void> => this.#attempt(() => this.#takeIn(text, true));
+
+  async #takeIn(text: string, unchecked: boolean): Promise<void> {
+    const id = await this.host.importSite(text, unchecked);
+    this.sites = await this.host.listSites();
+    await this.openSite(id);
+  }
+
+  /** Puts a site aside as it was listed; one that changed since is not. */
   removeSite = (entry: SiteEntry): Promise<void> =>
     this.#attempt(async () => {
-      const { revision } = await this.host.readSite(entry.id);
-      await this.host.removeSite(entry.id, revision);
+      if (entry.revision !== null) await this.host.removeSite(entry.id, entry.revision);
       this.sites = await this.host.listSites();
+    });
+
+  /** Puts an earlier state in the place of a file that cannot be read. */
+  restoreUnreadable = (entry: SiteEntry, generationId: string): Promise<void> =>
+    this.#attempt(async () => {
+      const reading = readSiteFile(await this.host.readGeneration(entry.id, generationId));
+      if (!reading.ok) {
+        this.#showProblems(`The earlier state of ${entry.name}`, reading);
+        return;
+      }
+      await this.host.saveSite({ id: entry.id, body: writeSite(reading.site), baseRevision: entry.revision });
+      this.dialog = null;
+      this.sites = await this.host.listSites();
+      await this.openSite(entry.id);
     });
 
   /** Back to the list of sites; asks first where something is not saved. */

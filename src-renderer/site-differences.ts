@@ -7,7 +7,7 @@ export function differences(before: Site, after: Site): readonly string[] {
   const lines: string[] = [];
   if (before.name !== after.name) lines.push(`Name: ${before.name} → ${after.name}`);
   for (const [key, what] of SETTINGS) if (!same(before[key], after[key])) lines.push(`${what} changed`);
-  for (const { list, item } of LIBRARIES) compareNamed(before[list], after[list], item, lines);
+  for (const { list, item } of LIBRARIES) compareNamed<Named>(before[list], after[list], item, lines);
   compareNamed(before.runs, after.runs, 'run', lines, () => null);
   for (const run of after.runs) {
     const old = before.runs.find((one) => one.id === run.id);

@@ -1,26 +1,23 @@
-/** What in a site depends on a library entry: the places that a change of it touches. */
-import type { Id, Placement, Site } from '../src-core/site/site';
+/** The places that a change of a library entry touches, by name. */
+import { usesOf, type Use } from '../src-core/site/edits';
+import type { Library } from '../src-core/site/lookup';
+import type { Id, Site } from '../src-core/site/site';
 
-export type LibraryKind = 'unitLoad' | 'pallet' | 'notice' | 'beamType' | 'frameType' | 'floor';
-
-/** Names of what refers to the entry, in the order of the site: "bay A1, level 2", "unit load Flour". */
-export function usedBy(site: Site, kind: LibraryKind, id: Id): readonly string[] {
-  const found: string[] = [];
-  if (kind === 'pallet') for (const one of site.unitLoads) if (one.palletId === id) found.push(one.name);
-  if (kind === 'beamType') for (const one of site.notices) if (one.beamTypeId === id) found.push(`load notice ${one.name}`);
-  const loads = kind === 'pallet' ? new Set(site.unitLoads.filter((one) => one.palletId === id).map((one) => one.id)) : new Set([id]);
-  const holds = (placements: readonly Placement[]) =>
-    (kind === 'unitLoad' || kind === 'pallet') && placements.some((one) => loads.has(one.unitLoadId));
+/** "bay A1, level 2", "frame A0|A1", in the order of the site. */
+export function usedBy(site: Site, library: Library, id: Id): readonly string[] {
+  const uses = usesOf(site, library, id);
+  if (uses.length === 0) return [];
+  const names = new Map<Id, string>();
+  for (const one of site.unitLoads) names.set(one.id, one.name);
+  for (const one of site.notices) names.set(one.id, `load notice ${one.name}`);
   for (const run of site.runs) {
-    if (kind === 'floor' && run.floorId === id) found.push(`run ${run.name}`);
-    if (kind === 'frameType') for (const frame of run.frames) if (frame.typeId === id) found.push(`frame ${frame.name} of run ${run.name}`);
+    names.set(run.id, `run ${run.name}`);
+    for (const frame of run.frames) names.set(frame.id, `frame ${frame.name}`);
     for (const bay of run.bays) {
-      if (kind === 'notice' && bay.noticeId === id) found.push(`bay ${bay.name}`);
-      if (holds(bay.onFloor)) found.push(`bay ${bay.name}, floor`);
-      for (const [i, level] of bay.levels.entries()) {
-        if ((kind === 'beamType' && level.beamTypeId === id) || holds(level.placements)) found.push(`bay ${bay.name}, level ${i + 1}`);
-      }
+      names.set(bay.id, `bay ${bay.name}`);
+      bay.levels.forEach((level, i) => names.set(level.id, `bay ${bay.name}, level ${i + 1}`));
     }
   }
-  return found;
+  const nameOf = ({ kind, id: of }: Use) => `${names.get(of) ?? kind}${kind === 'floor of a bay' ? ', floor' : ''}`;
+  return uses.map(nameOf);
 }

@@ -1,9 +1,12 @@
 /** The site's libraries as the page lists them: where they stand, what they are called, a first entry of each. */
+import { addEntry } from '../../src-core/site/edits';
+import type { Library } from '../../src-core/site/lookup';
 import type { BeamType, Floor, FrameType, Id, LoadNotice, Pallet, Site, UnitLoad } from '../../src-core/site/site';
 import { newId } from '../ids';
 import type { OpenSite } from '../open-site.svelte';
-import type { LibraryKind } from '../used-by';
 import { NO_SOURCE } from './options';
+
+export type LibraryKind = keyof LibraryItem;
 
 export interface LibraryItem {
   unitLoad: UnitLoad;
@@ -14,9 +17,7 @@ export interface LibraryItem {
   floor: Floor;
 }
 
-type ListKey = 'unitLoads' | 'pallets' | 'notices' | 'beamTypes' | 'frameTypes' | 'floors';
-
-export const LIBRARIES: readonly { readonly kind: LibraryKind; readonly list: ListKey; readonly title: string; readonly item: string }[] = [
+export const LIBRARIES: readonly { readonly kind: LibraryKind; readonly list: Library; readonly title: string; readonly item: string }[] = [
   { kind: 'unitLoad', list: 'unitLoads', title: 'Unit loads', item: 'unit load' },
   { kind: 'pallet', list: 'pallets', title: 'Pallets', item: 'pallet' },
   { kind: 'notice', list: 'notices', title: 'Load notices', item: 'load notice' },
@@ -25,27 +26,14 @@ export const LIBRARIES: readonly { readonly kind: LibraryKind; readonly list: Li
   { kind: 'floor', list: 'floors', title: 'Floors', item: 'floor' },
 ];
 
-export const libraryOf = (kind: LibraryKind) => LIBRARIES.find((one) => one.kind === kind) ?? raise(kind);
-const raise = (kind: string): never => {
-  throw new RangeError(`there is no library of ${kind}`);
-};
+export function libraryOf(kind: LibraryKind) {
+  const found = LIBRARIES.find((one) => one.kind === kind);
+  if (found === undefined) throw new RangeError(`there is no library of ${kind}`);
+  return found;
+}
 
 export const itemsOf = <K extends LibraryKind>(site: Site, kind: K): readonly LibraryItem[K][] =>
   site[libraryOf(kind).list] as readonly unknown[] as readonly LibraryItem[K][];
-
-/** The site with its library of one kind in a new state. */
-export const withItems = <K extends LibraryKind>(site: Site, kind: K, items: readonly LibraryItem[K][]): Site => ({
-  ...site,
-  [libraryOf(kind).list]: items,
-});
-
-export function editItem<K extends LibraryKind>(site: Site, kind: K, id: Id, part: Partial<LibraryItem[K]>): Site {
-  return withItems(
-    site,
-    kind,
-    itemsOf(site, kind).map((item) => (item.id === id ? { ...item, ...part } : item)),
-  );
-}
 
 /** Every number not known, so that nothing passes before it has been entered. */
 const FRESH: { readonly [K in LibraryKind]: (id: Id, name: string) => LibraryItem[K] } = {
@@ -150,7 +138,7 @@ export function freeName(site: Site, kind: LibraryKind): string {
 export function addLibraryItem(open: OpenSite, kind: LibraryKind, also: (site: Site, id: Id) => Site = (site) => site): Id {
   const id = newId();
   const name = freeName(open.site, kind);
-  open.edit(`Add ${name}`, (site) => also(withItems(site, kind, [...itemsOf(site, kind), freshItem(kind, id, name)]), id));
+  open.edit(`Add ${name}`, (site) => also(addEntry(site, libraryOf(kind).list, freshItem(kind, id, name)), id));
   open.say(`${name} added.`);
   return id;
 }

@@ -1,0 +1,199 @@
+/** Changing the rack itself: runs, bays and levels added, copied, moved and taken out. Each is one step of undo. */
+import { copyOfBay, copyOfFrame, copyOfLevel } from '../src-core/site/copies';
+import {
+  addBay,
+  addEntry,
+  addLevel,
+  addRun,
+  editBay,
+  editRun,
+  fillBays,
+  moveBay,
+  moveRun,
+  removeBay,
+  removeLevel,
+  removeRun,
+} from '../src-core/site/edits';
+import { evenTemplate, runByTemplate } from '../src-core/site/new-site';
+import type { Bay, Frame, Id, Level, LoadNotice, Run, Site } from '../src-core/site/site';
+import { newId } from './ids';
+import { nextName, nextRunName } from './names';
+import type { OpenSite } from './open-site.svelte';
+import { countOf } from './say';
+
+export interface RunPlan {
+  readonly name: string;
+  readonly bays: number;
+  readonly clearEntryMm: number;
+  readonly levels: number;
+  /** Floor to top of the first beam, and from beam to beam. */
+  readonly firstBeamMm: number;
+  readonly pitchMm: number;
+  readonly noticeId: Id | null;
+  readonly beamTypeId: Id | null;
+  readonly frameTypeId: Id | null;
+  readonly floorId: Id | null;
+}
+
+/**
+ * @param notice a load notice that is entered together with the run
+ * @returns why it was refused, as a sentence; null if it was made
+ */
+export function layOutRun(open: OpenSite, plan: RunPlan, notice: LoadNotice | null): string | null {
+  const { name, bays: count, floorId } = plan;
+  const run = runByTemplate(evenTemplate(plan), { name, count, floorId, newId });
+  const refused = open.edit(`Lay out run ${name}`, (site) => addRun(notice === null ? site : addEntry(site, 'notices', notice), run));
+  if (refused !== null) return refused;
+  const bay = run.bays[0];
+  open.select({ runId: run.id, bayId: bay?.id ?? null });
+  open.select({ levelId: bay?.levels[0]?.id ?? null });
+  open.say(`Run ${name} laid out: ${countOf(count, 'bay')} of ${countOf(plan.levels, 'level')}.`);
+  return null;
+}
+
+const bayNames = (site: Site): ReadonlySet<string> => new Set(site.runs.flatMap((run) => run.bays.map((bay) => bay.name)));
+
+const withoutGoods = (bay: Bay): Bay => ({ ...bay, levels: bay.levels.map((level) => ({ ...level, placements: [] })), onFloor: [] });
+
+/** Everything of a first bay that nobody has stated is not known. */
+const firstBay = (name: string): Bay =>
+  runByTemplate(
+    evenTemplate({ clearEntryMm: 2700, levels: 3, firstBeamMm: 1500, pitchMm: 1500, noticeId: null, beamTypeId: null, frameTypeId: null }),
+    { name, count: 1, floorId: null, newId },
+  ).bays.map((bay) => ({ ...bay, name }))[0] as Bay;
+
+/** The frame that closes a bay which is put in after `index`. */
+function frameAfter(run: Run, index: number, bayName: string): Frame {
+  const like = (run.frames[index + 1] ?? run.frames.at(-1)) as Frame;
+  return copyOfFrame(like, `${bayName}|`, newId);
+}
+
+function insertBay(open: OpenSite, run: Run, bay: Bay, after: number, what: string): void {
+  if (open.edit(what, (site) => addBay(site, run.id, bay, frameAfter(run, after, bay.name), after + 1)) !== null) return;
+  open.select({ bayId: bay.id });
+  open.say(`Bay ${bay.name} added to run ${run.name}.`);
+}
+
+/** An empty bay like the chosen one, to its right. */
+export function addBayAfter(open: OpenSite): void {
+  const { run, bay } = open;
+  if (run === null) return;
+  if (bay === null) return addBayTo(open, run);
+  const name = nextName(bay.name, bayNames(open.site));
+  insertBay(open, run, copyOfBay(withoutGoods(bay), name, newId), run.bays.indexOf(bay), `Add bay ${name}`);
+}
+
+/** An empty bay at the right end of the run, like its last one. */
+export function addBayTo(open: OpenSite, run: Run): void {
+  const last = run.bays.at(-1);
+  const name = nextName(last?.name ?? `${run.name}0`, bayNames(open.site));
+  const bay = last ? copyOfBay(withoutGoods(last), name, newId) : firstBay(name);
+  insertBay(open, run, bay, run.bays.length - 1, `Add bay ${name}`);
+}
+
+export function duplicateBayHere(open: OpenSite): void {
+  if (open.run !== null && open.bay !== null) copyBay(open, open.run, open.bay);
+}
+
+export function copyBay(open: OpenSite, run: Run, bay: Bay): void {
+  const name = nextName(bay.name, bayNames(open.site));
+  insertBay(open, run, copyOfBay(bay, name, newId), run.bays.indexOf(bay), `Duplicate bay ${bay.name}`);
+}
+
+export function removeBayHere(open: OpenSite): void {
+  if (open.run !== null && open.bay !== null) removeBayFrom(open, open.run, open.bay);
+}
+
+export function removeBayFrom(open: OpenSite, run: Run, bay: Bay): void {
+  open.edit(`Delete bay ${bay.name}`, (site) => removeBay(site, bay.id));
+  open.say(`Bay ${bay.name} of run ${run.name} deleted. Undo brings it back.`);
+}
+
+export function shiftBay(open: OpenSite, run: Run, bay: Bay, by: 1 | -1): void {
+  const side = by > 0 ? 'right' : 'left';
+  if (open.edit(`Move bay ${bay.name} ${side}`, (site) => moveBay(site, bay.id, run.bays.indexOf(bay) + by)) === null)
+    open.say(`Bay ${bay.name} moved ${side}. The frames stay where they stand.`);
+}
+
+export const changeBay = (open: OpenSite, bay: Bay, what: string, part: Partial<Bay>): string | null =>
+  open.edit(`Change ${what} of bay ${bay.name}`, (site) => editBay(site, bay.id, part));
+
+export const changeRun = (open: OpenSite, run: Run, what: string, part: Partial<Omit<Run, 'bays' | 'frames'>>): string | null =>
+  open.edit(`Change ${what} of run ${run.name}`, (site) => editRun(site, run.id, part));
+
+export function copyRun(open: OpenSite, run: Run): void {
+  const name = nextRunName(new Set(open.site.runs.map((one) => one.name)));
+  const renamed = (text: string) => (text.startsWith(run.name) ? name + text.slice(run.name.length) : text);
+  const taken = new Set(bayNames(open.site));
+  const bays = run.bays.map((bay) => {
+    const wanted = renamed(bay.name);
+    const free = taken.has(wanted) ? nextName(wanted, taken) : wanted;
+    taken.add(free);
+    return copyOfBay(bay, free, newId);
+  });
+  const frames = run.frames.map((frame) => copyOfFrame(frame, frame.name.split('|').map(renamed).join('|'), newId));
+  const copy: Run = { ...run, id: newId(), name, backToBack: null, frames, bays };
+  if (open.edit(`Duplicate run ${run.name}`, (site) => addRun(site, copy)) === null) open.say(`Run ${run.name} duplicated as run ${name}.`);
+}
+
+export function shiftRun(open: OpenSite, run: Run, by: 1 | -1): void {
+  const index = open.site.runs.findIndex((one) => one.id === run.id);
+  open.edit(`Move run ${run.name} ${by > 0 ? 'down' : 'up'}`, (site) => moveRun(site, run.id, index + by));
+}
+
+export function removeRunFrom(open: OpenSite, run: Run): void {
+  open.edit(`Delete run ${run.name}`, (site) => removeRun(site, run.id));
+  open.say(`Run ${run.name} with ${countOf(run.bays.length, 'bay')} deleted. Undo brings it back.`);
+}
+
+/** A level on top, as far above the highest as that is above the one below it. */
+export function addLevelOnTop(open: OpenSite): void {
+  const { bay } = open;
+  if (bay === null) return;
+  const level: Level = {
+    id: newId(),
+    heightMm: nextHeight(bay),
+    beamTypeId: bay.levels.at(-1)?.beamTypeId ?? null,
+    locks: 'unknown',
+    deck: { kind: 'none' },
+    placements: [],
+  };
+  putOnTop(open, bay, level, `Add a level to bay ${bay.name}`);
+}
+
+export function duplicateLevelHere(open: OpenSite): void {
+  const { bay, level } = open;
+  if (bay === null || level === null) return;
+  const copy = { ...copyOfLevel(level, newId), heightMm: nextHeight(bay) };
+  putOnTop(open, bay, copy, `Duplicate level ${bay.levels.indexOf(level) + 1} of bay ${bay.name}`);
+}
+
+function putOnTop(open: OpenSite, bay: Bay, level: Level, what: string): void {
+  if (open.edit(what, (site) => addLevel(site, bay.id, level)) !== null) return;
+  open.select({ levelId: level.id });
+  open.say(`Level ${bay.levels.length + 1} added to bay ${bay.name}.`);
+}
+
+function nextHeight(bay: Bay): number {
+  const top = bay.levels.at(-1)?.heightMm ?? 0;
+  return top + (top - (bay.levels.at(-2)?.heightMm ?? 0) || 1500);
+}
+
+export function removeLevelHere(open: OpenSite): void {
+  const { bay, level } = open;
+  if (bay === null || level === null) return;
+  const number = bay.levels.indexOf(level) + 1;
+  open.edit(`Delete level ${number} of bay ${bay.name}`, (site) => removeLevel(site, level.id));
+  open.say(`Level ${number} of bay ${bay.name} deleted with its goods. Undo brings it back.`);
+}
+
+/** Gives other bays the goods, or the levels and goods, of the chosen one. */
+export function fillLike(open: OpenSite, targets: readonly Bay[], what: 'goods' | 'levels and goods'): void {
+  const pattern = open.bay;
+  if (pattern === null || targets.length === 0) return;
+  const ids = targets.map((bay) => bay.id);
+  const done = open.edit(`Give ${countOf(ids.length, 'bay')} the ${what} of bay ${pattern.name}`, (site) =>
+    fillBays(site, pattern.id, ids, what, newId),
+  );
+  if (done === null) open.say(`${countOf(ids.length, 'bay')} filled like bay ${pattern.name}.`);
+}
