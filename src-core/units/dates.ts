@@ -68,3 +68,12 @@ export function addMonths(date: string, months: number): string {
   const toMonth = (count % 12) + 1;
   return isoDate(toYear, toMonth, Math.min(day, daysIn(toYear, toMonth)));
 }
+
+const MONTHS = ['January', 'February', 'March', 'April', 'May', 'June', 'July', 'August', 'September', 'October', 'November', 'December'];
+
+/** "2026-05-03" → "3 May 2026"; anything else as it stands. */
+export function dateWords(date: string): string {
+  const [year, month, day] = date.split('-').map(Number);
+  const name = MONTHS[(month ?? 0) - 1];
+  return year === undefined || day === undefined || name === undefined ? date : `${day} ${name} ${year}`;
+}
