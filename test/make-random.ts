@@ -229,6 +229,7 @@ export function arbitrarySite(): fc.Arbitrary<Site> {
           depthMm: length,
           uprightWidthMm: length,
           massKg: orNull(mass),
+          tableBy: fc.constantFrom('greatest-height' as const, 'storey-height' as const),
           table: several(fc.record({ heightMm: length, ratedKg: rating }), 0).map((rows) => ordered(rows, 'heightMm')),
           plateWidthMm: orNull(length),
           plateDepthMm: orNull(length),

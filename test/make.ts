@@ -108,6 +108,7 @@ export const makeFrameType = (part: Partial<FrameType> = {}): FrameType => ({
   depthMm: 1100,
   uprightWidthMm: 100,
   massKg: 60,
+  tableBy: 'greatest-height',
   table: [],
   plateWidthMm: null,
   plateDepthMm: null,

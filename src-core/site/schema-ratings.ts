@@ -59,6 +59,7 @@ export const frameType = record<FrameType>(
     depthMm: aLength,
     uprightWidthMm: aLength,
     massKg: nullable(aMass),
+    tableBy: choice(['greatest-height', 'storey-height']),
     table: list('rows', record('row of the frame table', { heightMm: aLength, ratedKg: aRating }), LIMITS.rows),
     plateWidthMm: lengthStated,
     plateDepthMm: lengthStated,

@@ -102,7 +102,7 @@ export interface UnitLoad {
   readonly contact: 'flat' | 'rims' | 'wheels' | 'feet' | 'lying-round';
   /** Cradled or chocked, for goods that can roll. */
   readonly chocked: Answer;
-  /** Lean of the stack, offset at the top in mm. */
+  /** Lean of the stack, offset at the top in mm, to the right positive before it is mirrored. */
   readonly leanMm: number;
 }
 
@@ -162,7 +162,12 @@ export interface FrameType {
   /** Width of one upright along the run. */
   readonly uprightWidthMm: number;
   readonly massKg: number | null;
-  /** Rated mass of one frame by greatest unsupported height; empty = no table. */
+  /**
+   * Which unsupported height the maker's table is read at: the greatest of the whole frame, for all its
+   * storeys, or each storey's own.
+   */
+  readonly tableBy: 'greatest-height' | 'storey-height';
+  /** Rated mass of one frame by unsupported height; empty = no table. */
   readonly table: readonly { readonly heightMm: number; readonly ratedKg: number }[];
   readonly plateWidthMm: number | null;
   readonly plateDepthMm: number | null;

@@ -106,6 +106,7 @@ const FRESH: { readonly [K in LibraryKind]: (id: Id, name: string) => LibraryIte
     depthMm: 1100,
     uprightWidthMm: 100,
     massKg: null,
+    tableBy: 'greatest-height',
     table: [],
     plateWidthMm: null,
     plateDepthMm: null,

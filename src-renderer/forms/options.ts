@@ -1,6 +1,18 @@
 /** Choices that forms offer, in the trade's words. */
 import { LOADED_BY, LOADED_BY_WORDS, type LoadedBy } from '../../src-core/checks/clearance-rules';
-import type { BearingShape, Damage, Deck, DepthShape, Floor, Pallet, Rules, Slope, Source, UnitLoad } from '../../src-core/site/site';
+import type {
+  BearingShape,
+  Damage,
+  Deck,
+  DepthShape,
+  Floor,
+  FrameType,
+  Pallet,
+  Rules,
+  Slope,
+  Source,
+  UnitLoad,
+} from '../../src-core/site/site';
 
 interface Option<V> {
   readonly value: V;
@@ -59,6 +71,11 @@ export const PALLET_BOARDS: readonly Option<Pallet['boards']>[] = [
 ];
 
 export const LOADED_BY_OPTIONS: readonly Option<LoadedBy>[] = LOADED_BY.map((value) => ({ value, name: LOADED_BY_WORDS[value] }));
+
+export const TABLE_HEIGHTS: readonly Option<FrameType['tableBy']>[] = [
+  { value: 'greatest-height', name: 'the greatest unsupported height of the frame' },
+  { value: 'storey-height', name: 'each storey’s own height, where the maker says so' },
+];
 
 export const DECK_KINDS: readonly Option<Deck['kind']>[] = [
   { value: 'none', name: 'none: goods stand on the beams' },

@@ -90,6 +90,7 @@ export const FRAME: FrameType = {
   depthMm: 1100,
   uprightWidthMm: 100,
   massKg: 60,
+  tableBy: 'greatest-height',
   table: [],
   plateWidthMm: 120,
   plateDepthMm: 120,
