@@ -11,8 +11,19 @@ import type { Id, Placement, Site } from '../src-core/site/site';
 import { formatQuantity, type Reading } from '../src-core/units/format';
 import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
 import { VERDICT_WORDS } from '../src-core/words/verdict-words';
-import { AuditLink, type WorkerLike } from './audit-link';
-import { bayPlace, framePlace, levelPlace, nameOfPlace, placementPlace, targetOf, type Target } from './places';
+import type { WorkerLike } from './audit-link';
+import { Findings } from './findings.svelte';
+import {
+  bayPlace,
+  besideChosenBay,
+  frameOfDamage,
+  framePlace,
+  levelPlace,
+  nameOfPlace,
+  placementPlace,
+  targetOf,
+  type Target,
+} from './places';
 import { Saving, type SavedState } from './saving.svelte';
 import { completed, existing, NOTHING, type Selection } from './selection';
 import { amend, record, redo, startHistory, undo, type UndoHistory } from './undo-history';
@@ -24,6 +35,7 @@ export type { Selection } from './selection';
 export interface Task {
   readonly kind: string;
   readonly id: Id;
+  /** `kind:id:field`, whole; null where the form alone is wanted. */
   readonly field: string | null;
 }
 
@@ -38,20 +50,19 @@ export interface OpenSiteOptions {
   readonly makeWorker?: (() => WorkerLike) | null;
   /** ISO date of today. */
   readonly today?: () => string;
+  /** Told of every form that is asked for, so that the screen it stands on comes up. */
+  readonly onTask?: (task: Task) => void;
 }
 
 export class OpenSite {
   readonly id: string;
   readonly saving: Saving;
-  /** Findings by run id. A run that has just been made has none until the audit has seen it. */
-  readonly audits = new SvelteMap<Id, RunAudit>();
-  /** Runs whose audit broke down, with what it said. They have no findings and pass nothing. */
-  readonly auditTroubles = new SvelteMap<Id, string>();
-  /** True while findings of some run are older than the site. */
-  auditing = $state(false);
+  readonly findings: Findings;
   /** The unit load picked up by click or key that waits for its target. */
   carried = $state<Id | null>(null);
   task = $state.raw<Task | null>(null);
+  /** The form that was last asked for, to be given the focus. */
+  asked = $state.raw<Task | null>(null);
   /** What the status region says. */
   said = $state('');
   viewUnits = $state<UnitSystem | null>(null);
@@ -70,9 +81,9 @@ export class OpenSite {
   #wanted = $state.raw<Selection>(NOTHING);
   /** Where one was before, for going back. */
   #trail = $state.raw<readonly Selection[]>([]);
-  #link: AuditLink;
   #lastMerge: { key: string; at: number } | null = null;
   #toSay: ToSay | null = null;
+  #onTask: (task: Task) => void;
 
   /** The site as it is shown: with the trial move, where one is going on. */
   site = $derived(this.#trial ?? this.#history.value);
@@ -99,23 +110,15 @@ export class OpenSite {
     this.#history = startHistory(options.site);
     this.locale = options.locale ?? 'en-GB';
     this.today = options.today ?? todayHere;
-    this.#link = new AuditLink(options.makeWorker ?? null, this.today, {
-      audited: (audit) => this.#audited(audit),
-      trouble: (runId, message) => {
-        this.audits.delete(runId);
-        this.auditTroubles.set(runId, message);
-      },
-      done: () => {
-        this.auditing = false;
-      },
-    });
+    this.#onTask = options.onTask ?? (() => undefined);
+    this.findings = new Findings(options.makeWorker ?? null, this.today, (audit) => this.#audited(audit));
     this.saving = new Saving({
       host: options.host,
       id: options.id,
       revision: options.revision,
       savedAt: options.savedAt,
       onDisk: options.revision === null ? null : options.site,
-      write: (site) => this.#link.write(site),
+      write: (site) => this.findings.write(site),
     });
     this.#check();
     const run = options.site.runs[0];
@@ -129,16 +132,35 @@ export class OpenSite {
     const before = this.selection;
     this.#wanted = completed(this.site, before, part);
     if (before.bayId !== null && this.selection.bayId !== before.bayId) this.#trail = [...this.#trail.slice(-99), before];
+    this.#follow();
     if (this.carried !== null && part.placementIds && !part.placementIds.includes(this.carried)) this.putBack();
   };
 
-  frameAudit = (frameId: Id): FrameAudit | null => {
-    for (const run of this.audits.values()) {
-      const found = run.frames.find((frame) => frame.frameId === frameId);
-      if (found) return found;
-    }
-    return null;
-  };
+  /** Forms of bay and level stay with what is chosen. */
+  #follow(): void {
+    const { task, selection } = this;
+    if (task === null) return;
+    const id = { level: selection.levelId, bay: selection.bayId, frames: selection.bayId }[task.kind];
+    if (id === null) this.task = null;
+    else if (id !== undefined && id !== task.id) this.task = { kind: task.kind, id, field: null };
+  }
+
+  /** Findings by run id. A run that has just been made has none until the audit has seen it. */
+  get audits(): ReadonlyMap<Id, RunAudit> {
+    return this.findings.audits;
+  }
+
+  /** Runs whose audit broke down, with what it said. */
+  get auditTroubles(): ReadonlyMap<Id, string> {
+    return this.findings.troubles;
+  }
+
+  /** True while findings of some run are older than the site. */
+  get auditing(): boolean {
+    return this.findings.auditing;
+  }
+
+  frameAudit = (frameId: Id): FrameAudit | null => this.findings.frame(frameId);
 
   /** Back to the bay one came from. */
   goBack = (): void => {
@@ -283,18 +305,25 @@ export class OpenSite {
   /** Opens the form that holds a field, named `kind:id:field` as findings name what is missing. */
   openField = (field: string): void => {
     const [kind = '', id = '', ...rest] = field.split(':');
-    const bay = bayPlace(this.site, id) ?? levelPlace(this.site, id) ?? placementPlace(this.site, id);
-    const frame = framePlace(this.site, id);
-    if (bay) this.select({ runId: bay.run.id, bayId: bay.bay.id });
-    if (levelPlace(this.site, id)) this.select({ levelId: id });
-    if (placementPlace(this.site, id)) this.select({ placementIds: [id] });
-    if (frame) this.select({ runId: frame.run.id });
-    this.task = { kind, id, field: rest.join(':') || null };
+    this.#open({ kind, id, field: rest.length > 0 ? field : null });
   };
 
-  openTask = (kind: string, id: Id): void => {
-    this.task = { kind, id, field: null };
-  };
+  openTask = (kind: string, id: Id): void => this.#open({ kind, id, field: null });
+
+  #open(task: Task): void {
+    const { kind, id } = task;
+    const bay = bayPlace(this.site, id);
+    const frame = kind === 'damage' ? frameOfDamage(this.site, id) : framePlace(this.site, id);
+    if (bay) this.select({ runId: bay.run.id, bayId: id });
+    else if (levelPlace(this.site, id)) this.select({ levelId: id });
+    else if (placementPlace(this.site, id)) this.select({ placementIds: [id] });
+    else if (frame && !besideChosenBay(this.run, this.bay, frame.frame))
+      this.select({ bayId: frame.run.bays[Math.max(0, frame.index - 1)]?.id ?? null });
+    else if (kind === 'run') this.select({ runId: id });
+    this.task = frame ? { ...task, kind: 'frame', id: frame.frame.id } : task;
+    this.asked = this.task;
+    this.#onTask(this.task);
+  }
 
   closeTask = (): void => {
     this.task = null;
@@ -311,7 +340,7 @@ export class OpenSite {
 
   close = (): void => {
     this.saving.close();
-    this.#link.close();
+    this.findings.close();
   };
 
   #changed(name: string): void {
@@ -320,15 +349,10 @@ export class OpenSite {
   }
 
   #check(): void {
-    this.auditing = true;
-    const site = this.#trial ?? this.#history.value;
-    for (const runId of this.audits.keys()) if (!site.runs.some((run) => run.id === runId)) this.audits.delete(runId);
-    this.#link.update(site);
+    this.findings.follow(this.#trial ?? this.#history.value);
   }
 
   #audited(audit: RunAudit): void {
-    this.auditTroubles.delete(audit.runId);
-    this.audits.set(audit.runId, audit);
     const toSay = this.#toSay;
     if (toSay?.runId === audit.runId) this.#sayNow(toSay);
   }

@@ -72,6 +72,17 @@ export function framePlace(site: Site, frameId: Id | null): { readonly run: Run;
   return null;
 }
 
+export function frameOfDamage(site: Site, damageId: Id): ReturnType<typeof framePlace> {
+  const damaged = site.runs.flatMap((run) => run.frames).find((frame) => frame.damages.some((one) => one.id === damageId));
+  return framePlace(site, damaged?.id ?? null);
+}
+
+export function besideChosenBay(run: Run | null, bay: Bay | null, frame: Frame): boolean {
+  if (run === null || bay === null) return false;
+  const index = run.frames.indexOf(frame);
+  return run.bays[index] === bay || run.bays[index - 1] === bay;
+}
+
 /** "Bay C3, level 2" as a person would say it. */
 export function nameOfPlace(bay: Bay, level: Level | null): string {
   const number = level === null ? -1 : bay.levels.indexOf(level);

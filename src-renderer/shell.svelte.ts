@@ -5,6 +5,7 @@ import { newSite } from '../src-core/site/new-site';
 import type { Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
 import type { WorkerLike } from './audit-link';
+import { LIBRARIES } from './forms/library-items';
 import { failureOf } from './host';
 import { newId } from './ids';
 import { OpenSite } from './open-site.svelte';
@@ -249,8 +250,17 @@ export class Shell {
       savedAt,
       locale: this.preferences?.locale ?? 'en-GB',
       makeWorker: this.#makeWorker,
+      onTask: ({ kind }) => this.#bringUp(kind),
       ...(this.#today === undefined ? {} : { today: this.#today }),
     });
+  }
+
+  /** The screen on which a form stands. */
+  #bringUp(kind: string): void {
+    this.dialog = null;
+    if (LIBRARIES.some((one) => one.kind === kind)) this.screen = 'libraries';
+    else if (kind === 'site') this.screen = 'rules';
+    else if (this.screen !== 'run' || !['frame', 'run'].includes(kind)) this.screen = 'rack';
   }
 
   #showProblems(name: string, reading: Extract<FileReading, { ok: false }>): void {

@@ -28,3 +28,9 @@ export function boundMessage(
     return `${label} must be at most ${said(most)}, not ${said(value)}. Check the number and its unit.`;
   return null;
 }
+
+/**
+ * A number kept in the file in another unit than the core's, such as kg per m for kg per mm. Twelve
+ * digits are kept, so that going there and back changes nothing.
+ */
+export const scaled = (value: number, factor: number): number => Number((value * factor).toPrecision(12));
