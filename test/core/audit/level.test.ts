@@ -118,6 +118,44 @@ test('a light pallet under eccentric goods draws their common centre of mass tow
   expect(of(found, 'level-total').demand?.value).toBeCloseTo(2 * 150 * (0.5 + 100 / 1050), 9);
 });
 
+test('between unlike frames the shallower one decides', () => {
+  const site = rack({ unitLoads: [goods('a')], levels: [level([stand('a', 950, { towardsFrontMm: 100 })])] });
+  const frameTypes = [...site.frameTypes, { ...FRAME, id: 'shallow', depthMm: 900 }];
+  const runs = site.runs.map((run) => ({
+    ...run,
+    frames: run.frames.map((frame, i) => (i === 1 ? { ...frame, typeId: 'shallow' } : frame)),
+  }));
+  const found = auditRun({ ...site, frameTypes, runs }, 'run', '2026-06-01').bays[0]?.levels[0];
+  // d = 900 − 50 mm
+  expect(found && of(found, 'level-total').demand?.value).toBeCloseTo(2 * 800 * (0.5 + 100 / 850), 9);
+});
+
+test('what stands on feet brings its pallet down through them', () => {
+  // All of 100 + 20 kg at the middle of 2 700: 2 · 120 kg by bending
+  const found = audit({
+    pallets: [pallet('p', { massKg: 20 })],
+    unitLoads: [goods('a', { goodsKg: 100, palletId: 'p', bearing: { kind: 'feet', feet: [{ xMm: 400, share: 1 }] } })],
+    levels: [level([stand('a', 950)])],
+  });
+  expect(found.totalKg).toBe(120);
+  expect(of(found, 'beam-bending').demand?.value).toBeCloseTo(240, 9);
+});
+
+test('a sloped pile turned left for right loads the other end, and its calculation follows', () => {
+  // A triangle with its peak at the right: centre at 2/3 of 900 mm; turned round at 1/3
+  const load = (mirrored: boolean) =>
+    audit({
+      unitLoads: [
+        goods('a', { widthMm: 900, goodsKg: 600, bearing: { kind: 'sloped', slope: { by: 'heights', leftMm: 0, rightMm: 500 } } }),
+      ],
+      levels: [level([stand('a', 300, { mirrored })])],
+    });
+  expect(load(false).effects?.front.centroid).toBeCloseTo(900, 9);
+  expect(load(true).effects?.front.centroid).toBeCloseTo(600, 9);
+  for (const mirrored of [false, true])
+    for (const check of ['beam-bending', 'beam-deflection', 'beam-end-shear'] as const) expectWorked(of(load(mirrored), check));
+});
+
 // ---------------------------------------------------------------- goods that cannot stand so
 
 test.each<[string, Rack['levels'], CheckName, string]>([
