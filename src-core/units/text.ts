@@ -24,4 +24,3 @@ export function say(parts: TemplateStringsArray, ...values: readonly (string | n
   });
   return text;
 }
-
