@@ -93,8 +93,11 @@ function peakOf({ beam, answer }: BeamShown, name: DiagramName, points: readonly
       const top = points.reduce((most, point) => (point.y > most.y ? point : most), { x: 0, y: -Infinity });
       return points.length > 0 ? { beam, value: top.y, from: top.x, to: top.x } : null;
     }
-    case 'shear':
-      return { beam, value: massWeighing(answer.shear.force), from: answer.shear.at, to: answer.shear.at };
+    case 'shear': {
+      // With its sign, as it is drawn; it is greatest beside a support or a jump, where the curve has a point.
+      const most = points.reduce((worst, point) => (Math.abs(point.y) > Math.abs(worst.y) ? point : worst), { x: 0, y: 0 });
+      return { beam, value: most.y, from: most.x, to: most.x };
+    }
     case 'bending': {
       const { sagging, hogging } = answer;
       const hogs = -hogging.moment > sagging.moment && hogging.at !== null;

@@ -108,7 +108,11 @@ export class GoodsDrag {
     const drop = carrying && dropAt(carrying, px, py, freely);
     if (!carrying || !drop) return;
     const same = this.drop !== null && this.drop.level.levelId === drop.level.levelId && this.drop.place.at === drop.place.at;
+    const elsewhere = this.drop?.level.levelId !== drop.level.levelId;
     this.drop = drop;
-    if (!same) this.open.tryMove(placementId, targetOfDrop(carrying.bay, drop));
+    if (same) return;
+    this.open.tryMove(placementId, targetOfDrop(carrying.bay, drop));
+    // Diagrams and findings follow to the level over which it is held.
+    if (elsewhere) this.open.select({ placementIds: [placementId] });
   }
 }

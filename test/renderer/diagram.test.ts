@@ -111,3 +111,21 @@ test('an empty level has flat diagrams that can still be drawn', () => {
     for (const point of plot.curves.flatMap((curve) => curve.points)) expect(Number.isFinite(point.y)).toBe(true);
   }
 });
+
+test('the greatest shear is marked on its own side of the line: a load at the right end pulls it down there', () => {
+  const load = { lines: [], points: [{ at: 2000, force: 1000 * g }] };
+  const answer = solveBeam({ span, rigidity, left: end, right: end }, load);
+  const effects = {
+    front: answer,
+    rear: answer,
+    whole: answer,
+    loads: { front: load, rear: load, whole: load },
+    rigidity,
+    rigidityKnown: true,
+    end,
+  };
+  const peak = worstPeak(diagramOf('shear', wishes(effects, 'front')));
+  // R = 1 000 × 2 000/2 700
+  expect(peak?.value).toBeCloseTo((-1000 * 2000) / 2700, 6);
+  expect(peak?.from).toBeGreaterThanOrEqual(2000);
+});
