@@ -14,7 +14,7 @@ import { levelFindings } from './geometry';
 import { auditLevel } from './level';
 import { bayContents } from './level-work';
 import type { BayAudit, FrameAudit, LevelAudit, RunAudit, SiteAudit } from './types';
-import { governingOf } from './verdict';
+import { governingOf, verdictOfFindings } from './verdict';
 
 /**
  * @param today ISO date, for clocks such as that of amber damage
@@ -29,7 +29,7 @@ export function auditRun(site: Site, runId: Id, today: string, cache: AuditCache
   const findings = runFindings(audit.context, { run, place: { runId }, bays: run.bays.map((_, index) => audit.work(index)) });
   return {
     runId,
-    verdict: worstVerdict([...bays, ...frames, ...counting(findings)].map(({ verdict }) => verdict)),
+    verdict: verdictOfFindings([...bays.flatMap(findingsOfBay), ...frames.flatMap(({ findings: own }) => own), ...findings]),
     bays,
     frames,
     findings,
@@ -172,16 +172,17 @@ function ownAudit(context: SiteContext, work: BayWork): OwnAudit {
 }
 
 function withFrames(bay: Bay, { levels, findings }: OwnAudit, frames: readonly FrameAudit[]): BayAudit {
-  const parts = [...levels, ...frames];
+  const all = [...findingsOfBay({ levels, findings }), ...frames.flatMap(({ findings: own }) => own)];
   const total = levels.reduce<number | null>((sum, { totalKg }) => (sum === null || totalKg === null ? null : sum + totalKg), 0);
   return {
     bayId: bay.id,
-    verdict: worstVerdict([...parts.map(({ verdict }) => verdict), ...counting(findings).map(({ verdict }) => verdict)]),
-    governing: governingOf([...findings, ...parts.flatMap(({ governing }) => governing ?? [])]),
+    // From the findings, not the parts' verdicts: a part whose checks are all left out says nothing.
+    verdict: verdictOfFindings(all),
+    governing: governingOf(all),
     totalKg: total,
     levels,
     findings,
   };
 }
 
-const counting = (findings: readonly Finding[]): readonly Finding[] => findings.filter(({ counts }) => counts);
+const findingsOfBay = ({ levels, findings }: OwnAudit): readonly Finding[] => [...findings, ...levels.flatMap(({ findings: own }) => own)];

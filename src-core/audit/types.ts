@@ -35,7 +35,7 @@ export interface LevelAudit {
 
 export interface BayAudit {
   readonly bayId: Id;
-  /** The worst of the bay's own findings, its levels' and its two frames'. */
+  /** Of the bay's own findings, its levels' and its two frames' together. */
   readonly verdict: Verdict;
   readonly governing: Finding | null;
   /** Everything on the bay's beam levels; goods on the floor are carried by no beam. */
