@@ -16,7 +16,7 @@ import type { BeamLoad } from './load';
 import { greatestDeflection, greatestSagging } from './peaks';
 import { cutIntoPieces, type Pieces } from './pieces';
 import { sectionsOf, type Sections } from './sections';
-import type { Segment } from './segment';
+import { deflectionIn, momentIn, rotationIn, shearIn, type Segment } from './segment';
 import { sumOf } from './sums';
 
 export type { BeamEnd } from './beam-ends';
@@ -79,8 +79,9 @@ export function solveBeam(beam: Beam, load: BeamLoad): BeamAnswer {
   const endMomentRight = (sections.b[last] as number) + 0;
   const { at, ...sagging } = greatestSagging(segments, sections, span);
   const deflection = sagging.moment > 0 ? greatestDeflection(segments, at, rigidity) : { sag: 0, at: 0 };
-  if (![resultant, centroid ?? 0, leftShear, rightShear, sagging.moment, deflection.sag].every(Number.isFinite))
-    throw new RangeError(`load of ${resultant} N on ${span} mm is too great to compute`);
+  const finite = [resultant, leftShear, rightShear, sagging.moment, deflection.sag].every(Number.isFinite);
+  if (!finite || !segments.every((segment) => isComputable(segment, rigidity)))
+    throw new RangeError(`a load of ${resultant} N on ${span} mm with EI = ${rigidity} N·mm² is beyond what can be computed`);
   return {
     span,
     rigidity,
@@ -97,6 +98,18 @@ export function solveBeam(beam: Beam, load: BeamLoad): BeamAnswer {
     segments,
   };
 }
+
+/** Whether a segment's polynomials stay within the computer's numbers all along it. */
+const isComputable = (segment: Segment, rigidity: number): boolean => {
+  const s = segment.length;
+  return [
+    segment.moment,
+    shearIn(segment, s),
+    momentIn(segment, s),
+    rotationIn(segment, s, rigidity),
+    deflectionIn(segment, s, rigidity),
+  ].every(Number.isFinite);
+};
 
 const shearAt = ({ a, b }: Sections, section: number, span: number): number => ((b[section] as number) - (a[section] as number)) / span;
 
