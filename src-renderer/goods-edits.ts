@@ -33,7 +33,9 @@ const targetAt = ({ bay, level }: Stand, atMm: number): Target =>
 export function freePlace(site: Site, { bay, level }: Stand, widthMm: number): number | null {
   const width = (id: Id) => site.unitLoads.find((one) => one.id === id)?.widthMm ?? 0;
   const others = (level?.placements ?? bay.onFloor).map((one) => ({ at: one.atMm, width: width(one.unitLoadId) }));
-  const opening = { entry: bay.clearEntryMm, gaps: gapsAt(resolveRules(site.rules), level?.heightMm ?? 0), width: widthMm, others };
+  const loadedBy = bayPlace(site, bay.id)?.run.loadedBy ?? 'unknown';
+  const gaps = gapsAt(resolveRules(site.rules), loadedBy, level?.heightMm ?? 0);
+  const opening = { entry: bay.clearEntryMm, gaps, width: widthMm, others };
   // The middle of the beam is the hardest place for it and never the first choice.
   const first = catchingPlaces(opening).find(({ by }) => by !== 'middle of the beam');
   const tight = catchingPlaces({ ...opening, gaps: { upright: 0, loads: 0 } })[0];

@@ -1,5 +1,6 @@
 /** Gaps along a beam level that the rule set asks for, which placing catches at. */
-import type { ResolvedRules, RuleKey } from '../../src-core/checks/rule-sets';
+import { clearanceKeys, type LoadedBy } from '../../src-core/checks/clearance-rules';
+import type { ResolvedRules } from '../../src-core/checks/rule-sets';
 
 export interface Gaps {
   /** Goods to upright, and goods to goods, mm. */
@@ -7,16 +8,11 @@ export interface Gaps {
   readonly loads: number;
 }
 
-const BANDS: readonly { readonly upTo: number; readonly upright: RuleKey; readonly loads: RuleKey }[] = [
-  { upTo: 3000, upright: 'clearanceUprightTo3m', loads: 'clearanceLoadsTo3m' },
-  { upTo: 6000, upright: 'clearanceUprightTo6m', loads: 'clearanceLoadsTo6m' },
-  { upTo: 9000, upright: 'clearanceUprightTo9m', loads: 'clearanceLoadsTo9m' },
-  { upTo: Infinity, upright: 'clearanceUprightTo13m', loads: 'clearanceLoadsTo13m' },
-];
-
-/** For a level whose beam stands `height` mm above the floor. */
-export function gapsAt(rules: ResolvedRules, height: number): Gaps {
-  const band = BANDS.find(({ upTo }) => height <= upTo);
-  if (band === undefined) throw new RangeError(`height must be a number, got ${height}`);
-  return { upright: rules.value[band.upright], loads: rules.value[band.loads] };
+/**
+ * For a level whose beam stands `height` mm above the floor. Where nothing is asked for there, goods
+ * catch touching; where it is not known what puts them away, at the gaps of the common trucks.
+ */
+export function gapsAt(rules: ResolvedRules, loadedBy: LoadedBy, height: number): Gaps {
+  const keys = clearanceKeys(loadedBy === 'unknown' ? 'class-400' : loadedBy, height);
+  return keys === null ? { upright: 0, loads: 0 } : { upright: rules.value[keys.upright], loads: rules.value[keys.loads] };
 }
