@@ -13,6 +13,7 @@ import { goodsWork } from './goods';
 import { levelFindings } from './geometry';
 import { auditLevel } from './level';
 import { bayContents } from './level-work';
+import { sourceWords } from './source-words';
 import type { BayAudit, FrameAudit, LevelAudit, RunAudit, SiteAudit } from './types';
 import { governingOf, verdictOfFindings } from './verdict';
 
@@ -105,7 +106,9 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
       ),
     );
     const notice = bay.noticeId === null ? null : (context.notices.get(bay.noticeId) ?? null);
-    return { run, bay, index, place, notice, frames: [left, right], frameTypes, ...contents };
+    const noticeFrom =
+      notice === null ? '' : cache.remember('notice', notice, [], () => `load notice ${notice.name}; ${sourceWords(notice.source)}`);
+    return { run, bay, index, place, notice, noticeFrom, frames: [left, right], frameTypes, ...contents };
   };
 
   const neighbours = (index: number) => [run.bays[index - 1], run.bays[index], run.bays[index + 1]];

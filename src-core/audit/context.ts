@@ -35,6 +35,8 @@ export interface GoodsWork {
   readonly goodsKg: number | null;
   readonly palletKg: number | null;
   readonly grossKg: number | null;
+  /** Where the mass came from, in words. */
+  readonly from: string;
   /** N, x in mm from the unit load's own left edge; null where a mass is not known or the shape cannot be. */
   readonly pieces: BeamLoad | null;
   /** Centre of mass of goods and pallet in front of the unit load's own middle, mm. */
@@ -85,6 +87,8 @@ export interface BayWork {
   readonly index: number;
   readonly place: Place;
   readonly notice: LoadNotice | null;
+  /** The notice and where it came from, in words. */
+  readonly noticeFrom: string;
   readonly frames: readonly [left: Frame, right: Frame];
   readonly frameTypes: readonly [left: FrameType | null, right: FrameType | null];
   readonly levels: readonly LevelWork[];

@@ -6,6 +6,7 @@ import type { Id, UnitLoad } from '../site/site';
 import type { BeamLoad } from '../statics/load';
 import { weightOf } from '../units/quantity';
 import type { GoodsWork, SiteContext } from './context';
+import { sourceWords } from './source-words';
 
 /** @throws RangeError if the site has no such unit load or pallet, which a read site always has */
 export function goodsWork(context: Pick<SiteContext, 'unitLoads' | 'pallets'>, unitLoadId: Id): GoodsWork {
@@ -34,7 +35,19 @@ export function goodsWork(context: Pick<SiteContext, 'unitLoads' | 'pallets'>, u
   if (acrossFault !== null)
     missing.push({ input: `depth shape of ${unitLoad.name}`, how: acrossFault, field: `unitLoad:${unitLoad.id}:across` });
   const goodsCentre = acrossFault === null ? centreTowardsFront(unitLoad.depthMm, unitLoad.across) : 0;
-  const unknown = { unitLoad, pallet, goodsKg: null, palletKg, grossKg: null, pieces: null, centreTowardsFrontMm: goodsCentre, missing };
+  const own = sourceWords(unitLoad.massSource);
+  const from = pallet === null ? own : `${own}; with pallet ${pallet.name}`;
+  const unknown = {
+    unitLoad,
+    pallet,
+    goodsKg: null,
+    palletKg,
+    grossKg: null,
+    from,
+    pieces: null,
+    centreTowardsFrontMm: goodsCentre,
+    missing,
+  };
   if (!laid.ok) {
     if (laid.problem === 'mass-missing') missing.push(massMissing(unitLoad));
     else missing.push({ input: `bearing shape of ${unitLoad.name}`, how: laid.message, field: `unitLoad:${unitLoad.id}:bearing` });
@@ -50,6 +63,7 @@ export function goodsWork(context: Pick<SiteContext, 'unitLoads' | 'pallets'>, u
     goodsKg,
     palletKg,
     grossKg,
+    from,
     pieces: bears || palletKg === 0 ? laid.pieces : withPallet(laid.pieces, palletKg, unitLoad.widthMm),
     centreTowardsFrontMm: grossKg > 0 ? (goodsCentre * goodsKg) / grossKg : 0,
     missing,

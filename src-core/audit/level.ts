@@ -11,7 +11,7 @@ import { placement, type Outline } from '../checks/placement';
 import { sectionDeflection, sectionStress, type SectionNumber } from '../checks/section';
 import { tipping } from '../checks/tipping';
 import { positions, unitLoad, type Stated, type Weighed } from '../checks/unit-load';
-import type { BeamType, LoadNotice } from '../site/site';
+import type { BeamType } from '../site/site';
 import { solveBeam, type BeamAnswer } from '../statics/beam';
 import { reduce } from '../statics/reduction';
 import { asked, type BayWork, type LevelWork, type SiteContext, type StandingLoad } from './context';
@@ -42,17 +42,14 @@ export function auditLevel(context: SiteContext, bay: BayWork, work: LevelWork, 
 
 export const weighed = ({
   placement: { id },
-  goods: { unitLoad: load, pallet, grossKg, missing },
+  goods: { unitLoad: load, grossKg, from, missing },
   frontShare,
 }: StandingLoad): Weighed & { readonly frontShare: number | null } => ({
   placementId: id,
   frontShare,
   name: load.name,
   massKg: grossKg,
-  // Origins are words for whoever opens the calculation; few do.
-  get from() {
-    return pallet === null ? sourceWords(load.massSource) : `${sourceWords(load.massSource)}; with pallet ${pallet.name}`;
-  },
+  from,
   missing,
 });
 
@@ -65,8 +62,6 @@ export const outline = (one: StandingLoad): Outline => ({
   front: one.frontMm,
 });
 
-export const noticeWords = (notice: LoadNotice): string => `load notice ${notice.name}; ${sourceWords(notice.source)}`;
-
 /** A number of the bay's notice, or how to get it. */
 export function statedBy(bay: BayWork, field: 'unitLoadKg' | 'unitLoadsPerLevel' | 'bayKg', input: string, how: string): Stated {
   const { notice } = bay;
@@ -74,9 +69,7 @@ export function statedBy(bay: BayWork, field: 'unitLoadKg' | 'unitLoadsPerLevel'
   const value = notice[field];
   return {
     value,
-    get from() {
-      return noticeWords(notice);
-    },
+    from: bay.noticeFrom,
     missing: value === null ? [{ input, how, field: `notice:${notice.id}:${field}` }] : [],
   };
 }
@@ -150,7 +143,7 @@ function ratingOf(bay: BayWork, { level, index, beamType }: LevelWork): LevelRat
     level: inside(levelName(index)),
     index,
     beamLength: bay.bay.clearEntryMm,
-    notice: notice === null ? null : { id: notice.id, levelKg: notice.levelKg, from: () => noticeWords(notice) },
+    notice: notice === null ? null : { id: notice.id, levelKg: notice.levelKg, from: bay.noticeFrom },
     beamType:
       beamType === null
         ? null
@@ -158,7 +151,7 @@ function ratingOf(bay: BayWork, { level, index, beamType }: LevelWork): LevelRat
             id: beamType.id,
             name: beamType.name,
             ratings: beamType.ratings,
-            from: () => `table of ${beamType.name}; ${sourceWords(beamType.source)}`,
+            from: `table of ${beamType.name}; ${sourceWords(beamType.source)}`,
           },
     nothingNamed: () => ({
       input: `rated capacity of ${inside(levelName(index))}`,
@@ -228,7 +221,7 @@ function withoutEffects(check: (typeof BEAM_CHECKS)[number], work: LevelWork, ra
       says: () => say`Not worked out: goods on ${inside(levelName(work.index))} cannot stand as they were entered.`,
     });
   }
-  const ownMissing = numbers.length === 0 ? rated.missing : numbers.flatMap(({ value, missing }) => (value === null ? [missing] : []));
+  const ownMissing = numbers.length === 0 ? rated.missing : numbers.flatMap(({ value, missing }) => (value === null ? [missing()] : []));
   return notAssessable(check, work.place, distinctMissing([...work.missing, ...ownMissing]), { counts });
 }
 
@@ -238,8 +231,8 @@ function sectionNumbers(type: BeamType | null, { level, index }: LevelWork) {
     what: string,
   ): SectionNumber => ({
     value: type === null ? null : type[field],
-    get missing() {
-      return type === null
+    missing: () =>
+      type === null
         ? {
             input: `beam type of ${inside(levelName(index))}`,
             how: 'Choose the beam type, or add it with its maker’s data.',
@@ -249,8 +242,7 @@ function sectionNumbers(type: BeamType | null, { level, index }: LevelWork) {
             input: `${what} of ${type.name}`,
             how: 'Ask the maker, or take it from the data sheet.',
             field: `beamType:${type.id}:${field}`,
-          };
-    },
+          },
   });
   return {
     sectionModulusMm3: number('sectionModulusMm3', 'section modulus'),
@@ -281,12 +273,13 @@ function pairInput(
       context.site.rules.span === 'clear-entry'
         ? `clear entry of bay ${bay.bay.name}`
         : `upright centre to upright centre of bay ${bay.bay.name}`,
-    get goods() {
-      return work.goods.map((one) => {
-        const { name, massKg, from } = weighed(one);
-        return { name, massKg: massKg ?? 0, from, frontShare: one.frontShare ?? 0.5, centre: (work.offset ?? 0) + centreOf(one) };
-      });
-    },
+    goods: () =>
+      work.goods.map((one) => ({
+        ...weighed(one),
+        massKg: one.goods.grossKg ?? 0,
+        frontShare: one.frontShare ?? 0.5,
+        centre: (work.offset ?? 0) + centreOf(one),
+      })),
     totalKg: work.totalKg ?? 0,
     front,
     rear: alike ? front : beam(loads.rear, effects.rear),
@@ -329,9 +322,7 @@ function complementOf(context: SiteContext, bay: BayWork, work: LevelWork, rated
     goods: work.goods.map((one) => ({
       name: one.goods.unitLoad.name,
       massKg: one.goods.grossKg ?? 0,
-      get from() {
-        return weighed(one).from;
-      },
+      from: one.goods.from,
       left: one.fromMm,
       width: one.goods.unitLoad.widthMm,
     })),

@@ -169,10 +169,11 @@ export function sagSteps(input: PairInput, worse: OneBeam): { readonly bent: Qua
 
 /** Load of the worse beam and its two reactions, from the goods list. */
 export function reactionSteps(input: PairInput, worse: OneBeam): readonly WorkedStep[] {
-  const { goods, fixity } = input;
+  const { fixity } = input;
+  const goods = input.goods();
   const { answer } = worse.beam;
   const even = alike(input);
-  const share = (one: PairInput['goods'][number]) => (worse.side === 'front' ? one.frontShare : 1 - one.frontShare);
+  const share = (one: (typeof goods)[number]) => (worse.side === 'front' ? one.frontShare : 1 - one.frontShare);
   const term = (i: number) => (even ? `m${i + 1}` : `s${i + 1} · m${i + 1}`);
   const terms = goods.map((_, i) => term(i)).join(' + ') || '0';
   const masses = goods.flatMap((one, i) => [

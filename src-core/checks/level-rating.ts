@@ -13,13 +13,13 @@ export interface LevelRatingInput {
     readonly id: string;
     /** From the lowest level up; the last entry serves all levels above it. */
     readonly levelKg: readonly (number | null)[];
-    readonly from: () => string;
+    readonly from: string;
   } | null;
   readonly beamType: {
     readonly id: string;
     readonly name: string;
     readonly ratings: readonly { readonly spanMm: number; readonly pairKg: number }[];
-    readonly from: () => string;
+    readonly from: string;
   } | null;
   /** What to fill in where neither notice nor beam type is named. */
   readonly nothingNamed: () => Missing;
@@ -48,29 +48,19 @@ export function levelRating(input: LevelRatingInput): LevelRating {
       lower.kg === higher.kg
         ? []
         : [say`The lower of two ratings is used: ${massOf(lower.kg)} by ${lower.by}, ${massOf(higher.kg)} by ${higher.by}.`];
-    return ratingOf(lower, notes);
+    return { ...lower, notes: [...lower.notes, ...notes], missing: [] };
   }
   const only = byNotice ?? byTable;
-  if (only !== null) return ratingOf(only, []);
+  if (only !== null) return { ...only, missing: [] };
   return { kg: null, by: '', from: '', notes: [], missing: [whatIsMissing(input)] };
 }
 
 interface Found {
   readonly kg: number;
   readonly by: string;
-  readonly from: () => string;
+  readonly from: string;
   readonly notes: readonly Text[];
 }
-
-const ratingOf = ({ kg, by, from, notes }: Found, more: readonly Text[]): LevelRating => ({
-  kg,
-  by,
-  get from() {
-    return from();
-  },
-  notes: [...notes, ...more],
-  missing: [],
-});
 
 function noticeRating({ notice, index }: LevelRatingInput): Found | null {
   if (notice === null) return null;

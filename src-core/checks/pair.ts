@@ -20,7 +20,7 @@ export interface LoadedBeam {
 }
 
 /** A unit load as the worked calculation names it. */
-export interface PairGoods {
+interface PairGoods {
   readonly name: string;
   readonly massKg: number;
   readonly from: string;
@@ -36,7 +36,8 @@ export interface PairInput {
   /** Between the supports, mm, and what it is taken to be. */
   readonly span: number;
   readonly spanFrom: string;
-  readonly goods: readonly PairGoods[];
+  /** Asked for by worked calculations alone. */
+  readonly goods: () => readonly PairGoods[];
   readonly totalKg: number;
   readonly front: LoadedBeam;
   readonly rear: LoadedBeam;

@@ -11,12 +11,12 @@ import { utilisationStep } from './unit-load';
 /** One number of a beam's section; null = not known. */
 export interface SectionNumber {
   readonly value: number | null;
-  readonly missing: Missing;
+  readonly missing: () => Missing;
 }
 
 /** With none of a check's numbers known it only informs; with some of them, the others must be found. */
 function lacking(check: CheckName, place: Place, numbers: readonly SectionNumber[]): Finding {
-  const missing = numbers.filter(({ value }) => value === null).map((one) => one.missing);
+  const missing = numbers.filter(({ value }) => value === null).map((one) => one.missing());
   const none = missing.length === numbers.length;
   return notAssessable(check, place, missing, {
     counts: !none,

@@ -3,12 +3,12 @@ import { levelRating, type LevelRatingInput } from '../../../src-core/checks/lev
 import { plain } from '../plain';
 
 const nothingNamed = { input: 'rated capacity of level 2', how: 'Enter a notice.', field: 'bay:b:noticeId' };
-const notice = (...levelKg: (number | null)[]): LevelRatingInput['notice'] => ({ id: 'n', levelKg, from: () => 'load notice LN-1' });
+const notice = (...levelKg: (number | null)[]): LevelRatingInput['notice'] => ({ id: 'n', levelKg, from: 'load notice LN-1' });
 const table = (...rows: [number, number][]): LevelRatingInput['beamType'] => ({
   id: 't',
   name: 'B 120',
   ratings: rows.map(([spanMm, pairKg]) => ({ spanMm, pairKg })),
-  from: () => 'table of B 120',
+  from: 'table of B 120',
 });
 const rating = (change: Partial<LevelRatingInput>) =>
   levelRating({ level: 'level 2', index: 1, beamLength: 2700, notice: null, beamType: null, nothingNamed: () => nothingNamed, ...change });
