@@ -1,0 +1,225 @@
+/**
+ * The recovery journal: every edit that is not saved yet, on the disk beside the sites. Each opening
+ * of a site writes a file of its own, so that two windows never write into one.
+ *
+ * Where the sites folder does not answer, edits go to a folder on this machine instead.
+ */
+import { join } from 'node:path';
+import type { JournalRequest, RecoveredEdits } from '../src-core/host';
+import { thisMaker } from './file-names';
+import type { FsPort } from './fs-port';
+import { JournalFiles, latestOf, type Found, type JournalPlace } from './journal-files';
+import { changeLine, wholeLine } from './journal-lines';
+import { telling } from './trouble';
+import { Turns } from './turns';
+import { renameOver, writeBeside } from './whole-file';
+
+export interface JournalOptions {
+  /** The first that takes an edit has it. */
+  readonly places: readonly JournalPlace[];
+  /** Names one load of the page; lower-case letters, digits and "-". */
+  readonly session: string;
+  readonly now: () => Date;
+}
+
+/** A whole body is written again after so many lines, so that one damaged line cannot spoil many. */
+const LINES_TO_A_WHOLE = 100;
+/** Beyond this many bytes, and four bodies, the journal is written anew with its last state only. */
+const LONGEST = 16 * 1024 * 1024;
+/** Tells other programs that a journal is in use; see `JournalFiles`. */
+const TOUCH_EVERY = 20_000;
+
+/** What this run has written for one open site. */
+interface Own {
+  readonly name: string;
+  place: JournalPlace | null;
+  body: string;
+  edits: string[];
+  lines: number;
+  /** Size of the file as it was left. */
+  bytes: number;
+  /** Edits since the page last read the site. */
+  sinceRead: number;
+}
+
+interface Offered extends Found {
+  /** Whether the page took these edits up, or goes on with them. */
+  adopted: boolean;
+}
+
+const ENCODER = new TextEncoder();
+
+export class Journal {
+  readonly #options: JournalOptions;
+  readonly #files: JournalFiles;
+  readonly #turns = new Turns();
+  readonly #own = new Map<string, Own>();
+  readonly #offered = new Map<string, Offered>();
+  #openings = 0;
+  #touching: NodeJS.Timeout | null = null;
+
+  constructor(options: JournalOptions) {
+    this.#options = options;
+    this.#files = new JournalFiles(options.places);
+  }
+
+  /** Sentences about journals that could not be used. */
+  get notices(): readonly string[] {
+    return this.#files.notices;
+  }
+
+  /** Returns when the edit is on the disk. */
+  append(request: JournalRequest): Promise<void> {
+    return this.#turns.take(request.id, () => telling('The change is not in the journal yet', () => this.#append(request)));
+  }
+
+  /** After a save: the edits are in the site's file, and those that were taken up as well. */
+  saved(id: string, body: string): Promise<void> {
+    return this.#turns.take(id, async () => {
+      this.#adopt(id, body);
+      await this.#forget(id);
+      const offered = this.#offered.get(id);
+      if (offered?.adopted !== true) return;
+      this.#offered.delete(id);
+      await this.#files.remove(offered.name);
+    });
+  }
+
+  /**
+   * The edits are not wanted. Those made since the site was read are dropped; those that were found
+   * then are put away where they can be brought back by hand, unless later ones were dropped instead.
+   */
+  clear(id: string): Promise<void> {
+    return this.#turns.take(id, async () => {
+      const offered = this.#offered.get(id);
+      const edited = (this.#own.get(id)?.sinceRead ?? 0) > 0;
+      if (offered !== undefined && (offered.adopted || !edited)) {
+        await telling('The recovered changes could not be put away', () => this.#files.putAway(offered.name));
+        this.#offered.delete(id);
+      }
+      await this.#forget(id);
+    });
+  }
+
+  /** The latest edits in a journal that are not in the site as it is on disk. */
+  recovered(id: string, bodyOnDisk: string): Promise<RecoveredEdits | null> {
+    return this.#turns.take(id, async () => {
+      const own = this.#own.get(id);
+      if (own !== undefined) own.sinceRead = 0;
+      this.#offered.delete(id);
+      const unsaved: Found[] = [];
+      for (const found of await this.#files.find(id)) {
+        if (found.state.body !== bodyOnDisk) unsaved.push(found);
+        else if (found.name !== own?.name) await this.#files.remove(found.name);
+      }
+      const latest = latestOf(unsaved);
+      if (latest === null) return null;
+      const { body, editedAt, edits, base, damagedLines } = latest.state;
+      this.#offered.set(id, { ...latest, adopted: latest.name === own?.name });
+      return { body, editedAt, edits, baseRevision: base, damagedLines };
+    });
+  }
+
+  close(): void {
+    if (this.#touching !== null) clearInterval(this.#touching);
+    this.#touching = null;
+  }
+
+  async #append({ id, baseRevision, body, edit }: JournalRequest): Promise<void> {
+    this.#adopt(id, body);
+    const own = this.#own.get(id) ?? this.#newOwn(id);
+    const said = { at: this.#options.now().toISOString(), edit, base: baseRevision };
+    const whole = () => wholeLine(said, body, own.edits);
+    const change = () => changeLine(said, own.body, body);
+    let failure: unknown = new Error('there is no place for a journal');
+    for (const place of this.#options.places) {
+      const goesOn = own.place === place;
+      try {
+        let bytes: number;
+        if (!goesOn) bytes = await this.#begin(place, own.name, whole());
+        else if (own.bytes > Math.max(LONGEST, 4 * body.length)) bytes = await this.#writeAnew(place, own.name, whole());
+        else bytes = await this.#goOn(place, own, own.lines % LINES_TO_A_WHOLE === 0 ? whole : change, whole);
+        const { name, edits, lines, sinceRead } = own;
+        this.#own.set(id, { name, place, body, edits: [...edits, edit], lines: lines + 1, bytes, sinceRead: sinceRead + 1 });
+        this.#keepTouching();
+        return;
+      } catch (error) {
+        failure = error;
+        // What reached the file is not known: the next line there has to stand for itself.
+        own.place = null;
+      }
+    }
+    throw failure;
+  }
+
+  #newOwn(id: string): Own {
+    this.#openings++;
+    const name = `${id}.${thisMaker.machine}-${thisMaker.pid}-${this.#options.session}-${this.#openings}.journal`;
+    const own: Own = { name, place: null, body: '', edits: [], lines: 0, bytes: 0, sinceRead: 0 };
+    this.#own.set(id, own);
+    return own;
+  }
+
+  /** @returns the file's size afterwards, as from the other writers here */
+  async #begin({ fs, folder }: JournalPlace, name: string, line: string): Promise<number> {
+    await fs.makeFolder(folder);
+    const bytes = await addTo(fs, join(folder, name), () => line);
+    await fs.syncFolder(folder);
+    return bytes;
+  }
+
+  async #goOn({ fs, folder }: JournalPlace, { name, bytes }: Own, line: () => string, whole: () => string): Promise<number> {
+    let asLeft = true;
+    const after = await addTo(fs, join(folder, name), (size) => {
+      // Another page may have put the file away meanwhile: what is written then has to stand for itself.
+      asLeft = size === bytes;
+      return asLeft ? line() : whole();
+    });
+    if (!asLeft) await fs.syncFolder(folder);
+    return after;
+  }
+
+  async #writeAnew({ fs, folder }: JournalPlace, name: string, line: string): Promise<number> {
+    const path = join(folder, name);
+    const bytes = ENCODER.encode(line);
+    await renameOver(fs, await writeBeside(fs, path, bytes), path);
+    await fs.syncFolder(folder);
+    return bytes.length;
+  }
+
+  #adopt(id: string, body: string): void {
+    const offered = this.#offered.get(id);
+    if (offered !== undefined && offered.state.body === body) offered.adopted = true;
+  }
+
+  /** Drops what this run wrote for the site. */
+  async #forget(id: string): Promise<void> {
+    const own = this.#own.get(id);
+    this.#own.delete(id);
+    if (own === undefined) return;
+    await this.#files.remove(own.name);
+  }
+
+  /** Tells other programs that these journals are in use. */
+  #keepTouching(): void {
+    if (this.#touching !== null) return;
+    this.#touching = setInterval(() => {
+      for (const { name, place } of this.#own.values()) void place?.fs.touch(join(place.folder, name)).catch(() => undefined);
+    }, TOUCH_EVERY);
+    this.#touching.unref();
+  }
+}
+
+/** Adds a line that may depend on the file's size before, and returns the size after it. */
+async function addTo(fs: FsPort, path: string, line: (size: number) => string): Promise<number> {
+  const file = await fs.append(path);
+  try {
+    const before = await file.size();
+    const bytes = ENCODER.encode(line(before));
+    await file.write(bytes);
+    await file.sync();
+    return before + bytes.length;
+  } finally {
+    await file.close();
+  }
+}
