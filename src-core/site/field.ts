@@ -139,7 +139,7 @@ export function text(most: number, { visible = false } = {}): Field<string> {
 const DAYS = [31, 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31];
 
 /** Whether this is a day of the calendar, as YYYY-MM-DD. */
-export function isDate(value: string): boolean {
+function isDate(value: string): boolean {
   const [, year = '', month = '', day = ''] = /^(\d{4})-(\d{2})-(\d{2})$/.exec(value) ?? [];
   const leap = Number(year) % 4 === 0 && (Number(year) % 100 !== 0 || Number(year) % 400 === 0);
   const days = DAYS[Number(month) - 1];

@@ -65,7 +65,7 @@ const slope = variant<Slope, 'by'>('slope', 'by', {
   }),
 });
 
-export const bearing = variant<BearingShape, 'kind'>('bearing shape', 'kind', {
+const bearing = variant<BearingShape, 'kind'>('bearing shape', 'kind', {
   even: record('even shape', { kind: choice(['even']) }),
   stepped: record('stepped shape', { kind: choice(['stepped']), columns: list('columns', column, LIMITS.rows, 1) }),
   sloped: record('sloped shape', { kind: choice(['sloped']), slope }),
