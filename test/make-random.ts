@@ -74,7 +74,7 @@ const slope: fc.Arbitrary<Slope> = fc.oneof(
 const several = <T>(item: fc.Arbitrary<T>, minLength = 1): fc.Arbitrary<T[]> => fc.array(item, { minLength, maxLength: 4 });
 
 /** Any bearing shape that the reader takes; whether it fits a width is another matter. */
-export const arbitraryBearing: fc.Arbitrary<BearingShape> = fc.oneof(
+const arbitraryBearing: fc.Arbitrary<BearingShape> = fc.oneof(
   fc.constant({ kind: 'even' as const }),
   fc.record({ kind: fc.constant('stepped' as const), columns: several(column) }),
   fc.record({ kind: fc.constant('sloped' as const), slope }),

@@ -23,7 +23,7 @@ export const UNKNOWN_SOURCE: Source = { kind: 'unknown', detail: '', person: '',
 
 let made = 0;
 /** A fresh id for tests that do not care which. */
-export const anId = (prefix = 'x'): Id => `${prefix}-${++made}`;
+const anId = (prefix = 'x'): Id => `${prefix}-${++made}`;
 
 export const makePallet = (part: Partial<Pallet> = {}): Pallet => ({
   id: anId('pallet'),
@@ -209,12 +209,3 @@ export const makeSite = (part: Partial<Site> = {}): Site => ({
   runs: [],
   ...part,
 });
-
-/** A site with one run of one bay of one level: the least that has a verdict. */
-export function oneLevelSite(goods: readonly (readonly [UnitLoad, number])[], notice: LoadNotice | null, bay: Partial<Bay> = {}): Site {
-  return makeSite({
-    unitLoads: [...new Set(goods.map(([unitLoad]) => unitLoad))],
-    notices: notice ? [notice] : [],
-    runs: [makeRun([makeBay([makeLevel(goods)], { noticeId: notice?.id ?? null, ...bay })])],
-  });
-}
