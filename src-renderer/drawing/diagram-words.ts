@@ -51,7 +51,8 @@ export function diagramSentence(diagram: Diagram, reading: Reading, sagDivisor: 
   }
   const of = worst.beam === 'pair' ? 'both beams together' : `the ${BEAM_NAMES[worst.beam]}`;
   const limits = diagram.limits.map(
-    (limit) => `${limit.exceeded ? 'beyond' : 'within'} ${limitWords(limit, diagram, reading, sagDivisor)}`,
+    (limit) =>
+      `${limit.exceeded ? 'beyond' : 'within'} ${limitWords(limit, diagram, reading, sagDivisor)}${limit.judged ? '' : ', for information'}`,
   );
   const against = limits.length > 0 ? `; ${limits.join('; ')}` : '';
   return `${title} of ${of}: greatest ${peakFigure(diagram, worst, reading)} ${placeWords(worst, diagram.plot.span, reading)}${against}.`;

@@ -32,6 +32,8 @@ export interface Limit {
   readonly kind: 'even load' | 'span limit';
   readonly value: number;
   readonly exceeded: boolean;
+  /** Whether the verdict is made by it; a designed full complement is judged by its total instead. */
+  readonly judged: boolean;
 }
 
 export interface Diagram {
@@ -128,13 +130,20 @@ export interface DiagramWishes {
   readonly view: BeamView;
   /** Rating of the pair, kg; null = none. */
   readonly ratedKg: number | null;
+  /** Diagrams whose comparison with the rated even load counts in the verdict. */
+  readonly judged: ReadonlySet<DiagramName>;
   /** Deflection limit of the rule set, mm; null = not shown. */
   readonly sagLimit: number | null;
 }
 
 function limitsOf(name: DiagramName, wishes: DiagramWishes, peaks: readonly Peak[]): readonly Limit[] {
   const most = Math.max(0, ...peaks.map((peak) => Math.abs(peak.value)));
-  const limit = (kind: Limit['kind'], value: number): Limit => ({ kind, value, exceeded: most > value * (1 + 1e-12) });
+  const limit = (kind: Limit['kind'], value: number): Limit => ({
+    kind,
+    value,
+    exceeded: most > value * (1 + 1e-12),
+    judged: kind === 'span limit' || wishes.judged.has(name),
+  });
   const limits: Limit[] = [];
   if (name !== 'intensity' && wishes.ratedKg !== null)
     limits.push(limit('even load', evenLoad(wishes.effects, wishes.ratedKg, wishes.view)[name]));
@@ -144,7 +153,7 @@ function limitsOf(name: DiagramName, wishes: DiagramWishes, peaks: readonly Peak
 
 /** Where along the span a limit is drawn: shear is limited at the supports only. */
 function limitCurves(name: DiagramName, limit: Limit, span: number): readonly Curve[] {
-  const look = limit.exceeded ? 'exceeded limit' : 'limit';
+  const look = limit.exceeded && limit.judged ? 'exceeded limit' : 'limit';
   const stretch = (from: number, to: number, y: number): Curve => ({
     look,
     filled: false,

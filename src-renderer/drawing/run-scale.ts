@@ -16,6 +16,8 @@ export function runDrawn(run: Run, libraries: Libraries): RunDrawn {
 }
 
 export interface RunSheet {
+  /** px that are there across, and the most that may be taken upwards. */
+  readonly width: number;
   readonly tallest: number;
   /** px that a usual bay must have for the figures at its frames. */
   readonly leastPitch: number;
@@ -34,10 +36,13 @@ export interface RunScale {
   readonly frames: readonly { readonly left: number; readonly right: number }[];
 }
 
-export function runScale({ bays, frames }: RunDrawn, { tallest, leastPitch, edge, top }: RunSheet): RunScale {
+/** The whole run in the width where its figures have room so, else as wide as they need. */
+export function runScale({ bays, frames }: RunDrawn, { width, tallest, leastPitch, edge, top }: RunSheet): RunScale {
   const highest = Math.max(1, ...bays.map((bay) => bay.height));
   const narrowest = Math.min(...bays.map((bay) => bay.entry + bay.leftUpright.width));
-  const rate = Math.max(tallest / highest, Number.isFinite(narrowest) ? leastPitch / narrowest : 0);
+  const across = [...bays.map((bay) => bay.entry), ...frames.map((frame) => frame.width)].reduce((sum, mm) => sum + mm, 0);
+  const fits = Math.min(tallest / highest, (width - 2 * edge) / Math.max(1, across));
+  const rate = Math.max(fits, Number.isFinite(narrowest) ? leastPitch / narrowest : 0);
   const floor = top + highest * rate;
   let left = edge;
   const sides = frames.map((frame, i) => {

@@ -42,7 +42,7 @@ test('bands of neighbouring levels meet and do not overlap', () => {
 test('in the run neighbours share a frame and keep one scale', () => {
   const bays = [bayOf(), bayOf()];
   const frames = [0, 1, 2].map((i) => ({ frameId: `f${i}`, width: 100, height: 4000 }));
-  const scale = runScale({ bays, frames }, { tallest: 400, leastPitch: 100, edge: 20, top: 0 });
+  const scale = runScale({ bays, frames }, { width: 2000, tallest: 400, leastPitch: 100, edge: 20, top: 0 });
   // 400 px for 4 000 mm: a bay of 2 700 mm is 270 px, a frame of 100 mm is 10 px.
   expect(scale.frames).toEqual([
     { left: 20, right: 30 },
@@ -56,4 +56,13 @@ test('the strip shows every bay of a run at one scale, no higher than its limit'
   const scale = stripScale([bayOf(), { ...bayOf(), height: 8000 }]);
   expect(8000 * scale.rate).toBeLessThanOrEqual(108 + 1e-9);
   expect(stripScale([]).skyline).toBe(0);
+});
+
+test('a run fits the width as long as its figures have room, else it is as wide as they need', () => {
+  const bays = [bayOf(), bayOf()];
+  const frames = [0, 1, 2].map((i) => ({ frameId: `f${i}`, width: 100, height: 4000 }));
+  const sheet = { width: 320, tallest: 400, leastPitch: 100, edge: 20, top: 0 };
+  expect(runScale({ bays, frames }, sheet).width).toBeCloseTo(320, 9);
+  // 2 800 mm from frame to frame in 200 px
+  expect(runScale({ bays, frames }, { ...sheet, leastPitch: 200 }).rate).toBeCloseTo(1 / 14, 12);
 });

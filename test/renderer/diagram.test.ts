@@ -26,7 +26,13 @@ function effectsOf(frontKg: number, rearKg: number): LevelEffects {
     end,
   };
 }
-const wishes = (effects: LevelEffects, view: BeamView, ratedKg: number | null = 2000) => ({ effects, view, ratedKg, sagLimit: span / 200 });
+const wishes = (effects: LevelEffects, view: BeamView, ratedKg: number | null = 2000) => ({
+  effects,
+  view,
+  ratedKg,
+  judged: new Set(['shear', 'bending', 'deflection'] as const),
+  sagLimit: span / 200,
+});
 
 describe('a pair under 1 200 kg in front and 800 kg at the rear, rated 2 000 kg', () => {
   const effects = effectsOf(1200, 800);
@@ -128,4 +134,11 @@ test('the greatest shear is marked on its own side of the line: a load at the ri
   // R = 1 000 × 2 000/2 700
   expect(peak?.value).toBeCloseTo((-1000 * 2000) / 2700, 6);
   expect(peak?.from).toBeGreaterThanOrEqual(2000);
+});
+
+test('a full complement beyond the rated even load is told so, but not marked as over', () => {
+  const asked = { ...wishes(effectsOf(1200, 800), 'front'), judged: new Set<never>() };
+  const bending = diagramOf('bending', asked);
+  expect(bending.limits[0]).toMatchObject({ exceeded: true, judged: false });
+  expect(bending.plot.curves.map((curve) => curve.look)).not.toContain('exceeded limit');
 });
