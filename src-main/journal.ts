@@ -12,7 +12,7 @@ import { JournalFiles, latestOf, type Found, type JournalPlace } from './journal
 import { changeLine, wholeLine } from './journal-lines';
 import { telling } from './trouble';
 import { Turns } from './turns';
-import { renameOver, writeBeside } from './whole-file';
+import { addSurely, renameOver, writeBeside } from './whole-file';
 
 export interface JournalOptions {
   /** The first that takes an edit has it. */
@@ -71,6 +71,17 @@ export class Journal {
   /** Returns when the edit is on the disk. */
   append(request: JournalRequest): Promise<void> {
     return this.#turns.take(request.id, () => telling('The change is not in the journal yet', () => this.#append(request)));
+  }
+
+  /**
+   * Before a save: what the journal does not have yet. If the program ends between the save and
+   * `saved`, the journal then says what the file says, and nothing is offered by mistake.
+   */
+  async saving(request: Omit<JournalRequest, 'edit'>): Promise<void> {
+    const own = this.#own.get(request.id);
+    if (own === undefined || own.body === request.body) return;
+    // A journal that fails must not keep the site from being saved.
+    await this.append({ ...request, edit: 'Last changes before saving' }).catch(() => undefined);
   }
 
   /** After a save: the edits are in the site's file, and those that were taken up as well. */
@@ -216,8 +227,7 @@ async function addTo(fs: FsPort, path: string, line: (size: number) => string): 
   try {
     const before = await file.size();
     const bytes = ENCODER.encode(line(before));
-    await file.write(bytes);
-    await file.sync();
+    await addSurely(file, before, bytes);
     return before + bytes.length;
   } finally {
     await file.close();

@@ -99,6 +99,7 @@ export class Machine {
         return { id, text, revision, savedAt, recovered: await journal().recovered(id, writeSite(site)) };
       },
       saveSite: async (request) => {
+        await journal().saving(request);
         const saved = await this.#store.save(request);
         await journal().saved(request.id, request.body);
         return saved;

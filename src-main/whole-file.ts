@@ -2,12 +2,21 @@
 import { basename, dirname, join } from 'node:path';
 import { setTimeout as wait } from 'node:timers/promises';
 import { tempName } from './file-names';
-import { systemCode, type FsPort } from './fs-port';
+import { systemCode, type FsPort, type OpenFile } from './fs-port';
 
 /** What a virus scanner or synchroniser that holds a file for a moment makes a rename answer. */
 const HELD = ['EPERM', 'EBUSY', 'EACCES'];
 /** Waits before each new attempt, ms: about two seconds together. */
 const RETRY_AFTER = [10, 30, 60, 100, 200, 300, 400, 400, 500];
+
+/** Adds the bytes to a file of so many before, and returns once all of them are on the disk. */
+export async function addSurely(file: OpenFile, before: number, bytes: Uint8Array): Promise<void> {
+  await file.write(bytes);
+  await file.sync();
+  // Some layers report a write as done that was cut short by a full disk.
+  const arrived = (await file.size()) - before;
+  if (arrived !== bytes.length) throw Object.assign(new Error(`only ${arrived} of ${bytes.length} bytes arrived`), { code: 'ENOSPC' });
+}
 
 /**
  * Puts all the bytes into a new file beside `path` and returns its path once they are on the disk.
@@ -18,11 +27,7 @@ export async function writeBeside(fs: FsPort, path: string, bytes: Uint8Array): 
   try {
     const file = await fs.create(temp);
     try {
-      await file.write(bytes);
-      await file.sync();
-      // Some layers report a write as done that was cut short by a full disk.
-      const size = await file.size();
-      if (size !== bytes.length) throw Object.assign(new Error(`only ${size} of ${bytes.length} bytes arrived`), { code: 'ENOSPC' });
+      await addSurely(file, 0, bytes);
     } finally {
       await file.close();
     }
