@@ -73,7 +73,10 @@ export const COMMANDS: readonly Command[] = [
   // ------------------------------------------------------------ site
   command('save', 'Site', 'Save', ['Mod+S'], always, ({ open }) => void open.save()),
   screen('history', 'Earlier states'),
-  command('site-form', 'Site', 'Site name, units and place', [], always, ({ open }) => open.openTask('site', open.site.id)),
+  command('site-form', 'Site', 'Site name, units and place', [], always, ({ shell, open }) => {
+    shell.show('rules');
+    open.openTask('site', open.site.id);
+  }),
   command('export', 'Site', 'Save a copy as a file…', [], always, ({ shell }) => void shell.exportFile()),
   command('leave', 'Site', 'All sites', [], always, ({ shell }) => shell.leave()),
 

@@ -2,6 +2,7 @@ import { mount } from 'svelte';
 import App from './App.svelte';
 import { connect } from './host';
 import { Shell } from './shell.svelte';
+import { startWorker } from './start-worker';
 import './tokens.css';
 import './base.css';
 import './forms/forms.css';
@@ -9,6 +10,6 @@ import './forms/forms.css';
 const page = document.getElementById('page');
 if (page === null) throw new Error('index.html has no element with the id "page"');
 
-const shell = new Shell(connect(), () => new Worker(new URL('./audit-worker.ts', import.meta.url), { type: 'module' }));
+const shell = new Shell(connect(), startWorker);
 mount(App, { target: page, props: { shell } });
 void shell.start();

@@ -25,7 +25,7 @@ import {
   type Target,
 } from './places';
 import { Saving, type SavedState } from './saving.svelte';
-import { completed, existing, NOTHING, type Selection } from './selection';
+import { completed, existing, firstOf, NOTHING, type Selection } from './selection';
 import { amend, record, redo, startHistory, undo, type UndoHistory } from './undo-history';
 
 export type { Target } from './places';
@@ -121,8 +121,7 @@ export class OpenSite {
       write: (site) => this.findings.write(site),
     });
     this.#check();
-    const run = options.site.runs[0];
-    if (run) this.select({ runId: run.id });
+    this.#wanted = firstOf(options.site);
   }
 
   // ------------------------------------------------------------ looking

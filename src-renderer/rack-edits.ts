@@ -1,4 +1,5 @@
 /** Changing the rack itself: runs, bays and levels added, copied, moved and taken out. Each is one step of undo. */
+import type { LoadedBy } from '../src-core/checks/clearance-rules';
 import { copyOfBay, copyOfFrame, copyOfLevel } from '../src-core/site/copies';
 import {
   addBay,
@@ -33,6 +34,7 @@ export interface RunPlan {
   readonly beamTypeId: Id | null;
   readonly frameTypeId: Id | null;
   readonly floorId: Id | null;
+  readonly loadedBy: LoadedBy;
 }
 
 /**
@@ -41,7 +43,7 @@ export interface RunPlan {
  */
 export function layOutRun(open: OpenSite, plan: RunPlan, notice: LoadNotice | null): string | null {
   const { name, bays: count, floorId } = plan;
-  const run = runByTemplate(evenTemplate(plan), { name, count, floorId, newId });
+  const run: Run = { ...runByTemplate(evenTemplate(plan), { name, count, floorId, newId }), loadedBy: plan.loadedBy };
   const refused = open.edit(`Lay out run ${name}`, (site) => addRun(notice === null ? site : addEntry(site, 'notices', notice), run));
   if (refused !== null) return refused;
   const bay = run.bays[0];

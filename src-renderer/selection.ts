@@ -12,6 +12,13 @@ export interface Selection {
 
 export const NOTHING: Selection = { runId: null, bayId: null, levelId: null, placementIds: [] };
 
+/** The lowest level of the first bay. */
+export function firstOf(site: Site): Selection {
+  const run = site.runs[0];
+  const bay = run?.bays[0];
+  return { runId: run?.id ?? null, bayId: bay?.id ?? null, levelId: bay?.levels[0]?.id ?? null, placementIds: [] };
+}
+
 /** The selection as far as it still stands in the site; where its bay is gone, the nearest that is left. */
 export function existing(site: Site, wanted: Selection): Selection {
   const run = site.runs.find((one) => one.id === wanted.runId) ?? site.runs[0];

@@ -255,12 +255,14 @@ export class Shell {
     });
   }
 
-  /** The screen on which a form stands. */
+  /** Forms stand beside the drawing, so that verdicts follow what is typed; libraries and rules have screens of their own as well. */
   #bringUp(kind: string): void {
     this.dialog = null;
-    if (LIBRARIES.some((one) => one.kind === kind)) this.screen = 'libraries';
-    else if (kind === 'site') this.screen = 'rules';
-    else if (this.screen !== 'run' || !['frame', 'run'].includes(kind)) this.screen = 'rack';
+    const isEntry = LIBRARIES.some((one) => one.kind === kind);
+    if (this.screen === 'libraries' && isEntry) return;
+    if (this.screen === 'rules' && kind === 'site') return;
+    if (this.screen === 'run' && (isEntry || ['frame', 'run', 'site'].includes(kind))) return;
+    this.screen = 'rack';
   }
 
   #showProblems(name: string, reading: Extract<FileReading, { ok: false }>): void {

@@ -40,8 +40,8 @@ const FRESH: { readonly [K in LibraryKind]: (id: Id, name: string) => LibraryIte
   unitLoad: (id, name) => ({
     id,
     name,
-    widthMm: 1200,
-    depthMm: 800,
+    widthMm: 800,
+    depthMm: 1200,
     heightMm: 1200,
     goodsKg: null,
     massUncertaintyPercent: 0,
