@@ -3,9 +3,10 @@
  * checks. Checks that the site leaves out are not run and are listed with their reasons.
  */
 import { worstVerdict, type Finding, type Place } from '../checks/finding';
-import type { Bay, Id, Run, Site } from '../site/site';
+import type { Bay, Frame, Id, Run, Site } from '../site/site';
 import { bayFindings, runFindings } from './bay-checks';
 import { bayContentsFindings } from './bay';
+import { counterpart, mirrored } from './behind';
 import { createAuditCache, type AuditCache } from './cache';
 import { contextOf, type BayWork, type FrameWork, type SiteContext } from './context';
 import { frameAudit } from './frame';
@@ -27,7 +28,7 @@ export function auditRun(site: Site, runId: Id, today: string, cache: AuditCache
   const { run } = audit;
   const bays = run.bays.map((_, index) => audit.bay(index));
   const frames = run.frames.map((_, index) => audit.frame(index));
-  const findings = runFindings(audit.context, { run, place: { runId }, bays: run.bays.map((_, index) => audit.work(index)) });
+  const findings = runFindings(audit.context, { run, place: { runId }, bays: run.bays.map((_, index) => audit.work(index)), frames });
   return {
     runId,
     verdict: verdictOfFindings([...bays.flatMap(findingsOfBay), ...frames.flatMap(({ findings: own }) => own), ...findings]),
@@ -59,6 +60,7 @@ interface RunAuditor {
   readonly context: SiteContext;
   readonly run: Run;
   readonly work: (index: number) => BayWork;
+  readonly frameWork: (index: number) => FrameWork;
   readonly frame: (index: number) => FrameAudit;
   readonly bay: (index: number) => BayAudit;
 }
@@ -113,9 +115,34 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
 
   const neighbours = (index: number) => [run.bays[index - 1], run.bays[index], run.bays[index + 1]];
 
-  const frame = (index: number): FrameAudit => {
+  const frameAt = (index: number): Frame => {
     const one = run.frames[index];
     if (one === undefined) throw new RangeError(`run "${runId}" has no frame ${index}`);
+    return one;
+  };
+
+  const frameWork = (index: number): FrameWork => {
+    const one = frameAt(index);
+    return {
+      run,
+      frame: one,
+      index,
+      place: { runId, frameId: one.id },
+      type: one.typeId === null ? null : (context.frameTypes.get(one.typeId) ?? null),
+      left: index > 0 ? work(index - 1) : null,
+      right: index < run.bays.length ? work(index) : null,
+      behind: () => {
+        if (behind === null) return [];
+        const other = runAuditor(site, behind.id, today, cache);
+        return mirrored(run, behind)
+          ? [other.frameWork(counterpart(index, behind.frames.length))]
+          : behind.frames.map((_, i) => other.frameWork(i));
+      },
+    };
+  };
+
+  const frame = (index: number): FrameAudit => {
+    const one = frameAt(index);
     const from = [
       run.bays[index - 1],
       run.bays[index],
@@ -125,18 +152,7 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
       run.frames.length,
       ...surroundings,
     ];
-    return cache.remember('frame', one, from, () => {
-      const input: FrameWork = {
-        run,
-        frame: one,
-        index,
-        place: { runId, frameId: one.id },
-        type: one.typeId === null ? null : (context.frameTypes.get(one.typeId) ?? null),
-        left: index > 0 ? work(index - 1) : null,
-        right: index < run.bays.length ? work(index) : null,
-      };
-      return frameAudit(context, input);
-    });
+    return cache.remember('frame', one, from, () => frameAudit(context, frameWork(index)));
   };
 
   const bay = (index: number): BayAudit => {
@@ -147,7 +163,7 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
     const frames = [frame(index), frame(index + 1)];
     return cache.remember('whole bay', one, [own, ...frames], () => withFrames(one, own, frames));
   };
-  return { context, run, work, frame, bay };
+  return { context, run, work, frameWork, frame, bay };
 }
 
 function bayAt(run: Run, index: number): readonly [Bay, Run['frames'][number], Run['frames'][number]] {

@@ -11,7 +11,7 @@ import type { CheckName, Missing, Place } from '../checks/finding';
 import { resolveRules, type ResolvedRules } from '../checks/rule-sets';
 import type { Bay, BeamType, Floor, Frame, FrameType, Id, Level, LoadNotice, Pallet, Placement, Run, Site, UnitLoad } from '../site/site';
 import type { BeamLoad } from '../statics/load';
-import type { LevelEffects } from './types';
+import type { FrameAudit, LevelEffects } from './types';
 
 export interface SiteContext {
   readonly site: Site;
@@ -105,12 +105,18 @@ export interface FrameWork {
   /** Bay to the left of the frame and bay to its right; null at the ends of the run. */
   readonly left: BayWork | null;
   readonly right: BayWork | null;
+  /**
+   * Frames of the run behind that stand against this one: its counterpart, or all of them where the two
+   * runs do not mirror each other; none where no run is behind.
+   */
+  readonly behind: () => readonly FrameWork[];
 }
 
 export interface RunWork {
   readonly run: Run;
   readonly place: Place;
   readonly bays: readonly BayWork[];
+  readonly frames: readonly FrameAudit[];
 }
 
 export function contextOf(site: Site, today: string): SiteContext {

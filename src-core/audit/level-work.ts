@@ -128,7 +128,7 @@ function supportsOf(
 }
 
 /** Every frame of the bay without a type, each to be filled in. */
-export const frameTypesMissing = (frames: readonly [BayFrame, BayFrame]): readonly Missing[] =>
+export const frameTypesMissing = (frames: readonly BayFrame[]): readonly Missing[] =>
   frames.flatMap(({ frame, type }) =>
     type !== null
       ? []

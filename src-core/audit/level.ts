@@ -16,6 +16,7 @@ import { solveBeam, type BeamAnswer } from '../statics/beam';
 import { reduce } from '../statics/reduction';
 import { asked, type BayWork, type LevelWork, type SiteContext, type StandingLoad } from './context';
 import { frameTypesMissing } from './level-work';
+import { runnersFinding } from './runners';
 import { sourceWords } from './source-words';
 import type { LevelAudit, LevelEffects } from './types';
 import { governingOf, verdictOfFindings } from './verdict';
@@ -74,7 +75,7 @@ export function statedBy(bay: BayWork, field: 'unitLoadKg' | 'unitLoadsPerLevel'
   };
 }
 
-const noticeMissing = ({ bay }: BayWork): Missing => ({
+export const noticeMissing = ({ bay }: BayWork): Missing => ({
   input: `load notice of bay ${bay.name}`,
   how: 'Read the notice at the rack and enter it. Where there is none, ask the maker for one for this rack as it stands.',
   field: `bay:${bay.id}:noticeId`,
@@ -137,7 +138,7 @@ const frameMissing = ({ frames, frameTypes }: BayWork): readonly Missing[] =>
     { frame: frames[1], type: frameTypes[1] },
   ]);
 
-function ratingOf(bay: BayWork, { level, index, beamType }: LevelWork): LevelRating {
+export function ratingOf(bay: BayWork, { level, index, beamType }: LevelWork): LevelRating {
   const { notice } = bay;
   return levelRating({
     level: inside(levelName(index)),
@@ -176,6 +177,10 @@ function beamFindings(context: SiteContext, bay: BayWork, work: LevelWork, rated
     found.push(pair === null ? withoutEffects(check, work, rated, section) : beamCheck(check, pair, work, counts, section, from));
   }
   if (complement !== null) found.push(complement.finding);
+  if (pair !== null && asked(context, 'pallet-bearing')) {
+    const onRunners = runnersFinding(work, pair, (effects) => pairInput(context, bay, work, effects, pair.span, rated), counts);
+    if (onRunners !== null) found.push(onRunners);
+  }
   return found;
 }
 

@@ -9,8 +9,7 @@ import { say, type Finding, type Missing, type Place, type Text, type WorkedStep
 import { compared, distinctMissing, finding, notAssessable } from './make-finding';
 import { opening } from './phrase';
 import { ruleQuantity, ruleValue, sourceOf, type ResolvedRules } from './rule-sets';
-import type { Stated } from './unit-load';
-import { utilisationStep } from './unit-load';
+import { utilisationStep, type Stated } from './unit-load';
 import { above, GRAVITY, put } from './worked-values';
 
 /** The two legs of a frame, everything above them included, kg; null = not known. */
@@ -264,6 +263,50 @@ export function floorArea(input: FloorAreaInput): Finding {
     notes: () => [
       FLOOR_NOTE,
       say`Over the footprint alone the load is ${ratioOf(load.value / allowed.value)} times the limit; with its share of the aisle it is less.`,
+    ],
+  });
+}
+
+export interface RunOnFloor {
+  readonly place: Place;
+  /** "run A". */
+  readonly run: string;
+  /** Sum of all its legs, N. */
+  readonly legs: number;
+  /** Outside to outside of its end frames, and depth of its frames, mm. */
+  readonly length: number;
+  readonly depth: number;
+  readonly limit: Stated;
+}
+
+/** What a whole run brings on a suspended floor, for whoever has to prove it; each bay is judged by itself. */
+export function runOnFloor({ place, run, legs, length, depth, limit }: RunOnFloor): Finding {
+  const mean = quantity('stress', legs / (length * depth));
+  return finding({
+    check: 'floor-area',
+    place,
+    verdict: 'within',
+    counts: false,
+    demand: mean,
+    ...(limit.value === null ? {} : { allowed: quantity('stress', limit.value), utilisation: mean.value / limit.value }),
+    says: () =>
+      say`${opening(run)} stands on a suspended floor and presses on it with ${forceOf(legs)} under all its legs, ${mean} over its footprint.`,
+    worked: () => [
+      {
+        what: 'Mean load by area over the run’s footprint',
+        formula: 'N / (l · d)',
+        values: [
+          put('N', 'force of all legs', forceOf(legs), 'upright frames, storey by storey'),
+          put('l', 'length of the run', lengthOf(length), 'bays and frame types'),
+          put('d', 'depth of the frames', lengthOf(depth), 'frame types'),
+        ],
+        result: { symbol: 'q', quantity: mean },
+        source: 'common practice, no source',
+      },
+    ],
+    notes: () => [
+      say`For information: each bay is judged by itself, where the floor may be loaded harder. Goods standing on the floor come on top.`,
+      FLOOR_NOTE,
     ],
   });
 }

@@ -16,7 +16,7 @@ export interface RatedPart {
   readonly name: string;
   readonly maker: string;
   readonly sourceKnown: boolean;
-  /** Prefix of its fields: `beam-type:id:`. */
+  /** Prefix of its fields: `beamType:id:`. */
   readonly field: string;
 }
 

@@ -29,7 +29,9 @@ const known: Rack = {
     goods('a', { goodsKg: 500, palletId: 'p' }),
     goods('b', { goodsKg: 300, palletId: 'p', across: { kind: 'sloped', rearOverFront: 0.5 } }),
   ],
-  levels: [level([stand('a', 100), stand('b', 1200, { towardsFrontMm: 40, mirrored: true })])],
+  levels: [
+    level([stand('a', 100), stand('b', 1200, { towardsFrontMm: 40, mirrored: true })], { deck: { kind: 'support-bars', massKg: 12 } }),
+  ],
   notice: { levelKg: [2500], unitLoadKg: 900, unitLoadsPerLevel: 3 },
   beam: { ...SECTION, ratings: [{ spanMm: 2700, pairKg: 2400 }] },
 };
