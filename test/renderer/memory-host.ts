@@ -1,5 +1,6 @@
 /** A host that keeps sites in memory, with revisions and journal as the real ones keep them, and can be made to fail. */
 import type { Host, HostFailure, JournalRequest, Preferences, SiteOnDisk } from '../../src-core/host';
+import { memoryBeside } from './memory-beside';
 
 interface Kept {
   body: string;
@@ -17,6 +18,16 @@ export class MemoryHost implements Host {
   readonly waiting = new Map<string, Promise<void>>();
   savePdf = null;
   chooseSitesFolder = null;
+  readonly #beside = memoryBeside((name) => this.#call(name));
+  readonly listVisits = this.#beside.listVisits;
+  readonly saveVisit = this.#beside.saveVisit;
+  readonly readFollowUp = this.#beside.readFollowUp;
+  readonly saveFollowUp = this.#beside.saveFollowUp;
+  readonly addPhoto = this.#beside.addPhoto;
+  readonly readPhoto = this.#beside.readPhoto;
+  readonly listRecords = this.#beside.listRecords;
+  readonly readRecord = this.#beside.readRecord;
+  readonly appendRecord = this.#beside.appendRecord;
   #preferences: Preferences = { theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: 'en-GB' };
 
   async #call(name: string): Promise<void> {

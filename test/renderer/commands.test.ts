@@ -1,0 +1,173 @@
+import { beforeEach, expect, test } from 'vitest';
+import { COMMANDS, commandFor, GROUPS, nameOf, type Command, type Surroundings } from '../../src-renderer/commands';
+import { chordName, pressed, type KeyPress } from '../../src-renderer/keys';
+import { Shell } from '../../src-renderer/shell.svelte';
+import { writeSite } from '../../src-core/site/write';
+import { writeSiteFile } from '../../src-core/site/envelope';
+import { MemoryHost } from './memory-host';
+import { EMPTY, smallSite } from './sites';
+
+const NO_HASH = () => '0'.repeat(64);
+const fileOf = (body: string) => writeSiteFile(body, { program: '0.1.0', savedAt: '2026-12-01T12:00:00.000Z' }, NO_HASH);
+
+async function surroundings(site = smallSite()): Promise<Surroundings> {
+  const host = new MemoryHost();
+  await host.saveSite({ id: site.id, body: fileOf(writeSite(site)), baseRevision: null });
+  const shell = new Shell(host, null, () => '2026-12-01');
+  await shell.start();
+  await shell.openSite(site.id);
+  if (shell.open === null) throw new Error(`the site did not open: ${shell.trouble?.message}`);
+  return { shell, open: shell.open };
+}
+
+const press = (key: string, part: Partial<KeyPress> = {}): KeyPress => ({
+  key,
+  ctrlKey: false,
+  metaKey: false,
+  shiftKey: false,
+  altKey: false,
+  ...part,
+});
+const DRAWING = { inField: false, inDrawing: true };
+const FIELD = { inField: true, inDrawing: false };
+const ELSEWHERE = { inField: false, inDrawing: false };
+
+let at: Surroundings;
+beforeEach(async () => {
+  at = await surroundings();
+});
+
+/** Every state that the table tells apart. */
+async function states(): Promise<readonly (readonly [string, Surroundings])[]> {
+  const chosen = await surroundings();
+  chosen.open.select({ placementIds: ['p1'] });
+  const several = await surroundings();
+  several.open.select({ placementIds: ['p1', 'p2'] });
+  const carrying = await surroundings();
+  carrying.open.select({ placementIds: ['p1'] });
+  carrying.open.pickUp('p1');
+  const onFloor = await surroundings();
+  onFloor.open.select({ levelId: null });
+  const rules = await surroundings();
+  rules.shell.show('rules');
+  return [
+    ['nothing chosen', await surroundings()],
+    ['empty site', await surroundings(EMPTY)],
+    ['goods chosen', chosen],
+    ['several chosen', several],
+    ['carrying', carrying],
+    ['floor chosen', onFloor],
+    ['another screen', rules],
+  ];
+}
+
+test('ids are unique, groups are known, names read as a person says them', () => {
+  expect(new Set(COMMANDS.map((one) => one.id)).size).toBe(COMMANDS.length);
+  for (const one of COMMANDS) {
+    expect(GROUPS).toContain(one.group);
+    expect(nameOf(one, at)).toMatch(/^[A-Z]/);
+  }
+});
+
+test('in no state do two allowed commands share a key', async () => {
+  for (const [state, here] of await states()) {
+    const seen = new Map<string, string>();
+    for (const one of COMMANDS.filter((command) => command.when(here))) {
+      for (const key of one.keys) {
+        expect(seen.get(key) ?? one.id, `${key} when ${state}`).toBe(one.id);
+        seen.set(key, one.id);
+      }
+    }
+  }
+});
+
+test('letters and arrows without a modifier act in the drawing only, so that typing is never a command', () => {
+  const plain = COMMANDS.flatMap((one) => one.keys.map((key) => ({ one, key }))).filter(({ key }) =>
+    /^(Shift\+|Alt\+)?(.|Arrow\w+|Enter|Space)$/.test(key),
+  );
+  expect(plain.length).toBeGreaterThan(8);
+  for (const { one, key } of plain) expect(one.inDrawing, `${key} of ${one.id}`).toBe(true);
+});
+
+const idFor = (event: KeyPress, focus: { inField: boolean; inDrawing: boolean }, mac = false): string | null =>
+  commandFor(event, at, focus, mac)?.id ?? null;
+
+test.each([
+  ['Ctrl+S saves from anywhere', press('s', { ctrlKey: true }), ELSEWHERE, 'save'],
+  ['Ctrl+S saves from a field', press('s', { ctrlKey: true }), FIELD, 'save'],
+  ['an upper-case S with Ctrl is the same key', press('S', { ctrlKey: true }), ELSEWHERE, 'save'],
+  ['a plain S does nothing', press('s'), DRAWING, null],
+  ['Ctrl+Alt+S is something else', press('s', { ctrlKey: true, altKey: true }), ELSEWHERE, null],
+  ['Ctrl+K lists all commands', press('k', { ctrlKey: true }), FIELD, 'commands'],
+  ['F1 helps', press('F1'), FIELD, 'show-help'],
+  ['the right arrow walks to the next bay', press('ArrowRight'), DRAWING, 'bay-right'],
+  ['the right arrow outside the drawing does nothing', press('ArrowRight'), ELSEWHERE, null],
+  ['Ctrl+A in a field selects its text', press('a', { ctrlKey: true }), FIELD, null],
+  ['Page Down goes to the next bay', press('PageDown'), ELSEWHERE, 'next-bay'],
+])('%s', (_, event, focus, id) => {
+  expect(idFor(event, focus)).toBe(id);
+});
+
+test.each([
+  ['the right arrow nudges by 10 mm', press('ArrowRight'), 'right-10'],
+  ['Shift and the left arrow nudge by 1 mm', press('ArrowLeft', { shiftKey: true }), 'left-1'],
+  ['Alt and the right arrow nudge by 100 mm', press('ArrowRight', { altKey: true }), 'right-100'],
+  ['the up arrow moves to the level above', press('ArrowUp'), 'goods-up'],
+  ['M turns left for right', press('m'), 'mirror'],
+  ['Delete takes off', press('Delete'), 'delete'],
+  ['Enter picks up', press('Enter'), 'pick-up'],
+  ['Escape selects nothing', press('Escape'), 'unselect'],
+])('with goods chosen %s', (_, event, id) => {
+  at.open.select({ placementIds: ['p1'] });
+  expect(idFor(event, DRAWING)).toBe(id);
+});
+
+test.each([
+  ['Enter puts down', press('Enter'), 'put-down'],
+  ['Space puts down', press(' '), 'put-down'],
+  ['Escape puts back', press('Escape'), 'put-back'],
+  ['the right arrow tries 10 mm further', press('ArrowRight'), 'right-10'],
+])('while goods are carried %s', (_, event, id) => {
+  at.open.select({ placementIds: ['p1'] });
+  at.open.pickUp('p1');
+  expect(idFor(event, DRAWING)).toBe(id);
+});
+
+test('on a Mac the command key stands for Ctrl, in deed and in print', () => {
+  expect(idFor(press('s', { metaKey: true }), ELSEWHERE, true)).toBe('save');
+  expect(idFor(press('s', { ctrlKey: true }), ELSEWHERE, true)).toBeNull();
+  expect(chordName('Mod+Shift+Z', true)).toBe('⌘ Shift Z');
+  expect(chordName('Mod+Shift+Z', false)).toBe('Ctrl+Shift+Z');
+});
+
+test('a key is matched by what it types, wherever it lies on the keyboard', () => {
+  expect(pressed(press('z', { ctrlKey: true }), 'Mod+Z', false)).toBe(true);
+  expect(pressed(press('w', { ctrlKey: true }), 'Mod+Z', false)).toBe(false);
+  expect(pressed(press(' '), 'Space', false)).toBe(true);
+});
+
+test('every command that is allowed can be run in every state without a fault', async () => {
+  // What reaches for the browser itself is tried in the end-to-end tests.
+  const elsewhere = new Set(['export']);
+  const ids = COMMANDS.map((one) => one.id).filter((id) => !elsewhere.has(id));
+  const ran = new Set<string>();
+  for (const id of ids) {
+    for (const [state, here] of await states()) {
+      const one = COMMANDS.find((command) => command.id === id) as Command;
+      if (!one.when(here)) continue;
+      expect(() => one.run(here), `${id} when ${state}`).not.toThrow();
+      ran.add(id);
+      here.open.close();
+    }
+  }
+  // Undo, redo, paste and going back want something done before; it is done here.
+  const { open, shell } = at;
+  open.select({ placementIds: ['p1'] });
+  for (const id of ['duplicate', 'undo', 'redo', 'copy', 'paste', 'next-bay', 'back']) {
+    const one = COMMANDS.find((command) => command.id === id) as Command;
+    expect(one.when({ open, shell }), id).toBe(true);
+    one.run({ open, shell });
+    ran.add(id);
+  }
+  expect([...ids].filter((id) => !ran.has(id))).toEqual([]);
+});
