@@ -107,9 +107,25 @@ function upright(run: Run, index: number, { frameTypes }: Libraries): Upright {
 
 const beamHeight = (level: Level, { beamTypes }: Libraries): number => beamTypes.get(level.beamTypeId ?? '')?.heightMm ?? DRAWN_BEAM;
 
-/** The bay `run.bays[index]` as it is drawn. */
+interface Kept {
+  readonly from: readonly unknown[];
+  readonly drawn: BayDrawn;
+}
+/** Sites are immutable: a bay is drawn anew only when it, one of its frames or the libraries are other values. */
+const kept = new WeakMap<Bay, Kept>();
+
+/** A bay of the run as it is drawn; the same object as long as nothing that is drawn of it changed. */
 export function bayDrawn(run: Run, bay: Bay, libraries: Libraries): BayDrawn {
   const index = run.bays.indexOf(bay);
+  const from = [libraries, run.frames[index], run.frames[index + 1]];
+  const before = kept.get(bay);
+  if (before !== undefined && before.from.every((one, i) => one === from[i])) return before.drawn;
+  const drawn = draw(run, bay, index, libraries);
+  kept.set(bay, { from, drawn });
+  return drawn;
+}
+
+function draw(run: Run, bay: Bay, index: number, libraries: Libraries): BayDrawn {
   const leftUpright = upright(run, index, libraries);
   const rightUpright = upright(run, index + 1, libraries);
   const rows = [
