@@ -53,6 +53,9 @@ const object =
     );
   };
 
+/** What is in it is checked where it is used. */
+const anyObject: Check = (value) => typeof value === 'object' && value !== null && !Array.isArray(value);
+
 const PREFERENCES: Readonly<Record<keyof Preferences, Check>> = {
   theme: (value) => value === 'system' || value === 'light' || value === 'dark',
   textScale: (value) => typeof value === 'number' && value >= 50 && value <= 300,
@@ -76,6 +79,15 @@ const ARGUMENTS: Readonly<Record<HostMethod, readonly Check[]>> = {
   readGeneration: [siteId, generationId],
   appendJournal: [object({ id: siteId, baseRevision: revisionOrNone, body: siteText, edit: text(100_000) })],
   clearJournal: [siteId],
+  listVisits: [siteId],
+  saveVisit: [object({ siteId, visitId: siteId, body: siteText, baseRevision: revisionOrNone })],
+  readFollowUp: [siteId],
+  saveFollowUp: [object({ siteId, body: siteText, baseRevision: revisionOrNone })],
+  addPhoto: [object({ siteId, photoId: siteId, base64: siteText })],
+  readPhoto: [siteId, text(LONGEST_NAME)],
+  listRecords: [siteId],
+  readRecord: [siteId, (value) => Number.isInteger(value)],
+  appendRecord: [object({ siteId, draft: anyObject, contents: siteText })],
   readPreferences: [],
   savePreferences: [object(PREFERENCES, true)],
   savePdf: [text(LONGEST_NAME)],
@@ -131,6 +143,15 @@ export function hostOver(carry: (method: HostMethod, given: readonly unknown[]) 
     readGeneration: (id, generation) => ask('readGeneration', id, generation),
     appendJournal: (request) => nothing('appendJournal', request),
     clearJournal: (id) => nothing('clearJournal', id),
+    listVisits: (siteId) => ask('listVisits', siteId),
+    saveVisit: (request) => ask('saveVisit', request),
+    readFollowUp: (siteId) => ask('readFollowUp', siteId),
+    saveFollowUp: (request) => ask('saveFollowUp', request),
+    addPhoto: (request) => ask('addPhoto', request),
+    readPhoto: (siteId, file) => ask('readPhoto', siteId, file),
+    listRecords: (siteId) => ask('listRecords', siteId),
+    readRecord: (siteId, number) => ask('readRecord', siteId, number),
+    appendRecord: (request) => ask('appendRecord', request),
     readPreferences: () => ask('readPreferences'),
     savePreferences: (change) => ask('savePreferences', change),
     savePdf: inWindow ? (name) => ask('savePdf', name) : null,

@@ -4,6 +4,7 @@
  *
  * The page knows sites by id, never by path. Every method may reject with a `HostError`.
  */
+import type { FrozenRecord, RecordDraft } from './visit/records';
 
 /** One site in the list. `problem` is a sentence if its file cannot be read. */
 export interface SiteEntry {
@@ -72,6 +73,53 @@ export interface JournalRequest {
   readonly edit: string;
 }
 
+/** A document kept beside a site, as text; `problem` says what is wrong where it cannot be read. */
+export interface KeptText {
+  readonly id: string;
+  readonly text: string;
+  readonly revision: string;
+  readonly problem: string | null;
+}
+
+export interface SaveVisit {
+  readonly siteId: string;
+  readonly visitId: string;
+  /** The visit as JSON text, as `writeVisit` gives it. */
+  readonly body: string;
+  /** Revision it was read at; null for a new one. */
+  readonly baseRevision: string | null;
+}
+
+export interface SaveFollowUp {
+  readonly siteId: string;
+  /** As `writeFollowUp` gives it. */
+  readonly body: string;
+  readonly baseRevision: string | null;
+}
+
+export interface PhotoRequest {
+  readonly siteId: string;
+  readonly photoId: string;
+  /** The picture's bytes: JPEG, PNG or WebP. */
+  readonly base64: string;
+}
+
+export interface AppendRecord {
+  readonly siteId: string;
+  /** The host adds its version and the time. */
+  readonly draft: Omit<RecordDraft, 'program' | 'at'>;
+  /** Inputs and figures as JSON text. */
+  readonly contents: string;
+}
+
+export interface RecordsOnDisk {
+  /** Those that can be relied on. */
+  readonly records: readonly FrozenRecord[];
+  /** Number of the first one that was altered, and a sentence; null where all are as they were written. */
+  readonly altered: number | null;
+  readonly message: string | null;
+}
+
 export interface Preferences {
   readonly theme: 'system' | 'light' | 'dark';
   /** Text scale in per cent. */
@@ -108,6 +156,19 @@ export interface Host {
   readGeneration(id: string, generationId: string): Promise<string>;
   appendJournal(request: JournalRequest): Promise<void>;
   clearJournal(id: string): Promise<void>;
+  listVisits(siteId: string): Promise<readonly KeptText[]>;
+  saveVisit(request: SaveVisit): Promise<{ readonly revision: string }>;
+  readFollowUp(siteId: string): Promise<KeptText | null>;
+  saveFollowUp(request: SaveFollowUp): Promise<{ readonly revision: string }>;
+  /** Keeps a photo beside the site; returns the name under which it is kept. */
+  addPhoto(request: PhotoRequest): Promise<{ readonly file: string }>;
+  /** A photo's bytes in base64. */
+  readPhoto(siteId: string, file: string): Promise<string>;
+  /** Every record, verified against alteration. */
+  listRecords(siteId: string): Promise<RecordsOnDisk>;
+  readRecord(siteId: string, number: number): Promise<string>;
+  /** Seals a record behind the last one; it can no longer be changed unnoticed. */
+  appendRecord(request: AppendRecord): Promise<FrozenRecord>;
   readPreferences(): Promise<Preferences>;
   savePreferences(change: Partial<Preferences>): Promise<Preferences>;
   /** Saves the page as PDF; null where the host has none and the page's own print is used. */

@@ -28,6 +28,8 @@ export interface Folders {
   readonly journal: string;
   readonly leftOut: string;
   readonly locks: string;
+  /** Visits, photos and records, a folder for each site. */
+  readonly beside: string;
 }
 
 export const foldersIn = (sites: string): Folders => ({
@@ -38,6 +40,7 @@ export const foldersIn = (sites: string): Folders => ({
   journal: join(sites, 'journal'),
   leftOut: join(sites, 'journal', 'left-out'),
   locks: join(sites, 'locks'),
+  beside: join(sites, 'beside'),
 });
 
 export const siteFileName = (id: string): string => `${checkedId(id)}${SITE_FILE_END}`;

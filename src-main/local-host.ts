@@ -6,10 +6,12 @@ import type { About, Host } from '../src-core/host';
 import { readSite } from '../src-core/site/read';
 import type { Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
+import { BesideStore } from './beside-store';
 import { foldersIn } from './file-names';
 import { nodeFs, type FsPort } from './fs-port';
 import { Journal } from './journal';
 import { JournalFiles, type JournalPlace } from './journal-files';
+import { RecordStore } from './record-store';
 import type { Settings } from './settings';
 import { SiteStore } from './site-store';
 import { sweep } from './sweep';
@@ -114,11 +116,36 @@ export class Machine {
       readGeneration: (id, generation) => this.#store.readGeneration(id, generation),
       appendJournal: (request) => journal().append(request),
       clearJournal: (id) => journal().clear(id),
+      ...this.#beside(),
       readPreferences: async () => settings.preferences(),
       savePreferences: async (change) => settings.savePreferences(change),
       ...window,
       close: () => journals.forEach((one) => one.close()),
     };
+  }
+
+  /** What is kept beside the sites of the folder that is in use when it is asked for. */
+  #beside() {
+    const { version: program } = this.#options;
+    let made: { store: SiteStore; beside: BesideStore; records: RecordStore } | null = null;
+    const kept = () => {
+      if (made?.store === this.#store) return made;
+      const fs = withTimeLimit(this.#fs, this.#options.limits ?? TIME_LIMITS);
+      const beside = new BesideStore(fs, this.#store.folders);
+      made = { store: this.#store, beside, records: new RecordStore({ fs, beside, program, now: this.#now }) };
+      return made;
+    };
+    return {
+      listVisits: (siteId) => kept().beside.visits(siteId),
+      saveVisit: (request) => kept().beside.saveVisit(request),
+      readFollowUp: (siteId) => kept().beside.followUp(siteId),
+      saveFollowUp: (request) => kept().beside.saveFollowUp(request),
+      addPhoto: (request) => kept().beside.addPhoto(request),
+      readPhoto: (siteId, file) => kept().beside.readPhoto(siteId, file),
+      listRecords: (siteId) => kept().records.list(siteId),
+      readRecord: (siteId, number) => kept().records.contents(siteId, number),
+      appendRecord: (request) => kept().records.append(request),
+    } satisfies Partial<Host>;
   }
 
   #storeIn(folder: string): SiteStore {

@@ -14,7 +14,14 @@ const LEFT_OUT_KEPT = 30 * 24 * HOUR;
  */
 export async function sweep(fs: FsPort, folders: Folders, now: Date): Promise<void> {
   const ids = await namesIn(fs, folders.earlier);
-  const places = [folders.sites, folders.setAside, folders.journal, ...ids.map((id) => join(folders.earlier, id))];
+  const beside = (await namesIn(fs, folders.beside)).map((id) => join(folders.beside, id));
+  const places = [
+    folders.sites,
+    folders.setAside,
+    folders.journal,
+    ...ids.map((id) => join(folders.earlier, id)),
+    ...beside.flatMap((own) => [own, ...['visits', 'photos', 'records'].map((part) => join(own, part))]),
+  ];
   for (const place of places) {
     for (const name of await namesIn(fs, place)) {
       const maker = makerOfTemp(name);

@@ -102,14 +102,14 @@ export interface ChainHead {
 
 /**
  * Reads and verifies the records' file, one record a line.
- * @param contentsOf text of a record's contents, null where it is gone; leave out to verify the chain alone
+ * @param contentsHash hash of a record's contents as they are now, null where they are gone; null to verify the chain alone
  * @param head the acknowledged end, without which records cut off at the end go unnoticed
  */
 export function verifyChain(
   lines: readonly string[],
   hash: Hash,
-  contentsOf: ((number: number) => string | null) | null = null,
-  head: ChainHead | null = null,
+  contentsHash: ((number: number) => string | null) | null = null,
+  head: ChainHead | 'damaged' | null = null,
 ): ChainVerdict {
   const records: FrozenRecord[] = [];
   const stop = (altered: number, message: string): ChainVerdict => ({
@@ -128,18 +128,21 @@ export function verifyChain(
     if (!own) return stop(number, 'was altered after it was written.');
     const last = records.at(-1);
     if (one.previous !== (last?.hash ?? '')) return stop(Math.max(number - 1, 1), 'was replaced after the next one was written.');
-    const contents = contentsOf === null ? undefined : contentsOf(number);
+    const contents = contentsHash === null ? one.contentsHash : contentsHash(number);
     if (contents === null) return stop(number, 'has lost its contents: their file is gone.');
-    if (contents !== undefined && hash(contents) !== one.contentsHash)
-      return stop(number, 'had its contents altered after it was written.');
+    if (contents !== one.contentsHash) return stop(number, 'had its contents altered after it was written.');
     records.push(one);
   }
+  if (head === 'damaged') return { whole: false, records, altered: records.length + 1, message: HEAD_DAMAGED };
   // A program that ended between record and head leaves the head one behind.
-  const there = head === null || head.number === 0 ? undefined : records[head.number - 1];
+  const there = head === null ? undefined : records[head.number - 1];
   if (head !== null && head.number > records.length) return stop(records.length + 1, 'is missing: it was written and is no longer there.');
   if (head !== null && there !== undefined && there.hash !== head.hash) return stop(head.number, 'was replaced after it was written.');
   return { whole: true, records };
 }
+
+const HEAD_DAMAGED =
+  'The note of how many records there are is damaged, so records may be missing at the end. Take head.json from a copy; where the last record shown is the last one kept, remove head.json.';
 
 function readLine(line: string): FrozenRecord | null {
   let json: unknown;

@@ -31,7 +31,7 @@ const headOf = ({ records }: { records: FrozenRecord[] }) => {
 
 test('an untouched chain verifies, records in order', () => {
   const chain = chainOf(4);
-  const verdict = verifyChain(chain.lines, hash, (n) => chain.contents[n - 1] ?? null, headOf(chain));
+  const verdict = verifyChain(chain.lines, hash, (n) => hash(chain.contents[n - 1] ?? ''), headOf(chain));
   expect(verdict).toEqual({ whole: true, records: chain.records });
   expect(chain.records.map(({ number }) => number)).toEqual([1, 2, 3, 4]);
   expect(verifyChain([], hash)).toEqual({ whole: true, records: [] });
@@ -57,8 +57,8 @@ test('one byte edited in the contents names the record', () => {
   const chain = chainOf(3);
   const contents = [...chain.contents];
   contents[1] = '{"figures":9}';
-  expect(verifyChain(chain.lines, hash, (n) => contents[n - 1] ?? null)).toMatchObject({ whole: false, altered: 2 });
-  expect(verifyChain(chain.lines, hash, (n) => (n === 3 ? null : (chain.contents[n - 1] ?? null)))).toMatchObject({
+  expect(verifyChain(chain.lines, hash, (n) => hash(contents[n - 1] ?? ''))).toMatchObject({ whole: false, altered: 2 });
+  expect(verifyChain(chain.lines, hash, (n) => (n === 3 ? null : hash(chain.contents[n - 1] ?? '')))).toMatchObject({
     whole: false,
     altered: 3,
   });
@@ -89,6 +89,12 @@ test('a whole chain rewritten from the middle does not meet the acknowledged end
     whole: false,
     altered: 3,
   });
+});
+
+test('a damaged note of the end is told, and is no proof against the records', () => {
+  const verdict = verifyChain(chainOf(3).lines, hash, null, 'damaged');
+  expect(verdict).toMatchObject({ whole: false, altered: 4 });
+  expect(verdict.records).toHaveLength(3);
 });
 
 test('a head that is one behind, as after a program that ended in between, is no fault', () => {
