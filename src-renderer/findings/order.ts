@@ -1,6 +1,6 @@
 /** Findings in order of weight, and by where they belong. */
 import type { BayAudit, FrameAudit, LevelAudit, RunAudit } from '../../src-core/audit/types';
-import { compareVerdicts, type Finding, type Missing } from '../../src-core/checks/finding';
+import { compareVerdicts, type CheckName, type Finding, type Missing } from '../../src-core/checks/finding';
 import type { Id, Run } from '../../src-core/site/site';
 import { CHECK_WORDS } from '../../src-core/words/check-names';
 
@@ -11,11 +11,25 @@ export function byWeight(findings: readonly Finding[]): readonly Finding[] {
   );
 }
 
+/** Checks of goods that are made for the floor of a bay as for a level; there no level names them. */
+const ALSO_ON_FLOOR: ReadonlySet<CheckName> = new Set([
+  'placement',
+  'goods-form',
+  'overhang',
+  'clearance-along',
+  'clearance-above',
+  'clearance-across',
+]);
+
 /** Name of the finding: its check, and the member it was made on. */
 export function titleOf({ check, place }: Finding): string {
-  const where = [place.beam && `${place.beam} beam`, place.end && `${place.end} end`, place.post && `${place.post} post`].filter(
-    (part) => part !== undefined,
-  );
+  const onFloor = place.bayId !== undefined && place.levelId === undefined && place.frameId === undefined && ALSO_ON_FLOOR.has(check);
+  const where = [
+    place.beam && `${place.beam} beam`,
+    place.end && `${place.end} end`,
+    place.post && `${place.post} post`,
+    onFloor ? 'on the floor' : undefined,
+  ].filter((part) => part !== undefined);
   const name = CHECK_WORDS[check].name;
   return where.length > 0 ? `${name}, ${where.join(', ')}` : name;
 }
@@ -35,14 +49,15 @@ export interface Audits {
   readonly bay: BayAudit | null;
   readonly level: LevelAudit | null;
   readonly frames: readonly (FrameAudit | null)[];
+  readonly frameName: (frameId: Id) => string;
 }
 
 /** What stands beside the drawing: the chosen level first, then its bay, its two frames, and the run. */
-export function groupsOf({ run, bay, level, frames }: Audits, levelName: string): readonly FindingGroup[] {
+export function groupsOf({ run, bay, level, frames, frameName }: Audits, levelName: string): readonly FindingGroup[] {
   const groups = [
     { heading: levelName, findings: level?.findings ?? [] },
     { heading: 'This bay', findings: bay?.findings ?? [] },
-    { heading: 'Its frames', findings: frames.flatMap((frame) => frame?.findings ?? []) },
+    ...frames.flatMap((frame) => (frame ? [{ heading: `Frame ${frameName(frame.frameId)}`, findings: frame.findings }] : [])),
     { heading: 'The run', findings: run?.findings ?? [] },
   ];
   return groups.filter((group) => group.findings.length > 0).map((group) => ({ ...group, findings: byWeight(group.findings) }));

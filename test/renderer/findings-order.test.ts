@@ -41,8 +41,9 @@ test('a finding is named by its check and the member it was made on', () => {
 test('groups without findings are not shown, and the chosen level comes first', () => {
   const level = { levelId: 'l', findings: [finding({})] };
   const bay = { bayId: 'b', findings: [finding({ check: 'bay-total' })] };
-  const groups = groupsOf({ run: null, bay, level, frames: [null] } as never, 'Level 2');
-  expect(groups.map((group) => group.heading)).toEqual(['Level 2', 'This bay']);
+  const frame = { frameId: 'f', findings: [finding({ check: 'plumb' })] };
+  const groups = groupsOf({ run: null, bay, level, frames: [null, frame], frameName: () => 'A1|A2' } as never, 'Level 2');
+  expect(groups.map((group) => group.heading)).toEqual(['Level 2', 'This bay', 'Frame A1|A2']);
 });
 
 test('keys tell findings of the same check on front and rear apart', () => {
@@ -54,4 +55,10 @@ test('an input that several checks wait for is asked for once, with their names'
   const missing = { input: 'mass of drums', how: 'Weigh one.', field: 'unit-load:u1:goodsKg' };
   const findings = [finding({ check: 'level-total', missing: [missing] }), finding({ check: 'bay-total', missing: [missing] })];
   expect(missingOf([{ heading: 'Level 1', findings }])).toEqual([{ ...missing, checks: ['Level total', 'Bay total'] }]);
+});
+
+test('a clearance that no level names is that of the goods on the floor', () => {
+  expect(titleOf(finding({ check: 'clearance-along', place: { runId: 'r', bayId: 'b' } }))).toBe('Clearance along, on the floor');
+  expect(titleOf(finding({ check: 'clearance-along', place: { runId: 'r', bayId: 'b', levelId: 'l' } }))).toBe('Clearance along');
+  expect(titleOf(finding({ check: 'bay-total', place: { runId: 'r', bayId: 'b' } }))).toBe('Bay total');
 });
