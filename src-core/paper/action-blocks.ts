@@ -1,0 +1,77 @@
+/** Actions and the locations that they empty, numbered so that one list can name the other's lines. */
+import type { Site } from '../site/site';
+import { dateWords } from '../units/dates';
+import { say, type Text } from '../units/text';
+import { stillOpen, type OpenAction } from '../visit/actions';
+import { offLoadList } from '../visit/off-load';
+import { ACTION_WORDS } from '../words/visit-words';
+import { dayCell, heading, kgCell, NONE, paragraph, table, type Block, type Cell } from './paper';
+
+export function actionBlocks(site: Site, actions: readonly OpenAction[]): readonly Block[] {
+  const open = stillOpen(actions);
+  const closed = actions.filter((one) => one.closed !== null);
+  return [
+    heading('What to do'),
+    ...(open.length === 0 ? [paragraph(['Nothing is open.'])] : [openTable(open)]),
+    ...locationBlocks(site, open),
+    ...(closed.length === 0
+      ? []
+      : [
+          table(
+            'Done',
+            ['What', 'Done by', 'On', 'How'],
+            closed.map(({ says, closed: by }) => [says, [by?.person ?? ''], dayCell(by?.date ?? ''), [by?.how ?? '']]),
+          ),
+        ]),
+  ];
+}
+
+function openTable(open: readonly OpenAction[]): Block {
+  return table(
+    'Open actions, the most urgent first',
+    ['#No.', 'Action', 'Class', 'What was found', 'Found', '#Days', 'By'],
+    open.map((action, i) => [
+      [String(i + 1)],
+      [ACTION_WORDS[action.kind]],
+      action.class === null ? NONE : { damage: action.class },
+      [...action.says, ...reductionWords(action)],
+      dayCell(action.found),
+      action.age === null ? NONE : [String(action.age)],
+      dueCell(action),
+    ]),
+  );
+}
+
+function dueCell({ due, overdue, kind }: OpenAction): Cell {
+  if (kind === 'unload' || kind === 'out-of-use' || kind === 'replace-lock') return ['at once'];
+  if (due === null) return NONE;
+  return overdue !== null && overdue > 0 ? [`${dateWords(due)}, ${overdue} days late`] : [dateWords(due)];
+}
+
+const reductionWords = ({ reductions }: OpenAction): Text =>
+  reductions.flatMap(
+    ({ reduction, holds }) =>
+      say` Reduced load by ${reduction.engineer}, ${holds ? 'until' : 'ended'} ${dateWords(reduction.until)}: ${reduction.says}`,
+  );
+
+/** Every level to empty, with what stands there and by which actions. Nothing where none is to be emptied. */
+export function locationBlocks(site: Site, open: readonly OpenAction[]): readonly Block[] {
+  const locations = offLoadList(site, open);
+  if (locations.length === 0) return [];
+  return [
+    table(
+      'Locations to unload or not to reload',
+      ['Run', 'Bay', '#Level', 'What to do', 'Goods there now', '#Mass', 'By action', 'Done'],
+      locations.map(({ runName, bayName, level, what, goods, goodsKg, because }) => [
+        [runName],
+        [bayName],
+        [String(level)],
+        [what === 'unload' ? 'Unload, and bar it' : 'Do not reload'],
+        goods === '' ? ['nothing'] : [goods],
+        kgCell(goodsKg),
+        [because.map((action) => open.indexOf(action) + 1).join(', ')],
+        [''],
+      ]),
+    ),
+  ];
+}
