@@ -31,7 +31,7 @@ export function auditRun(site: Site, runId: Id, today: string, cache: AuditCache
   const findings = runFindings(audit.context, { run, place: { runId }, bays: run.bays.map((_, index) => audit.work(index)), frames });
   return {
     runId,
-    verdict: verdictOfFindings([...bays.flatMap(findingsOfBay), ...frames.flatMap(({ findings: own }) => own), ...findings]),
+    verdict: worstVerdict([...bays, ...findings.filter(({ counts }) => counts)].map(({ verdict }) => verdict)),
     bays,
     frames,
     findings,
@@ -77,11 +77,14 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
     site.seismic,
     site.outdoors,
     today,
+    run.name,
     run.floorId,
     run.loadedBy,
     run.twoDeep,
     run.backToBack,
     behind,
+    // A bay far off may break the mirror image of the two runs.
+    behind !== null && mirrored(run, behind),
   ];
 
   const goodsOf = (id: Id) => {
