@@ -4,7 +4,7 @@ import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { expect, test } from 'vitest';
 import { auditSite } from '../../../src-core/audit/audit';
-import type { Finding, Verdict } from '../../../src-core/checks/finding';
+import { CHECKS, type Finding, type Verdict } from '../../../src-core/checks/finding';
 import { readSiteFile } from '../../../src-core/site/envelope';
 import { findBay, findEntry } from '../../../src-core/site/lookup';
 import { readSite } from '../../../src-core/site/read';
@@ -43,9 +43,10 @@ test.each<[string, string, Verdict, Finding['check']]>([
   ['less than its rating in all, over by bending', 'a2-l2', 'over', 'beam-bending'],
   ['a full complement that is close', 'a3-l1', 'close', 'full-complement'],
   ['no rating', 'a5-l2', 'not-assessable', 'level-total'],
-  ['front-heavy, over on the front beam', 'b1-l2', 'over', 'beam-bending'],
-  ['two pallets in one place', 'b3-l3', 'not-possible', 'placement'],
+  ['front-heavy, over on the front beam', 'b2-l2', 'over', 'beam-bending'],
+  ['two pallets in one place', 'b4-l3', 'not-possible', 'placement'],
   ['a slope, over at its heavy end', 'c1-l1', 'over', 'beam-end-shear'],
+  ['goods that nobody weighed', 'c2-l3', 'not-assessable', 'unit-load'],
 ])('a level with %s', (_, levelId, verdict, check) => {
   expect(levelOf(levelId)).toMatchObject({ verdict, governing: { check } });
 });
@@ -66,8 +67,8 @@ test('both full complements bend the beams more than an even load, and are judge
 });
 
 test('the front-heavy level is within by total', () => {
-  expect(findingOf('b1-l2', 'level-total').utilisation).toBeLessThan(1);
-  const effects = levelOf('b1-l2').effects ?? expect.fail('no effects');
+  expect(findingOf('b2-l2', 'level-total').utilisation).toBeLessThan(1);
+  const effects = levelOf('b2-l2').effects ?? expect.fail('no effects');
   expect(effects.front.resultant).toBeGreaterThan(1.5 * effects.rear.resultant);
 });
 
@@ -77,6 +78,8 @@ test('the clean bay is within in every check of its levels, itself and both its 
   const bay = bayOf('a1');
   const findings = [...bay.findings, ...bay.levels.flatMap((level) => level.findings), ...frames.flatMap((frame) => frame.findings)];
   expect(bay.verdict).toBe('within');
+  // Nothing is left out, so every check there is has been made on it.
+  expect(CHECKS.filter((check) => !findings.some((finding) => finding.check === check))).toEqual([]);
   expect(findings.filter(({ verdict }) => verdict !== 'within').map(({ check, place }) => ({ check, place }))).toEqual([]);
 });
 
