@@ -54,7 +54,7 @@ export const CHECKS = [
 export type CheckName = (typeof CHECKS)[number];
 
 export type BeamSide = 'front' | 'rear';
-export type BeamEndSide = 'left' | 'right';
+type BeamEndSide = 'left' | 'right';
 
 /** Where a finding belongs, by the ids of the site model. `runId` is always there. */
 export interface Place {
