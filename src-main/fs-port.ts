@@ -12,6 +12,8 @@ export interface OpenFile {
   sync(): Promise<void>;
   /** The file's size in bytes. */
   size(): Promise<number>;
+  /** Cuts the file down to so many bytes. */
+  cut(size: number): Promise<void>;
   close(): Promise<void>;
 }
 
@@ -59,6 +61,7 @@ async function openNode(path: string, flags: string | number): Promise<OpenFile>
     write: (bytes) => handle.writeFile(bytes),
     sync: () => handle.sync(),
     size: async () => (await handle.stat()).size,
+    cut: (size) => handle.truncate(size),
     close: () => handle.close(),
   };
 }

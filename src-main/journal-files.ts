@@ -82,6 +82,8 @@ export class JournalFiles {
         }
       }
     }
+    // Where the program ended between taking edits up and removing their journal, it does so now.
+    for (const { state } of [...found.values()]) for (const name of state.tookUp) if (found.delete(name)) await this.remove(name);
     return [...found.values()];
   }
 

@@ -11,6 +11,8 @@ export interface Edit {
   readonly edit: string;
   /** Revision of the site's file on which the edits were made. */
   readonly base: string | null;
+  /** Name of the journal whose edits were taken up with this line: it has nothing to say any more. */
+  readonly tookUp?: string;
 }
 
 type Line = Edit &
@@ -25,6 +27,8 @@ export interface Replay {
   readonly editedAt: string;
   readonly edits: readonly string[];
   readonly base: string | null;
+  /** Names of journals whose edits are in this one. */
+  readonly tookUp: readonly string[];
   readonly damagedLines: number;
 }
 
@@ -56,6 +60,7 @@ export function replay(text: string): Replay | null {
   let last: Edit | null = null;
   let edits: readonly string[] = [];
   let damagedLines = 0;
+  const tookUp: string[] = [];
   for (const written of text.split('\n')) {
     if (written === '') continue;
     const line = readLine(written);
@@ -67,8 +72,9 @@ export function replay(text: string): Replay | null {
     edits = [...('whole' in line ? line.edits : edits), line.edit];
     body = next;
     last = line;
+    if (line.tookUp !== undefined) tookUp.push(line.tookUp);
   }
-  return body === null || last === null ? null : { body, editedAt: last.at, edits, base: last.base, damagedLines };
+  return body === null || last === null ? null : { body, editedAt: last.at, edits, base: last.base, tookUp, damagedLines };
 }
 
 /** Only lines that this program wrote have the right checksum, so their content is as it writes it. */

@@ -34,17 +34,14 @@ interface Own {
   readonly name: string;
   place: JournalPlace | null;
   body: string;
-  edits: string[];
+  edits: readonly string[];
   lines: number;
   /** Size of the file as it was left. */
   bytes: number;
   /** Edits since the page last read the site. */
   sinceRead: number;
-}
-
-interface Offered extends Found {
-  /** Whether the page took these edits up, or goes on with them. */
-  adopted: boolean;
+  /** Whether it goes on from edits that were recovered. */
+  tookUp: boolean;
 }
 
 const ENCODER = new TextEncoder();
@@ -54,7 +51,7 @@ export class Journal {
   readonly #files: JournalFiles;
   readonly #turns = new Turns();
   readonly #own = new Map<string, Own>();
-  readonly #offered = new Map<string, Offered>();
+  readonly #offered = new Map<string, Found>();
   #openings = 0;
   #touching: NodeJS.Timeout | null = null;
 
@@ -87,10 +84,11 @@ export class Journal {
   /** After a save: the edits are in the site's file, and those that were taken up as well. */
   saved(id: string, body: string): Promise<void> {
     return this.#turns.take(id, async () => {
-      this.#adopt(id, body);
-      await this.#forget(id);
       const offered = this.#offered.get(id);
-      if (offered?.adopted !== true) return;
+      const own = this.#own.get(id);
+      this.#own.delete(id);
+      if (own !== undefined) await this.#files.remove(own.name);
+      if (offered === undefined || (offered.name !== own?.name && offered.state.body !== body)) return;
       this.#offered.delete(id);
       await this.#files.remove(offered.name);
     });
@@ -98,18 +96,22 @@ export class Journal {
 
   /**
    * The edits are not wanted. Those made since the site was read are dropped; those that were found
-   * then are put away where they can be brought back by hand, unless later ones were dropped instead.
+   * then are put away where they can be brought back by hand, unless only later ones were dropped.
    */
   clear(id: string): Promise<void> {
-    return this.#turns.take(id, async () => {
-      const offered = this.#offered.get(id);
-      const edited = (this.#own.get(id)?.sinceRead ?? 0) > 0;
-      if (offered !== undefined && (offered.adopted || !edited)) {
-        await telling('The recovered changes could not be put away', () => this.#files.putAway(offered.name));
-        this.#offered.delete(id);
-      }
-      await this.#forget(id);
-    });
+    return this.#turns.take(id, () =>
+      telling('The recovered changes could not be put away', async () => {
+        const offered = this.#offered.get(id);
+        const own = this.#own.get(id);
+        if (own?.tookUp === true) await this.#files.putAway(own.name);
+        if (offered !== undefined && (own?.sinceRead ?? 0) === 0) {
+          await this.#files.putAway(offered.name);
+          this.#offered.delete(id);
+        }
+        this.#own.delete(id);
+        if (own !== undefined) await this.#files.remove(own.name);
+      }),
+    );
   }
 
   /** The latest edits in a journal that are not in the site as it is on disk. */
@@ -126,7 +128,7 @@ export class Journal {
       const latest = latestOf(unsaved);
       if (latest === null) return null;
       const { body, editedAt, edits, base, damagedLines } = latest.state;
-      this.#offered.set(id, { ...latest, adopted: latest.name === own?.name });
+      this.#offered.set(id, latest);
       return { body, editedAt, edits, baseRevision: base, damagedLines };
     });
   }
@@ -137,9 +139,13 @@ export class Journal {
   }
 
   async #append({ id, baseRevision, body, edit }: JournalRequest): Promise<void> {
-    this.#adopt(id, body);
+    const offered = this.#offered.get(id);
     const own = this.#own.get(id) ?? this.#newOwn(id);
-    const said = { at: this.#options.now().toISOString(), edit, base: baseRevision };
+    // The page goes on from what it was offered: from here on this journal says all that the other one said.
+    const takesUp = offered !== undefined && offered.name !== own.name && offered.state.body === body;
+    if (takesUp) own.edits = [...offered.state.edits];
+    const took = takesUp ? { tookUp: offered.name } : {};
+    const said = { at: this.#options.now().toISOString(), edit, base: baseRevision, ...took };
     const whole = () => wholeLine(said, body, own.edits);
     const change = () => changeLine(said, own.body, body);
     let failure: unknown = new Error('there is no place for a journal');
@@ -151,8 +157,13 @@ export class Journal {
         else if (own.bytes > Math.max(LONGEST, 4 * body.length)) bytes = await this.#writeAnew(place, own.name, whole());
         else bytes = await this.#goOn(place, own, own.lines % LINES_TO_A_WHOLE === 0 ? whole : change, whole);
         const { name, edits, lines, sinceRead } = own;
-        this.#own.set(id, { name, place, body, edits: [...edits, edit], lines: lines + 1, bytes, sinceRead: sinceRead + 1 });
+        const tookUp = own.tookUp || takesUp;
+        this.#own.set(id, { name, place, body, edits: [...edits, edit], lines: lines + 1, bytes, sinceRead: sinceRead + 1, tookUp });
         this.#keepTouching();
+        if (takesUp) {
+          this.#offered.delete(id);
+          await this.#files.remove(offered.name);
+        }
         return;
       } catch (error) {
         failure = error;
@@ -166,7 +177,7 @@ export class Journal {
   #newOwn(id: string): Own {
     this.#openings++;
     const name = `${id}.${thisMaker.machine}-${thisMaker.pid}-${this.#options.session}-${this.#openings}.journal`;
-    const own: Own = { name, place: null, body: '', edits: [], lines: 0, bytes: 0, sinceRead: 0 };
+    const own: Own = { name, place: null, body: '', edits: [], lines: 0, bytes: 0, sinceRead: 0, tookUp: false };
     this.#own.set(id, own);
     return own;
   }
@@ -196,19 +207,6 @@ export class Journal {
     await renameOver(fs, await writeBeside(fs, path, bytes), path);
     await fs.syncFolder(folder);
     return bytes.length;
-  }
-
-  #adopt(id: string, body: string): void {
-    const offered = this.#offered.get(id);
-    if (offered !== undefined && offered.state.body === body) offered.adopted = true;
-  }
-
-  /** Drops what this run wrote for the site. */
-  async #forget(id: string): Promise<void> {
-    const own = this.#own.get(id);
-    this.#own.delete(id);
-    if (own === undefined) return;
-    await this.#files.remove(own.name);
   }
 
   /** Tells other programs that these journals are in use. */

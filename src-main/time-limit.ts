@@ -59,6 +59,7 @@ export function withTimeLimit(fs: FsPort, limits: TimeLimits = TIME_LIMITS): FsP
       write: (bytes) => slow(() => file.write(bytes)),
       sync: () => slow(() => file.sync()),
       size: () => quick(() => file.size()),
+      cut: (size) => quick(() => file.cut(size)),
       close: () => quick(() => file.close()),
     };
   }

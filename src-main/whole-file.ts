@@ -9,13 +9,21 @@ const HELD = ['EPERM', 'EBUSY', 'EACCES'];
 /** Waits before each new attempt, ms: about two seconds together. */
 const RETRY_AFTER = [10, 30, 60, 100, 200, 300, 400, 400, 500];
 
-/** Adds the bytes to a file of so many before, and returns once all of them are on the disk. */
+/**
+ * Adds the bytes to a file of so many before, and returns once all of them are on the disk. Where
+ * that fails, what did arrive is cut off again, so that it does not take up the last room of a full disk.
+ */
 export async function addSurely(file: OpenFile, before: number, bytes: Uint8Array): Promise<void> {
-  await file.write(bytes);
-  await file.sync();
-  // Some layers report a write as done that was cut short by a full disk.
-  const arrived = (await file.size()) - before;
-  if (arrived !== bytes.length) throw Object.assign(new Error(`only ${arrived} of ${bytes.length} bytes arrived`), { code: 'ENOSPC' });
+  try {
+    await file.write(bytes);
+    await file.sync();
+    // Some layers report a write as done that was cut short by a full disk.
+    const arrived = (await file.size()) - before;
+    if (arrived !== bytes.length) throw Object.assign(new Error(`only ${arrived} of ${bytes.length} bytes arrived`), { code: 'ENOSPC' });
+  } catch (error) {
+    await file.cut(before).catch(() => undefined);
+    throw error;
+  }
 }
 
 /**

@@ -41,6 +41,7 @@ export const faultyFs = (real: FsPort, fault: Fault | null): FaultyFs => {
         ),
       sync: () => guarded('sync', () => file.sync()),
       size: () => guarded('size', () => file.size()),
+      cut: (size) => guarded('cut', () => file.cut(size)),
       // The handle is closed all the same: only the answer is a fault.
       close: async () => {
         await file.close();

@@ -127,6 +127,44 @@ describe('after a crash', () => {
     expect(files(folder)).toEqual([]);
   });
 
+  test('taken up, they are in one journal only, with the names of all edits', async () => {
+    const folder = newFolder();
+    await journalIn(folder).append(edit('two'));
+    const journal = journalIn(folder);
+    await journal.recovered('s', 'one');
+    await journal.append(edit('two', 'Take up recovered changes'));
+    await journal.append(edit('three'));
+    expect(files(folder)).toHaveLength(1);
+    const edits = ['two', 'Take up recovered changes', 'three'];
+    expect(await journalIn(folder).recovered('s', 'one')).toMatchObject({ body: 'three', edits });
+  });
+
+  test('taken up just before the program ended again, they are offered once', async () => {
+    const folder = newFolder();
+    await journalIn(folder).append(edit('two'));
+    const [name = ''] = files(folder);
+    const text = readFileSync(join(folder, name), 'utf8');
+    const journal = journalIn(folder);
+    await journal.recovered('s', 'one');
+    await journal.append(edit('two', 'Take up recovered changes'));
+    await journal.append(edit('three'));
+    writeFileSync(join(folder, name), text);
+    const next = journalIn(folder);
+    expect(await next.recovered('s', 'one')).toMatchObject({ body: 'three' });
+    await next.clear('s');
+    expect(await next.recovered('s', 'one')).toBeNull();
+  });
+
+  test('taken up and dropped again, they are put away as well', async () => {
+    const folder = newFolder();
+    await journalIn(folder).append(edit('two'));
+    const journal = journalIn(folder);
+    await journal.recovered('s', 'one');
+    await journal.append(edit('two', 'Take up recovered changes'));
+    await journal.clear('s');
+    expect(files(folder)).toEqual([expect.stringContaining('left-out/s.')]);
+  });
+
   test('left out, they are put away where they can be brought back by hand', async () => {
     const folder = newFolder();
     await journalIn(folder).append(edit('two'));
@@ -223,7 +261,7 @@ describe('trouble', () => {
     expect(await journalIn(folder).recovered('s', 'zero')).toMatchObject({ body: 'three', damagedLines: 0 });
   });
 
-  test('after a write that failed half-way the next edit stands for itself', async () => {
+  test('what a write that failed half-way left is cut off, and the next edit stands for itself', async () => {
     const folder = newFolder();
     let fail = false;
     const fs: FsPort = {
@@ -246,7 +284,7 @@ describe('trouble', () => {
     });
     fail = false;
     await journal.append(edit('three'));
-    expect(await journalIn(folder).recovered('s', 'zero')).toMatchObject({ body: 'three', edits: ['one', 'three'], damagedLines: 1 });
+    expect(await journalIn(folder).recovered('s', 'zero')).toMatchObject({ body: 'three', edits: ['one', 'three'], damagedLines: 0 });
   });
 
   test('where the sites folder does not answer, the edit is on this machine within two seconds', async () => {

@@ -131,6 +131,7 @@ export class MemoryDisk {
       },
       sync: async () => void this.operations.push({ kind: 'sync', file: own }),
       size: async () => content().length,
+      cut: () => Promise.reject(fault('ENOSYS', path)),
       close: async () => undefined,
     };
   }
