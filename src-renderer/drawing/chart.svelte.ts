@@ -16,7 +16,7 @@ import {
 import { untrack } from 'svelte';
 import type { Attachment } from 'svelte/attachments';
 import type { Point } from './outline';
-import { inksAt, type Inks } from './theme.svelte';
+import { pageInks, type Inks } from './theme.svelte';
 
 Chart.register(LineController, LineElement, PointElement, LinearScale, Filler);
 
@@ -44,6 +44,9 @@ export interface Plot {
 const DASHES: Record<CurveLook, number[]> = { front: [], rear: [9, 4], limit: [3, 3], 'exceeded limit': [3, 3], ghost: [2, 4] };
 
 const LINE_WIDTH: Record<CurveLook, number> = { front: 1.75, rear: 1.75, limit: 1.25, 'exceeded limit': 1.5, ghost: 1 };
+
+/** The axis is drawn once for all diagrams; unseen figures would be measured all the same. */
+const NO_TICKS = { display: false, count: 2, sampleSize: 1 };
 
 function lineColour(look: CurveLook, inks: Inks): string {
   if (look === 'limit' || look === 'ghost') return inks.soft;
@@ -78,8 +81,8 @@ function configOf(plot: Plot, inks: Inks): ChartConfiguration<'line', { x: numbe
       layout: { autoPadding: false, padding: { left: plot.inset, right: plot.inset, top: 0, bottom: 0 } },
       plugins: { legend: { display: false }, tooltip: { enabled: false } },
       scales: {
-        x: { type: 'linear', display: false, min: 0, max: plot.span },
-        y: { type: 'linear', display: false, min: plot.least, max: plot.most, reverse: plot.downwards },
+        x: { type: 'linear', display: false, min: 0, max: plot.span, ticks: NO_TICKS },
+        y: { type: 'linear', display: false, min: plot.least, max: plot.most, reverse: plot.downwards, ticks: NO_TICKS },
       },
     },
   };
@@ -88,10 +91,10 @@ function configOf(plot: Plot, inks: Inks): ChartConfiguration<'line', { x: numbe
 /** `<canvas {@attach chartOf(() => plot)}>`; the function is read again whenever what it reads changes. */
 export function chartOf(plot: () => Plot): Attachment<HTMLCanvasElement> {
   return (canvas) => {
-    const first = untrack(() => configOf(plot(), inksAt(canvas)));
+    const first = untrack(() => configOf(plot(), pageInks()));
     const chart = new Chart(canvas, first);
     $effect(() => {
-      const { data, options } = configOf(plot(), inksAt(canvas));
+      const { data, options } = configOf(plot(), pageInks());
       chart.data = data;
       if (options) chart.options = options;
       chart.update('none');

@@ -1,19 +1,8 @@
-/** The tokens as canvas can use them, and a signal that fires when they change. */
+/** The tokens as canvas can use them, the size of a rem, and signals that fire when they change. */
 import { createSubscriber } from 'svelte/reactivity';
 
 /** Whatever may change a colour: theme, forced colours, and paper. */
 const QUERIES = ['(prefers-color-scheme: dark)', '(forced-colors: active)', 'print'];
-
-const watchTheme = createSubscriber((update) => {
-  const queries = QUERIES.map((query) => matchMedia(query));
-  for (const query of queries) query.addEventListener('change', update);
-  const root = new MutationObserver(update);
-  root.observe(document.documentElement, { attributeFilter: ['data-theme'] });
-  return () => {
-    for (const query of queries) query.removeEventListener('change', update);
-    root.disconnect();
-  };
-});
 
 export interface Inks {
   readonly ink: string;
@@ -23,31 +12,64 @@ export interface Inks {
   readonly over: string;
 }
 
-/** Colours as they are at `element` now. Read in an effect or a derived, it is read again when the theme changes. */
-export function inksAt(element: HTMLElement): Inks {
-  watchTheme();
-  const colour = (token: string): string => {
-    // A custom property answers with its own text, light-dark() and all; a real property with the colour.
-    element.style.color = `var(--${token})`;
-    const found = getComputedStyle(element).color;
-    element.style.removeProperty('color');
-    return found;
-  };
-  return { ink: colour('ink'), soft: colour('soft'), load: colour('load'), loadFill: colour('load-fill'), over: colour('over') };
-}
+// Reading a computed style makes the browser lay out what it would have laid out later with the rest,
+// so both are read once and kept until they may have changed.
+let inks: Inks | null = null;
+let rem: number | null = null;
 
-const watchRoot = createSubscriber((update) => {
-  const root = new MutationObserver(update);
-  root.observe(document.documentElement, { attributeFilter: ['style', 'class'] });
-  addEventListener('resize', update);
+const watchTheme = createSubscriber((update) => {
+  const changed = () => {
+    inks = null;
+    update();
+  };
+  inks = null;
+  const queries = QUERIES.map((query) => matchMedia(query));
+  for (const query of queries) query.addEventListener('change', changed);
+  const root = new MutationObserver(changed);
+  root.observe(document.documentElement, { attributeFilter: ['data-theme'] });
   return () => {
+    for (const query of queries) query.removeEventListener('change', changed);
     root.disconnect();
-    removeEventListener('resize', update);
   };
 });
+
+const watchRoot = createSubscriber((update) => {
+  const changed = () => {
+    rem = null;
+    update();
+  };
+  rem = null;
+  const root = new MutationObserver(changed);
+  root.observe(document.documentElement, { attributeFilter: ['style', 'class'] });
+  addEventListener('resize', changed);
+  return () => {
+    root.disconnect();
+    removeEventListener('resize', changed);
+  };
+});
+
+/** The page's colours now. Read in an effect or a derived, they are read again when the theme changes. */
+export function pageInks(): Inks {
+  watchTheme();
+  inks ??= readInks(document.body);
+  return inks;
+}
+
+function readInks(element: HTMLElement): Inks {
+  const probe = element.appendChild(document.createElement('span'));
+  const colour = (token: string): string => {
+    // A custom property answers with its own text, light-dark() and all; a real property with the colour.
+    probe.style.color = `var(--${token})`;
+    return getComputedStyle(probe).color;
+  };
+  const found = { ink: colour('ink'), soft: colour('soft'), load: colour('load'), loadFill: colour('load-fill'), over: colour('over') };
+  probe.remove();
+  return found;
+}
 
 /** One rem in px, followed as the text size changes. */
 export function rootSize(): number {
   watchRoot();
-  return parseFloat(getComputedStyle(document.documentElement).fontSize);
+  rem ??= parseFloat(getComputedStyle(document.documentElement).fontSize);
+  return rem;
 }
