@@ -127,8 +127,11 @@ function anchoring({ name, anchored, field }: SiteFlagsInput['frames'][number]):
   ];
 }
 
+/** Left empty, or said to be unknown in words. */
+const unnamed = (maker: string): boolean => /^(|unknown|not known|none|-|\?+)$/i.test(maker.trim());
+
 function origin({ name, maker, sourceKnown, field }: RatedPart): readonly Flag[] {
-  const unknown = [...(maker.trim() === '' ? ['maker'] : []), ...(sourceKnown ? [] : ['origin of its numbers'])];
+  const unknown = [...(unnamed(maker) ? ['maker'] : []), ...(sourceKnown ? [] : ['origin of its numbers'])];
   if (unknown.length === 0) return [];
   return [
     {
@@ -136,7 +139,7 @@ function origin({ name, maker, sourceKnown, field }: RatedPart): readonly Flag[]
       missing: {
         input: `${listed(unknown)} of the ${name}`,
         how: 'Find the maker’s mark, notice, drawing or order, and enter it. Where it cannot be found, strength has to be shown by calculation or test.',
-        field: `${field}${maker.trim() === '' ? 'maker' : 'source'}`,
+        field: `${field}${unnamed(maker) ? 'maker' : 'source'}`,
       },
     },
   ];

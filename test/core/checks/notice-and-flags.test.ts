@@ -131,6 +131,10 @@ test.each<[string, Partial<SiteFlagsInput>, string]>([
   expect(found[0]?.missing[0]?.how.length).toBeGreaterThan(20);
 });
 
+test.each(['', ' ', 'unknown', 'Not known', '?', '-'])('a maker entered as "%s" is no maker', (maker) => {
+  expect(flags({ parts: [{ name: 'beam type B', maker, sourceKnown: true, field: 'beamType:b:' }] })[0]?.verdict).toBe('not-assessable');
+});
+
 test('each flag is a finding of its own', () => {
   expect(flags({ seismic: 'yes', outdoors: 'yes', twoDeep: 'unknown' })).toHaveLength(3);
 });
