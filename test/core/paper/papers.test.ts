@@ -2,12 +2,13 @@ import { expect, test } from 'vitest';
 import { auditSite } from '../../../src-core/audit/audit';
 import { baySheet, workedCalculation } from '../../../src-core/paper/bay-papers';
 import type { PaperInput } from '../../../src-core/paper/context';
+import { changeSheet } from '../../../src-core/paper/change-sheet';
 import { draftNotice, noticeItems } from '../../../src-core/paper/notice-draft';
 import { offLoadSheet } from '../../../src-core/paper/off-load-sheet';
 import { table, type Paper } from '../../../src-core/paper/paper';
 import { siteRegister } from '../../../src-core/paper/site-register';
 import { visitReport } from '../../../src-core/paper/visit-report';
-import { addEntry, changeRule, editEntry, editFrame, editRun, leaveOut } from '../../../src-core/site/edits';
+import { addEntry, changeRule, editEntry, editFrame, editRun, leaveOut, moveLevel } from '../../../src-core/site/edits';
 import type { Floor, Site } from '../../../src-core/site/site';
 import { actionsOf } from '../../../src-core/visit/actions';
 import { carryIntoSite } from '../../../src-core/visit/carry';
@@ -209,6 +210,7 @@ test('every paper carries site, checksum, program, rule set, span, rating source
     offLoadSheet(input, actions),
     siteRegister(input, [visit], newFollowUp('site')),
     draftNotice(input, 'A-bay-1', ''),
+    changeSheet(input, siteOf({ bays: 3, levels: 1 }), 'A-bay-1'),
   ];
   for (const paper of papers) {
     expect(paper.foot, paper.kind).toMatchObject({
@@ -231,6 +233,23 @@ test('every paper carries site, checksum, program, rule set, span, rating source
     // Plain data: a record keeps it as it is.
     expect(JSON.parse(JSON.stringify(paper))).toEqual(paper);
   }
+});
+
+test('a change sheet sets before and after side by side, with what has to be done', () => {
+  const before = siteOf();
+  const sheet = changeSheet(inputOf(moveLevel(before, 'A2-level-1', 1900)), before, 'A-bay-2');
+  expect(rowsOf(sheet, 'As it stands, from the top down')).toEqual([
+    'Level 2 | 3 000 mm | B 120 | 1 860 kg',
+    'Level 1 | 1 500 mm | B 120 | 1 860 kg',
+  ]);
+  expect(rowsOf(sheet, 'As planned, from the top down')[1]).toBe('Level 1 | 1 900 mm | B 120 | 1 860 kg');
+  const figures = rowsOf(sheet, 'Figures that change');
+  expect(figures).toContain('Bay | first beam height | 1 500 mm | 1 900 mm');
+  expect(figures).toContain('Level 1 | height of level 1 | 1 500 mm | 1 900 mm');
+  const words = wordsOf(sheet).join('\n');
+  expect(words).toContain('Have the maker or supplier confirm the change in writing');
+  expect(words).toContain('Empty every level of bay A2');
+  expect(wordsOf(changeSheet(inputOf(before), before, 'A-bay-2'))).toContain('Nothing differs.');
 });
 
 test('many ratings are counted in the foot and listed in the paper', () => {
