@@ -151,6 +151,9 @@ function limitsOf(name: DiagramName, wishes: DiagramWishes, peaks: readonly Peak
   return limits;
 }
 
+/** Share of the span over which the limit of shear is drawn from each support. */
+export const SHEAR_LIMIT_REACH = 0.14;
+
 /** Where along the span a limit is drawn: shear is limited at the supports only. */
 function limitCurves(name: DiagramName, limit: Limit, span: number): readonly Curve[] {
   const look = limit.exceeded && limit.judged ? 'exceeded limit' : 'limit';
@@ -163,7 +166,7 @@ function limitCurves(name: DiagramName, limit: Limit, span: number): readonly Cu
     ],
   });
   if (name !== 'shear') return [stretch(0, span, limit.value)];
-  const reach = span * 0.14;
+  const reach = span * SHEAR_LIMIT_REACH;
   return [stretch(0, reach, limit.value), stretch(span - reach, span, -limit.value)];
 }
 
@@ -201,7 +204,8 @@ export function diagramOf(name: DiagramName, wishes: DiagramWishes): Diagram {
   };
 }
 
-/** The peak that decides: the greatest in size. */
+/** The peak that decides: the greatest in size; null where there is no load. */
 export function worstPeak(diagram: Diagram): Peak | null {
-  return diagram.peaks.reduce<Peak | null>((worst, peak) => (!worst || Math.abs(peak.value) > Math.abs(worst.value) ? peak : worst), null);
+  const worst = diagram.peaks.toSorted((a, b) => Math.abs(b.value) - Math.abs(a.value))[0];
+  return worst !== undefined && worst.value !== 0 ? worst : null;
 }

@@ -115,6 +115,7 @@ test('an empty level has flat diagrams that can still be drawn', () => {
     const { plot } = diagramOf(name, wishes(effects, 'pair'));
     expect(plot.most).toBeGreaterThan(plot.least);
     for (const point of plot.curves.flatMap((curve) => curve.points)) expect(Number.isFinite(point.y)).toBe(true);
+    expect(worstPeak(diagramOf(name, wishes(effects, 'pair')))).toBeNull();
   }
 });
 

@@ -78,9 +78,9 @@ test('a colour written out is found in style blocks and in code', () => {
 });
 
 test('every colour of the page is a token: no other style sheet or component writes one', () => {
-  const sources = import.meta.glob<string>('../../src-renderer/*.{svelte,css,ts}', { query: '?raw', import: 'default', eager: true });
-  const drawing = import.meta.glob<string>('../../src-renderer/drawing/*.{svelte,ts}', { query: '?raw', import: 'default', eager: true });
-  const all = Object.entries({ ...sources, ...drawing });
+  const root = import.meta.glob<string>('../../src-renderer/*.{svelte,css,ts}', { query: '?raw', import: 'default', eager: true });
+  const folders = import.meta.glob<string>('../../src-renderer/*/*.{svelte,css,ts}', { query: '?raw', import: 'default', eager: true });
+  const all = Object.entries({ ...root, ...folders });
   expect(all.length).toBeGreaterThan(1);
   expect(all.filter(([path]) => !path.endsWith('/tokens.css')).flatMap(([path, text]) => writtenColours(path, text))).toEqual([]);
 });
