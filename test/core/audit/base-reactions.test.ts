@@ -4,17 +4,7 @@ import { expect, test } from 'vitest';
 import { auditRun, auditSite } from '../../../src-core/audit/audit';
 import type { Bay, Deck, Level, Run, Site, UnitLoad } from '../../../src-core/site/site';
 import { STANDARD_GRAVITY } from '../../../src-core/units/quantity';
-import {
-  makeBay,
-  makeBeamType,
-  makeFrameType,
-  makeLevel,
-  makePallet,
-  makePlacement,
-  makeRun,
-  makeSite,
-  makeUnitLoad,
-} from '../../make';
+import { makeBay, makeBeamType, makeFrameType, makeLevel, makePallet, makePlacement, makeRun, makeSite, makeUnitLoad } from '../../make';
 import { completeSite, TODAY } from './complete-site';
 
 const between = (min: number, max: number) => fc.double({ min, max, noNaN: true, noDefaultInfinity: true });
