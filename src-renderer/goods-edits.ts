@@ -7,6 +7,7 @@ import { catchingPlaces, overlaps } from './drawing/snap';
 import { newId } from './ids';
 import type { OpenSite } from './open-site.svelte';
 import { bayPlace, levelPlace, nameOfPlace, placementPlace, type PlacementPlace, type Target } from './places';
+import { refusal, type Refused } from './refusal';
 import { countOf } from './say';
 
 /** Goods as they were copied: what they are and how they stand, without their ids. */
@@ -46,13 +47,14 @@ export function freePlace(site: Site, { bay, level }: Stand, widthMm: number): n
  * Puts goods on the chosen level, or on the floor of the bay, at its first free place.
  * @returns why it could not be done, as a sentence; null if it was
  */
-export function putGoods(open: OpenSite, unitLoad: UnitLoad, isNew: boolean): string | null {
+export function putGoods(open: OpenSite, unitLoad: UnitLoad, isNew: boolean): Refused | null {
   const { bayId, levelId } = open.selection;
   const stand = bayId === null ? null : standOf(open.site, bayId, levelId);
-  if (stand === null) return 'No bay is chosen. Choose the bay and level that the goods go to.';
+  if (stand === null) return refusal('No bay is chosen. Choose the bay and level that the goods go to.');
   const at = freePlace(open.site, stand, unitLoad.widthMm);
   const place = nameOfPlace(stand.bay, stand.level);
-  if (at === null) return `There is no free place ${unitLoad.widthMm} mm wide on ${place}. Make room there, or choose another level.`;
+  if (at === null)
+    return refusal(`There is no free place ${unitLoad.widthMm} mm wide on ${place}. Make room there, or choose another level.`);
   const id = newId();
   const refused = open.edit(`Put ${unitLoad.name} on ${place}`, (site) => {
     const stocked = isNew ? addEntry(site, 'unitLoads', unitLoad) : site;

@@ -24,6 +24,7 @@ import {
   targetOf,
   type Target,
 } from './places';
+import { refusal, type Refused } from './refusal';
 import { Saving, type SavedState } from './saving.svelte';
 import { completed, existing, firstOf, NOTHING, type Selection } from './selection';
 import { amend, record, redo, startHistory, undo, type UndoHistory } from './undo-history';
@@ -195,7 +196,7 @@ export class OpenSite {
    * step of undo, for nudges and typing.
    * @returns why the change was refused, as a sentence; null if it was made
    */
-  edit = (name: string, change: (site: Site) => Site, merge: string | null = null): string | null => {
+  edit = (name: string, change: (site: Site) => Site, merge: string | null = null): Refused | null => {
     this.dropTrial();
     const before = this.#history.value;
     let after: Site;
@@ -205,7 +206,7 @@ export class OpenSite {
       // The core refuses what could not stand in a site file, in a sentence for whoever typed it.
       if (!(error instanceof RangeError)) throw error;
       this.say(error.message);
-      return error.message;
+      return refusal(error.message);
     }
     if (after === before) return null;
     const now = Date.now();
@@ -240,7 +241,7 @@ export class OpenSite {
   // ------------------------------------------------------------ moving goods
 
   /** The one command behind dragging, keys, clicks and the menu. Positions are whole millimetres. */
-  move = (placementId: Id, target: Target, merge: string | null = null): string | null => {
+  move = (placementId: Id, target: Target, merge: string | null = null): Refused | null => {
     this.dropTrial();
     const from = placementPlace(this.site, placementId);
     if (from === null) return null;

@@ -20,6 +20,7 @@ import type { Bay, Frame, Id, Level, LoadNotice, Run, Site } from '../src-core/s
 import { newId } from './ids';
 import { nextName, nextRunName } from './names';
 import type { OpenSite } from './open-site.svelte';
+import type { Refused } from './refusal';
 import { countOf } from './say';
 
 export interface RunPlan {
@@ -41,7 +42,7 @@ export interface RunPlan {
  * @param notice a load notice that is entered together with the run
  * @returns why it was refused, as a sentence; null if it was made
  */
-export function layOutRun(open: OpenSite, plan: RunPlan, notice: LoadNotice | null): string | null {
+export function layOutRun(open: OpenSite, plan: RunPlan, notice: LoadNotice | null): Refused | null {
   const { name, bays: count, floorId } = plan;
   const run: Run = { ...runByTemplate(evenTemplate(plan), { name, count, floorId, newId }), loadedBy: plan.loadedBy };
   const refused = open.edit(`Lay out run ${name}`, (site) => addRun(notice === null ? site : addEntry(site, 'notices', notice), run));
@@ -117,10 +118,10 @@ export function shiftBay(open: OpenSite, run: Run, bay: Bay, by: 1 | -1): void {
     open.say(`Bay ${bay.name} moved ${side}. The frames stay where they stand.`);
 }
 
-export const changeBay = (open: OpenSite, bay: Bay, what: string, part: Partial<Bay>): string | null =>
+export const changeBay = (open: OpenSite, bay: Bay, what: string, part: Partial<Bay>): Refused | null =>
   open.edit(`Change ${what} of bay ${bay.name}`, (site) => editBay(site, bay.id, part));
 
-export const changeRun = (open: OpenSite, run: Run, what: string, part: Partial<Omit<Run, 'bays' | 'frames'>>): string | null =>
+export const changeRun = (open: OpenSite, run: Run, what: string, part: Partial<Omit<Run, 'bays' | 'frames'>>): Refused | null =>
   open.edit(`Change ${what} of run ${run.name}`, (site) => editRun(site, run.id, part));
 
 export function copyRun(open: OpenSite, run: Run): void {

@@ -1,6 +1,3 @@
-/** Why an answer cannot be taken, as a sentence; anything else where it was. */
-export type Refusal = string | null | false;
-
 /** Whether a form holds a field that was not taken; the first of them gets the focus. */
 export function refused(form: EventTarget | null): boolean {
   if (!(form instanceof HTMLFormElement)) return false;

@@ -1,0 +1,246 @@
+/**
+ * Visits, follow-up and records of the open site: read from beside it, and every change put there at
+ * once. What is shown as saved is on the disk; what could not be saved is tried again and said.
+ */
+import { createContext } from 'svelte';
+import { SvelteMap } from 'svelte/reactivity';
+import type { SiteAudit } from '../src-core/audit/types';
+import type { Host, HostFailure, RecordsOnDisk } from '../src-core/host';
+import { worstVerdict } from '../src-core/checks/finding';
+import { RULE_SET_TITLES } from '../src-core/checks/rule-sets';
+import type { Id, Site } from '../src-core/site/site';
+import { writeSite } from '../src-core/site/write';
+import { actionsOf, type OpenAction } from '../src-core/visit/actions';
+import { contentsText } from '../src-core/visit/contents';
+import { newFollowUp, readFollowUp, writeFollowUp, type FollowUp } from '../src-core/visit/follow-up';
+import { readVisit, writeVisit } from '../src-core/visit/read-visit';
+import type { FrozenRecord, RecordKind } from '../src-core/visit/records';
+import { todayList, type TodayItem } from '../src-core/visit/rounds';
+import type { Visit } from '../src-core/visit/visit';
+import { sha256Of } from './checksum';
+import { failureOf } from './host';
+import type { OpenSite } from './open-site.svelte';
+
+/** Wait before what could not be saved is tried again, ms. */
+const AGAIN = 5000;
+
+export interface Freeze {
+  readonly kind: RecordKind;
+  readonly title: string;
+  readonly person: string;
+  readonly bayIds: readonly Id[];
+  readonly figures: unknown;
+}
+
+export class Rounds {
+  readonly host: Host;
+  readonly open: OpenSite;
+  /** False until everything beside the site has been read. */
+  loaded = $state(false);
+  visits = $state.raw<readonly Visit[]>([]);
+  followUp = $state.raw<FollowUp>() as FollowUp;
+  records = $state.raw<RecordsOnDisk | null>(null);
+  /** Files that cannot be read, each with what is wrong. They are left as they are. */
+  unreadable = $state.raw<readonly { readonly name: string; readonly problem: string }[]>([]);
+  /** The visit that is walked at the moment, and the bay of it that is looked at. */
+  visitId = $state<Id | null>(null);
+  bayId = $state<Id | null>(null);
+  failure = $state.raw<HostFailure | null>(null);
+
+  /** What is not on the disk yet, by the id under which it is saved. */
+  #waiting = new SvelteMap<string, () => Promise<void>>();
+  #revisions = new Map<string, string>();
+  #queue: Promise<void> = Promise.resolve();
+  #timer: ReturnType<typeof setTimeout> | null = null;
+
+  visit = $derived(this.visits.find(({ id }) => id === this.visitId) ?? null);
+  /** The site's findings as far as they are known now. */
+  audit = $derived.by((): SiteAudit => {
+    const runs = this.open.site.runs.flatMap(({ id }) => this.open.audits.get(id) ?? []);
+    return { verdict: worstVerdict(runs.map(({ verdict }) => verdict)), runs };
+  });
+  actions = $derived.by((): readonly OpenAction[] =>
+    actionsOf({ site: this.open.site, audit: this.audit, visits: this.visits, followUp: this.followUp, today: this.open.today() }),
+  );
+  today = $derived.by((): readonly TodayItem[] => todayList(this.open.site, this.visits, this.followUp, this.actions, this.open.today()));
+
+  constructor(host: Host, open: OpenSite) {
+    this.host = host;
+    this.open = open;
+    this.followUp = newFollowUp(open.id);
+  }
+
+  get saved(): boolean {
+    return this.#waiting.size === 0;
+  }
+
+  load = async (): Promise<void> => {
+    if (this.loaded) return;
+    try {
+      const kept = await this.host.listVisits(this.open.id);
+      const book = await this.host.readFollowUp(this.open.id);
+      const unreadable: { name: string; problem: string }[] = [];
+      const visits: Visit[] = [];
+      for (const { id, text, revision, problem } of kept) {
+        this.#revisions.set(id, revision);
+        const reading = problem === null ? readVisit(JSON.parse(text)) : null;
+        if (reading?.ok) visits.push(reading.document);
+        else unreadable.push({ name: `Visit ${id}`, problem: problem ?? '' });
+      }
+      if (book !== null) {
+        this.#revisions.set(FOLLOW_UP, book.revision);
+        const reading = book.problem === null ? readFollowUp(JSON.parse(book.text)) : null;
+        if (reading?.ok) this.followUp = reading.document;
+        else unreadable.push({ name: 'The follow-up', problem: book.problem ?? '' });
+      }
+      this.visits = visits;
+      this.unreadable = unreadable;
+      this.loaded = true;
+    } catch (error) {
+      this.failure = failureOf(error);
+    }
+  };
+
+  // ------------------------------------------------------------ changing
+
+  addVisit = (visit: Visit): void => {
+    this.visits = [...this.visits, visit];
+    this.visitId = visit.id;
+    this.bayId = visit.bays[0]?.bayId ?? null;
+    this.#keepVisit(visit.id);
+  };
+
+  /** The one way in which the visit that is walked changes. */
+  edit = (change: (visit: Visit) => Visit): void => {
+    const { visit } = this;
+    if (visit === null) return;
+    const after = change(visit);
+    if (after === visit) return;
+    this.visits = this.visits.map((one) => (one.id === visit.id ? after : one));
+    this.#keepVisit(visit.id);
+  };
+
+  editFollowUp = (change: (book: FollowUp) => FollowUp): void => {
+    this.followUp = change(this.followUp);
+    this.#keep(FOLLOW_UP, async () => {
+      const baseRevision = this.#revisions.get(FOLLOW_UP) ?? null;
+      const body = writeFollowUp(this.followUp);
+      const { revision } = await this.host.saveFollowUp({ siteId: this.open.id, body, baseRevision });
+      this.#revisions.set(FOLLOW_UP, revision);
+    });
+  };
+
+  /** @returns the name under which the photo is kept; null where it is not, and then why is said */
+  addPhoto = async (photoId: Id, file: Blob): Promise<string | null> => {
+    try {
+      const kept = await this.host.addPhoto({ siteId: this.open.id, photoId, base64: await base64Of(file) });
+      this.failure = null;
+      return kept.file;
+    } catch (error) {
+      this.failure = failureOf(error);
+      return null;
+    }
+  };
+
+  // ------------------------------------------------------------ records
+
+  /**
+   * Seals the figures with the site as it stands and as it is on the disk.
+   * @returns the record; null where it was not kept, and then why is said
+   */
+  freeze = async ({ kind, title, person, bayIds, figures }: Freeze): Promise<FrozenRecord | null> => {
+    try {
+      const { site } = this.open;
+      const record = await this.host.appendRecord({
+        siteId: this.open.id,
+        draft: {
+          kind,
+          title,
+          person,
+          siteId: site.id,
+          siteName: site.name,
+          siteChecksum: await checksumOf(site),
+          ruleSet: RULE_SET_TITLES[site.rules.set],
+          bayIds,
+        },
+        contents: contentsText(site, bayIds, figures),
+      });
+      this.failure = null;
+      await this.listRecords();
+      return record;
+    } catch (error) {
+      this.failure = failureOf(error);
+      return null;
+    }
+  };
+
+  listRecords = async (): Promise<void> => {
+    try {
+      this.records = await this.host.listRecords(this.open.id);
+    } catch (error) {
+      this.failure = failureOf(error);
+    }
+  };
+
+  // ------------------------------------------------------------ disk
+
+  /** Resolves when everything so far is on the disk, or could not be put there. */
+  settled = async (): Promise<void> => {
+    await this.#queue;
+  };
+
+  saveAgain = (): void => {
+    for (const [id, task] of this.#waiting) this.#send(id, task);
+  };
+
+  close(): void {
+    if (this.#timer !== null) clearTimeout(this.#timer);
+  }
+
+  #keepVisit(id: Id): void {
+    this.#keep(id, async () => {
+      const visit = this.visits.find((one) => one.id === id);
+      if (visit === undefined) return;
+      const baseRevision = this.#revisions.get(id) ?? null;
+      const { revision } = await this.host.saveVisit({ siteId: this.open.id, visitId: id, body: writeVisit(visit), baseRevision });
+      this.#revisions.set(id, revision);
+    });
+  }
+
+  #keep(id: string, task: () => Promise<void>): void {
+    this.#waiting.set(id, task);
+    this.#send(id, task);
+  }
+
+  /** One after the other; of several changes that wait only the last is sent, as it is by then. */
+  #send(id: string, task: () => Promise<void>): void {
+    this.#queue = this.#queue.then(async () => {
+      if (this.#waiting.get(id) !== task) return;
+      try {
+        await task();
+        this.failure = null;
+        if (this.#waiting.get(id) === task) this.#waiting.delete(id);
+      } catch (error) {
+        this.failure = failureOf(error);
+        this.#timer ??= setTimeout(() => {
+          this.#timer = null;
+          this.saveAgain();
+        }, AGAIN);
+      }
+    });
+  }
+}
+
+const FOLLOW_UP = 'follow-up';
+
+/** Hash of the site's canonical text, the same wherever it is made. */
+export const checksumOf = async (site: Site): Promise<string> => sha256Of(writeSite(site));
+
+async function base64Of(file: Blob): Promise<string> {
+  const bytes = new Uint8Array(await file.arrayBuffer());
+  let binary = '';
+  for (let at = 0; at < bytes.length; at += 0x8000) binary += String.fromCharCode(...bytes.subarray(at, at + 0x8000));
+  return btoa(binary);
+}
+
+export const [useRounds, setRounds] = createContext<Rounds>();
