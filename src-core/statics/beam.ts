@@ -20,7 +20,6 @@ import { deflectionIn, momentIn, rotationIn, shearIn, type Segment } from './seg
 import { sumOf } from './sums';
 
 export type { BeamEnd } from './beam-ends';
-export type { Segment } from './segment';
 
 export interface Beam {
   /** Between the supports, mm. */

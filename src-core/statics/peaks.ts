@@ -5,7 +5,7 @@
  * level stretch. Where the moment sags the rotation falls, and it passes zero once, so there is one
  * greatest deflection, and it lies where the moment sags.
  */
-import { rootOfFalling, zeroOfFallingShear } from './polynomial';
+import { zeroOfFallingRotation, zeroOfFallingShear } from './polynomial';
 import type { Sections } from './sections';
 import { deflectionIn, momentIn, rotationIn, type Segment } from './segment';
 
@@ -60,8 +60,8 @@ export function greatestSagging(segments: readonly Segment[], sections: Sections
 }
 
 /**
- * Starts at the highest moment and walks towards the root of the rotation; from that side Newton's
- * method never oversteps it. mm, down.
+ * Starts at the highest moment and walks towards the root of the rotation: on that way the rotation falls
+ * or rises all along, even where an end is held and the rotation is zero there too. mm, down.
  */
 export function greatestDeflection(segments: readonly Segment[], highest: At, rigidity: number): { sag: number; at: number } {
   let { index, s } = highest;
@@ -79,17 +79,20 @@ export function greatestDeflection(segments: readonly Segment[], highest: At, ri
     }
   }
   const segment = segments[index] as Segment;
-  const root = rotation === 0 ? s : rootOfRotation(segment, rotation > 0 ? s : 0, rotation > 0 ? segment.length : s, s, rigidity);
+  const { moment, shear, wFrom, wTo, length } = segment;
+  const root =
+    rotation === 0
+      ? s
+      : zeroOfFallingRotation(
+          segment.rotation * rigidity,
+          moment,
+          shear,
+          wFrom,
+          (wTo - wFrom) / length,
+          rotation > 0 ? s : 0,
+          rotation > 0 ? length : s,
+          s,
+          Number.EPSILON * (segment.from + length),
+        );
   return { sag: Math.max(deflectionIn(segment, root, rigidity), 0), at: segment.from + root };
 }
-
-const rootOfRotation = (segment: Segment, low: number, high: number, from: number, rigidity: number): number =>
-  rootOfFalling(
-    (s, out) => {
-      out[0] = rotationIn(segment, s, rigidity);
-      out[1] = -momentIn(segment, s) / rigidity;
-    },
-    low,
-    high,
-    from,
-  );

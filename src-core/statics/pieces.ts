@@ -63,7 +63,7 @@ function addLine({ x, wFrom, wTo }: Pieces, line: LineLoad): void {
 }
 
 /** Intensity of a straight piece at x, exact at both of its ends. */
-export function intensityAt({ from, to, wFrom, wTo }: LineLoad, x: number): number {
+function intensityAt({ from, to, wFrom, wTo }: LineLoad, x: number): number {
   if (wFrom === wTo || x === from) return wFrom;
   if (x === to) return wTo;
   return wFrom * ((to - x) / (to - from)) + wTo * ((x - from) / (to - from));

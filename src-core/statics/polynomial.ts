@@ -22,43 +22,61 @@ export function integralOfProduct(a0: number, a1: number, b0: number, b1: number
 
 /**
  * Where a shear that falls from `start` ≥ 0 to `end` ≤ 0 over a length passes zero, measured from the
- * start, when the intensity runs straight from `w0` to `w1` (both ≥ 0, not both 0).
+ * start, when the intensity runs straight from `w0` to `w1` (both ≥ 0; 0 where both are 0 and the shear cannot fall).
  *
  * The quadratic is solved from the end whose shear is the smaller, in the form 2V / (w + √(w² + 2kV)):
  * there the two terms under the root never cancel, not even at a double root.
  */
 export function zeroOfFallingShear(start: number, end: number, w0: number, w1: number, length: number): number {
-  // Scaled by the greater intensity, so that squares of very small or very great ones stay in range.
   const scale = Math.max(w0, w1);
-  const slope = (w1 / scale - w0 / scale) / length;
-  const fromStart = start <= -end;
-  const near = fromStart ? w0 / scale : w1 / scale;
-  const v = fromStart ? start / scale : -end / scale;
-  if (!(v > 0)) return fromStart ? 0 : length;
-  const under = near * near + 2 * (fromStart ? slope : -slope) * v;
-  const distance = Math.min((2 * v) / (near + Math.sqrt(Math.max(under, 0))), length);
-  return fromStart ? distance : length - distance;
+  if (!(scale > 0)) return 0;
+  // Squares of very small or very great intensities would leave the computer's numbers.
+  if (!(scale > 1e-100 && scale < 1e100)) return zeroOfFallingShear(start / scale, end / scale, w0 / scale, w1 / scale, length);
+  const slope = (w1 - w0) / length;
+  if (start <= -end) {
+    if (!(start > 0)) return 0;
+    return Math.min((2 * start) / (w0 + Math.sqrt(Math.max(w0 * w0 + 2 * slope * start, 0))), length);
+  }
+  if (!(end < 0)) return length;
+  return length - Math.min((-2 * end) / (w1 + Math.sqrt(Math.max(w1 * w1 + 2 * slope * end, 0))), length);
 }
 
 /**
- * Root of a falling function between `low` and `high`, by Newton's method from `from`, kept inside the
- * bracket by halving. The caller says that the function is above 0 at `low` and below 0 at `high`.
- * @param at writes the function and its derivative at x into `out`
- * Accuracy: to the last place of x that the function can tell.
+ * Where a rotation that falls through zero does so, as the distance s from the start of a piece:
+ * the root between `low` and `high` of `rotation − moment·s − shear·s²/2 + w·s³/6 + slope·s⁴/24`, with
+ * rotation, moment and shear those at the start of the piece (rotation as EI·θ), w the intensity there and
+ * slope its change per mm. Halley's method from `from`, kept inside the bracket by halving; it ends when a
+ * step is below `precision`, and is then off by about the cube of that step beside the length.
  */
-export function rootOfFalling(at: (x: number, out: [number, number]) => void, low: number, high: number, from: number): number {
-  const out: [number, number] = [0, 0];
-  let x = from;
+export function zeroOfFallingRotation(
+  rotation: number,
+  moment: number,
+  shear: number,
+  w: number,
+  slope: number,
+  low: number,
+  high: number,
+  from: number,
+  precision: number,
+): number {
+  const shear2 = shear / 2;
+  const w2 = w / 2;
+  const w6 = w / 6;
+  const slope6 = slope / 6;
+  const slope24 = slope / 24;
+  const slope2 = slope / 2;
+  let s = from;
   for (let step = 0; step < 100; step++) {
-    at(x, out);
-    const [value, derivative] = out;
-    if (value === 0) return x;
-    if (value > 0) low = x;
-    else high = x;
-    let next = x - value / derivative;
+    const value = rotation - s * (moment + s * (shear2 - s * (w6 + s * slope24)));
+    if (value === 0) return s;
+    if (value > 0) low = s;
+    else high = s;
+    const fall = moment + s * (shear - s * (w2 + s * slope6));
+    const bend = shear - s * (w + s * slope2);
+    let next = s + (value * fall) / (fall * fall + value * bend * 0.5);
     if (!(next >= low && next <= high)) next = low + (high - low) / 2;
-    if (Math.abs(next - x) <= Number.EPSILON * Math.abs(next)) return next;
-    x = next;
+    if (Math.abs(next - s) <= precision) return next;
+    s = next;
   }
-  return x;
+  return s;
 }

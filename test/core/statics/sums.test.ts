@@ -33,4 +33,6 @@ test('where a falling shear is zero: uniform, rising and falling intensity, and 
   expect(zeroOfFallingShear(6, 0, 2, 0, 6)).toBe(6);
   expectClose(zeroOfFallingShear(3e-200, -3e-200, 0, 2e-200, 6), Math.sqrt(18), 1e-15);
   expectClose(zeroOfFallingShear(3e200, -3e200, 0, 2e200, 6), Math.sqrt(18), 1e-15);
+  // No intensity, no fall: an answer all the same.
+  expect(zeroOfFallingShear(0, 0, 0, 0, 6)).toBe(0);
 });
