@@ -64,7 +64,7 @@ export interface Upright {
 type Stand = Standing & Pick<GoodsDrawn, 'rear' | 'front'>;
 
 /** Whether goods stand in one another, along the bay and across the rack; one behind the other they do not. */
-export const standIn = (a: Stand, b: Stand): boolean => overlaps(a, b) && Math.min(a.front, b.front) - Math.max(a.rear, b.rear) > TOUCH;
+const standIn = (a: Stand, b: Stand): boolean => overlaps(a, b) && Math.min(a.front, b.front) - Math.max(a.rear, b.rear) > TOUCH;
 
 function goodsDrawn(placements: readonly Placement[], entry: number, { unitLoads }: Libraries): readonly GoodsDrawn[] {
   const standing = placements.map((placement) => {

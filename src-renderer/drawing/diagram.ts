@@ -85,7 +85,7 @@ const KIND = { intensity: 'lineMass', shear: 'mass', bending: 'massMoment', defl
 
 export const valueOf = (name: DiagramName, value: number): Quantity => quantity(KIND[name], value);
 
-export function curvePoints(shown: BeamShown, name: DiagramName): readonly Point[] {
+function curvePoints(shown: BeamShown, name: DiagramName): readonly Point[] {
   return curvesOf(shown.answer).map((point) => ({ x: point.x, y: READ[name](point) }));
 }
 
@@ -112,7 +112,7 @@ function peakOf({ beam, answer }: BeamShown, name: DiagramName, points: readonly
 }
 
 /** The rated mass evenly spread over the pair, on what is drawn: one beam carries half of it. */
-export function evenLoad(effects: LevelEffects, ratedKg: number, view: BeamView): EvenLoad {
+function evenLoad(effects: LevelEffects, ratedKg: number, view: BeamView): EvenLoad {
   const { span } = effects.front;
   const beams = view === 'pair' ? 2 : 1;
   const w = weightOf(ratedKg) / 2 / span;

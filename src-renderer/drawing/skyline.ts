@@ -32,7 +32,7 @@ export function summed(lines: readonly LineLoad[]): readonly LineLoad[] {
 }
 
 /** A unit load's load as it stands, turned left for right where it is mirrored; x from its left edge. */
-export const asStanding = (load: BeamLoad, widthMm: number, mirrored: boolean): BeamLoad =>
+const asStanding = (load: BeamLoad, widthMm: number, mirrored: boolean): BeamLoad =>
   pairLoads([{ id: '', load, widthMm, at: 0, mirrored, frontShare: 0.5 }]).whole;
 
 /** Greatest intensity of a load, N/mm, a point load taken as spread. */
