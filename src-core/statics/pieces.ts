@@ -5,12 +5,12 @@ import type { BeamLoad, LineLoad, PointLoad } from './load';
 export interface Pieces {
   readonly count: number;
   /** Breakpoints, mm, ascending from 0 to the span; `count + 1` of them. */
-  readonly x: Float64Array;
+  readonly x: readonly number[];
   /** Intensity at each piece's left and right end, N/mm. */
-  readonly wFrom: Float64Array;
-  readonly wTo: Float64Array;
+  readonly wFrom: readonly number[];
+  readonly wTo: readonly number[];
   /** Point load at each breakpoint, N. */
-  readonly points: Float64Array;
+  readonly points: readonly number[];
 }
 
 /**
@@ -41,25 +41,28 @@ export function cutIntoPieces(load: BeamLoad, span: number): Pieces {
   }
   for (const { at } of points) all[filled++] = at;
   all.sort();
-  let last = 0;
-  for (let i = 1; i < all.length; i++) if (all[i] !== all[last]) all[++last] = all[i] as number;
-  const x = all.slice(0, last + 1);
-
-  const pieces: Pieces = { count: last, x, wFrom: new Float64Array(last), wTo: new Float64Array(last), points: new Float64Array(last + 1) };
-  for (const line of lines) addLine(pieces, line);
+  const x: number[] = [];
+  const wFrom: number[] = [];
+  const wTo: number[] = [];
+  const forces: number[] = [];
+  for (let i = 0; i < all.length; i++) {
+    const place = all[i] as number;
+    if (place === x[x.length - 1]) continue;
+    x.push(place);
+    wFrom.push(0);
+    wTo.push(0);
+    forces.push(0);
+  }
+  for (const line of lines)
+    for (let i = indexOf(x, line.from); (x[i] as number) < line.to; i++) {
+      wFrom[i] = (wFrom[i] as number) + intensityAt(line, x[i] as number);
+      wTo[i] = (wTo[i] as number) + intensityAt(line, x[i + 1] as number);
+    }
   for (const { at, force } of points) {
     const i = indexOf(x, at);
-    pieces.points[i] = (pieces.points[i] as number) + force;
+    forces[i] = (forces[i] as number) + force;
   }
-  return pieces;
-}
-
-function addLine({ x, wFrom, wTo }: Pieces, line: LineLoad): void {
-  const first = indexOf(x, line.from);
-  for (let i = first; (x[i] as number) < line.to; i++) {
-    wFrom[i] = (wFrom[i] as number) + intensityAt(line, x[i] as number);
-    wTo[i] = (wTo[i] as number) + intensityAt(line, x[i + 1] as number);
-  }
+  return { count: x.length - 1, x, wFrom, wTo, points: forces };
 }
 
 /** Intensity of a straight piece at x, exact at both of its ends. */
@@ -70,7 +73,7 @@ function intensityAt({ from, to, wFrom, wTo }: LineLoad, x: number): number {
 }
 
 /** Index of a value that is known to be among the ascending ones. */
-function indexOf(ascending: Float64Array, value: number): number {
+function indexOf(ascending: readonly number[], value: number): number {
   let low = 0;
   let high = ascending.length - 1;
   while (low < high) {

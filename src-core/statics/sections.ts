@@ -23,81 +23,75 @@ import { sumsFromLeft, sumsFromRight } from './sums';
 
 /** Sections in pairs: 2i is just right of breakpoint i, 2i + 1 just left of breakpoint i + 1. */
 export interface Sections {
-  readonly a: Float64Array;
-  readonly b: Float64Array;
-  readonly a3: Float64Array;
-  readonly b3: Float64Array;
+  readonly a: readonly number[];
+  readonly b: readonly number[];
+  readonly a3: readonly number[];
+  readonly b3: readonly number[];
   /** Size of the terms that make up L·V, N·mm: the measure of its rounding. */
-  readonly size: Float64Array;
+  readonly size: readonly number[];
 }
 
-export function sectionsOf(pieces: Pieces, span: number, ends: HeldEnds): Sections {
-  const events = 2 * pieces.count + 1;
-  const terms = { pA: new Float64Array(events), mA: new Float64Array(events), a3: new Float64Array(events) };
-  const mirrored = { pB: new Float64Array(events), mB: new Float64Array(events), b3: new Float64Array(events) };
-  const out = new Float64Array(3);
+/** What each event adds as seen from one end: W·a less that end's moment, that moment, and W·a³. */
+interface Terms {
+  readonly own: number[];
+  readonly held: number[];
+  readonly cubed: number[];
+}
+
+export function sectionsOf({ count, x, wFrom, wTo, points }: Pieces, span: number, ends: HeldEnds): Sections {
+  const left: Terms = { own: [], held: [], cubed: [] };
+  const right: Terms = { own: [], held: [], cubed: [] };
   // Event 2i is the point load at breakpoint i, event 2i + 1 the line load of piece i.
-  for (let i = 0; i <= pieces.count; i++) {
-    const force = pieces.points[i] as number;
-    const a = pieces.x[i] as number;
+  for (let i = 0; i <= count; i++) {
+    const force = points[i] as number;
+    const a = x[i] as number;
     const b = span - a;
-    pointTerms(force, a, b, span, ends.left, out);
-    store(out, 2 * i, terms.pA, terms.mA, terms.a3);
-    pointTerms(force, b, a, span, ends.right, out);
-    store(out, 2 * i, mirrored.pB, mirrored.mB, mirrored.b3);
-    if (i === pieces.count) break;
-    const a1 = pieces.x[i + 1] as number;
+    addPoint(left, force, a, b, span, ends.left);
+    addPoint(right, force, b, a, span, ends.right);
+    if (i === count) break;
+    const a1 = x[i + 1] as number;
     const b1 = span - a1;
-    const w0 = pieces.wFrom[i] as number;
-    const w1 = pieces.wTo[i] as number;
-    lineTerms(w0, w1, a, a1, b, b1, a1 - a, span, ends.left, out);
-    store(out, 2 * i + 1, terms.pA, terms.mA, terms.a3);
-    lineTerms(w0, w1, b, b1, a, a1, a1 - a, span, ends.right, out);
-    store(out, 2 * i + 1, mirrored.pB, mirrored.mB, mirrored.b3);
+    const w0 = wFrom[i] as number;
+    const w1 = wTo[i] as number;
+    addLine(left, w0, w1, a, a1, b, b1, a1 - a, span, ends.left);
+    addLine(right, w0, w1, b, b1, a, a1, a1 - a, span, ends.right);
   }
-  const pALeft = sumsFromLeft(terms.pA);
-  const mBLeft = sumsFromLeft(mirrored.mB);
-  const a3Left = sumsFromLeft(terms.a3);
-  const pBRight = sumsFromRight(mirrored.pB);
-  const mARight = sumsFromRight(terms.mA);
-  const b3Right = sumsFromRight(mirrored.b3);
-
-  const count = events - 1;
-  const sections: Sections = {
-    a: new Float64Array(count),
-    b: new Float64Array(count),
-    a3: a3Left,
-    b3: b3Right.subarray(1),
-    size: new Float64Array(count),
-  };
-  for (let k = 0; k < count; k++) {
-    const p = pALeft[k] as number;
-    const q = pBRight[k + 1] as number;
-    const m = mARight[k + 1] as number;
-    const n = mBLeft[k] as number;
-    sections.a[k] = p - m;
-    sections.b[k] = q - n;
-    sections.size[k] = p + q + m + n;
+  const ownLeft = sumsFromLeft(left.own);
+  const heldLeft = sumsFromLeft(right.held);
+  const ownRight = sumsFromRight(right.own);
+  const heldRight = sumsFromRight(left.held);
+  const a: number[] = [];
+  const b: number[] = [];
+  const size: number[] = [];
+  for (let k = 0; k < 2 * count; k++) {
+    const p = ownLeft[k] as number;
+    const q = ownRight[k + 1] as number;
+    const m = heldRight[k + 1] as number;
+    const n = heldLeft[k] as number;
+    a.push(p - m);
+    b.push(q - n);
+    size.push(p + q + m + n);
   }
-  return sections;
+  return { a, b, a3: sumsFromLeft(left.cubed), b3: sumsFromRight(right.cubed).slice(1), size };
 }
 
-function store(from: Float64Array, at: number, p: Float64Array, m: Float64Array, cubed: Float64Array): void {
-  p[at] = from[0] as number;
-  m[at] = from[1] as number;
-  cubed[at] = from[2] as number;
-}
-
-/** Writes W·a less the near end's moment, that moment, and W·a³; `a` is the distance from the near end. */
-function pointTerms(force: number, a: number, b: number, span: number, end: EndCoefficients, out: Float64Array): void {
+/** Adds a point load; `a` is its distance from the end in question, `b` from the other. */
+function addPoint({ own, held, cubed }: Terms, force: number, a: number, b: number, span: number, end: EndCoefficients): void {
+  if (force === 0) {
+    own.push(0);
+    held.push(0);
+    cubed.push(0);
+    return;
+  }
   const { near, far, rest, lead } = end;
-  out[0] = force * a * (rest + (a / span) * (near + lead * (b / span)));
-  out[1] = force * a * (b / span) * (near * (b / span) + far * (a / span));
-  out[2] = force * a * a * a;
+  own.push(force * a * (rest + (a / span) * (near + lead * (b / span))));
+  held.push(force * a * (b / span) * (near * (b / span) + far * (a / span)));
+  cubed.push(force * a * a * a);
 }
 
-/** The same, integrated over a straight piece of load with intensities w0 to w1 at the distances a0 to a1. */
-function lineTerms(
+/** Adds a straight piece of load with intensities w0 to w1 at the distances a0 to a1. */
+function addLine(
+  { own, held, cubed }: Terms,
   w0: number,
   w1: number,
   a0: number,
@@ -107,20 +101,19 @@ function lineTerms(
   length: number,
   span: number,
   end: EndCoefficients,
-  out: Float64Array,
 ): void {
   const { near, far, rest, lead } = end;
   const moment = (length / 6) * (w0 * (2 * a0 + a1) + w1 * (a0 + 2 * a1));
-  out[2] = length * integralOfProduct(w0, w1, a0, a1, a0, a1, a0, a1);
+  cubed.push(length * integralOfProduct(w0, w1, a0, a1, a0, a1, a0, a1));
   if (near === 0) {
-    out[0] = moment;
-    out[1] = 0;
+    own.push(moment);
+    held.push(0);
     return;
   }
   const r0 = b0 / span;
   const r1 = b1 / span;
   const s0 = a0 / span;
   const s1 = a1 / span;
-  out[0] = rest * moment + length * integralOfProduct(w0, w1, a0, a1, s0, s1, near + lead * r0, near + lead * r1);
-  out[1] = length * integralOfProduct(w0, w1, a0, a1, r0, r1, near * r0 + far * s0, near * r1 + far * s1);
+  own.push(rest * moment + length * integralOfProduct(w0, w1, a0, a1, s0, s1, near + lead * r0, near + lead * r1));
+  held.push(length * integralOfProduct(w0, w1, a0, a1, r0, r1, near * r0 + far * s0, near * r1 + far * s1));
 }

@@ -19,11 +19,25 @@ export function sumOf(count: number, term: (i: number) => number): number {
 }
 
 /** Entry i is the sum of terms 0 … i. */
-export function sumsFromLeft(terms: Float64Array): Float64Array {
-  const sums = new Float64Array(terms.length);
+export function sumsFromLeft(terms: readonly number[]): number[] {
+  const sums: number[] = [];
   let sum = 0;
   let lost = 0;
-  for (let i = 0; i < terms.length; i++) {
+  for (const value of terms) {
+    const next = sum + value;
+    lost += Math.abs(sum) >= Math.abs(value) ? sum - next + value : value - next + sum;
+    sum = next;
+    sums.push(sum + lost);
+  }
+  return sums;
+}
+
+/** Entry i is the sum of terms i … last. */
+export function sumsFromRight(terms: readonly number[]): number[] {
+  const sums = new Array<number>(terms.length);
+  let sum = 0;
+  let lost = 0;
+  for (let i = terms.length - 1; i >= 0; i--) {
     const value = terms[i] as number;
     const next = sum + value;
     lost += Math.abs(sum) >= Math.abs(value) ? sum - next + value : value - next + sum;
@@ -32,6 +46,3 @@ export function sumsFromLeft(terms: Float64Array): Float64Array {
   }
   return sums;
 }
-
-/** Entry i is the sum of terms i … last. */
-export const sumsFromRight = (terms: Float64Array): Float64Array => sumsFromLeft(terms.slice().reverse()).reverse();
