@@ -13,7 +13,8 @@ export const CONTENT_SECURITY_POLICY = [
   "frame-ancestors 'none'",
   "object-src 'none'",
   "require-trusted-types-for 'script'",
-  'trusted-types svelte-trusted-html',
+  // Svelte's own policy, and the page's for the address of its audit worker (src-renderer/start-worker.ts).
+  'trusted-types svelte-trusted-html tallybeam-worker',
 ].join('; ');
 
 /** Sent with every file of the page. */
