@@ -23,8 +23,6 @@ export interface Command {
   readonly name: string | ((at: Surroundings) => string);
   readonly group: (typeof GROUPS)[number];
   readonly keys: readonly string[];
-  /** Keys without a modifier that act only while the drawing has the focus, so that typing is never mistaken. */
-  readonly inDrawing: boolean;
   readonly when: (at: Surroundings) => boolean;
   readonly run: (at: Surroundings) => void;
 }
@@ -39,7 +37,7 @@ const carrying: Allowed = (at) => onRack(at) && at.open.carried !== null;
 const hasGoods: Allowed = (at) => onRack(at) && at.open.selection.placementIds.length > 0;
 const hasOne: Allowed = (at) => onRack(at) && at.open.selection.placementIds.length === 1;
 const movable: Allowed = (at) => hasGoods(at) || carrying(at);
-const free: Allowed = (at) => hasBay(at) && !movable(at);
+const still: Allowed = (at) => hasBay(at) && !carrying(at);
 
 const command = (
   id: string,
@@ -48,10 +46,7 @@ const command = (
   keys: readonly string[],
   when: Allowed,
   run: (at: Surroundings) => void,
-  inDrawing = false,
-): Command => ({ id, group, name, keys, when, run, inDrawing });
-
-const inDrawing = (...given: Parameters<typeof command>): Command => ({ ...command(...given), inDrawing: true });
+): Command => ({ id, group, name, keys, when, run });
 
 const screen = (id: Screen, name: string, keys: readonly string[] = []) =>
   command(
@@ -108,7 +103,7 @@ export const COMMANDS: readonly Command[] = [
 
   // ------------------------------------------------------------ goods
   command('add-goods', 'Goods', 'Add goods…', ['Mod+G', 'Insert'], hasBay, ({ open }) => open.openTask('add-goods', open.bay?.id ?? '')),
-  inDrawing(
+  command(
     'pick-up',
     'Goods',
     'Pick up, to put down elsewhere',
@@ -116,19 +111,19 @@ export const COMMANDS: readonly Command[] = [
     (at) => hasOne(at) && !carrying(at),
     ({ open }) => open.pickUp(open.selection.placementIds[0] ?? ''),
   ),
-  inDrawing('put-down', 'Goods', 'Put down here', ['Enter', 'Space'], carrying, ({ open }) => open.putDown()),
+  command('put-down', 'Goods', 'Put down here', ['Enter', 'Space'], carrying, ({ open }) => open.putDown()),
   command('put-back', 'Goods', 'Put back', ['Escape'], carrying, ({ open }) => open.putBack()),
   command('move-to', 'Goods', 'Move to…', ['Mod+M'], hasOne, ({ shell }) => shell.ask({ kind: 'move-to' })),
   ...NUDGES.flatMap(([prefix, mm]) => [
-    inDrawing(`left-${mm}`, 'Goods', `Move left by ${mm} mm`, [`${prefix}ArrowLeft`], movable, ({ open }) => nudge(open, -mm)),
-    inDrawing(`right-${mm}`, 'Goods', `Move right by ${mm} mm`, [`${prefix}ArrowRight`], movable, ({ open }) => nudge(open, mm)),
+    command(`left-${mm}`, 'Goods', `Move left by ${mm} mm`, [`${prefix}ArrowLeft`], movable, ({ open }) => nudge(open, -mm)),
+    command(`right-${mm}`, 'Goods', `Move right by ${mm} mm`, [`${prefix}ArrowRight`], movable, ({ open }) => nudge(open, mm)),
   ]),
-  inDrawing('goods-up', 'Goods', 'Move to the level above', ['ArrowUp'], movable, ({ open }) => changeLevel(open, 1)),
-  inDrawing('goods-down', 'Goods', 'Move to the level below', ['ArrowDown'], movable, ({ open }) => changeLevel(open, -1)),
-  inDrawing('goods-bay-left', 'Goods', 'Move to the bay on the left', ['Shift+PageUp'], movable, ({ open }) => changeBay(open, -1)),
-  inDrawing('goods-bay-right', 'Goods', 'Move to the bay on the right', ['Shift+PageDown'], movable, ({ open }) => changeBay(open, 1)),
-  inDrawing('mirror', 'Goods', 'Turn left for right', ['M'], hasGoods, ({ open }) => mirrorGoods(open)),
-  inDrawing('space-evenly', 'Goods', 'Space the level’s goods evenly', ['E'], hasLevel, ({ open }) => spaceEvenly(open)),
+  command('goods-up', 'Goods', 'Move to the level above', ['ArrowUp'], movable, ({ open }) => changeLevel(open, 1)),
+  command('goods-down', 'Goods', 'Move to the level below', ['ArrowDown'], movable, ({ open }) => changeLevel(open, -1)),
+  command('goods-bay-left', 'Goods', 'Move to the bay on the left', ['Shift+PageUp'], movable, ({ open }) => changeBay(open, -1)),
+  command('goods-bay-right', 'Goods', 'Move to the bay on the right', ['Shift+PageDown'], movable, ({ open }) => changeBay(open, 1)),
+  command('mirror', 'Goods', 'Turn left for right', ['M'], hasGoods, ({ open }) => mirrorGoods(open)),
+  command('space-evenly', 'Goods', 'Space the level’s goods evenly', ['E'], hasLevel, ({ open }) => spaceEvenly(open)),
   command(
     'unselect',
     'Goods',
@@ -166,10 +161,8 @@ export const COMMANDS: readonly Command[] = [
   command('find', 'Go to', 'Find a bay or goods by name…', ['Mod+F'], always, ({ shell }) => shell.ask({ kind: 'find' })),
   command('next-bay', 'Go to', 'Next bay', ['PageDown'], hasBay, ({ open }) => walkBay(open, 1)),
   command('previous-bay', 'Go to', 'Previous bay', ['PageUp'], hasBay, ({ open }) => walkBay(open, -1)),
-  inDrawing('bay-right', 'Go to', 'Bay to the right', ['ArrowRight'], free, ({ open }) => walkBay(open, 1)),
-  inDrawing('bay-left', 'Go to', 'Bay to the left', ['ArrowLeft'], free, ({ open }) => walkBay(open, -1)),
-  inDrawing('level-up', 'Go to', 'Level above', ['ArrowUp'], free, ({ open }) => walkLevel(open, 1)),
-  inDrawing('level-down', 'Go to', 'Level below', ['ArrowDown'], free, ({ open }) => walkLevel(open, -1)),
+  command('level-up', 'Go to', 'Level above', ['Mod+ArrowUp'], still, ({ open }) => walkLevel(open, 1)),
+  command('level-down', 'Go to', 'Level below', ['Mod+ArrowDown'], still, ({ open }) => walkLevel(open, -1)),
   command(
     'back',
     'Go to',
@@ -231,6 +224,9 @@ function walkLevel(open: OpenSite, by: 1 | -1): void {
   open.sayWhere();
 }
 
+/** Letters, arrows, Enter and Space alone act only while the drawing has the focus, so that typing is never mistaken. */
+export const isForDrawing = (chord: string): boolean => /^(Shift\+|Alt\+)*(\w|Arrow\w+|Enter|Space)$/.test(chord);
+
 /** The command that a key press asks for here; null where it means nothing. */
 export function commandFor(
   event: KeyPress,
@@ -241,7 +237,7 @@ export function commandFor(
   for (const one of COMMANDS) {
     const chord = one.keys.find((key) => pressed(event, key, mac));
     if (chord === undefined || !one.when(at)) continue;
-    if (one.inDrawing && !focus.inDrawing) continue;
+    if (isForDrawing(chord) && !focus.inDrawing) continue;
     if (focus.inField && KEPT_BY_FIELDS.includes(chord)) continue;
     return one;
   }

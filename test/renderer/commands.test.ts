@@ -1,5 +1,5 @@
 import { beforeEach, expect, test } from 'vitest';
-import { COMMANDS, commandFor, GROUPS, nameOf, type Command, type Surroundings } from '../../src-renderer/commands';
+import { COMMANDS, commandFor, GROUPS, isForDrawing, nameOf, type Command, type Surroundings } from '../../src-renderer/commands';
 import { chordName, pressed, type KeyPress } from '../../src-renderer/keys';
 import { Shell } from '../../src-renderer/shell.svelte';
 import { writeSite } from '../../src-core/site/write';
@@ -82,11 +82,10 @@ test('in no state do two allowed commands share a key', async () => {
 });
 
 test('letters and arrows without a modifier act in the drawing only, so that typing is never a command', () => {
-  const plain = COMMANDS.flatMap((one) => one.keys.map((key) => ({ one, key }))).filter(({ key }) =>
-    /^(Shift\+|Alt\+)?(.|Arrow\w+|Enter|Space)$/.test(key),
-  );
-  expect(plain.length).toBeGreaterThan(8);
-  for (const { one, key } of plain) expect(one.inDrawing, `${key} of ${one.id}`).toBe(true);
+  const alone = COMMANDS.flatMap((one) => one.keys).filter((key) => !key.includes('Mod+') && /(^|\+)(.|Arrow\w+|Enter|Space)$/.test(key));
+  expect(alone.length).toBeGreaterThan(12);
+  expect(alone.filter((key) => !isForDrawing(key))).toEqual([]);
+  expect(['Mod+S', 'F1', 'PageDown', 'Escape', 'Delete', 'Mod+ArrowUp'].filter(isForDrawing)).toEqual([]);
 });
 
 const idFor = (event: KeyPress, focus: { inField: boolean; inDrawing: boolean }, mac = false): string | null =>
@@ -100,8 +99,8 @@ test.each([
   ['Ctrl+Alt+S is something else', press('s', { ctrlKey: true, altKey: true }), ELSEWHERE, null],
   ['Ctrl+K lists all commands', press('k', { ctrlKey: true }), FIELD, 'commands'],
   ['F1 helps', press('F1'), FIELD, 'show-help'],
-  ['the right arrow walks to the next bay', press('ArrowRight'), DRAWING, 'bay-right'],
-  ['the right arrow outside the drawing does nothing', press('ArrowRight'), ELSEWHERE, null],
+  ['the right arrow with nothing chosen does nothing', press('ArrowRight'), DRAWING, null],
+  ['Ctrl and the up arrow go to the level above, from a field as well', press('ArrowUp', { ctrlKey: true }), FIELD, 'level-up'],
   ['Ctrl+A in a field selects its text', press('a', { ctrlKey: true }), FIELD, null],
   ['Page Down goes to the next bay', press('PageDown'), ELSEWHERE, 'next-bay'],
 ])('%s', (_, event, focus, id) => {
@@ -114,12 +113,18 @@ test.each([
   ['Alt and the right arrow nudge by 100 mm', press('ArrowRight', { altKey: true }), 'right-100'],
   ['the up arrow moves to the level above', press('ArrowUp'), 'goods-up'],
   ['M turns left for right', press('m'), 'mirror'],
+  ['Ctrl and the up arrow leave the goods and go to the level above', press('ArrowUp', { ctrlKey: true }), 'level-up'],
   ['Delete takes off', press('Delete'), 'delete'],
   ['Enter picks up', press('Enter'), 'pick-up'],
   ['Escape selects nothing', press('Escape'), 'unselect'],
 ])('with goods chosen %s', (_, event, id) => {
   at.open.select({ placementIds: ['p1'] });
   expect(idFor(event, DRAWING)).toBe(id);
+});
+
+test('with goods chosen, arrows and letters outside the drawing do nothing', () => {
+  at.open.select({ placementIds: ['p1'] });
+  expect([press('ArrowRight'), press('m'), press('Enter')].map((event) => idFor(event, ELSEWHERE))).toEqual([null, null, null]);
 });
 
 test.each([
