@@ -1,15 +1,12 @@
 /** Findings in order of weight, and by where they belong. */
 import type { BayAudit, FrameAudit, LevelAudit, RunAudit } from '../../src-core/audit/types';
-import { compareVerdicts, type CheckName, type Finding, type Missing } from '../../src-core/checks/finding';
+import { compareFindings } from '../../src-core/audit/verdict';
+import type { CheckName, Finding, Missing } from '../../src-core/checks/finding';
 import type { Id, Run } from '../../src-core/site/site';
 import { CHECK_WORDS } from '../../src-core/words/check-names';
 
-/** Worst first; of equal verdicts what counts before what only informs, then the most used. */
-export function byWeight(findings: readonly Finding[]): readonly Finding[] {
-  return findings.toSorted(
-    (a, b) => Number(b.counts) - Number(a.counts) || compareVerdicts(b.verdict, a.verdict) || (b.utilisation ?? -1) - (a.utilisation ?? -1),
-  );
-}
+/** Heaviest first. */
+export const byWeight = (findings: readonly Finding[]): readonly Finding[] => findings.toSorted(compareFindings);
 
 /** Checks of goods that are made for the floor of a bay as for a level; there no level names them. */
 const ALSO_ON_FLOOR: ReadonlySet<CheckName> = new Set([
