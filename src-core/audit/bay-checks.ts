@@ -1,6 +1,6 @@
 /** The bay's checks as a rack: goods on its floor, its notice, the order of its goods, open flags and its floor. */
 import type { Finding, Missing } from '../checks/finding';
-import { floorArea, runOnFloor } from '../checks/floor';
+import { floorArea, runOnFloor } from '../checks/floor-area';
 import { goodsForm } from '../checks/goods-form';
 import { heavyLow, type StackedGoods } from '../checks/heavy-low';
 import { distinctMissing } from '../checks/make-finding';
@@ -8,7 +8,7 @@ import { noticeMatch } from '../checks/notice-match';
 import { siteFlags, type RatedPart } from '../checks/site-flags';
 import type { BeamType, FrameType, LoadNotice } from '../site/site';
 import { asked, type BayWork, type RunWork, type SiteContext } from './context';
-import { floorStated } from './frame';
+import { floorStated } from './frame-floor';
 import { clearanceFindings, formed } from './geometry';
 import { levelName, noticeMissing, weighed } from './level';
 import { beamMass, deckMass, frameDepths, frameMass, originKnown, type PartMass } from './parts';

@@ -1,6 +1,7 @@
 /** Collects what hangs on an upright frame from the bays on both its sides. */
 import type { Missing } from '../checks/finding';
-import { frameLevels, type FrameBeamEnd, type FrameLevel } from '../checks/frame-loads';
+import type { Legs } from '../checks/floor';
+import { frameLevels, legsOf, type FrameBeamEnd, type FrameLevel } from '../checks/frame-loads';
 import { distinctMissing } from '../checks/make-finding';
 import { massWeighing } from '../units/quantity';
 import type { BayWork, FrameWork, LevelWork, SiteContext } from './context';
@@ -20,6 +21,8 @@ export interface FrameContents {
 }
 
 type Side = 'left' | 'right';
+
+export const nameOfFrame = ({ frame }: FrameWork): string => `frame ${frame.name}`;
 
 /** The bays at a frame with the side on which each stands. */
 export const baysOf = ({ left, right }: FrameWork): readonly { readonly side: Side; readonly bay: BayWork }[] => [
@@ -71,3 +74,7 @@ function beamEnd(bay: BayWork, level: LevelWork, side: Side, beamKg: number, dec
 /** Goods that the bay on one side puts on the frame, kg. */
 export const goodsOn = ({ levels }: FrameContents, side: Side): number =>
   levels.reduce((sum, { ends }) => ends.reduce((all, end) => (end.side === side ? all + end.goodsFrontKg + end.goodsRearKg : all), sum), 0);
+
+/** The legs at the floor; null as soon as one mass is not known or goods cannot stand as they were entered. */
+export const legsFor = ({ levels, massKg, missing, impossible }: FrameContents): Legs | null =>
+  missing.length > 0 || impossible ? null : legsOf(levels, massKg);

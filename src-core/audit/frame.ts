@@ -1,19 +1,16 @@
 /** The checks of one upright frame with both its bays: storeys, balance, legs on the floor, height, plumb, damage. */
 import { frameDamage } from '../checks/damage';
 import type { Finding, Missing } from '../checks/finding';
-import { backToBackLegs, legLoad, platePressure, type FrameOnFloor, type Legs, type LegsBehind } from '../checks/floor';
 import { frameImbalance } from '../checks/frame-imbalance';
-import { legsOf } from '../checks/frame-loads';
 import type { FrameBay } from '../checks/frame-rating';
 import { frameStorey, type FrameStoreyAnswer } from '../checks/frame-storey';
-import { distinctMissing } from '../checks/make-finding';
 import { anchorPull, heightToDepth, type Asked } from '../checks/height-to-depth';
 import { plumb } from '../checks/plumb';
-import type { Stated } from '../checks/unit-load';
-import type { Answer, Floor, FrameType } from '../site/site';
+import type { Answer, FrameType } from '../site/site';
 import { weightOf } from '../units/quantity';
 import { asked, type BayWork, type FrameWork, type SiteContext } from './context';
-import { baysOf, frameContents, goodsOn, type FrameContents } from './frame-ends';
+import { baysOf, frameContents, goodsOn, legsFor, nameOfFrame as nameOf, type FrameContents } from './frame-ends';
+import { floorFindings } from './frame-floor';
 import { frameTypesMissing } from './level-work';
 import { sourceWords } from './source-words';
 import type { FrameAudit } from './types';
@@ -46,11 +43,6 @@ export function frameAudit(context: SiteContext, work: FrameWork): FrameAudit {
     findings,
   };
 }
-
-const nameOf = ({ frame }: FrameWork): string => `frame ${frame.name}`;
-
-const legsFor = ({ levels, massKg, missing, impossible }: FrameContents): Legs | null =>
-  missing.length > 0 || impossible ? null : legsOf(levels, massKg);
 
 function storeyAnswer(context: SiteContext, work: FrameWork, contents: FrameContents): FrameStoreyAnswer {
   const { type, frame, place } = work;
@@ -117,112 +109,6 @@ function imbalance(context: SiteContext, work: FrameWork, contents: FrameContent
     utilisationMissing: storey.finding.missing,
     rules: context.rules,
   });
-}
-
-type FloorLimit = 'legN' | 'pressureNPerMm2' | 'legPairN' | 'thicknessMm';
-
-function floorFindings(context: SiteContext, work: FrameWork, contents: FrameContents, legs: Legs | null): readonly Finding[] {
-  const { run, place } = work;
-  const floor = run.floorId === null ? null : (context.floors.get(run.floorId) ?? null);
-  const on: FrameOnFloor = {
-    place,
-    frame: nameOf(work),
-    legs,
-    missing: contents.missing,
-    rules: context.rules,
-  };
-  const limit = (field: FloorLimit, input: string): Stated => floorStated(run, floor, field, input);
-  return [
-    ...(asked(context, 'leg-load') ? [legLoad(on, limit('legN', 'force allowed under one leg'))] : []),
-    ...(asked(context, 'plate-pressure')
-      ? [
-          platePressure(
-            on,
-            { width: plateSide(work, 'plateWidthMm'), depth: plateSide(work, 'plateDepthMm') },
-            limit('pressureNPerMm2', 'pressure allowed on the floor'),
-          ),
-        ]
-      : []),
-    ...(asked(context, 'back-to-back-legs')
-      ? [
-          backToBackLegs(
-            on,
-            behindOf(context, work),
-            limit('legPairN', 'force allowed under two legs back to back'),
-            limit('thicknessMm', 'thickness of the slab'),
-          ),
-        ]
-      : []),
-  ];
-}
-
-export function floorStated(run: FrameWork['run'], floor: Floor | null, field: FloorLimit | 'areaNPerMm2', input: string): Stated {
-  if (floor === null)
-    return {
-      value: null,
-      from: '',
-      missing: [
-        {
-          input: `floor of run ${run.name}`,
-          how: 'Add the floor with what its owner or an engineer allows on it, and choose it for the run.',
-          field: `run:${run.id}:floorId`,
-        },
-      ],
-    };
-  const value = floor[field];
-  return {
-    value,
-    from: `floor ${floor.name}; ${sourceWords(floor.source)}`,
-    missing:
-      value === null
-        ? [
-            {
-              input: `${input} on floor ${floor.name}`,
-              how: 'Ask the floor’s owner or an engineer for it in writing. It is never calculated here. Where they state it otherwise, leave this check out with that as the reason.',
-              field: `floor:${floor.id}:${field}`,
-            },
-          ]
-        : [],
-  };
-}
-
-function plateSide({ type, frame }: FrameWork, field: 'plateWidthMm' | 'plateDepthMm'): Stated {
-  if (type === null) return { value: null, from: '', missing: frameTypesMissing([{ frame, type }]) };
-  const way = field === 'plateWidthMm' ? 'along' : 'across';
-  return {
-    value: type[field],
-    from: `frame type ${type.name}`,
-    missing:
-      type[field] === null
-        ? [
-            {
-              input: `base plate of ${type.name} ${way} the run`,
-              how: 'Measure the base plate.',
-              field: `frameType:${type.id}:${field}`,
-            },
-          ]
-        : [],
-  };
-}
-
-/** The rear leg behind; where the two runs do not mirror each other, the heaviest of that run. */
-function behindOf(context: SiteContext, { run, behind }: FrameWork): LegsBehind | null {
-  const frames = behind();
-  if (run.backToBack === null || frames.length === 0) return null;
-  const gap = run.backToBack.gapMm;
-  const missing: Missing[] = [];
-  let heaviest: { readonly name: string; readonly rearKg: number } | null = null;
-  let known = true;
-  for (const one of frames) {
-    const contents = frameContents(context, one);
-    const legs = legsFor(contents);
-    missing.push(...contents.missing);
-    if (legs === null) known = false;
-    else if (heaviest === null || legs.rearKg > heaviest.rearKg)
-      heaviest = { name: `${nameOf(one)} of run ${one.run.name}`, rearKg: legs.rearKg };
-  }
-  const name = heaviest?.name ?? `${nameOf(frames[0] as FrameWork)} of run ${(frames[0] as FrameWork).run.name}`;
-  return { name, rearKg: known ? (heaviest?.rearKg ?? null) : null, missing: distinctMissing(missing), gap };
 }
 
 function standingFindings(context: SiteContext, work: FrameWork, contents: FrameContents): readonly Finding[] {

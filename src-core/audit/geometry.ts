@@ -70,7 +70,7 @@ export function clearanceFindings(context: SiteContext, bay: BayWork, row: Stand
   ];
 }
 
-export const handlingOf = ({ run }: BayWork): Handling => ({
+const handlingOf = ({ run }: BayWork): Handling => ({
   loadedBy: run.loadedBy,
   missing: {
     input: `what puts goods away in run ${run.name}`,

@@ -8,8 +8,7 @@ import { addDays, daysBetween } from '../units/dates';
 import type { Missing } from './finding';
 import type { ResolvedRules, RuleKey } from './rule-sets';
 
-export const DAMAGED_MEMBERS = ['upright-front', 'upright-rear', 'bracing', 'base-plate'] as const;
-export type DamagedMember = (typeof DAMAGED_MEMBERS)[number];
+type DamagedMember = 'upright-front' | 'upright-rear' | 'bracing' | 'base-plate';
 
 export const MEMBER_WORDS: Readonly<Record<DamagedMember, string>> = {
   'upright-front': 'front upright',
@@ -89,7 +88,7 @@ export function classOfDamage(damage: FoundDamage, rules: ResolvedRules, today: 
 }
 
 /** A set that allows no bend at all asks to unload on any visible damage. */
-export const anyDamageIsRed = ({ value }: ResolvedRules): boolean =>
+const anyDamageIsRed = ({ value }: ResolvedRules): boolean =>
   value.damageUprightAlong === 0 && value.damageUprightAcross === 0 && value.damageBracing === 0;
 
 /** Pro rata for gauges shorter than 1 m; a longer gauge allows no more than 1 m does. */

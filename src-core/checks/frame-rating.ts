@@ -7,7 +7,7 @@ import type { FrameLevel, Storey } from './frame-loads';
 import { frameTableRating, type FrameTableAnswer, type FrameTableChoice, type FrameTableRow } from './frame-table';
 
 /** What a bay's load notice says of the frame beside it; lengths in mm. */
-export interface FrameNotice {
+interface FrameNotice {
   /** "load notice LN-4, …". */
   readonly from: string;
   readonly frameKg: number | null;

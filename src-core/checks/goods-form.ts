@@ -6,7 +6,7 @@ import { inside } from './phrase';
 import { ruleQuantity, ruleValue, sourceOf, type ResolvedRules } from './rule-sets';
 import { above, put } from './worked-values';
 
-export type Contact = 'flat' | 'rims' | 'wheels' | 'feet' | 'lying-round';
+type Contact = 'flat' | 'rims' | 'wheels' | 'feet' | 'lying-round';
 
 export interface FormedGoods {
   readonly placementId: string;

@@ -8,7 +8,7 @@ import { GRAVITY, put } from './worked-values';
 
 type Answer = 'yes' | 'no' | 'unknown';
 
-export interface Slenderness {
+interface Slenderness {
   readonly place: Place;
   readonly frame: string;
   /** Floor to the top of the topmost beams at the frame, mm; null = no beams. */

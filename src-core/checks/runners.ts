@@ -11,7 +11,7 @@ import { compared, finding, notAssessable } from './make-finding';
 import { nameOf, worseBeam, type PairInput, type WorseBeam } from './pair';
 import { inside, opening } from './phrase';
 
-export const SPREADS = ['flexible', 'rigid'] as const;
+const SPREADS = ['flexible', 'rigid'] as const;
 export type Spread = (typeof SPREADS)[number];
 
 /**

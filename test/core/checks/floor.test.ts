@@ -1,13 +1,6 @@
 import { expect, test } from 'vitest';
-import {
-  backToBackLegs,
-  floorArea,
-  legLoad,
-  platePressure,
-  runOnFloor,
-  type FrameOnFloor,
-  type LegsBehind,
-} from '../../../src-core/checks/floor';
+import { backToBackLegs, legLoad, platePressure, type FrameOnFloor, type LegsBehind } from '../../../src-core/checks/floor';
+import { floorArea, runOnFloor } from '../../../src-core/checks/floor-area';
 import { frameImbalance } from '../../../src-core/checks/frame-imbalance';
 import { resolveRules } from '../../../src-core/checks/rule-sets';
 import type { Stated } from '../../../src-core/checks/unit-load';
