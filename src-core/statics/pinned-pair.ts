@@ -33,7 +33,14 @@ export function solvePinnedPair(
   if (count < 1 || !sumFromLeft(span, goods, start, count, scratch)) return false;
   sumFromRight(count, scratch);
   solveOne(span, goods.profiles, count, scratch, GOODS.front, out, 0);
-  solveOne(span, goods.profiles, count, scratch, GOODS.rear, out, RESULT.size);
+  if (allInTheMiddle(goods.share, start, end)) for (let i = 0; i < RESULT.size; i++) out[RESULT.size + i] = out[i] as number;
+  else solveOne(span, goods.profiles, count, scratch, GOODS.rear, out, RESULT.size);
+  return true;
+}
+
+/** Goods in the middle of the pair, as most are, load its two beams alike. */
+function allInTheMiddle(share: Float64Array, start: number, end: number): boolean {
+  for (let i = start; i < end; i++) if (share[i] !== 0.5) return false;
   return true;
 }
 

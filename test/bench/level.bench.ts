@@ -141,6 +141,7 @@ for (const count of [3, 12, 40]) {
   const out = new Float64Array(2 * RESULT.size);
   const stations = stationSolver(1001);
   const results = noResults();
+  const inTheMiddle = { ...placed, share: placed.share.map(() => 0.5) };
 
   let exact = 0;
   let byStations = 0;
@@ -176,9 +177,13 @@ for (const count of [3, 12, 40]) {
     });
   }
 
-  const [check, bare, spread, dense, general] = timedInTurns(levels, [
+  const [check, middle, bare, spread, dense, general] = timedInTurns(levels, [
     (level) => {
       solvePinnedPair(level.span, placed, level.start, level.end, scratch, out);
+      sink += out[RESULT.bending] as number;
+    },
+    (level) => {
+      solvePinnedPair(level.span, inTheMiddle, level.start, level.end, scratch, out);
       sink += out[RESULT.bending] as number;
     },
     (level) => {
@@ -199,12 +204,13 @@ for (const count of [3, 12, 40]) {
     (level) => {
       for (const load of [level.front, level.rear]) sink += equivalentLoads(solveBeam(pinned(level.span), load), 1).bending;
     },
-  ]) as [number, number, number, number, number];
+  ]) as [number, number, number, number, number, number];
   const ratio = (time: number): string => `${time.toFixed(2)} (${(time / check).toFixed(time < check * 10 ? 2 : 0)}×)`;
   console.log(
     [
       String(count).padEnd(10),
       check.toFixed(3).padEnd(11),
+      middle.toFixed(3).padEnd(17),
       `${bare.toFixed(3)} (${(check / bare).toFixed(1)} to 1)`.padEnd(12),
       ratio(spread).padEnd(15),
       ratio(dense).padEnd(19),

@@ -102,15 +102,16 @@ const level = fc
       maxLength: 9,
     }),
     lastGap: fc.integer({ min: 0, max: 3 }),
+    inTheMiddle: fc.boolean(),
   })
-  .map(({ span, goods, lastGap }) => {
+  .map(({ span, goods, lastGap, inTheMiddle }) => {
     const parts = goods.reduce((sum, { width, gap }) => sum + width + gap, lastGap);
     let edge = 0;
     const standing = goods.map(({ shape: one, width, gap, share }, i): Standing => {
       const at = ((edge + gap) * span) / parts;
       edge += gap + width;
       const to = i === goods.length - 1 && lastGap === 0 ? span : (edge * span) / parts;
-      return { load: scaled(one, to - at), width: to - at, at, share };
+      return { load: scaled(one, to - at), width: to - at, at, share: inTheMiddle ? 0.5 : share };
     });
     return { span, goods: standing };
   });
