@@ -27,6 +27,7 @@ import {
 import { refusal, type Refused } from './refusal';
 import { Saving, type SavedState } from './saving.svelte';
 import { completed, existing, firstOf, NOTHING, type Selection } from './selection';
+import { Speaker } from './speaker.svelte';
 import { amend, record, redo, startHistory, undo, type UndoHistory } from './undo-history';
 
 export type { Target } from './places';
@@ -64,8 +65,6 @@ export class OpenSite {
   task = $state.raw<Task | null>(null);
   /** The form that was last asked for, to be given the focus. */
   asked = $state.raw<Task | null>(null);
-  /** What the status region says. */
-  said = $state('');
   viewUnits = $state<UnitSystem | null>(null);
   locale = $state('en-GB');
   /** What was last put on a level, to be offered first. */
@@ -79,11 +78,11 @@ export class OpenSite {
   #history = $state.raw<UndoHistory<Site>>() as UndoHistory<Site>;
   /** A change that is shown and checked but not made yet, while something is dragged or carried. */
   #trial = $state.raw<Site | null>(null);
+  #speaker = new Speaker();
   #wanted = $state.raw<Selection>(NOTHING);
   /** Where one was before, for going back. */
   #trail = $state.raw<readonly Selection[]>([]);
   #lastMerge: { key: string; at: number } | null = null;
-  #toSay: ToSay | null = null;
   #onTask: (task: Task) => void;
 
   /** The site as it is shown: with the trial move, where one is going on. */
@@ -112,7 +111,7 @@ export class OpenSite {
     this.locale = options.locale ?? 'en-GB';
     this.today = options.today ?? todayHere;
     this.#onTask = options.onTask ?? (() => undefined);
-    this.findings = new Findings(options.makeWorker ?? null, this.today, (audit) => this.#audited(audit));
+    this.findings = new Findings(options.makeWorker ?? null, this.today, (audit) => this.#speaker.audited(audit));
     this.saving = new Saving({
       host: options.host,
       id: options.id,
@@ -184,10 +183,12 @@ export class OpenSite {
     this.say(`${run.name}, ${nameOfPlace(bay, level)}.${verdict}`);
   };
 
-  say = (text: string): void => {
-    // The same words twice are said twice only if the text differs.
-    this.said = text === this.said ? `${text}\u00a0` : text;
-  };
+  say = (text: string): void => this.#speaker.say(text);
+
+  /** What the status region says. */
+  get said(): string {
+    return this.#speaker.said;
+  }
 
   // ------------------------------------------------------------ changing
 
@@ -340,6 +341,7 @@ export class OpenSite {
 
   close = (): void => {
     this.saving.close();
+    this.#speaker.close();
     this.findings.close();
   };
 
@@ -352,39 +354,12 @@ export class OpenSite {
     this.findings.follow(this.#trial ?? this.#history.value);
   }
 
-  #audited(audit: RunAudit): void {
-    const toSay = this.#toSay;
-    if (toSay?.runId === audit.runId) this.#sayNow(toSay);
-  }
-
   /** Says what was done here together with the verdicts it led to, as soon as they are known. */
   sayDone = (text: string): void => {
     const { runId, bayId, levelId } = this.selection;
     if (runId === null || bayId === null) this.say(text);
-    else this.#sayWithVerdict({ runId, bayId, levelId, text });
+    else this.#speaker.sayDone({ runId, bayId, levelId }, text, this.auditing ? null : (this.audits.get(runId) ?? null));
   };
-
-  #sayWithVerdict(toSay: ToSay): void {
-    if (this.auditing) this.#toSay = toSay;
-    else this.#sayNow(toSay);
-  }
-
-  #sayNow({ runId, bayId, levelId, text }: ToSay): void {
-    this.#toSay = null;
-    const bay = this.audits.get(runId)?.bays.find((one) => one.bayId === bayId);
-    const level = bay?.levels.find((one) => one.levelId === levelId);
-    const words = [text];
-    if (level) words.push(`Level: ${VERDICT_WORDS[level.verdict].word.toLowerCase()}.`);
-    if (bay) words.push(`Bay: ${VERDICT_WORDS[bay.verdict].word.toLowerCase()}.`);
-    this.say(words.join(' '));
-  }
-}
-
-interface ToSay {
-  readonly runId: Id;
-  readonly bayId: Id;
-  readonly levelId: Id | null;
-  readonly text: string;
 }
 
 export const [useOpenSite, setOpenSite, hasOpenSite] = createContext<OpenSite>();
