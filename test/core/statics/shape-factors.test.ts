@@ -187,3 +187,18 @@ test.each(rows.map((row) => [row.name, row] as const))('%s', (_, { span, load, f
   const count = (printed[0] ?? '').length - 2;
   expect([...new Set([from, to])].map((x) => digits(x / span, count))).toEqual(printed);
 });
+
+test.each([
+  [0, '2.000'],
+  [0.1, '2.036'],
+  [0.2, '2.077'],
+  [0.3, '2.125'],
+  [0.4, '2.182'],
+  [1, '3.000'],
+])('sagging of a central point load over that of the same uniform load, at a fixity of %d of both ends: %s', (fixity, ratio) => {
+  const span = 2700;
+  const rigidity = 2e11;
+  const end = { kind: 'sprung', stiffness: (2 * rigidity * fixity) / (span * (1 - fixity)) } as const;
+  const sagging = (load: BeamLoad): number => solveBeam({ span, rigidity, left: end, right: end }, load).sagging.moment;
+  expect((sagging(points([span / 2, span])) / sagging(lines([0, span, 1, 1]))).toFixed(3)).toBe(ratio);
+});
