@@ -40,7 +40,12 @@ test('the demo opens from the list with a verdict on every bay, and a reload fin
     await entry.click();
     await page.locator('[data-bay]').first().waitFor();
     await checked(page);
-    expect(await page.getByText(/^All changes saved/).first().isVisible()).toBe(true);
+    expect(
+      await page
+        .getByText(/^All changes saved/)
+        .first()
+        .isVisible(),
+    ).toBe(true);
   }));
 
 test('the cautions stand under every screen', () =>

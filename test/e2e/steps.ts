@@ -62,7 +62,10 @@ export async function selectGoods(page: Page, placementId: string): Promise<void
 /** Saves by the key and waits for the word that says so. */
 export async function save(page: Page): Promise<void> {
   await page.keyboard.press('Control+S');
-  await page.getByText(/^All changes saved/).first().waitFor();
+  await page
+    .getByText(/^All changes saved/)
+    .first()
+    .waitFor();
 }
 
 /** Types a value into a field as a user does, and leaves the field. */
@@ -76,6 +79,9 @@ export async function command(page: Page, name: string): Promise<void> {
   await page.keyboard.press('Control+K');
   const dialog = page.getByRole('dialog', { name: 'All commands' });
   await dialog.getByRole('searchbox').fill(name);
-  await dialog.getByRole('button', { name }).first().click();
+  await dialog
+    .getByRole('button', { name: new RegExp(`^${name.replaceAll(/[.()…]/g, '.')}`) })
+    .first()
+    .click();
   await dialog.waitFor({ state: 'detached' });
 }
