@@ -7,9 +7,9 @@
 import { existsSync, mkdirSync, readFileSync, renameSync } from 'node:fs';
 import { join } from 'node:path';
 import type { Preferences } from '../src-core/host';
-import { isPreference } from '../src-core/host-wire';
+import { argumentFault, isPreference } from '../src-core/host-wire';
 import { stampOf } from './file-names';
-import { troubleOf } from './trouble';
+import { HostError, troubleOf } from './trouble';
 
 export interface SettingsFile {
   get(key: string): unknown;
@@ -71,6 +71,8 @@ export class Settings {
   }
 
   savePreferences(change: Partial<Preferences>): Preferences {
+    if (argumentFault('savePreferences', [change]) !== null)
+      throw new HostError('bad-request', 'The preferences were not saved: one of them cannot be so.');
     this.set(change);
     return this.preferences();
   }
