@@ -2,6 +2,8 @@
 import { resolveRules } from '../src-core/checks/rule-sets';
 import { addEntry, evenlySpace, mirrorPlacement, placeGoods, removePlacements } from '../src-core/site/edits';
 import type { Bay, Id, Level, Placement, Site, UnitLoad } from '../src-core/site/site';
+import { formatQuantity } from '../src-core/units/format';
+import { lengthOf } from '../src-core/units/quantity';
 import { gapsAt } from './drawing/gaps';
 import { catchingPlaces, overlaps } from './drawing/snap';
 import { newId } from './ids';
@@ -54,7 +56,9 @@ export function putGoods(open: OpenSite, unitLoad: UnitLoad, isNew: boolean): Re
   const at = freePlace(open.site, stand, unitLoad.widthMm);
   const place = nameOfPlace(stand.bay, stand.level);
   if (at === null)
-    return refusal(`There is no free place ${unitLoad.widthMm} mm wide on ${place}. Make room there, or choose another level.`);
+    return refusal(
+      `There is no free place ${formatQuantity(lengthOf(unitLoad.widthMm), open.reading)} wide on ${place}. Make room there, or choose another level.`,
+    );
   const id = newId();
   const refused = open.edit(`Put ${unitLoad.name} on ${place}`, (site) => {
     const stocked = isNew ? addEntry(site, 'unitLoads', unitLoad) : site;
@@ -139,7 +143,8 @@ function addCopies(open: OpenSite, copies: CopiedGoods, bayId: Id, levelId: Id |
   const stand = standOf(open.site, bayId, levelId);
   if (stand === null) return;
   const place = nameOfPlace(stand.bay, stand.level);
-  if (ids.length > 0) open.select({ placementIds: ids });
+  if (ids.length === 0) return open.say(`There is no free place for that on ${place}.`);
+  open.select({ placementIds: ids });
   const left = copies.length - ids.length;
   open.sayDone(
     `${countOf(ids.length, 'unit load')} put on ${place}.${left > 0 ? ` ${countOf(left, 'unit load')} found no free place there.` : ''}`,

@@ -1,4 +1,6 @@
 /** Moving what is selected by steps: along the level, to the level above or below, between bays. */
+import { formatQuantity } from '../src-core/units/format';
+import { lengthOf } from '../src-core/units/quantity';
 import { movePlacement } from '../src-core/site/edits';
 import type { Id, Level } from '../src-core/site/site';
 import type { OpenSite } from './open-site.svelte';
@@ -25,7 +27,9 @@ export function nudge(open: OpenSite, byMm: number): void {
     `nudge ${ids.join(' ')}`,
   );
   open.select({ placementIds: ids });
-  open.say(`${ids.length} unit loads moved ${byMm > 0 ? 'right' : 'left'} by ${Math.abs(byMm)} mm.`);
+  open.sayDone(
+    `${ids.length} unit loads moved ${byMm > 0 ? 'right' : 'left'} by ${formatQuantity(lengthOf(Math.abs(byMm)), open.reading)}.`,
+  );
 }
 
 /** To the next level up (+1) or down (−1), at the same place along it; below the lowest is the floor. */
@@ -73,7 +77,7 @@ function tryAt(open: OpenSite, place: PlacementPlace, target: Target): void {
   // The drawing follows what is carried, into another bay as well.
   open.select({ bayId: there.bay.id, levelId: there.level?.id ?? null });
   const number = there.level === null ? 'floor' : `level ${there.bay.levels.indexOf(there.level) + 1}`;
-  open.say(`Bay ${there.bay.name}, ${number}, ${there.placement.atMm} mm.`);
+  open.sayDone(`Bay ${there.bay.name}, ${number}, ${formatQuantity(lengthOf(there.placement.atMm), open.reading)}.`);
 }
 
 /** The carried unit load, else what is selected, where each stands now. */

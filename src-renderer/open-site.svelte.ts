@@ -180,7 +180,7 @@ export class OpenSite {
     if (run === null || bay === null) return;
     const audit = level === null ? this.bayAudit : this.levelAudit;
     const verdict = audit === null ? '' : ` ${VERDICT_WORDS[audit.verdict].word}.`;
-    this.say(`${run.name}, ${nameOfPlace(bay, level)}.${verdict}`);
+    this.say(`Run ${run.name}, ${nameOfPlace(bay, level)}.${verdict}`);
   };
 
   say = (text: string): void => this.#speaker.say(text);
