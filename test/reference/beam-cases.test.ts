@@ -1,6 +1,7 @@
 /**
  * Sources: beam-cases-open.json names its own for each case (SymPy, SciPy, CalculiX; published formulas).
  * beam-cases-hard.json: exact rational integration in Python, roots with mpmath at 80 digits.
+ * beam-cases-random.json: by a second script of the same kind, written apart, with mpmath at 60 digits.
  */
 import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
@@ -13,7 +14,7 @@ import { reportCases } from './report-cases';
 const file = (name: string): string => join(import.meta.dirname, name);
 const read = (name: string): CaseFile => readCases(readFileSync(file(name), 'utf8'));
 
-describe.each(['beam-cases-open.json', 'beam-cases-hard.json'])('%s', (name) => {
+describe.each(['beam-cases-open.json', 'beam-cases-hard.json', 'beam-cases-random.json'])('%s', (name) => {
   const { cases, tolerances } = read(name);
   test.each(cases.map((one) => [one.id, one] as const))('%s is within the tolerances of its file', (_, one) => {
     const { comparisons, unknown, refused } = compareCase(one, tolerances);
