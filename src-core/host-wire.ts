@@ -95,7 +95,7 @@ const ARGUMENTS: Readonly<Record<HostMethod, readonly Check[]>> = {
 };
 export const HOST_METHODS = Object.keys(ARGUMENTS) as readonly HostMethod[];
 
-export const isHostMethod = (name: unknown): name is HostMethod => typeof name === 'string' && Object.hasOwn(ARGUMENTS, name);
+const isHostMethod = (name: unknown): name is HostMethod => typeof name === 'string' && Object.hasOwn(ARGUMENTS, name);
 
 /** What is wrong with a call's arguments, as a sentence; null if nothing is. */
 export function argumentFault(method: HostMethod, given: readonly unknown[]): string | null {

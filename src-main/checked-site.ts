@@ -14,7 +14,7 @@ export const sha256 = (content: string | Uint8Array): string => createHash('sha2
 /** Changes whenever a byte of the file does. */
 export const revisionOf = (bytes: Uint8Array): string => sha256(bytes);
 
-export interface CheckedSite {
+interface CheckedSite {
   readonly site: Site;
   readonly text: string;
   readonly savedAt: string;

@@ -6,8 +6,8 @@ import { systemCode, type FsPort } from './fs-port';
 import { HostError } from './trouble';
 import { keepAs } from './whole-file';
 
-export const KEPT_LATEST = 10;
-export const KEPT_DAYS = 30;
+const KEPT_LATEST = 10;
+const KEPT_DAYS = 30;
 const DAY = 24 * 60 * 60 * 1000;
 
 const folderOf = (folders: Folders, id: string): string => join(folders.earlier, checkedId(id));
@@ -55,7 +55,7 @@ export async function keepEarlier(fs: FsPort, folders: Folders, id: string, stat
  * Which of the kept states may go: all but the latest ten and, for thirty days, the last of each day.
  * @param kept from the latest to the oldest
  */
-export function outlived(kept: readonly GenerationName[], now: Date): readonly number[] {
+function outlived(kept: readonly GenerationName[], now: Date): readonly number[] {
   const days = new Set<string>();
   return kept.flatMap(({ savedAt }, i) => {
     const day = savedAt.slice(0, 10);

@@ -79,7 +79,7 @@ export function makerOfTemp(name: string): Maker | null {
 
 /** `20261201T083000123Z`, for names; the same backwards. */
 export const stampOf = (iso: string): string => iso.replace(/[-:.]/g, '');
-export function isoOf(stamp: string): string {
+function isoOf(stamp: string): string {
   return stamp.replace(/^(\d{4})(\d\d)(\d\d)T(\d\d)(\d\d)(\d\d)(\d{3})Z$/, '$1-$2-$3T$4:$5:$6.$7Z');
 }
 

@@ -17,7 +17,7 @@ export interface OpenFile {
   close(): Promise<void>;
 }
 
-export interface FileFacts {
+interface FileFacts {
   readonly bytes: number;
   /** Time of the last change, ms. */
   readonly changed: number;

@@ -21,7 +21,7 @@ export interface CarrierOptions {
 }
 
 /** A site of the largest size, its quotation marks escaped. */
-export const CALL_BYTES = 128 * 1024 * 1024;
+const CALL_BYTES = 128 * 1024 * 1024;
 const TAB = /^[0-9a-z-]{1,64}$/;
 
 class Refusal extends Error {

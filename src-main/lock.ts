@@ -16,7 +16,7 @@ export interface LockTimes {
   /** Longest wait for the lock, ms. */
   readonly wait: number;
 }
-export const LOCK_TIMES: LockTimes = { hold: 5_000, abandoned: 12_000, wait: 20_000 };
+const LOCK_TIMES: LockTimes = { hold: 5_000, abandoned: 12_000, wait: 20_000 };
 
 export interface Held {
   /** @throws HostError if the time that others leave to the holder is over */

@@ -20,7 +20,7 @@ export type OpenSettingsFile = (folder: string, name: string) => SettingsFile;
 
 const NAME = 'settings';
 
-export const DEFAULT_PREFERENCES: Preferences = { theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: 'en-GB' };
+const DEFAULT_PREFERENCES: Preferences = { theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: 'en-GB' };
 const KEYS = Object.keys(DEFAULT_PREFERENCES) as readonly (keyof Preferences)[];
 
 export class Settings {

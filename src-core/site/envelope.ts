@@ -9,7 +9,7 @@
 import { isRecord, quote, type Problem } from './fields';
 import { keyFaults } from './json-keys';
 
-export const SITE_FILE_FORMAT = 'tallybeam-site';
+const SITE_FILE_FORMAT = 'tallybeam-site';
 export const SITE_FILE_VERSION = 1;
 /** Three times the file of a site of 10 000 bays with six levels each; more is no site file. */
 export const SITE_FILE_BYTES = 64 * 1024 * 1024;
@@ -22,7 +22,7 @@ export interface Migrations {
   readonly current: number;
   readonly steps: Readonly<Record<number, (site: unknown) => unknown>>;
 }
-export const MIGRATIONS: Migrations = { current: SITE_FILE_VERSION, steps: {} };
+const MIGRATIONS: Migrations = { current: SITE_FILE_VERSION, steps: {} };
 
 export interface SiteFileFacts {
   /** Version of the program that wrote the file. */
