@@ -1,7 +1,7 @@
 /** Whether there can be a window here, and where Electron's own program file is, without ever waiting for long. */
 import { spawn } from 'node:child_process';
 import { once } from 'node:events';
-import { existsSync, readFileSync } from 'node:fs';
+import { existsSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import { dirname, join } from 'node:path';
 
@@ -26,9 +26,9 @@ export interface Search {
 /** Finds the program file, and fetches it where it is not there yet. */
 export async function findElectron({ limit, env, folder = packageFolder() }: Search): Promise<Found> {
   const missing = (why: string): Found => ({ ok: false, why });
-  if (folder === null) return missing('Electron is not installed; "npm ci" installs it');
   const there = programIn(folder, env);
   if (there !== null) return { ok: true, path: there };
+  if (folder === null) return missing('Electron is not installed; "npm ci" installs it');
   if (isSet(env['ELECTRON_SKIP_BINARY_DOWNLOAD']))
     return missing('Electron’s program file is not there and ELECTRON_SKIP_BINARY_DOWNLOAD forbids to fetch it');
   console.log(`Electron’s program file is fetched, once; this is given up after ${Math.round(limit / 1000)} seconds.`);
@@ -47,13 +47,16 @@ function packageFolder(): string | null {
   }
 }
 
-/** Its package writes the path down once all of the program is there. */
-function programIn(folder: string, env: NodeJS.ProcessEnv): string | null {
-  const written = join(folder, 'path.txt');
+/** Where the program file is below its folder. */
+export const programName = (platform: NodeJS.Platform): string =>
+  platform === 'darwin' ? 'Electron.app/Contents/MacOS/Electron' : platform === 'win32' ? 'electron.exe' : 'electron';
+
+function programIn(folder: string | null, env: NodeJS.ProcessEnv): string | null {
   const override = env['ELECTRON_OVERRIDE_DIST_PATH'];
-  const within = existsSync(written) ? readFileSync(written, 'utf8') : override ? 'electron' : null;
-  if (within === null) return null;
-  const path = join(override || join(folder, 'dist'), within);
+  // Its package writes the path down once all of the program is there.
+  const isComplete = override || (folder !== null && existsSync(join(folder, 'path.txt')));
+  if (!isComplete) return null;
+  const path = join(override || join(folder ?? '', 'dist'), programName(process.platform));
   return existsSync(path) ? path : null;
 }
 

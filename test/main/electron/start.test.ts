@@ -1,8 +1,8 @@
 import { existsSync, mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
-import { join } from 'node:path';
+import { dirname, join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
-import { findElectron, windowHindrance } from '../../../src-main/electron-program';
+import { findElectron, programName, windowHindrance } from '../../../src-main/electron-program';
 
 let folder = '';
 beforeEach(() => {
@@ -33,30 +33,43 @@ describe('Electron’s program file', () => {
   const fetcher = (text: string) => writeFileSync(join(folder, 'install.js'), text);
   const putThere = `
     const fs = require('node:fs');
-    fs.mkdirSync(__dirname + '/dist', { recursive: true });
-    fs.writeFileSync(__dirname + '/dist/electron', '');
-    fs.writeFileSync(__dirname + '/path.txt', 'electron');`;
+    const path = require('node:path').join(__dirname, 'dist', ${JSON.stringify(programName(process.platform))});
+    fs.mkdirSync(require('node:path').dirname(path), { recursive: true });
+    fs.writeFileSync(path, '');
+    fs.writeFileSync(__dirname + '/path.txt', '');`;
+  const programBelow = (place: string): string => {
+    const path = join(place, programName(process.platform));
+    mkdirSync(dirname(path), { recursive: true });
+    writeFileSync(path, '');
+    return path;
+  };
   const find = (env: NodeJS.ProcessEnv = {}, limit = 20_000) => findElectron({ limit, env: { PATH: process.env['PATH'], ...env }, folder });
 
   test('is taken where it is there, and nothing is fetched', async () => {
     fetcher('require("node:fs").writeFileSync(__dirname + "/fetched", "")');
-    mkdirSync(join(folder, 'dist'));
-    writeFileSync(join(folder, 'dist', 'electron'), '');
-    writeFileSync(join(folder, 'path.txt'), 'electron');
-    expect(await find()).toEqual({ ok: true, path: join(folder, 'dist', 'electron') });
+    const path = programBelow(join(folder, 'dist'));
+    writeFileSync(join(folder, 'path.txt'), '');
+    expect(await find()).toEqual({ ok: true, path });
     expect(existsSync(join(folder, 'fetched'))).toBe(false);
   });
 
   test('is fetched where it is not there', async () => {
     fetcher(putThere);
-    expect(await find()).toEqual({ ok: true, path: join(folder, 'dist', 'electron') });
+    expect(await find()).toEqual({ ok: true, path: join(folder, 'dist', programName(process.platform)) });
+  });
+
+  test('of which only a part has arrived is fetched again', async () => {
+    fetcher(putThere);
+    programBelow(join(folder, 'dist'));
+    expect(await find({ ELECTRON_SKIP_BINARY_DOWNLOAD: '1' })).toMatchObject({ ok: false });
+    expect(await find()).toMatchObject({ ok: true });
+    expect(existsSync(join(folder, 'path.txt'))).toBe(true);
   });
 
   test('is taken from the folder that the user names', async () => {
     const named = join(folder, 'named');
-    mkdirSync(named);
-    writeFileSync(join(named, 'electron'), '');
-    expect(await find({ ELECTRON_OVERRIDE_DIST_PATH: named })).toEqual({ ok: true, path: join(named, 'electron') });
+    const path = programBelow(named);
+    expect(await find({ ELECTRON_OVERRIDE_DIST_PATH: named })).toEqual({ ok: true, path });
   });
 
   test('is not fetched where the user forbids it', async () => {
