@@ -4,6 +4,6 @@ import { chromiumPath } from './chromium';
 
 export async function setup(): Promise<void> {
   process.env['CHROMIUM_PATH'] = chromiumPath();
-  const builder = await createBuilder({ configFile: new URL('../../vite.config.ts', import.meta.url).pathname, logLevel: 'warn' });
+  const builder = await createBuilder({ configFile: new URL('../../vite.config.ts', import.meta.url).pathname, logLevel: 'error' });
   await builder.buildApp();
 }
