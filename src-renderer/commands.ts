@@ -179,6 +179,9 @@ export const COMMANDS: readonly Command[] = [
   screen('layout', 'Layout of runs and bays'),
   screen('libraries', 'Libraries: goods, notices, ratings', ['Mod+L']),
   screen('rules', 'Rules'),
+  screen('visits', 'Visits: rounds, damage, open actions'),
+  screen('records', 'Records: frozen checks and visits'),
+  screen('paper', 'Paper: print and PDF…', ['Mod+P']),
 
   // ------------------------------------------------------------ view
   command(

@@ -30,6 +30,8 @@ export interface Freeze {
   readonly person: string;
   readonly bayIds: readonly Id[];
   readonly figures: unknown;
+  /** The paper that is made of it, as data. */
+  readonly paper: unknown;
 }
 
 export class Rounds {
@@ -49,7 +51,7 @@ export class Rounds {
 
   /** What is not on the disk yet, by the id under which it is saved. */
   #waiting = new SvelteMap<string, () => Promise<void>>();
-  #revisions = new Map<string, string>();
+  #revisions: Record<string, string> = {};
   #queue: Promise<void> = Promise.resolve();
   #timer: ReturnType<typeof setTimeout> | null = null;
 
@@ -82,13 +84,13 @@ export class Rounds {
       const unreadable: { name: string; problem: string }[] = [];
       const visits: Visit[] = [];
       for (const { id, text, revision, problem } of kept) {
-        this.#revisions.set(id, revision);
+        this.#revisions[id] = revision;
         const reading = problem === null ? readVisit(JSON.parse(text)) : null;
         if (reading?.ok) visits.push(reading.document);
         else unreadable.push({ name: `Visit ${id}`, problem: problem ?? '' });
       }
       if (book !== null) {
-        this.#revisions.set(FOLLOW_UP, book.revision);
+        this.#revisions[FOLLOW_UP] = book.revision;
         const reading = book.problem === null ? readFollowUp(JSON.parse(book.text)) : null;
         if (reading?.ok) this.followUp = reading.document;
         else unreadable.push({ name: 'The follow-up', problem: book.problem ?? '' });
@@ -123,10 +125,10 @@ export class Rounds {
   editFollowUp = (change: (book: FollowUp) => FollowUp): void => {
     this.followUp = change(this.followUp);
     this.#keep(FOLLOW_UP, async () => {
-      const baseRevision = this.#revisions.get(FOLLOW_UP) ?? null;
+      const baseRevision = this.#revisions[FOLLOW_UP] ?? null;
       const body = writeFollowUp(this.followUp);
       const { revision } = await this.host.saveFollowUp({ siteId: this.open.id, body, baseRevision });
-      this.#revisions.set(FOLLOW_UP, revision);
+      this.#revisions[FOLLOW_UP] = revision;
     });
   };
 
@@ -148,7 +150,7 @@ export class Rounds {
    * Seals the figures with the site as it stands and as it is on the disk.
    * @returns the record; null where it was not kept, and then why is said
    */
-  freeze = async ({ kind, title, person, bayIds, figures }: Freeze): Promise<FrozenRecord | null> => {
+  freeze = async ({ kind, title, person, bayIds, figures, paper }: Freeze): Promise<FrozenRecord | null> => {
     try {
       const { site } = this.open;
       const record = await this.host.appendRecord({
@@ -163,7 +165,7 @@ export class Rounds {
           ruleSet: RULE_SET_TITLES[site.rules.set],
           bayIds,
         },
-        contents: contentsText(site, bayIds, figures),
+        contents: contentsText(site, bayIds, figures, paper),
       });
       this.failure = null;
       await this.listRecords();
@@ -201,9 +203,9 @@ export class Rounds {
     this.#keep(id, async () => {
       const visit = this.visits.find((one) => one.id === id);
       if (visit === undefined) return;
-      const baseRevision = this.#revisions.get(id) ?? null;
+      const baseRevision = this.#revisions[id] ?? null;
       const { revision } = await this.host.saveVisit({ siteId: this.open.id, visitId: id, body: writeVisit(visit), baseRevision });
-      this.#revisions.set(id, revision);
+      this.#revisions[id] = revision;
     });
   }
 

@@ -1,6 +1,7 @@
 /** The program round the open site: list of sites, which screen and dialog are up, preferences. */
 import { createContext } from 'svelte';
 import type { About, Generation, Host, HostFailure, Preferences, RecoveredEdits, SiteEntry } from '../src-core/host';
+import type { PaperKind } from '../src-core/paper/paper';
 import { newSite } from '../src-core/site/new-site';
 import type { Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
@@ -11,7 +12,7 @@ import { newId } from './ids';
 import { OpenSite } from './open-site.svelte';
 import { readBody, readSiteFile, type FileReading } from './site-text';
 
-export type Screen = 'rack' | 'run' | 'layout' | 'libraries' | 'rules' | 'history' | 'help';
+export type Screen = 'rack' | 'run' | 'layout' | 'libraries' | 'rules' | 'visits' | 'paper' | 'records' | 'history' | 'help';
 
 export type Dialog =
   | { readonly kind: 'commands' | 'find' | 'move-to' | 'new-run' | 'new-site' | 'preferences' | 'stale' | 'leave' | 'fill-run' }
@@ -25,6 +26,8 @@ export class Shell {
   open = $state.raw<OpenSite | null>(null);
   screen = $state<Screen>('rack');
   dialog = $state.raw<Dialog | null>(null);
+  /** Which paper the paper screen shows. */
+  paperKind = $state<PaperKind>('bay-sheet');
   sites = $state.raw<readonly SiteEntry[] | null>(null);
   about = $state.raw<About | null>(null);
   preferences = $state.raw<Preferences | null>(null);
@@ -228,6 +231,11 @@ export class Shell {
   show = (screen: Screen): void => {
     this.dialog = null;
     this.screen = screen;
+  };
+
+  showPaper = (kind: PaperKind): void => {
+    this.paperKind = kind;
+    this.show('paper');
   };
 
   ask = (dialog: Dialog): void => {

@@ -1,4 +1,5 @@
 /** What a record holds: the inputs and the figures, as JSON text; how two compare, and when one is void. */
+import { isRecord } from '../site/fields';
 import type { Id, Site } from '../site/site';
 import { differences, type Difference } from './differences';
 import { extractOf } from './extract';
@@ -7,22 +8,24 @@ export interface RecordContents {
   /** The part of the site that it is about, as it stood. */
   readonly site: Site;
   readonly bayIds: readonly Id[];
-  /** What was found: an audit, a visit with its classes and actions, or a document. Plain data. */
+  /** What was found: an audit's verdicts and figures, or a visit with its actions. Plain data. */
   readonly figures: unknown;
+  /** The paper that was made of it, as data; null where there was none. */
+  readonly paper: unknown;
 }
 
 /** @throws RangeError if the site has none of the bays */
-export const contentsText = (site: Site, bayIds: readonly Id[], figures: unknown): string =>
-  JSON.stringify({ site: extractOf(site, bayIds), bayIds, figures } satisfies RecordContents);
+export const contentsText = (site: Site, bayIds: readonly Id[], figures: unknown, paper: unknown = null): string =>
+  JSON.stringify({ site: extractOf(site, bayIds), bayIds, figures, paper } satisfies RecordContents);
 
 /**
  * @throws RangeError if the text is not the contents of a record; one that verified always is
  */
 export function readContents(text: string): RecordContents {
   const json: unknown = JSON.parse(text);
-  if (typeof json !== 'object' || json === null || !('site' in json) || !('bayIds' in json) || !('figures' in json))
-    throw new RangeError('the text holds no site, bays and figures of a record');
-  return json as RecordContents;
+  if (!isRecord(json) || !['site', 'bayIds', 'figures', 'paper'].every((key) => key in json))
+    throw new RangeError('the text holds no site, bays, figures and paper of a record');
+  return json as unknown as RecordContents;
 }
 
 /** What differs from an earlier to a later record: first of the inputs, then of the figures. */

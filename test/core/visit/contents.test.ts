@@ -34,7 +34,12 @@ test('an extract is a site of its own: the bay, its neighbours and what they use
 const record = (of = site) => readContents(contentsText(of, ['A-bay-4'], { verdict: 'within', totalKg: 1860 }));
 
 test('contents come back from their text as they were', () => {
-  expect(record()).toEqual({ site: extractOf(site, ['A-bay-4']), bayIds: ['A-bay-4'], figures: { verdict: 'within', totalKg: 1860 } });
+  expect(record()).toEqual({
+    site: extractOf(site, ['A-bay-4']),
+    bayIds: ['A-bay-4'],
+    figures: { verdict: 'within', totalKg: 1860 },
+    paper: null,
+  });
   expect(() => readContents('{"site":{}}')).toThrow(RangeError);
 });
 
