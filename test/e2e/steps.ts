@@ -68,6 +68,13 @@ export async function save(page: Page): Promise<void> {
     .waitFor();
 }
 
+/** Text with its narrow and unbreaking spaces as ordinary ones. */
+export const plain = (text: string): string => text.replaceAll(/[\u00a0\u202f]/g, ' ');
+
+/** A field to type in, by the beginning of its label. */
+export const field = (within: Page | Locator, label: string): Locator =>
+  within.getByRole('textbox', { name: new RegExp(`^${label}`) }).first();
+
 /** Types a value into a field as a user does, and leaves the field. */
 export async function type(field: Locator, text: string): Promise<void> {
   await field.fill(text);
