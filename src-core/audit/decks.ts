@@ -16,32 +16,29 @@ export function deckFindings(context: SiteContext, bay: BayWork, work: LevelWork
   const { deck } = level;
   const { rules } = context;
   const name = levelName(index);
+  if (deck.kind !== 'mesh' && deck.kind !== 'panels') return undecked(context, work);
   const found: Finding[] = [];
-  const decked = deck.kind === 'mesh' || deck.kind === 'panels';
   const rated = ratingOf(bay, work);
   const { deeper, missing } = frameDepths(bay);
   if (asked(context, 'deck-panel'))
     found.push(
-      ...(decked
-        ? deckPanel({
-            place,
-            level: name,
-            panels: { count: deck.count, ratedKg: deck.panelKg, from: sourceWords(deck.source) },
-            rated,
-            clearEntry: bay.bay.clearEntryMm,
-            depth: deeper,
-            depthMissing: missing,
-            goods: goods.map(onDeck),
-            rules,
-          })
-        : [finding({ check: 'deck-panel', place, verdict: 'within', says: () => say`${name} has no deck panels.` })]),
+      ...deckPanel({
+        place,
+        level: name,
+        panels: { count: deck.count, ratedKg: deck.panelKg, from: sourceWords(deck.source) },
+        rated,
+        clearEntry: bay.bay.clearEntryMm,
+        depth: deeper,
+        depthMissing: missing,
+        goods: goods.map(onDeck),
+        rules,
+      }),
     );
   if (asked(context, 'area-load'))
     found.push(
       areaLoad({
         place,
         level: name,
-        decked,
         width: bay.bay.clearEntryMm,
         depth: deeper,
         depthMissing: missing,
@@ -55,6 +52,12 @@ export function deckFindings(context: SiteContext, bay: BayWork, work: LevelWork
       }),
     );
   return found;
+}
+
+function undecked(context: SiteContext, { place, index }: LevelWork): readonly Finding[] {
+  const within = (check: 'deck-panel' | 'area-load'): Finding =>
+    finding({ check, place, verdict: 'within', says: () => say`${levelName(index)} has no deck or shelf panels.` });
+  return (['deck-panel', 'area-load'] as const).filter((check) => asked(context, check)).map(within);
 }
 
 function onDeck(one: StandingLoad): OnDeck {

@@ -1,7 +1,7 @@
 /** A level's goods brought down through the lines of their pallets: solved again for both spreads. */
 import type { Finding } from '../checks/finding';
 import type { PairInput } from '../checks/pair';
-import { runners, runnerShares, type Spread } from '../checks/runners';
+import { runners, runnerShares, type OnLines, type Spread } from '../checks/runners';
 import { pairLoads, type StandingGoods } from '../goods/pair';
 import { solveBeam } from '../statics/beam';
 import type { BeamLoad } from '../statics/load';
@@ -34,7 +34,12 @@ export function runnersFinding(
     const pair = pairOf({ ...effects, loads, front, rear });
     return { ...pair, goods: () => pair.goods().map((one, i) => ({ ...one, centre: centreOf(goods[i], one.centre) })) };
   };
-  return runners({ stated, onRunners: { flexible: onRunners('flexible'), rigid: onRunners('rigid') }, counts });
+  return runners({
+    stated,
+    onLines: work.goods.filter(hasLines).map(lined),
+    onRunners: () => ({ flexible: onRunners('flexible'), rigid: onRunners('rigid') }),
+    counts,
+  });
 }
 
 const hasLines = (one: StandingLoad): boolean =>
@@ -42,6 +47,20 @@ const hasLines = (one: StandingLoad): boolean =>
   one.goods.pallet.runners.length > 0 &&
   one.goods.unitLoad.bearing.kind === 'even' &&
   boardsOf(one) === 'front-to-rear';
+
+/** Lines that stand the same from both edges carry even goods at their middle. */
+function lined(one: StandingLoad): OnLines {
+  const { unitLoad, pallet, grossKg } = one.goods;
+  const along = palletSides(one)?.along ?? unitLoad.widthMm;
+  const centres = (pallet?.runners ?? []).map(({ centreMm }) => centreMm).sort((a, b) => a - b);
+  const last = centres.length - 1;
+  return {
+    massKg: grossKg ?? 0,
+    width: unitLoad.widthMm,
+    frontShare: one.frontShare ?? 0.5,
+    centred: centres.every((centre, i) => Math.abs(centre + (centres[last - i] as number) - along) < 1e-6),
+  };
+}
 
 function standing(one: StandingLoad, offset: number, span: number, spread: Spread): StandingGoods {
   const { unitLoad, pieces } = one.goods;

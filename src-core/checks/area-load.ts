@@ -21,7 +21,6 @@ export interface AreaGoods {
 export interface AreaLoadInput {
   readonly place: Place;
   readonly level: string;
-  readonly decked: boolean;
   /** Of the shelf: between the uprights, and the depth of the frame; null = not known. */
   readonly width: number;
   readonly depth: number | null;
@@ -38,9 +37,8 @@ export interface AreaLoadInput {
  * Source: facts M-09, common practice.
  */
 export function areaLoad(input: AreaLoadInput): Finding {
-  const { place, level, decked, goods, width, depth, depthMissing, rated, rules } = input;
+  const { place, level, goods, width, depth, depthMissing, rated, rules } = input;
   const within = (says: () => Finding['says']): Finding => finding({ check: 'area-load', place, verdict: 'within', says });
-  if (!decked) return within(() => say`${level} has no deck, so nothing loads it by area.`);
   if (goods.length === 0) return within(() => say`No goods stand on ${inside(level)}.`);
   const missing = distinctMissing([
     ...goods.flatMap((one) => (one.massKg === null ? one.missing : [])),

@@ -37,7 +37,7 @@ export interface ClearanceAboveInput {
 
 /** One finding for each unit load that stands too high; else one for the tallest. */
 export function clearanceAbove(input: ClearanceAboveInput): readonly Finding[] {
-  const { place, level, goods, beam, handling, height } = input;
+  const { place, level, goods, beam, handling, height, rules } = input;
   const within = (says: () => Finding['says']): readonly Finding[] => [
     finding({ check: 'clearance-above', place, verdict: 'within', says }),
   ];
@@ -51,13 +51,12 @@ export function clearanceAbove(input: ClearanceAboveInput): readonly Finding[] {
     ...(keys === null && !byHand ? [withoutClearances(handling, height)] : []),
   ];
   if (beamHeight === null || missing.length > 0) return [notAssessable('clearance-above', place, missing)];
-  const judged = goods.map((one) => judge(input, one, beam, beamHeight, keys?.above ?? null));
-  const failing = judged.filter(({ verdict }) => verdict !== 'within');
-  if (failing.length > 0) return failing;
-  return judged.reduce<readonly Finding[]>(
-    (most, one) => (most[0] === undefined || (one.allowed?.value ?? 0) < (most[0].allowed?.value ?? 0) ? [one] : most),
-    [],
-  );
+  const rule = keys?.above ?? null;
+  const most = beam.top - beamHeight - height - beam.sag - (rule === null ? 0 : rules.value[rule]);
+  const tall = goods.filter((one) => one.height > most + TOUCH);
+  if (tall.length > 0) return tall.map((one) => judge(input, one, beam, beamHeight, rule));
+  const tallest = goods.reduce((highest, one) => (one.height > highest.height ? one : highest));
+  return [judge(input, tallest, beam, beamHeight, rule)];
 }
 
 /** @param rule null for goods put away by hand, which only have to fit */

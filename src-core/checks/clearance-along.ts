@@ -59,14 +59,12 @@ export function clearanceAlong(input: ClearanceAlongInput): readonly Finding[] {
     return [within(place, say`Goods on ${inside(level)} are put away by hand, which needs no truck’s clearance.`)];
   const keys = clearanceKeys(handling.loadedBy, height);
   if (keys === null) return [notAssessable('clearance-along', place, [withoutClearances(handling, height)])];
+  const { value } = input.rules;
   const gaps = gapsOf(input, keys);
-  const judged = gaps.map((gap) => judge(input, keys, gap));
-  const over = judged.filter(({ verdict }) => verdict === 'over');
-  if (over.length > 0) return over;
-  return judged.reduce<readonly Finding[]>(
-    (most, one) => (most[0] === undefined || (one.utilisation ?? 0) > (most[0].utilisation ?? 0) ? [one] : most),
-    [],
-  );
+  const over = gaps.filter(({ room, rule }) => room < value[rule] - TOUCH);
+  if (over.length > 0) return over.map((gap) => judge(input, keys, gap));
+  const tightest = gaps.reduce((most, one) => (one.room * value[most.rule] < most.room * value[one.rule] ? one : most));
+  return [judge(input, keys, tightest)];
 }
 
 const within = (place: Place, says: Text): Finding => finding({ check: 'clearance-along', place, verdict: 'within', says: () => says });

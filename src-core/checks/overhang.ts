@@ -42,13 +42,17 @@ export function overhang(input: OverhangInput): readonly Finding[] {
   if (goods.length === 0)
     return [finding({ check: 'overhang', place, verdict: 'within', says: () => say`No goods stand on ${inside(level)}.` })];
   if (frameDepth === null) return [notAssessable('overhang', place, missing)];
-  const judged = goods.map((one) => judge(input, one, frameDepth));
-  const far = judged.filter(({ verdict }) => verdict !== 'within');
-  if (far.length > 0) return far;
-  return judged.reduce<readonly Finding[]>(
-    (most, one) => (most[0] === undefined || (one.demand?.value ?? 0) > (most[0].demand?.value ?? 0) ? [one] : most),
-    [],
-  );
+  const limit = input.rules.value.overhangMost;
+  const most = (one: AcrossBeams) => (one.depth - frameDepth) / 2 + Math.abs(one.towardsFront);
+  const far = input.carried ? [] : goods.filter((one) => most(one) > limit + TOUCH);
+  if (far.length > 0) return far.map((one) => judge(input, one, frameDepth));
+  return [
+    judge(
+      input,
+      goods.reduce((furthest, one) => (most(one) > most(furthest) ? one : furthest)),
+      frameDepth,
+    ),
+  ];
 }
 
 function judge({ place, carried, rules }: OverhangInput, goods: AcrossBeams, frameDepth: number): Finding {

@@ -140,7 +140,6 @@ const shelf = (massKg: number | null, width: number, depth: number, kg: number |
   areaLoad({
     place,
     level: 'Level 1',
-    decked: true,
     width: 1800,
     depth: 600,
     depthMissing: [],
