@@ -42,6 +42,8 @@ export interface PageHost extends Host {
 
 /** The two seconds within which an edit is on the disk leave so much to a folder that may not answer, ms. */
 const JOURNAL_LIMITS: TimeLimits = { quick: 500, bytes: 900 };
+/** Longest wait for the sites folder at the start, ms. */
+const READY_WITHIN = 3000;
 const SITES_FOLDER = 'sitesFolder';
 
 /** One store for all pages of this run. */
@@ -65,7 +67,7 @@ export class Machine {
     const chosen = options.sitesFolder ?? options.settings.get(SITES_FOLDER);
     const folder = typeof chosen === 'string' && chosen !== '' ? chosen : own;
     // Only the user's own folder is made: where a chosen one is missing, its drive or share is.
-    if (folder === own || options.sitesFolder !== null) await mkdir(folder, { recursive: true });
+    if (folder === own || options.sitesFolder !== null) await atMost(READY_WITHIN, mkdir(folder, { recursive: true }));
     const machine = new Machine(options, folder);
     await machine.#makeReady();
     return machine;
@@ -164,10 +166,11 @@ export class Machine {
   }
 
   async #makeReady(): Promise<void> {
-    const fs = withTimeLimit(this.#fs, this.#options.limits ?? TIME_LIMITS);
-    await sweep(fs, foldersIn(this.sitesFolder), this.#now());
     await mkdir(join(this.#options.ownFolder, 'journal'), { recursive: true });
-    await this.#putBackLost();
+    const fs = withTimeLimit(this.#fs, this.#options.limits ?? TIME_LIMITS);
+    const ready = sweep(fs, foldersIn(this.sitesFolder), this.#now()).then(() => this.#putBackLost());
+    // A folder that does not answer must not keep the program from coming up and saying so.
+    await atMost(READY_WITHIN, ready);
   }
 
   /** A site whose file is gone while its journal is there is put back as the journal has it. */
@@ -211,4 +214,13 @@ export class Machine {
 function nameIn(body: string): string {
   const reading = readSite(JSON.parse(body));
   return reading.ok ? reading.site.name : 'a site';
+}
+
+/** Waits for the task, but no longer than that; it goes on by itself. */
+async function atMost(limit: number, task: Promise<unknown>): Promise<void> {
+  let timer: NodeJS.Timeout | undefined;
+  const over = new Promise<void>((resolve) => {
+    timer = setTimeout(resolve, limit);
+  });
+  await Promise.race([task, over]).finally(() => clearTimeout(timer));
 }

@@ -3,8 +3,9 @@
  * held only for the moment between comparing the revision and replacing the file.
  */
 import { randomBytes } from 'node:crypto';
+import { basename, dirname, join } from 'node:path';
 import { setTimeout as wait } from 'node:timers/promises';
-import { isAlive, machineTag } from './file-names';
+import { isAlive, machineTag, tempName } from './file-names';
 import { systemCode, type FsPort } from './fs-port';
 import { HostError } from './trouble';
 
@@ -57,34 +58,56 @@ const busy = (why: string): HostError => new HostError('timed-out', `Not done, b
 
 async function acquire(fs: FsPort, path: string, token: string, times: LockTimes): Promise<void> {
   const began = performance.now();
-  let seen = '';
-  let seenSince = began;
-  while (!(await create(fs, path, token))) {
-    const now = performance.now();
-    if (now - began > times.wait) throw busy('another program is saving this site');
-    const text = await contentOf(fs, path);
-    if (text !== seen) {
-      seen = text ?? '';
-      seenSince = now;
+  const owner: Owner = { machine: machineTag, pid: process.pid, token };
+  const text = new TextEncoder().encode(JSON.stringify(owner));
+  const own = join(dirname(path), tempName(basename(path)));
+  try {
+    await write(fs, own, text);
+    let seen = '';
+    let seenSince = began;
+    while (!(await take(fs, own, path, text))) {
+      const now = performance.now();
+      if (now - began > times.wait) throw busy('another program is saving this site');
+      const found = await contentOf(fs, path);
+      if (found !== seen) {
+        seen = found ?? '';
+        seenSince = now;
+      }
+      if (found !== null && (isOver(found) || now - seenSince > times.abandoned)) await breakLock(fs, path, found);
+      else await wait(3 + Math.random() * 12);
     }
-    if (text !== null && (isOver(text) || now - seenSince > times.abandoned)) await breakLock(fs, path, text);
-    else await wait(3 + Math.random() * 12);
+  } finally {
+    await fs.remove(own).catch(() => undefined);
   }
 }
 
-/** @returns whether the lock is ours now */
-async function create(fs: FsPort, path: string, token: string): Promise<boolean> {
-  let file;
+/**
+ * Takes the lock by a second name for a file that is written already, so that no lock is ever there
+ * without its owner's name: a program that ended in between would leave one that nobody can judge.
+ * @returns whether the lock is ours now
+ */
+async function take(fs: FsPort, own: string, path: string, text: Uint8Array): Promise<boolean> {
   try {
-    file = await fs.create(path);
+    await fs.link(own, path);
+    return true;
+  } catch (error) {
+    if (systemCode(error) === 'EEXIST') return false;
+  }
+  // The file system has no links.
+  try {
+    await write(fs, path, text);
+    return true;
   } catch (error) {
     if (systemCode(error) === 'EEXIST') return false;
     throw error;
   }
+}
+
+async function write(fs: FsPort, path: string, bytes: Uint8Array): Promise<void> {
+  const file = await fs.create(path);
   try {
     try {
-      const owner: Owner = { machine: machineTag, pid: process.pid, token };
-      await file.write(new TextEncoder().encode(JSON.stringify(owner)));
+      await file.write(bytes);
     } finally {
       await file.close();
     }
@@ -92,7 +115,6 @@ async function create(fs: FsPort, path: string, token: string): Promise<boolean>
     await fs.remove(path).catch(() => undefined);
     throw error;
   }
-  return true;
 }
 
 async function contentOf(fs: FsPort, path: string): Promise<string | null> {

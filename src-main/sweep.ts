@@ -19,6 +19,7 @@ export async function sweep(fs: FsPort, folders: Folders, now: Date): Promise<vo
     folders.sites,
     folders.setAside,
     folders.journal,
+    folders.locks,
     ...ids.map((id) => join(folders.earlier, id)),
     ...beside.flatMap((own) => [own, ...['visits', 'photos', 'records'].map((part) => join(own, part))]),
   ];
@@ -27,13 +28,21 @@ export async function sweep(fs: FsPort, folders: Folders, now: Date): Promise<vo
       const maker = makerOfTemp(name);
       if (maker === null) continue;
       const path = join(place, name);
-      const ended = maker.machine === thisMaker.machine && (maker.pid === thisMaker.pid || !isAlive(maker.pid));
-      if (ended || (await olderThan(fs, path, HOUR, now))) await fs.remove(path).catch(() => undefined);
+      const here = maker.machine === thisMaker.machine;
+      // One with our own number was left by an earlier run that had the same, or is being written now.
+      const age = here && maker.pid === thisMaker.pid ? now.getTime() - performance.timeOrigin : HOUR;
+      if ((here && !isAlive(maker.pid)) || (await olderThan(fs, path, age, now))) await fs.remove(path).catch(() => undefined);
     }
   }
-  for (const name of await namesIn(fs, folders.leftOut)) {
-    const path = join(folders.leftOut, name);
-    if (await olderThan(fs, path, LEFT_OUT_KEPT, now)) await fs.remove(path).catch(() => undefined);
+  // No lock is held for longer than some seconds; after a power cut one may have lost its owner's name.
+  await removeOlder(fs, folders.locks, HOUR / 6, now);
+  await removeOlder(fs, folders.leftOut, LEFT_OUT_KEPT, now);
+}
+
+async function removeOlder(fs: FsPort, folder: string, age: number, now: Date): Promise<void> {
+  for (const name of await namesIn(fs, folder)) {
+    const path = join(folder, name);
+    if (await olderThan(fs, path, age, now)) await fs.remove(path).catch(() => undefined);
   }
 }
 

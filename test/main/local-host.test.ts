@@ -74,6 +74,15 @@ test('while the sites folder does not answer, edits reach this machine and are o
   expect(recovered?.body).toBe(bodyOf('s', 2));
 });
 
+test('a sites folder that does not answer at the start is told, and does not keep the program from coming up', async () => {
+  const top = temporaryFolder();
+  const fs: FsPort = { ...nodeFs, list: () => new Promise<never>(() => undefined) };
+  const began = performance.now();
+  const { machine } = await startMachine(top, { fs, limits: { quick: 4000, bytes: 4000 } });
+  expect(performance.now() - began).toBeLessThan(4000);
+  await expect(machine.page().listSites()).rejects.toMatchObject({ code: 'timed-out' });
+});
+
 test('a damaged site with a damaged journal still lets the other sites be', async () => {
   const top = temporaryFolder();
   const { machine, sites } = await startMachine(top);

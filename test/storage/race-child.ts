@@ -15,7 +15,11 @@ export interface Round {
 
 const nothing = async (): Promise<void> => undefined;
 const NOTHING: OpenFile = { write: nothing, sync: nothing, size: async () => 0, cut: nothing, close: nothing };
-const withoutLocks: FsPort = { ...nodeFs, create: async (path) => (path.endsWith('.lock') ? NOTHING : nodeFs.create(path)) };
+const withoutLocks: FsPort = {
+  ...nodeFs,
+  create: async (path) => (path.endsWith('.lock') ? NOTHING : nodeFs.create(path)),
+  link: async (from, to) => (to.endsWith('.lock') ? undefined : nodeFs.link(from, to)),
+};
 
 process.on('message', (round: Round) => {
   const store = new SiteStore({ fs: round.lockless ? withoutLocks : nodeFs, folder: round.folder, program: '0.1.0' });

@@ -1,10 +1,10 @@
 import { fork, type ChildProcess } from 'node:child_process';
 import { once } from 'node:events';
-import { existsSync, mkdirSync, writeFileSync } from 'node:fs';
-import { join } from 'node:path';
+import { existsSync, mkdirSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { dirname, join } from 'node:path';
 import { afterEach, expect, test } from 'vitest';
 import { machineTag } from '../../src-main/file-names';
-import { nodeFs } from '../../src-main/fs-port';
+import { nodeFs, type FsPort } from '../../src-main/fs-port';
 import { withLock } from '../../src-main/lock';
 import { newFolder, siteText, storeIn } from './folder';
 import { bodyOf, numberIn } from './make';
@@ -67,6 +67,37 @@ test.each([
   await storeIn(folder).save({ id: 's', body: bodyOf('s', 1), baseRevision: null });
   expect(performance.now() - began).toBeLessThan(1000);
   expect(existsSync(join(folder, 'locks', 's.lock'))).toBe(false);
+});
+
+test('a lock is never there without its owner’s name, at whatever call the program ends', async () => {
+  const texts: string[] = [];
+  const path = join(newFolder(), 's.lock');
+  const looking: FsPort = Object.fromEntries(
+    Object.entries(nodeFs).map(([name, call]) => [
+      name,
+      async (...given: never[]) => {
+        if (existsSync(path)) texts.push(readFileSync(path, 'utf8'));
+        return (call as (...args: never[]) => Promise<unknown>)(...given);
+      },
+    ]),
+  ) as unknown as FsPort;
+  await withLock(looking, path, async () => texts.push(readFileSync(path, 'utf8')));
+  expect(texts.length).toBeGreaterThan(1);
+  for (const text of texts) expect(JSON.parse(text)).toMatchObject({ machine: machineTag, pid: process.pid });
+});
+
+test('where the file system has no links, one still holds the lock after another', async () => {
+  const path = join(newFolder(), 's.lock');
+  const noLinks: FsPort = { ...nodeFs, link: () => Promise.reject(Object.assign(new Error('no links'), { code: 'EPERM' })) };
+  let inside = 0;
+  const hold = () =>
+    withLock(noLinks, path, async () => {
+      expect(++inside).toBe(1);
+      await new Promise((resolve) => setTimeout(resolve, 5));
+      inside--;
+    });
+  await Promise.all([hold(), hold(), hold()]);
+  expect(readdirSync(dirname(path))).toEqual([]);
 });
 
 const QUICK = { hold: 100, abandoned: 200, wait: 400 };

@@ -358,9 +358,11 @@ describe('folders', () => {
     const ended = temp(machineTag, 2 ** 30);
     const running = temp(machineTag, process.ppid);
     const elsewhere = temp('00000000', 1);
-    for (const name of [ended, running, elsewhere, join('earlier', 's', ended), 'x.temp']) writeFileSync(join(folder, name), 'half');
+    mkdirSync(join(folder, 'locks'));
+    for (const name of [ended, running, elsewhere, join('earlier', 's', ended), join('locks', 's.lock'), 'x.temp'])
+      writeFileSync(join(folder, name), 'half');
     await sweep(nodeFs, foldersIn(folder), new Date());
-    expect(Object.keys(contentOf(folder)).sort()).toEqual([running, elsewhere, 'x.temp'].sort());
+    expect(Object.keys(contentOf(folder)).sort()).toEqual([running, elsewhere, join('locks', 's.lock'), 'x.temp'].sort());
     await sweep(nodeFs, foldersIn(folder), new Date(Date.now() + 2 * 3600_000));
     expect(Object.keys(contentOf(folder))).toEqual(['x.temp']);
   });
