@@ -6,7 +6,7 @@ import { HostError, troubleOf } from './trouble';
 import { renameOver, writeBeside } from './whole-file';
 
 /** The page's own print rules say the paper; headings and tables stay readable to assistive technology. */
-export const PDF_OPTIONS: Readonly<PrintToPDFOptions> = Object.freeze({
+const PDF_OPTIONS: Readonly<PrintToPDFOptions> = Object.freeze({
   preferCSSPageSize: true,
   printBackground: true,
   generateTaggedPDF: true,

@@ -21,7 +21,7 @@ export const LOCKS = Object.freeze({
 
 const KEPT = 'window';
 
-export const windowOptions = ({ maximized: _, ...bounds }: WindowPlace, preload: string): BrowserWindowConstructorOptions => ({
+const windowOptions = ({ maximized: _, ...bounds }: WindowPlace, preload: string): BrowserWindowConstructorOptions => ({
   ...bounds,
   minWidth: SMALLEST.width,
   minHeight: SMALLEST.height,
