@@ -14,7 +14,7 @@ export const HOST_PATH = '/host/';
 /** Over HTTP: the secret that stands after `#key=` in the address that the program prints. */
 export const KEY_HEADER = 'x-tallybeam-key';
 export const KEY_IN_ADDRESS = '#key=';
-/** Over HTTP: an id that the page makes once for its tab, so that each tab has a journal of its own. */
+/** Over HTTP: an id that the page makes each time it is loaded, so that each load has a journal of its own. */
 export const TAB_HEADER = 'x-tallybeam-tab';
 
 const LONGEST_NAME = 200;

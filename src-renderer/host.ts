@@ -18,7 +18,6 @@ export interface BrowserParts {
 }
 
 const KEY = 'tallybeam-key';
-const TAB = 'tallybeam-tab';
 
 /** The secret from the opening address, kept for this tab and taken out of the address bar. */
 function keyFrom({ location, history, storage }: BrowserParts): string {
@@ -29,15 +28,10 @@ function keyFrom({ location, history, storage }: BrowserParts): string {
   return storage.getItem(KEY) ?? '';
 }
 
-function tabFrom({ storage }: BrowserParts): string {
-  const tab = storage.getItem(TAB) ?? crypto.randomUUID();
-  storage.setItem(TAB, tab);
-  return tab;
-}
-
 /** @returns the host over HTTP; a program that cannot be reached rejects like any other failure */
 export function hostOverHttp(parts: BrowserParts): Host {
-  const headers = { 'content-type': 'application/json', [KEY_HEADER]: keyFrom(parts), [TAB_HEADER]: tabFrom(parts) };
+  // One for each load of the page: a tab that was doubled or loaded again edits into a journal of its own.
+  const headers = { 'content-type': 'application/json', [KEY_HEADER]: keyFrom(parts), [TAB_HEADER]: crypto.randomUUID() };
   return hostOver(async (method, given): Promise<HostAnswer> => {
     let response: Response;
     try {

@@ -55,8 +55,8 @@ function ask(port: number, method: string, path: string, headers: Record<string,
 
 hostContract('over HTTP, by the page’s own carrier', false, async () => {
   const { serving, top, origin, key } = await serve();
-  const page = (tab: string) => {
-    const kept = new Map([['tallybeam-tab', tab]]);
+  const page = () => {
+    const kept = new Map<string, string>();
     return hostOverHttp({
       location: { hash: `#key=${key}`, pathname: '/', search: '' },
       history: { replaceState: () => undefined },
@@ -65,10 +65,9 @@ hostContract('over HTTP, by the page’s own carrier', false, async () => {
     });
   };
   expect(serving.sitesFolder).toBe(join(top, 'sites'));
-  let tabs = 0;
   return {
-    host: page('first'),
-    nextPage: async () => page(`next-${++tabs}`),
+    host: page(),
+    nextPage: async () => page(),
     writeFile: (name, text) => writeFileSync(join(serving.sitesFolder, name), text),
   };
 });
