@@ -72,6 +72,7 @@ const frameAt = (url: string, more: Partial<StandInFrame> = {}): Sender => ({
 const STRANGERS: readonly (readonly [string, Sender])[] = [
   ['a frame that is gone', { sender: contents, senderFrame: null }],
   ['a frame within the page', frameAt('app://tallybeam/index.html', { parent: contents.mainFrame, frameTreeNodeId: 2 })],
+  ['a frame within another, whatever its number', frameAt('app://tallybeam/index.html', { parent: contents.mainFrame })],
   ['a second main frame', frameAt('app://tallybeam/index.html', { frameTreeNodeId: 2 })],
   ['a frame that was detached', frameAt('app://tallybeam/index.html', { detached: true })],
   ['a web page', frameAt('https://evil/index.html')],
