@@ -3,11 +3,12 @@
  * work is done at once on the page's own thread.
  */
 import { auditRun } from '../src-core/audit/audit';
-import { createAuditCache } from '../src-core/audit/cache';
+import type { AuditCache } from '../src-core/audit/cache';
 import type { RunAudit } from '../src-core/audit/types';
 import type { Id, Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
 import type { FromWorker, ToWorker } from './audit-protocol';
+import { lightRun } from './light-audit';
 import { applyAuditChange, changeOf, runsTouched } from './site-change';
 
 /** The part of a `Worker` that is used. */
@@ -19,7 +20,7 @@ export interface WorkerLike {
 }
 
 export interface AuditListener {
-  /** Findings of one run of the newest site. */
+  /** Findings of one run of the newest site, light. */
   audited(audit: RunAudit): void;
   /** Every run of the newest site has been audited. */
   done(): void;
@@ -50,13 +51,14 @@ export class AuditLink {
   #touchedAt = new Map<Id, number>();
   /** Findings as the worker last sent them, which its next change builds on. */
   #received = new Map<Id, RunAudit>();
-  #cache = createAuditCache();
   #worker: WorkerLike | null;
 
   constructor(
     makeWorker: (() => WorkerLike) | null,
     private readonly today: () => string,
     private readonly listener: AuditListener,
+    /** Used where the page audits for itself. */
+    private readonly cache: AuditCache,
   ) {
     this.#worker = this.#start(makeWorker);
   }
@@ -142,7 +144,7 @@ export class AuditLink {
   #auditHere(before: Site | null, site: Site): void {
     for (const runId of runsTouched(before, site)) {
       try {
-        this.listener.audited(auditRun(site, runId, this.today(), this.#cache));
+        this.listener.audited(lightRun(auditRun(site, runId, this.today(), this.cache)));
       } catch (error) {
         this.listener.trouble(runId, error instanceof Error ? error.message : String(error));
       }

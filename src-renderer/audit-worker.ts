@@ -5,6 +5,7 @@ import type { RunAudit } from '../src-core/audit/types';
 import type { Id, Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
 import type { FromWorker, ToWorker } from './audit-protocol';
+import { lightRun } from './light-audit';
 import { applyChange, auditChangeOf, runsTouched } from './site-change';
 
 const cache = createAuditCache();
@@ -36,7 +37,7 @@ async function work(): Promise<void> {
     const runId = due.shift();
     if (runId === undefined || site === null) break;
     try {
-      const audit = auditRun(site, runId, today, cache);
+      const audit = lightRun(auditRun(site, runId, today, cache));
       post({ kind: 'audit', version, change: auditChangeOf(sent.get(runId), audit) });
       sent.set(runId, audit);
     } catch (error) {

@@ -1,8 +1,24 @@
-/** The findings of the open site, fed by the audit, and whether they are of the site as it stands. */
+/**
+ * The findings of the open site. Every run's come from the audit worker, light: verdicts and
+ * sentences without their calculations. What is looked at is audited here, whole and at once, which
+ * takes a few milliseconds because only what an edit touched is done again.
+ */
 import { SvelteMap } from 'svelte/reactivity';
-import type { FrameAudit, RunAudit } from '../src-core/audit/types';
-import type { Id, Site } from '../src-core/site/site';
+import { auditBay, auditFrame, auditRun } from '../src-core/audit/audit';
+import { createAuditCache } from '../src-core/audit/cache';
+import type { BayAudit, FrameAudit, RunAudit } from '../src-core/audit/types';
+import { worstVerdict } from '../src-core/checks/finding';
+import type { Bay, Id, Run, Site } from '../src-core/site/site';
 import { AuditLink, type WorkerLike } from './audit-link';
+
+/** A bay and the two frames at its sides, with every calculation; or why the audit of them broke down. */
+export interface Near {
+  readonly bay: BayAudit | null;
+  readonly frames: readonly FrameAudit[];
+  readonly trouble: string | null;
+}
+
+const NOTHING: Near = { bay: null, frames: [], trouble: null };
 
 export class Findings {
   /** By run id. A run that has just been made has none until the audit has seen it. */
@@ -12,22 +28,26 @@ export class Findings {
   /** True while findings of some run are older than the site. */
   auditing = $state(false);
   #link: AuditLink;
+  #cache = createAuditCache();
 
-  constructor(makeWorker: (() => WorkerLike) | null, today: () => string, onaudit: (audit: RunAudit) => void) {
-    this.#link = new AuditLink(makeWorker, today, {
-      audited: (audit) => {
+  constructor(
+    makeWorker: (() => WorkerLike) | null,
+    private readonly today: () => string,
+  ) {
+    const listener = {
+      audited: (audit: RunAudit) => {
         this.troubles.delete(audit.runId);
         this.audits.set(audit.runId, audit);
-        onaudit(audit);
       },
-      trouble: (runId, message) => {
+      trouble: (runId: Id, message: string) => {
         this.audits.delete(runId);
         this.troubles.set(runId, message);
       },
       done: () => {
         this.auditing = false;
       },
-    });
+    };
+    this.#link = new AuditLink(makeWorker, today, listener, this.#cache);
   }
 
   /** Checks this site from now on. */
@@ -41,6 +61,43 @@ export class Findings {
     this.#link.update(site);
   }
 
+  near(site: Site, run: Run | null, bay: Bay | null): Near {
+    if (run === null || bay === null) return NOTHING;
+    const index = run.bays.indexOf(bay);
+    const sides = run.frames.slice(index, index + 2);
+    try {
+      return {
+        bay: auditBay(site, run.id, bay.id, this.today(), this.#cache),
+        frames: sides.map((frame) => auditFrame(site, run.id, frame.id, this.today(), this.#cache)),
+        trouble: null,
+      };
+    } catch (error) {
+      return { ...NOTHING, trouble: messageOf(error) };
+    }
+  }
+
+  /** The run as last audited by the worker, with what is near in its place; null until the worker has seen the run. */
+  run(runId: Id | null, near: Near): RunAudit | null {
+    const light = this.audits.get(runId ?? '');
+    if (light === undefined) return null;
+    const bays = light.bays.map((bay) => (bay.bayId === near.bay?.bayId ? near.bay : bay));
+    const frames = light.frames.map((frame) => near.frames.find(({ frameId }) => frameId === frame.frameId) ?? frame);
+    const verdict = worstVerdict([...bays, ...light.findings.filter(({ counts }) => counts)].map((one) => one.verdict));
+    return { ...light, verdict, bays, frames };
+  }
+
+  /** A run with every calculation. */
+  wholeRun(site: Site, runId: Id | null): RunAudit | null {
+    if (runId === null) return null;
+    try {
+      return auditRun(site, runId, this.today(), this.#cache);
+    } catch {
+      // The worker met the same trouble and tells it.
+      return null;
+    }
+  }
+
+  /** A frame anywhere in the site, light. */
   frame(frameId: Id): FrameAudit | null {
     for (const run of this.audits.values()) {
       const found = run.frames.find((frame) => frame.frameId === frameId);
@@ -58,3 +115,5 @@ export class Findings {
     this.#link.close();
   }
 }
+
+const messageOf = (error: unknown): string => (error instanceof Error ? error.message : String(error));

@@ -4,7 +4,7 @@
  */
 import { createContext } from 'svelte';
 import { SvelteMap } from 'svelte/reactivity';
-import type { BayAudit, FrameAudit, LevelAudit, RunAudit } from '../src-core/audit/types';
+import type { FrameAudit, LevelAudit, RunAudit } from '../src-core/audit/types';
 import type { Host } from '../src-core/host';
 import { movePlacement } from '../src-core/site/edits';
 import type { Id, Placement, Site } from '../src-core/site/site';
@@ -27,7 +27,6 @@ import {
 import { refusal, type Refused } from './refusal';
 import { Saving, type SavedState } from './saving.svelte';
 import { completed, existing, firstOf, NOTHING, type Selection } from './selection';
-import { Speaker } from './speaker.svelte';
 import { amend, record, redo, startHistory, undo, type UndoHistory } from './undo-history';
 
 export type { Target } from './places';
@@ -65,6 +64,8 @@ export class OpenSite {
   task = $state.raw<Task | null>(null);
   /** The form that was last asked for, to be given the focus. */
   asked = $state.raw<Task | null>(null);
+  /** What the status region says. */
+  said = $state('');
   viewUnits = $state<UnitSystem | null>(null);
   locale = $state('en-GB');
   /** What was last put on a level, to be offered first. */
@@ -78,7 +79,6 @@ export class OpenSite {
   #history = $state.raw<UndoHistory<Site>>() as UndoHistory<Site>;
   /** A change that is shown and checked but not made yet, while something is dragged or carried. */
   #trial = $state.raw<Site | null>(null);
-  #speaker = new Speaker();
   #wanted = $state.raw<Selection>(NOTHING);
   /** Where one was before, for going back. */
   #trail = $state.raw<readonly Selection[]>([]);
@@ -101,9 +101,14 @@ export class OpenSite {
   run = $derived(this.site.runs.find((run) => run.id === this.selection.runId) ?? null);
   bay = $derived(this.run?.bays.find((bay) => bay.id === this.selection.bayId) ?? null);
   level = $derived(this.bay?.levels.find((level) => level.id === this.selection.levelId) ?? null);
-  runAudit = $derived(this.audits.get(this.selection.runId ?? '') ?? null);
-  bayAudit = $derived<BayAudit | null>(this.runAudit?.bays.find((bay) => bay.bayId === this.selection.bayId) ?? null);
+  #near = $derived.by(() => this.findings.near(this.site, this.run, this.bay));
+  /** The chosen bay with every calculation, of the site as it is shown. */
+  bayAudit = $derived(this.#near.bay);
   levelAudit = $derived<LevelAudit | null>(this.bayAudit?.levels.find((level) => level.levelId === this.selection.levelId) ?? null);
+  /** The chosen run: the chosen bay and its frames with every calculation, the others with their verdicts and sentences. */
+  runAudit = $derived.by(() => this.findings.run(this.selection.runId, this.#near));
+  /** The chosen run with every calculation. Only read where a whole run is looked at: it is made when it is first read. */
+  wholeRunAudit = $derived.by(() => this.findings.wholeRun(this.site, this.selection.runId));
 
   constructor(options: OpenSiteOptions) {
     this.id = options.id;
@@ -111,7 +116,7 @@ export class OpenSite {
     this.locale = options.locale ?? 'en-GB';
     this.today = options.today ?? todayHere;
     this.#onTask = options.onTask ?? (() => undefined);
-    this.findings = new Findings(options.makeWorker ?? null, this.today, (audit) => this.#speaker.audited(audit));
+    this.findings = new Findings(options.makeWorker ?? null, this.today);
     this.saving = new Saving({
       host: options.host,
       id: options.id,
@@ -120,7 +125,7 @@ export class OpenSite {
       onDisk: options.revision === null ? null : options.site,
       write: (site) => this.findings.write(site),
     });
-    this.#check();
+    this.findings.follow(options.site);
     this.#wanted = firstOf(options.site);
   }
 
@@ -144,14 +149,17 @@ export class OpenSite {
     else if (id !== undefined && id !== task.id) this.task = { kind: task.kind, id, field: null };
   }
 
-  /** Findings by run id. A run that has just been made has none until the audit has seen it. */
+  /** Findings of every run by its id, without their calculations. A new run has none until the audit has seen it. */
   get audits(): ReadonlyMap<Id, RunAudit> {
     return this.findings.audits;
   }
 
   /** Runs whose audit broke down, with what it said. */
   get auditTroubles(): ReadonlyMap<Id, string> {
-    return this.findings.troubles;
+    const { trouble } = this.#near;
+    return trouble === null || this.run === null
+      ? this.findings.troubles
+      : new SvelteMap([...this.findings.troubles, [this.run.id, trouble]]);
   }
 
   /** True while findings of some run are older than the site. */
@@ -159,7 +167,8 @@ export class OpenSite {
     return this.findings.auditing;
   }
 
-  frameAudit = (frameId: Id): FrameAudit | null => this.findings.frame(frameId);
+  frameAudit = (frameId: Id): FrameAudit | null =>
+    this.#near.frames.find((frame) => frame.frameId === frameId) ?? this.findings.frame(frameId);
 
   /** Back to the bay one came from. */
   goBack = (): void => {
@@ -183,12 +192,18 @@ export class OpenSite {
     this.say(`Run ${run.name}, ${nameOfPlace(bay, level)}.${verdict}`);
   };
 
-  say = (text: string): void => this.#speaker.say(text);
+  say = (text: string): void => {
+    // The same words twice are said twice only if the text differs.
+    this.said = text === this.said ? `${text}\u00a0` : text;
+  };
 
-  /** What the status region says. */
-  get said(): string {
-    return this.#speaker.said;
-  }
+  /** Says what was done here together with what it did to level and bay. */
+  sayDone = (text: string): void => {
+    const words = [text];
+    if (this.levelAudit) words.push(`Level: ${VERDICT_WORDS[this.levelAudit.verdict].word.toLowerCase()}.`);
+    if (this.bayAudit) words.push(`Bay: ${VERDICT_WORDS[this.bayAudit.verdict].word.toLowerCase()}.`);
+    this.say(words.join(' '));
+  };
 
   // ------------------------------------------------------------ changing
 
@@ -262,7 +277,6 @@ export class OpenSite {
   tryMove = (placementId: Id, target: Target): void => {
     if (placementPlace(this.#history.value, placementId) === null) return;
     this.#trial = moved(this.#history.value, placementId, target);
-    this.#check();
   };
 
   /** Makes the move that was tried, exactly as `move` would have. */
@@ -279,9 +293,7 @@ export class OpenSite {
   };
 
   dropTrial = (): void => {
-    if (this.#trial === null) return;
     this.#trial = null;
-    this.#check();
   };
 
   pickUp = (placementId: Id): void => {
@@ -341,25 +353,13 @@ export class OpenSite {
 
   close = (): void => {
     this.saving.close();
-    this.#speaker.close();
     this.findings.close();
   };
 
   #changed(name: string): void {
-    this.#check();
+    this.findings.follow(this.#history.value);
     this.saving.edited(this.#history.value, name);
   }
-
-  #check(): void {
-    this.findings.follow(this.#trial ?? this.#history.value);
-  }
-
-  /** Says what was done here together with the verdicts it led to, as soon as they are known. */
-  sayDone = (text: string): void => {
-    const { runId, bayId, levelId } = this.selection;
-    if (runId === null || bayId === null) this.say(text);
-    else this.#speaker.sayDone({ runId, bayId, levelId }, text, this.auditing ? null : (this.audits.get(runId) ?? null));
-  };
 }
 
 export const [useOpenSite, setOpenSite, hasOpenSite] = createContext<OpenSite>();

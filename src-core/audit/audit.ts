@@ -50,6 +50,17 @@ export function auditBay(site: Site, runId: Id, bayId: Id, today: string, cache:
   return audit.bay(index);
 }
 
+/**
+ * One frame, and nothing else of its run but the bays at its sides.
+ * @throws RangeError if the site has no such run or frame
+ */
+export function auditFrame(site: Site, runId: Id, frameId: Id, today: string, cache: AuditCache = createAuditCache()): FrameAudit {
+  const audit = runAuditor(site, runId, today, cache);
+  const index = audit.run.frames.findIndex(({ id }) => id === frameId);
+  if (index < 0) throw new RangeError(`no frame "${frameId}" in run "${runId}"`);
+  return audit.frame(index);
+}
+
 /** A site without runs has nothing that could be within. */
 export function auditSite(site: Site, today: string, cache: AuditCache = createAuditCache()): SiteAudit {
   const runs = site.runs.map(({ id }) => auditRun(site, id, today, cache));
@@ -82,10 +93,23 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
     run.loadedBy,
     run.twoDeep,
     run.backToBack,
-    behind,
-    // A bay far off may break the mirror image of the two runs.
-    behind !== null && mirrored(run, behind),
+    behind?.name,
   ];
+  // Asked once: a bay far off may break the mirror image of the two runs.
+  const exact = behind !== null && mirrored(run, behind);
+  /** What stands behind bay `index`, or behind all of them where it is not known which. */
+  const behindBay = (index: number): readonly unknown[] => {
+    if (behind === null) return [];
+    const j = counterpart(index, behind.bays.length);
+    return exact ? [behind.bays[j], behind.frames[j], behind.frames[j + 1]] : [behind.bays, behind.frames];
+  };
+  /** What stands behind frame `index`: its counterpart and both bays there, which reach to the next frames. */
+  const behindFrame = (index: number): readonly unknown[] => {
+    if (behind === null) return [];
+    const j = counterpart(index, behind.frames.length);
+    const { bays, frames } = behind;
+    return exact ? [bays[j - 1], bays[j], frames[j - 1], frames[j], frames[j + 1]] : [bays, frames];
+  };
 
   const goodsOf = (id: Id) => {
     const unitLoad = context.unitLoads.get(id);
@@ -116,8 +140,6 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
     return { run, bay, index, place, notice, noticeFrom, frames: [left, right], frameTypes, ...contents };
   };
 
-  const neighbours = (index: number) => [run.bays[index - 1], run.bays[index], run.bays[index + 1]];
-
   const frameAt = (index: number): Frame => {
     const one = run.frames[index];
     if (one === undefined) throw new RangeError(`run "${runId}" has no frame ${index}`);
@@ -137,7 +159,7 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
       behind: () => {
         if (behind === null) return [];
         const other = runAuditor(site, behind.id, today, cache);
-        return mirrored(run, behind)
+        return exact
           ? [other.frameWork(counterpart(index, behind.frames.length))]
           : behind.frames.map((_, i) => other.frameWork(i));
       },
@@ -146,21 +168,14 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
 
   const frame = (index: number): FrameAudit => {
     const one = frameAt(index);
-    const from = [
-      run.bays[index - 1],
-      run.bays[index],
-      run.frames[index - 1],
-      run.frames[index + 1],
-      index,
-      run.frames.length,
-      ...surroundings,
-    ];
+    const { bays, frames } = run;
+    const from = [bays[index - 1], bays[index], frames[index - 1], frames[index + 1], ...behindFrame(index), ...surroundings];
     return cache.remember('frame', one, from, () => frameAudit(context, frameWork(index)));
   };
 
   const bay = (index: number): BayAudit => {
     const [one, left, right] = bayAt(run, index);
-    const own = cache.remember('bay', one, [left, right, index, ...neighbours(index), ...surroundings], () =>
+    const own = cache.remember('bay', one, [left, right, ...behindBay(index), ...surroundings], () =>
       ownAudit(context, work(index)),
     );
     const frames = [frame(index), frame(index + 1)];

@@ -3,20 +3,41 @@ import { afterEach, beforeEach, expect, test, vi } from 'vitest';
 import { editBay, editEntry } from '../../src-core/site/edits';
 import type { Site } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
+import type { WorkerLike } from '../../src-renderer/audit-link';
+import type { FromWorker } from '../../src-renderer/audit-protocol';
 import { deleteGoods, duplicateGoods, mirrorGoods, putGoods, spaceEvenly } from '../../src-renderer/goods-edits';
 import { changeBay, changeLevel, nudge } from '../../src-renderer/goods-moves';
 import { OpenSite } from '../../src-renderer/open-site.svelte';
 import { placementPlace, targetOf, type Target } from '../../src-renderer/places';
 import { addBayAfter, addLevelOnTop, duplicateBayHere, removeBayHere, removeLevelHere } from '../../src-renderer/rack-edits';
+import { applyChange } from '../../src-renderer/site-change';
 import { MemoryHost } from './memory-host';
 import { smallSite } from './sites';
 
 let opened: OpenSite[] = [];
 
-async function openSite(site: Site = smallSite()): Promise<{ open: OpenSite; host: MemoryHost }> {
+/** A worker that keeps the site by the changes it is sent, cloned as on their way to a thread, and writes it; it audits nothing. */
+function writingWorker(): WorkerLike {
+  let site: Site | null = null;
+  const worker: WorkerLike = {
+    onmessage: null,
+    onerror: null,
+    terminate: () => undefined,
+    postMessage: (message) => {
+      if (message.kind === 'change') site = applyChange(site, structuredClone(message.change));
+      else worker.onmessage?.({ data: { kind: 'written', ask: message.ask, body: site && writeSite(site) } } as MessageEvent<FromWorker>);
+    },
+  };
+  return worker;
+}
+
+async function openSite(
+  site: Site = smallSite(),
+  makeWorker: (() => WorkerLike) | null = null,
+): Promise<{ open: OpenSite; host: MemoryHost }> {
   const host = new MemoryHost();
   const { revision, savedAt } = await host.saveSite({ id: site.id, body: writeSite(site), baseRevision: null });
-  const open = new OpenSite({ host, id: site.id, site, revision, savedAt, today: () => '2026-12-01' });
+  const open = new OpenSite({ host, id: site.id, site, revision, savedAt, makeWorker, today: () => '2026-12-01' });
   opened.push(open);
   return { open, host };
 }
@@ -73,7 +94,7 @@ test('1,000 random sequences: undo-all gives the first file, redo-all the last, 
   );
   await fc.assert(
     fc.asyncProperty(fc.array(action, { maxLength: 14 }), async (actions) => {
-      const { open, host } = await openSite();
+      const { open, host } = await openSite(smallSite(), writingWorker);
       const first = writeSite(open.site);
       const onDisk = () => host.kept.get(open.id)?.body;
       for (const one of actions) {
@@ -104,7 +125,7 @@ test('1,000 random sequences: undo-all gives the first file, redo-all the last, 
 const onDiskByAnotherWay = (open: OpenSite): boolean => open.saved === 'unsaved' && (open.canUndo || open.canRedo);
 
 test('600 edits are all kept: the first file comes back exactly', async () => {
-  const { open } = await openSite();
+  const { open } = await openSite(smallSite(), writingWorker);
   const first = writeSite(open.site);
   for (let i = 0; i < 600; i++) {
     vi.advanceTimersByTime(2000);
@@ -250,8 +271,45 @@ test('every run has findings, and an edit of one bay leaves the findings of the 
   open.move('p1', { levelId: levelId(open, 0, 1), atMm: 500 });
   const after = open.runAudit?.bays ?? [];
   expect(after[0]).not.toBe(before[0]);
+  expect(after.every((bay) => bay.verdict.length > 0)).toBe(true);
   // The neighbour shares a frame; whoever stands further away is not looked at again.
   after.slice(2).forEach((bay, i) => expect(bay).toBe(before[i + 2]));
+});
+
+test('the chosen bay has its calculations at once, a trial move included; the others have their sentences', async () => {
+  const { open } = await openSite(smallSite(), writingWorker);
+  const steps = () => open.levelAudit?.findings.reduce((sum, finding) => sum + finding.worked.length, 0) ?? 0;
+  const total = () => open.levelAudit?.totalKg;
+  expect(steps()).toBeGreaterThan(5);
+  expect(total()).toBe(800);
+  open.tryMove('p1', { levelId: levelId(open, 0, 1), atMm: 75 });
+  expect(total()).toBe(400);
+  open.dropTrial();
+  expect(total()).toBe(800);
+  const audited = await openSite();
+  const [own, other] = audited.open.runAudit?.bays ?? [];
+  const worked = (bay: typeof own) => bay?.levels.flatMap((one) => one.findings.flatMap((finding) => finding.worked)).length;
+  expect(worked(own)).toBeGreaterThan(5);
+  expect(other?.levels[0]?.findings.length).toBeGreaterThan(5);
+  expect(worked(other)).toBe(0);
+  expect(worked(audited.open.wholeRunAudit?.bays[1])).toBeGreaterThan(5);
+});
+
+test('light findings say the same verdicts as whole ones, for every bay and frame', async () => {
+  const { open } = await openSite(smallSite(5));
+  const light = open.audits.get(open.run?.id ?? '');
+  const whole = open.wholeRunAudit;
+  const said = (audit: typeof whole | undefined) =>
+    audit?.bays.map((bay) => [
+      bay.verdict,
+      bay.totalKg,
+      ...bay.levels.map((one) => [one.verdict, one.totalKg, ...one.findings.map((f) => [f.check, f.verdict, f.utilisation])]),
+    ]);
+  expect(said(light)).toEqual(said(whole));
+  expect(light?.frames.map((frame) => [frame.verdict, frame.storeys])).toEqual(
+    whole?.frames.map((frame) => [frame.verdict, frame.storeys]),
+  );
+  expect(light?.verdict).toBe(whole?.verdict);
 });
 
 test('switching the view between unit systems is no edit and changes nothing in the file', async () => {
