@@ -4,6 +4,7 @@ import { auditBay, auditRun, auditSite } from '../../../src-core/audit/audit';
 import { createAuditCache } from '../../../src-core/audit/cache';
 import type { SiteAudit } from '../../../src-core/audit/types';
 import { CHECKS, compareVerdicts } from '../../../src-core/checks/finding';
+import { movePlacement } from '../../../src-core/site/edits';
 import type { Bay, Damage, Floor, Frame, Run, Site } from '../../../src-core/site/site';
 import { goods, level, rack, SOURCE, stand } from './rack';
 
@@ -120,6 +121,49 @@ test('an edit leaves the audits of untouched bays as they are, and renews its ow
   expect(after.frames.map((frame, i) => frame === before.frames[i])).toEqual([true, true, false, false, true, true, true]);
 });
 
+/** Bays whose levels, and frames which, were looked at again from one audit to the next. */
+function rechecked(before: SiteAudit, after: SiteAudit): { readonly bays: readonly string[]; readonly frames: readonly string[] } {
+  const levels = new Set(before.runs.flatMap(({ bays }) => bays.map((bay) => bay.levels)));
+  const frames = new Set(before.runs.flatMap((run) => run.frames));
+  return {
+    bays: after.runs.flatMap((run) => run.bays.filter((bay) => !levels.has(bay.levels)).map(({ bayId }) => bayId)),
+    frames: after.runs.flatMap((run) => run.frames.filter((frame) => !frames.has(frame)).map(({ frameId }) => frameId)),
+  };
+}
+
+test.each([6, 60])('of two runs of %i bays back to back, moving goods rechecks their bay and its mirror image, and the frames at both', (bays) => {
+  const site = depot(bays);
+  const cache = createAuditCache();
+  const before = auditSite(site, TODAY, cache);
+  const after = auditSite(
+    withBay(site, 0, 2, (bay) => moved(bay, 100)),
+    TODAY,
+    cache,
+  );
+  expect(rechecked(before, after)).toEqual({
+    bays: ['A-bay-2', `B-bay-${bays - 3}`],
+    frames: ['A-frame-2', 'A-frame-3', `B-frame-${bays - 3}`, `B-frame-${bays - 2}`],
+  });
+});
+
+test('in a run that stands alone, moving goods from one bay to another rechecks these two and the frames at them', () => {
+  const site = withRun(
+    withRun(depot(40), 0, (run) => ({ ...run, backToBack: null })),
+    1,
+    (run) => ({ ...run, backToBack: null }),
+  );
+  const cache = createAuditCache();
+  const before = auditSite(site, TODAY, cache);
+  const [one] = site.runs[0]?.bays[10]?.levels[0]?.placements ?? [];
+  const target = site.runs[1]?.bays[20]?.levels[1];
+  if (one === undefined || target === undefined) throw new Error('no goods');
+  const after = auditSite(movePlacement(site, one.id, { levelId: target.id, atMm: 75 }), TODAY, cache);
+  expect(rechecked(before, after)).toEqual({
+    bays: ['A-bay-10', 'B-bay-20'],
+    frames: ['A-frame-10', 'A-frame-11', 'B-frame-20', 'B-frame-21'],
+  });
+});
+
 test('auditing the same site again makes nothing anew', () => {
   const site = depot();
   const cache = createAuditCache();
@@ -139,6 +183,11 @@ const EDITS: Readonly<Record<string, Edit>> = {
     withBay(site, run, bay, (one) => ({ ...one, levels: one.levels.map((two) => ({ ...two, heightMm: two.heightMm + by })) })),
   anchors: (site, run, frame, by) => withFrame(site, run, frame, (one) => ({ ...one, anchored: 'no', heightMm: one.heightMm + by })),
   damage: (site, run, frame, by) => withFrame(site, run, frame, (one) => ({ ...one, damages: [...one.damages, bent(by)] })),
+  'take out': (site, run, bay) =>
+    withRun(site, run, (one) =>
+      one.bays.length < 2 ? one : { ...one, bays: one.bays.filter((_, i) => i !== bay), frames: one.frames.slice(0, one.bays.length) },
+    ),
+  'turn round': (site, run) => withRun(site, run, (one) => ({ ...one, bays: one.bays.toReversed(), frames: one.frames.toReversed() })),
   rename: (site, run, _, by) => withRun(site, run, (one) => ({ ...one, name: `${one.name}${by}` })),
   truck: (site, run) => withRun(site, run, (one) => ({ ...one, loadedBy: one.loadedBy === 'class-400' ? 'class-300b' : 'class-400' })),
   floor: (site, run) => withRun(site, run, (one) => ({ ...one, floorId: one.floorId === null ? 'floor' : null })),
