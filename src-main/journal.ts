@@ -114,6 +114,15 @@ export class Journal {
     );
   }
 
+  /** After the site was removed: no edits of it are offered or bring it back, but they can be found. */
+  removed(id: string): Promise<void> {
+    return this.#turns.take(id, async () => {
+      this.#own.delete(id);
+      this.#offered.delete(id);
+      for (const { name } of await this.#files.find(id)) await this.#files.putAway(name).catch(() => undefined);
+    });
+  }
+
   /** The latest edits in a journal that are not in the site as it is on disk. */
   recovered(id: string, bodyOnDisk: string): Promise<RecoveredEdits | null> {
     return this.#turns.take(id, async () => {

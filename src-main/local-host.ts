@@ -110,7 +110,7 @@ export class Machine {
       },
       removeSite: async (id, baseRevision) => {
         await this.#store.remove(id, baseRevision);
-        await journal().clear(id);
+        await journal().removed(id);
       },
       importSite: (text, unchecked = false) => this.#store.importText(text, unchecked),
       addDemoSite: () => this.#addDemo(),

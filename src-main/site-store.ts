@@ -102,8 +102,9 @@ export class SiteStore {
           held.stillHeld();
           const kept = `${id}-${stampOf(this.#now().toISOString())}-${present.revision.slice(0, 8)}${SITE_FILE_END}`;
           await renameOver(this.#fs, this.#pathOf(id), join(this.folders.removed, kept));
-          await this.#fs.syncFolder(this.folders.removed);
-          await this.#fs.syncFolder(this.folders.sites);
+          // It is removed; after a power cut it may be back, which loses nothing.
+          await this.#fs.syncFolder(this.folders.removed).catch(() => undefined);
+          await this.#fs.syncFolder(this.folders.sites).catch(() => undefined);
         }),
       ),
     );

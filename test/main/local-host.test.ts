@@ -27,6 +27,19 @@ test('a site whose file is gone while its journal is there is put back at the st
   expect(site.recovered).toBeNull();
 });
 
+test('a removed site is not brought back by a journal that an earlier run left', async () => {
+  const top = temporaryFolder();
+  const first = (await startMachine(top)).machine.page();
+  const { revision } = await first.saveSite({ id: 's', body: bodyOf('s', 1), baseRevision: null });
+  await first.appendJournal({ id: 's', baseRevision: revision, body: bodyOf('s', 2), edit: 'Add bay' });
+  const { machine, sites } = await startMachine(top);
+  await machine.page().removeSite('s', revision);
+  const next = (await startMachine(top)).machine.page();
+  expect(await next.listSites()).toEqual([]);
+  expect((await next.about()).notices).toEqual([]);
+  expect(readdirSync(join(sites, 'journal', 'left-out'))).toHaveLength(1);
+});
+
 test('a chosen sites folder that is missing is not made, and is told by every call', async () => {
   const top = temporaryFolder();
   const share = join(top, 'share');

@@ -34,7 +34,7 @@ interface Said {
   readonly edits: number;
 }
 
-async function runAndKill(child: string, folder: string, writer: string, delay: number, onStart: () => void): Promise<Said> {
+async function runAndKill(child: string, folder: string, writer: string, delay: number, onStart: (pid: number) => void): Promise<Said> {
   const program = spawn(process.execPath, [child, folder, writer], { stdio: ['ignore', 'pipe', 'pipe'] });
   let out = '';
   let err = '';
@@ -44,7 +44,7 @@ async function runAndKill(child: string, folder: string, writer: string, delay: 
     out += piece.toString();
     if (started || !out.includes('started')) return;
     started = true;
-    onStart();
+    onStart(program.pid ?? 0);
     setTimeout(() => program.kill('SIGKILL'), delay);
   });
   const [, signal] = (await once(program, 'close')) as [number | null, string | null];
@@ -56,8 +56,12 @@ async function runAndKill(child: string, folder: string, writer: string, delay: 
   return { saved: saved.at(-1) ?? 0, edited: edited.at(-1) ?? 0, saves: saved.length, edits: edited.length };
 }
 
-const temporary = (folder: string): number =>
-  readdirSync(folder, { recursive: true, encoding: 'utf8' }).filter((name) => makerOfTemp(name) !== null).length;
+/** @param running the program that may be writing one of its own just now */
+const temporary = (folder: string, running = 0): number =>
+  readdirSync(folder, { recursive: true, encoding: 'utf8' }).filter((name) => {
+    const maker = makerOfTemp(name);
+    return maker !== null && maker.pid !== running;
+  }).length;
 
 export async function killLoop(
   kills: number,
@@ -95,8 +99,8 @@ export async function killLoop(
     };
     await begin();
     while (report.kills < kills) {
-      const said = await runAndKill(child, folder, writer, draw() < 0.1 ? 0 : draw() * 300, () => {
-        report.temporaryAfterStart += temporary(sites);
+      const said = await runAndKill(child, folder, writer, draw() < 0.1 ? 0 : draw() * 300, (pid) => {
+        report.temporaryAfterStart += temporary(sites, pid);
       });
       report.kills++;
       report.temporaryAfterKill += temporary(sites);
