@@ -4,9 +4,10 @@
  */
 import { createContext } from 'svelte';
 import { SvelteMap } from 'svelte/reactivity';
-import type { SiteAudit } from '../src-core/audit/types';
+import { auditBay } from '../src-core/audit/audit';
+import { createAuditCache } from '../src-core/audit/cache';
+import type { BayAudit } from '../src-core/audit/types';
 import type { Host, HostFailure, RecordsOnDisk } from '../src-core/host';
-import { worstVerdict } from '../src-core/checks/finding';
 import { RULE_SET_TITLES } from '../src-core/checks/rule-sets';
 import type { Id, Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
@@ -20,6 +21,7 @@ import type { Visit } from '../src-core/visit/visit';
 import { sha256Of } from './checksum';
 import { failureOf } from './host';
 import type { OpenSite } from './open-site.svelte';
+import { roundsAudit } from './visit/rounds-audit';
 
 /** Wait before what could not be saved is tried again, ms. */
 const AGAIN = 5000;
@@ -51,16 +53,14 @@ export class Rounds {
 
   /** What is not on the disk yet, by the id under which it is saved. */
   #waiting = new SvelteMap<string, () => Promise<void>>();
+  #cache = createAuditCache();
   #revisions: Record<string, string> = {};
   #queue: Promise<void> = Promise.resolve();
   #timer: ReturnType<typeof setTimeout> | null = null;
 
   visit = $derived(this.visits.find(({ id }) => id === this.visitId) ?? null);
-  /** The site's findings as far as they are known now. */
-  audit = $derived.by((): SiteAudit => {
-    const runs = this.open.site.runs.flatMap(({ id }) => this.open.audits.get(id) ?? []);
-    return { verdict: worstVerdict(runs.map(({ verdict }) => verdict)), runs };
-  });
+  /** The site's findings as far as they are known now, whole for bays where a sag was read. */
+  audit = $derived.by(() => roundsAudit(this.open.site, this.open.audits, this.visits, this.bayAudit));
   actions = $derived.by((): readonly OpenAction[] =>
     actionsOf({ site: this.open.site, audit: this.audit, visits: this.visits, followUp: this.followUp, today: this.open.today() }),
   );
@@ -71,6 +71,9 @@ export class Rounds {
     this.open = open;
     this.followUp = newFollowUp(open.id);
   }
+
+  /** One bay with every calculation. */
+  bayAudit = (runId: Id, bayId: Id): BayAudit => auditBay(this.open.site, runId, bayId, this.open.today(), this.#cache);
 
   get saved(): boolean {
     return this.#waiting.size === 0;

@@ -1,6 +1,6 @@
 /** Findings as parts of a paper: what is wrong first, then what is within, and what has to be found out. */
 import type { BayAudit, FrameAudit, LevelAudit, RunAudit } from '../audit/types';
-import { compareVerdicts, type Finding, type Place } from '../checks/finding';
+import { compareVerdicts, type CheckName, type Finding, type Place } from '../checks/finding';
 import type { Bay, Run, Site } from '../site/site';
 import { ratioOf } from '../units/quantity';
 import { say, type Text } from '../units/text';
@@ -94,25 +94,27 @@ export function findingBlocks(names: BayNames, findings: readonly Finding[]): re
           ),
         ]),
     ...missingBlocks(findings),
-    ...(within.length === 0
-      ? []
-      : [
-          table(
-            'What is within',
-            ['Where', 'Check', 'Verdict', '#Used', 'What was found'],
-            within.map((one) => row(one, [one.says])),
-          ),
-        ]),
-    ...(others.length === 0
-      ? []
-      : [
-          table(
-            'For information, not counted in the verdict',
-            ['Where', 'Check', '#Used', 'What was found'],
-            others.map((one) => [[placeTitle(names, one.place)], [CHECK_WORDS[one.check].name], used(one.utilisation), one.says]),
-          ),
-        ]),
+    ...byCheck(names, 'What is within, each check where it is used furthest', within),
+    ...byCheck(names, 'For information, not counted in the verdict', others.toSorted(byWeight)),
   ];
+}
+
+/** One row a check, so that a sheet stays short: every single place stands in the worked calculation. */
+function byCheck(names: BayNames, caption: string, findings: readonly Finding[]): readonly Block[] {
+  const checks = new Map<CheckName, readonly Finding[]>();
+  for (const one of findings) checks.set(one.check, [...(checks.get(one.check) ?? []), one]);
+  if (checks.size === 0) return [];
+  const rows = Array.from(checks.values(), (all): readonly Cell[] => {
+    const [worst] = all as readonly [Finding, ...Finding[]];
+    const where = placeTitle(names, worst.place);
+    return [
+      [CHECK_WORDS[worst.check].name],
+      [all.length === 1 ? where : `${where}; ${all.length} places in all`],
+      used(worst.utilisation),
+      worst.says,
+    ];
+  });
+  return [table(caption, ['Check', 'Where', '#Used', 'What was found'], rows)];
 }
 
 /** What is not known, each once, and how to get it. */

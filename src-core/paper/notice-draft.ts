@@ -11,7 +11,7 @@ import { dateWords } from '../units/dates';
 import { forceOf, lengthOf, massOf } from '../units/quantity';
 import { say, type Text } from '../units/text';
 import { closingBlocks, paperOf, type PaperInput } from './context';
-import { fact, facts, heading, list, paragraph, remark, table, type Paper } from './paper';
+import { heading, list, paragraph, remark, table, type Paper } from './paper';
 
 export interface NoticeItem {
   readonly item: string;
@@ -84,7 +84,11 @@ export function draftNotice(input: PaperInput, bayId: Id, contact: string): Pape
       paragraph([
         'Draft for the competent person. It repeats what was entered and rates nothing: a notice is valid only once the supplier, the maker or a competent engineer has confirmed it.',
       ]),
-      facts(items.map(({ item, says }) => fact(item, says ?? ['—  missing']))),
+      table(
+        'What the notice says',
+        ['Item', 'On the notice'],
+        items.map(({ item, says }) => [[item], says ?? ['missing']]),
+      ),
       ...list([
         ['Loads are safe working loads for goods evenly spread on the pair of beams.'],
         ['Do not alter the rack. A moved, added or removed beam makes this notice void.'],

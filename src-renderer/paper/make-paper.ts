@@ -26,10 +26,9 @@ export interface PaperWish {
 
 /** What a paper needs of the site that it is not about: nothing but what the page knows already. */
 async function inputFor(rounds: Rounds, runIds: readonly Id[], program: string, person: string): Promise<PaperInput> {
-  const { site, audits, today } = rounds.open;
-  const runs = site.runs.map(({ id }) =>
-    runIds.includes(id) ? auditRun(site, id, today()) : (audits.get(id) ?? auditRun(site, id, today())),
-  );
+  const { site, today } = rounds.open;
+  const known = new Map(rounds.audit.runs.map((run) => [run.runId, run]));
+  const runs = site.runs.map(({ id }) => (runIds.includes(id) ? undefined : known.get(id)) ?? auditRun(site, id, today()));
   const audit: SiteAudit = { verdict: worstVerdict(runs.map(({ verdict }) => verdict)), runs };
   return { site, audit, checksum: await checksumOf(site), program, today: today(), person };
 }

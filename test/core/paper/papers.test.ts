@@ -174,7 +174,7 @@ test('a draft notice repeats what was entered, and lists what is missing and how
   expect(stated.get('Report damage to')).toBeNull();
   const paper = draftNotice(inputOf(site), 'A-bay-1', '');
   const words = wordsOf(paper);
-  expect(words).toContain('Greatest load of a level, evenly spread on the pair of beams: level 1: 2 500 kg; level 2: 2 000 kg');
+  expect(words).toContain('Greatest load of a level, evenly spread on the pair of beams | level 1: 2 500 kg; level 2: 2 000 kg');
   expect(words).toContain('Missing: 2 of 13');
   expect(words.join('\n')).toContain('rates nothing');
   expect(wordsOf(draftNotice(inputOf(siteOf()), 'A-bay-1', 'P. Responsible')).join('\n')).toContain('Missing: 1 of 13');
