@@ -66,7 +66,7 @@ const NUDGES: readonly (readonly [prefix: string, mm: number])[] = [
 
 export const COMMANDS: readonly Command[] = [
   // ------------------------------------------------------------ site
-  command('save', 'Site', 'Save', ['Mod+S'], always, ({ open }) => void open.save()),
+  command('save', 'Site', 'Save', ['Mod+S'], always, ({ shell }) => void shell.save()),
   screen('history', 'Earlier states'),
   command('site-form', 'Site', 'Site name, units and place', [], always, ({ shell, open }) => {
     shell.show('rules');

@@ -135,6 +135,35 @@ export class Shell {
       await this.openSite(entry.id);
     });
 
+  /** Saves the open site; where it was changed elsewhere meanwhile, asks what is to become of the two. */
+  save = async (): Promise<void> => {
+    const open = this.open;
+    if (open === null || (await open.save())) return;
+    if (open.saving.failure?.code === 'stale') this.dialog = { kind: 'stale' };
+  };
+
+  /**
+   * Takes up edits that reached the journal but were not saved, as one edit that can be undone.
+   * They were made on `baseRevision`: if someone saved the site since, saving them asks first.
+   */
+  takeUp = (site: Site, baseRevision: string | null): void => {
+    const { open } = this;
+    this.dialog = null;
+    if (open === null) return;
+    open.edit('Take up recovered changes', () => site);
+    open.saving.revision = baseRevision;
+    open.say('The recovered changes are back. They are not saved yet.');
+  };
+
+  leaveOut = (): Promise<void> =>
+    this.#attempt(async () => {
+      const { open } = this;
+      this.dialog = null;
+      if (open === null) return;
+      await this.host.clearJournal(open.id);
+      open.say('The recovered changes were left out.');
+    });
+
   /** Back to the list of sites; asks first where something is not saved. */
   leave = (): void => {
     if (this.open === null) return;

@@ -57,6 +57,14 @@ test('a site that was changed elsewhere is not overwritten: the save is refused 
   expect(open.site.name).toBe('Mine');
 });
 
+test('a save that is refused as stale asks what is to become of the two states', async () => {
+  const open = await opened();
+  rename(open, 'Mine');
+  await host.saveSite({ id: 'site', body: writeSite(newSite('site', 'Theirs')), baseRevision: '1' });
+  await shell.save();
+  expect(shell.dialog).toEqual({ kind: 'stale' });
+});
+
 async function staleSite(): Promise<OpenSite> {
   const open = await opened();
   rename(open, 'Mine');
@@ -100,6 +108,50 @@ test('edits that were journalled but not saved are offered when the site is open
   expect(dialog).toMatchObject({ kind: 'recovered', problem: null, recovered: { edits: ['Rename'], baseRevision: '1' } });
   expect(dialog?.kind === 'recovered' && dialog.site?.name).toBe('Renamed');
   expect(next.open?.site.name).toBe('Harbour shed');
+});
+
+/** A program that ended after an edit had reached the journal, started again. */
+async function recoveredShell(): Promise<Shell> {
+  const open = await opened();
+  rename(open, 'Renamed');
+  await open.saving.settled();
+  const next = new Shell(host, null, () => '2026-12-01');
+  await next.start();
+  await next.openSite('site');
+  return next;
+}
+
+test('recovered edits that are taken up are one undoable edit, and saved like any other', async () => {
+  const next = await recoveredShell();
+  const { dialog } = next;
+  if (dialog?.kind !== 'recovered' || dialog.site === null) throw new Error('nothing was recovered');
+  next.takeUp(dialog.site, dialog.recovered.baseRevision);
+  expect(next.dialog).toBeNull();
+  expect(next.open?.site.name).toBe('Renamed');
+  expect(next.open?.saved).toBe('unsaved');
+  next.open?.undo();
+  expect(next.open?.saved).toBe('saved');
+  next.open?.redo();
+  await next.save();
+  expect(nameOnDisk()).toBe('Renamed');
+});
+
+test('recovered edits of a revision that was replaced meanwhile overwrite nothing: saving them asks', async () => {
+  const next = await recoveredShell();
+  const { dialog } = next;
+  if (dialog?.kind !== 'recovered' || dialog.site === null) throw new Error('nothing was recovered');
+  await host.saveSite({ id: 'site', body: writeSite(newSite('site', 'Theirs')), baseRevision: '1' });
+  next.takeUp(dialog.site, dialog.recovered.baseRevision);
+  await next.save();
+  expect(next.dialog).toEqual({ kind: 'stale' });
+  expect(nameOnDisk()).toBe('Theirs');
+});
+
+test('recovered edits that are left out are gone from the journal', async () => {
+  const next = await recoveredShell();
+  await next.leaveOut();
+  expect(next.open?.saved).toBe('saved');
+  expect(host.kept.get('site')?.journal).toEqual([]);
 });
 
 test('leaving with unsaved edits asks; kept aside they are still in the journal, thrown away they are not', async () => {
