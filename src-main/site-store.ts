@@ -47,6 +47,8 @@ export class SiteStore {
   readonly #lockTimes: LockTimes | undefined;
   readonly #turns = new Turns();
   readonly #list: SiteList;
+  /** What was last read or written of each site and found right, so that it is not checked once more. */
+  readonly #known = new Map<string, { readonly revision: string; readonly savedAt: string }>();
   /** Revisions whose rename was not answered in time: if one turns up on disk, it is our own. */
   readonly #unsure = new Map<string, { readonly base: string | null; readonly written: string }>();
 
@@ -73,7 +75,9 @@ export class SiteStore {
       throw new HostError(reading.code, `${intro}\n${sentences(reading.problems)}`);
     }
     if (reading.site.id !== id) throw new HostError('unreadable', misnamed(siteFileName(id), reading.site.id));
-    return { text: reading.text, revision: present.revision, savedAt: reading.savedAt, site: reading.site };
+    const { text, savedAt, site } = reading;
+    this.#known.set(id, { revision: present.revision, savedAt });
+    return { text, revision: present.revision, savedAt, site };
   }
 
   /**
@@ -195,6 +199,7 @@ export class SiteStore {
       throw error;
     }
     this.#unsure.delete(id);
+    this.#known.set(id, { revision, savedAt });
     // The site is safe; what is kept too long is a matter for the next save.
     await thinOut(this.#fs, this.folders, id, this.#now()).catch(() => undefined);
     return { revision, savedAt };
@@ -213,10 +218,18 @@ export class SiteStore {
 
   /** A state that can be read becomes an earlier state; one that cannot is set aside for good. */
   async #keep(id: string, path: string, { bytes, revision }: Present): Promise<void> {
-    const reading = checkBytes(bytes);
-    if (reading.ok) return keepEarlier(this.#fs, this.folders, id, { path, bytes, revision, savedAt: reading.savedAt });
+    const savedAt = this.#savedAt(id, bytes, revision);
+    if (savedAt !== null) return keepEarlier(this.#fs, this.folders, id, { path, bytes, revision, savedAt });
     await this.#fs.makeFolder(this.folders.setAside);
     await keepAs(this.#fs, path, bytes, join(this.folders.setAside, `${id}-${revision.slice(0, 16)}${SITE_FILE_END}`));
+  }
+
+  /** When a site that can be read was saved; null for a file that cannot be read. */
+  #savedAt(id: string, bytes: Uint8Array, revision: string): string | null {
+    const known = this.#known.get(id);
+    if (known?.revision === revision) return known.savedAt;
+    const reading = checkBytes(bytes);
+    return reading.ok ? reading.savedAt : null;
   }
 
   /**
