@@ -87,16 +87,23 @@ export async function openDemo(page: Page): Promise<void> {
   await page.getByRole('heading', { name: 'Findings' }).waitFor();
 }
 
-/** What axe finds on the page as it is, one line a finding. */
-export async function axeFindings(page: Page): Promise<string[]> {
-  await page.evaluate(AXE);
-  return page.evaluate(async () => {
+/**
+ * What axe finds on the page as it is, one line a finding.
+ * @param rules ids of the only rules to run; all of them if left out
+ */
+export async function axeFindings(page: Page, rules: readonly string[] = []): Promise<string[]> {
+  if (!(await page.evaluate(() => 'axe' in globalThis))) await page.evaluate(AXE);
+  return page.evaluate(async (only) => {
     const { axe } = globalThis as unknown as {
-      axe: { run(): Promise<{ violations: { id: string; help: string; nodes: { target: unknown[]; failureSummary: string }[] }[] }> };
+      axe: {
+        run(options: object): Promise<{
+          violations: { id: string; help: string; nodes: { target: unknown[]; failureSummary: string }[] }[];
+        }>;
+      };
     };
-    const { violations } = await axe.run();
+    const { violations } = await axe.run({ resultTypes: ['violations'], ...(only.length === 0 ? {} : { runOnly: only }) });
     return violations.flatMap(({ id, help, nodes }) =>
       nodes.map((node) => `${id}: ${help} at ${String(node.target[0])} ${node.failureSummary}`),
     );
-  });
+  }, rules);
 }

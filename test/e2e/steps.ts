@@ -75,6 +75,10 @@ export const plain = (text: string): string => text.replaceAll(/[\u00a0\u202f]/g
 export const field = (within: Page | Locator, label: string): Locator =>
   within.getByRole('textbox', { name: new RegExp(`^${label}`) }).first();
 
+/** A list to choose from, by the beginning of its label. */
+export const choice = (within: Page | Locator, label: string): Locator =>
+  within.getByRole('combobox', { name: new RegExp(`^${label}`) }).first();
+
 /** Types a value into a field as a user does, and leaves the field. */
 export async function type(field: Locator, text: string): Promise<void> {
   await field.fill(text);
