@@ -1,0 +1,208 @@
+/**
+ * From an empty program to a saved run of 10 bays by 5 levels with goods and a load notice, by keys
+ * alone and by the mouse alone. One action is a key or chord, a click, a drag, or one filled field.
+ */
+import type { Locator, Page } from 'playwright-core';
+import { afterAll, expect, test } from 'vitest';
+import { closeBrowser } from './program';
+import { checked, eventually, field, withProgram } from './steps';
+
+afterAll(closeBrowser);
+
+/** Fewer than this many actions, by either way. */
+const MOST_ACTIONS = 60;
+
+/** Numbers invented for this test. */
+const RUN = { bays: 10, levels: 5, levelKg: 2400, unitLoadsPerLevel: 3 };
+const GOODS = { name: 'Tinned plums', goodsKg: 620 };
+
+/** Counts what a person does; text typed into the field that has the focus is one action, however long. */
+class Hands {
+  /** Keys and clicks. */
+  strokes = 0;
+  filled = 0;
+
+  constructor(private readonly page: Page) {}
+
+  get actions(): number {
+    return this.strokes + this.filled;
+  }
+
+  async press(chord: string, times = 1): Promise<void> {
+    for (let n = 0; n < times; n += 1) {
+      this.strokes += 1;
+      await this.page.keyboard.press(chord);
+    }
+  }
+
+  /** Fills the field that the keys have brought the focus to, whose text Tab has selected. */
+  async type(label: RegExp, text: string): Promise<void> {
+    await eventually(() => this.page.evaluate(focusedLabel)).toMatch(label);
+    this.filled += 1;
+    await this.page.keyboard.insertText(text);
+  }
+
+  async click(target: Locator, position?: { x: number; y: number }): Promise<void> {
+    this.strokes += 1;
+    await target.click(position ? { position } : {});
+  }
+
+  async fill(target: Locator, text: string): Promise<void> {
+    this.filled += 1;
+    await target.fill(text);
+  }
+}
+
+function focusedLabel(): string {
+  const { activeElement } = document;
+  return activeElement instanceof HTMLInputElement ? (activeElement.labels?.[0]?.textContent ?? '') : (activeElement?.tagName ?? '');
+}
+
+/** What the page itself saw of keys and of pointers, so that neither way borrows from the other. */
+async function watchDevices(page: Page): Promise<() => Promise<{ keys: number; pointers: number }>> {
+  await page.evaluate(() => {
+    const seen = { keys: 0, pointers: 0 };
+    Object.assign(globalThis, { seen });
+    addEventListener('keydown', ({ key }) => void (['Control', 'Shift', 'Alt'].includes(key) || (seen.keys += 1)), true);
+    addEventListener('pointerdown', () => void (seen.pointers += 1), true);
+  });
+  return () => page.evaluate(() => (globalThis as unknown as { seen: { keys: number; pointers: number } }).seen);
+}
+
+async function byKeysAlone(page: Page, hands: Hands): Promise<void> {
+  await hands.press('Tab');
+  await hands.type(/^Name of a new site/, 'Quayside store');
+  await hands.press('Enter');
+  await page.getByRole('heading', { name: 'Quayside store has no racks yet' }).waitFor();
+
+  await hands.press('Control+K');
+  await hands.type(/^Command/, 'new run');
+  await hands.press('Enter');
+  await page.getByRole('dialog', { name: 'New run of bays' }).waitFor();
+  await hands.press('Tab');
+  await hands.type(/^Number of bays/, String(RUN.bays));
+  await hands.press('Tab', 2);
+  await hands.type(/^Beam levels/, String(RUN.levels));
+  await hands.press('Tab', 4);
+  await hands.type(/^Rating of each level/, String(RUN.levelKg));
+  await hands.press('Tab');
+  await hands.type(/^Unit loads per level/, String(RUN.unitLoadsPerLevel));
+  await hands.press('Enter');
+  await page.locator('[data-bay]').first().waitFor();
+
+  await hands.press('Control+G');
+  await eventually(() => page.evaluate(focusedLabel)).toBe('SELECT');
+  await hands.press('Tab');
+  await hands.type(/^Name/, GOODS.name);
+  await hands.press('Tab', 4);
+  await hands.type(/^Mass without pallet/, String(GOODS.goodsKg));
+  await hands.press('Enter');
+  await page.locator('[data-placement]').first().waitFor();
+  // Copied from the lowest level to each above it.
+  await hands.press('Control+C');
+  for (let level = 2; level <= RUN.levels; level += 1) {
+    await hands.press('Control+ArrowUp');
+    await page.locator(`[data-level="${level}"][aria-current="true"]`).waitFor();
+    await hands.press('Control+V');
+    await eventually(() => page.locator('[data-placement]').count()).toBe(level);
+  }
+
+  await hands.press('Control+K');
+  await hands.type(/^Command/, 'give other bays');
+  await hands.press('Enter');
+  await page.getByRole('dialog', { name: /^Give other bays/ }).waitFor();
+  await hands.press('Tab', 2);
+  await hands.press('Enter');
+  await page.getByRole('dialog').waitFor({ state: 'detached' });
+  await hands.press('Control+S');
+}
+
+async function byMouseAlone(page: Page, hands: Hands): Promise<void> {
+  const button = (name: string | RegExp) => page.getByRole('button', { name, exact: true }).first();
+  await hands.fill(page.getByLabel('Name of a new site'), 'Quayside store');
+  await hands.click(button('Make site'));
+  await hands.click(button('Lay out a run…'));
+  const run = page.getByRole('dialog', { name: 'New run of bays' });
+  await hands.fill(field(run, 'Number of bays'), String(RUN.bays));
+  await hands.fill(field(run, 'Beam levels'), String(RUN.levels));
+  await hands.fill(field(run, 'Rating of each level'), String(RUN.levelKg));
+  await hands.fill(field(run, 'Unit loads per level'), String(RUN.unitLoadsPerLevel));
+  await hands.click(button('Lay out the run'));
+
+  await hands.click(button('Add goods…'));
+  const form = page.locator('[data-form]').first();
+  await hands.fill(field(form, 'Name'), GOODS.name);
+  await hands.fill(field(form, 'Mass without pallet'), String(GOODS.goodsKg));
+  await hands.click(button('Put on this level'));
+  for (let level = 2; level <= RUN.levels; level += 1) {
+    await hands.click(page.locator(`[data-level="${level}"]`), { x: 4, y: 4 });
+    await page.locator(`[data-level="${level}"][aria-current="true"]`).waitFor();
+    await hands.click(button('Put on this level'));
+    await eventually(() => page.locator('[data-placement]').count()).toBe(level);
+  }
+
+  await hands.click(button('Menu'));
+  await hands.click(button('Give other bays this bay’s goods or levels…'));
+  await hands.click(button('Fill'));
+  await page.getByRole('dialog').waitFor({ state: 'detached' });
+  await hands.click(button('Save'));
+}
+
+interface SavedFile {
+  readonly site: {
+    readonly name: string;
+    readonly unitLoads: readonly { id: string; name: string; goodsKg: number }[];
+    readonly notices: readonly { id: string; levelKg: readonly number[]; unitLoadsPerLevel: number }[];
+    readonly runs: readonly {
+      readonly bays: readonly {
+        readonly noticeId: string | null;
+        readonly levels: readonly { readonly placements: readonly { readonly unitLoadId: string }[] }[];
+      }[];
+    }[];
+  };
+}
+
+async function expectSaved(page: Page, siteFiles: () => Promise<ReadonlyMap<string, string>>): Promise<void> {
+  await page
+    .getByText(/^All changes saved/)
+    .first()
+    .waitFor();
+  const files = [...(await siteFiles()).values()];
+  expect(files).toHaveLength(1);
+  const { site } = JSON.parse(files[0] ?? '') as SavedFile;
+  expect(site.name).toBe('Quayside store');
+  expect(site.unitLoads).toMatchObject([GOODS]);
+  expect(site.notices).toMatchObject([{ levelKg: [RUN.levelKg], unitLoadsPerLevel: RUN.unitLoadsPerLevel }]);
+  expect(site.runs).toHaveLength(1);
+  const bays = site.runs[0]?.bays ?? [];
+  expect(bays).toHaveLength(RUN.bays);
+  for (const bay of bays) {
+    expect(bay.noticeId).toBe(site.notices[0]?.id);
+    expect(bay.levels).toHaveLength(RUN.levels);
+    for (const level of bay.levels) expect(level.placements.map((one) => one.unitLoadId)).toEqual([site.unitLoads[0]?.id]);
+  }
+  await checked(page);
+}
+
+test('by keys alone, in fewer than 60 actions', () =>
+  withProgram(async ({ page, siteFiles }) => {
+    await page.getByRole('heading', { name: 'Nothing here yet' }).waitFor();
+    const devices = await watchDevices(page);
+    const hands = new Hands(page);
+    await byKeysAlone(page, hands);
+    await expectSaved(page, siteFiles);
+    expect(await devices()).toEqual({ keys: hands.strokes, pointers: 0 });
+    expect(hands.actions).toBeLessThan(MOST_ACTIONS);
+  }));
+
+test('by the mouse alone, in fewer than 60 actions', () =>
+  withProgram(async ({ page, siteFiles }) => {
+    await page.getByRole('heading', { name: 'Nothing here yet' }).waitFor();
+    const devices = await watchDevices(page);
+    const hands = new Hands(page);
+    await byMouseAlone(page, hands);
+    await expectSaved(page, siteFiles);
+    // Text goes into a filled field at once; no key moves, chooses or presses anything.
+    expect(await devices()).toEqual({ keys: 0, pointers: hands.strokes });
+    expect(hands.actions).toBeLessThan(MOST_ACTIONS);
+  }));
