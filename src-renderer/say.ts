@@ -1,10 +1,10 @@
 /** Times and sizes as people say them. */
 
-/** "today 14:02", or the date where it was another day. */
-export function sayTime(iso: string, locale: string, now = new Date()): string {
+/** "today 14:02", or the date where it was another day; `exactly` with its seconds, where two may be near. */
+export function sayTime(iso: string, locale: string, now = new Date(), exactly = false): string {
   const time = new Date(iso);
   if (Number.isNaN(time.getTime())) return 'at an unknown time';
-  const clock = time.toLocaleTimeString(locale, { hour: '2-digit', minute: '2-digit' });
+  const clock = time.toLocaleTimeString(locale, { hour: '2-digit', minute: '2-digit', ...(exactly ? { second: '2-digit' } : {}) });
   if (time.toDateString() === now.toDateString()) return `today ${clock}`;
   return `${time.toLocaleDateString(locale, { day: 'numeric', month: 'short', year: 'numeric' })} ${clock}`;
 }
