@@ -16,7 +16,7 @@ export function cellWords(cell: Cell, reading: Reading): string {
   return plainSpaces(formatText(cell, reading));
 }
 
-function blockWords(block: Block, reading: Reading): string[] {
+export function blockWords(block: Block, reading: Reading): string[] {
   switch (block.kind) {
     case 'heading':
       return [block.text];

@@ -1,0 +1,70 @@
+/**
+ * Reads PDFs with Poppler's tools, as an auditor's reader would. Gets them where this machine lets us,
+ * and says exactly what is missing where it does not.
+ */
+import { execFileSync, spawnSync } from 'node:child_process';
+
+let ready = false;
+
+function needTools(): void {
+  if (ready) return;
+  const there = () => ['pdftotext', 'pdfinfo', 'pdfimages'].every((tool) => spawnSync(tool, ['-v']).error === undefined);
+  if (!there() && process.platform === 'linux' && process.getuid?.() === 0) {
+    const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
+    for (const args of [
+      ['update', '-q'],
+      ['install', '-y', '-q', 'poppler-utils'],
+    ])
+      spawnSync('apt-get', args, { env, stdio: ['ignore', 'ignore', 'inherit'] });
+  }
+  if (!there())
+    throw new Error('The tests of printed papers need Poppler’s pdftotext, pdfinfo and pdfimages: install the package "poppler-utils".');
+  ready = true;
+}
+
+function run(tool: string, ...args: readonly string[]): string {
+  needTools();
+  return execFileSync(tool, args, { encoding: 'utf8', maxBuffer: 256 * 1024 * 1024 });
+}
+
+export interface PdfFacts {
+  readonly pages: number;
+  readonly tagged: boolean;
+  /** Width and height of each page in points. */
+  readonly sizes: readonly (readonly [width: number, height: number])[];
+  readonly title: string;
+}
+
+export function pdfFacts(path: string): PdfFacts {
+  const text = run('pdfinfo', '-f', '1', '-l', '100000', path);
+  const of = (key: string) => new RegExp(`^${key}:\\s+(.*)$`, 'm').exec(text)?.[1] ?? '';
+  return {
+    pages: Number(of('Pages')),
+    tagged: of('Tagged') === 'yes',
+    sizes: [...text.matchAll(/^Page\s+\d+ size:\s+([\d.]+) x ([\d.]+)/gm)].map(
+      ([, width, height]) => [Number(width), Number(height)] as const,
+    ),
+    title: of('Title'),
+  };
+}
+
+/** Text of each page in the order in which it was set. */
+export const pdfPages = (path: string): readonly string[] => run('pdftotext', '-raw', path, '-').split('\f').slice(0, -1);
+
+/** The document's structure as assistive technology reads it. */
+export const pdfStructure = (path: string): string => run('pdfinfo', '-struct-text', path);
+
+/** Pictures made of pixels: width, height and resolution of each. */
+export function pdfImages(path: string): readonly { readonly width: number; readonly height: number; readonly perInch: number }[] {
+  return run('pdfimages', '-list', path)
+    .split('\n')
+    .slice(2)
+    .filter((line) => line.trim() !== '')
+    .map((line) => {
+      const parts = line.trim().split(/\s+/);
+      return { width: Number(parts[3]), height: Number(parts[4]), perInch: Number(parts[12]) };
+    });
+}
+
+/** Without spaces and line ends, which a reader puts where the lines of a cell happen to break. */
+export const squeezed = (text: string): string => text.replace(/[\s\u00a0\u2009\u202f\u00ad]+/g, '');
