@@ -24,11 +24,28 @@ import { governingOf, verdictOfFindings } from './verdict';
  * @throws RangeError if the site has no such run
  */
 export function auditRun(site: Site, runId: Id, today: string, cache: AuditCache = createAuditCache()): RunAudit {
+  const steps = auditRunInSteps(site, runId, today, cache);
+  for (;;) {
+    const { done, value } = steps.next();
+    if (done) return value;
+  }
+}
+
+/**
+ * The same bay by bay: what is done after each step gets the bay, and may do the rest later or never.
+ * @throws RangeError if the site has no such run
+ */
+export function* auditRunInSteps(site: Site, runId: Id, today: string, cache: AuditCache): Generator<BayAudit, RunAudit> {
   const audit = runAuditor(site, runId, today, cache);
   const { run } = audit;
-  const bays = run.bays.map((_, index) => audit.bay(index));
+  const bays: BayAudit[] = [];
+  for (let index = 0; index < run.bays.length; index++) {
+    const bay = audit.bay(index);
+    bays.push(bay);
+    yield bay;
+  }
   const frames = run.frames.map((_, index) => audit.frame(index));
-  const findings = runFindings(audit.context, { run, place: { runId }, bays: run.bays.map((_, index) => audit.work(index)), frames });
+  const findings = runFindings(audit.context, { run, place: { runId }, frames });
   return {
     runId,
     verdict: worstVerdict([...bays, ...findings.filter(({ counts }) => counts)].map(({ verdict }) => verdict)),
@@ -70,7 +87,6 @@ export function auditSite(site: Site, today: string, cache: AuditCache = createA
 interface RunAuditor {
   readonly context: SiteContext;
   readonly run: Run;
-  readonly work: (index: number) => BayWork;
   readonly frameWork: (index: number) => FrameWork;
   readonly frame: (index: number) => FrameAudit;
   readonly bay: (index: number) => BayAudit;
@@ -82,7 +98,7 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
   if (run === undefined) throw new RangeError(`no run "${runId}" in the site`);
   const behind = run.backToBack === null ? null : (context.runs.get(run.backToBack.runId) ?? null);
   const libraries = [site.pallets, site.unitLoads, site.notices, site.beamTypes, site.frameTypes, site.rules, runId];
-  const surroundings = [
+  const around = [
     ...libraries,
     site.floors,
     site.seismic,
@@ -92,9 +108,14 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
     run.floorId,
     run.loadedBy,
     run.twoDeep,
-    run.backToBack,
     behind?.name,
+    // Not the tie itself, which is another value in every copy of the run.
+    run.backToBack?.runId,
+    run.backToBack?.gapMm,
+    run.backToBack?.rowSpacers,
   ];
+  // One value that stands for all of them, as every bay and frame asks.
+  const surroundings = cache.remember(`surroundings of ${runId}`, site.unitLoads, around, () => ({}));
   // Asked once: a bay far off may break the mirror image of the two runs.
   const exact = behind !== null && mirrored(run, behind);
   /** What stands behind bay `index`, or behind all of them where it is not known which. */
@@ -159,29 +180,29 @@ function runAuditor(site: Site, runId: Id, today: string, cache: AuditCache): Ru
       behind: () => {
         if (behind === null) return [];
         const other = runAuditor(site, behind.id, today, cache);
-        return exact
-          ? [other.frameWork(counterpart(index, behind.frames.length))]
-          : behind.frames.map((_, i) => other.frameWork(i));
+        return exact ? [other.frameWork(counterpart(index, behind.frames.length))] : behind.frames.map((_, i) => other.frameWork(i));
       },
     };
   };
 
-  const frame = (index: number): FrameAudit => {
+  /** Each frame is asked for by the bays at both its sides and by the run. */
+  const made: FrameAudit[] = [];
+  const frame = (index: number): FrameAudit => (made[index] ??= frameAudited(index));
+
+  const frameAudited = (index: number): FrameAudit => {
     const one = frameAt(index);
     const { bays, frames } = run;
-    const from = [bays[index - 1], bays[index], frames[index - 1], frames[index + 1], ...behindFrame(index), ...surroundings];
+    const from = [bays[index - 1], bays[index], frames[index - 1], frames[index + 1], ...behindFrame(index), surroundings];
     return cache.remember('frame', one, from, () => frameAudit(context, frameWork(index)));
   };
 
   const bay = (index: number): BayAudit => {
     const [one, left, right] = bayAt(run, index);
-    const own = cache.remember('bay', one, [left, right, ...behindBay(index), ...surroundings], () =>
-      ownAudit(context, work(index)),
-    );
+    const own = cache.remember('bay', one, [left, right, ...behindBay(index), surroundings], () => ownAudit(context, work(index)));
     const frames = [frame(index), frame(index + 1)];
     return cache.remember('whole bay', one, [own, ...frames], () => withFrames(one, own, frames));
   };
-  return { context, run, work, frameWork, frame, bay };
+  return { context, run, frameWork, frame, bay };
 }
 
 function bayAt(run: Run, index: number): readonly [Bay, Run['frames'][number], Run['frames'][number]] {

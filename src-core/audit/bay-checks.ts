@@ -164,12 +164,12 @@ function everythingIn(work: BayWork): PartMass {
 }
 
 /** What concerns a run as a whole. */
-export function runFindings(context: SiteContext, { run, place, bays, frames }: RunWork): readonly Finding[] {
+export function runFindings(context: SiteContext, { run, place, frames }: RunWork): readonly Finding[] {
   const floor = run.floorId === null ? null : (context.floors.get(run.floorId) ?? null);
   if (!asked(context, 'floor-area') || floor?.kind !== 'suspended') return [];
   const types = run.frames.map(({ typeId }) => (typeId === null ? null : (context.frameTypes.get(typeId) ?? null)));
   let legs = 0;
-  let length = bays.reduce((sum, { bay }) => sum + bay.clearEntryMm, 0);
+  let length = run.bays.reduce((sum, { clearEntryMm }) => sum + clearEntryMm, 0);
   let depth = Infinity;
   for (const [i, { legFrontN, legRearN }] of frames.entries()) {
     const type = types[i] ?? null;

@@ -115,7 +115,6 @@ export interface FrameWork {
 export interface RunWork {
   readonly run: Run;
   readonly place: Place;
-  readonly bays: readonly BayWork[];
   readonly frames: readonly FrameAudit[];
 }
 
