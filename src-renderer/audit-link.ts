@@ -124,7 +124,7 @@ export class AuditLink {
       const { runId } = message.change.run;
       const audit = applyAuditChange(this.#received.get(runId), message.change);
       this.#received.set(runId, audit);
-      if (this.#upToDate(runId, message.version)) this.listener.audited(audit);
+      if (!message.change.more && this.#upToDate(runId, message.version)) this.listener.audited(audit);
     }
   }
 

@@ -16,18 +16,26 @@ function once<T extends object>(part: T, make: (part: T) => T): T {
   return made;
 }
 
-const lightFindings = (findings: readonly Finding[]): readonly Finding[] => findings.map((finding) => ({ ...finding, worked: [] }));
+/** Part by part: a copy of all would write the calculation only to drop it, and that is most of the work. */
+const lightFinding = (finding: Finding): Finding =>
+  once(finding, ({ check, place, verdict, utilisation, demand, allowed, says, missing, notes, counts }) => ({
+    ...{ check, place, verdict, utilisation, demand, allowed, says, missing, notes, counts },
+    worked: [],
+  }));
 
-const lightGoverning = (governing: Finding | null): Finding | null => governing && { ...governing, worked: [] };
+const lightFindings = (findings: readonly Finding[]): readonly Finding[] => findings.map(lightFinding);
 
-const lightLevel = (level: LevelAudit): LevelAudit => ({
-  ...level,
-  governing: lightGoverning(level.governing),
-  effects: null,
-  findings: lightFindings(level.findings),
-});
+const lightGoverning = (governing: Finding | null): Finding | null => governing && lightFinding(governing);
 
-const lightBay = (bay: BayAudit): BayAudit =>
+const lightLevel = (level: LevelAudit): LevelAudit =>
+  once(level, () => ({
+    ...level,
+    governing: lightGoverning(level.governing),
+    effects: null,
+    findings: lightFindings(level.findings),
+  }));
+
+export const lightBay = (bay: BayAudit): BayAudit =>
   once(bay, () => ({
     ...bay,
     governing: lightGoverning(bay.governing),

@@ -72,6 +72,8 @@ export interface AuditChange {
   readonly run: RunAudit;
   readonly bays: ListChange<BayAudit>;
   readonly frames: ListChange<FrameAudit>;
+  /** More of the same audit follows: until then the run is not whole. */
+  readonly more: boolean;
 }
 
 const bayIdOf = (bay: BayAudit): Id => bay.bayId;
@@ -81,7 +83,19 @@ export const auditChangeOf = (before: RunAudit | undefined, after: RunAudit): Au
   run: { ...after, bays: [], frames: [] },
   bays: listChange(before?.bays ?? [], after.bays, bayIdOf),
   frames: listChange(before?.frames ?? [], after.frames, frameIdOf),
+  more: false,
 });
+
+/** The same change in parts of so many bays and frames at most, so that no part is long to take in. */
+export function inParts(change: AuditChange, most: number): readonly AuditChange[] {
+  const { bays, frames } = change;
+  const count = Math.max(1, Math.ceil(Math.max(bays.changed.length, frames.changed.length) / most));
+  const part = <T>({ order, changed }: ListChange<T>, i: number): ListChange<T> => ({
+    order,
+    changed: changed.slice(i * most, (i + 1) * most),
+  });
+  return Array.from({ length: count }, (_, i) => ({ ...change, bays: part(bays, i), frames: part(frames, i), more: i < count - 1 }));
+}
 
 export const applyAuditChange = (before: RunAudit | undefined, { run, bays, frames }: AuditChange): RunAudit => ({
   ...run,
