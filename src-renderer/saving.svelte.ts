@@ -8,8 +8,13 @@ import { failureOf } from './host';
 
 export type SavedState = 'saved' | 'unsaved' | 'saving' | 'failed';
 
-/** Longest time an edit waits for its place in the journal, ms; the rest of the two seconds is for the disk. */
-const JOURNAL_AFTER = 500;
+/** An edit waits this long for others that follow at once, ms. */
+const JOURNAL_AFTER = 300;
+/**
+ * The journal takes the whole site, so entries keep this distance, ms: it is also the longest an edit
+ * waits for its place in it. The rest of the two seconds is for the disk.
+ */
+const JOURNAL_EVERY = 1500;
 /** Wait before a journal that could not be written is tried again, ms. */
 const JOURNAL_AGAIN = 5000;
 
@@ -46,6 +51,8 @@ export class Saving {
   /** Number of edits that are on disk, counted since the site was opened. */
   #onDiskEdits = 0;
   #timer: ReturnType<typeof setTimeout> | null = null;
+  /** When an edit was last sent to the journal. */
+  #journalledAt = -Infinity;
   #closed = false;
 
   constructor(options: SavingOptions) {
@@ -68,7 +75,7 @@ export class Saving {
   edited(site: Site, name: string): void {
     this.#current = site;
     this.#edits.push(name);
-    this.#journalIn(JOURNAL_AFTER);
+    this.#journalIn(Math.max(JOURNAL_AFTER, this.#journalledAt + JOURNAL_EVERY - performance.now()));
   }
 
   /** @returns whether the site is on disk now */
@@ -131,6 +138,7 @@ export class Saving {
           await this.#host.clearJournal(this.id);
           this.#forget(this.#onDiskEdits + count);
         } else {
+          this.#journalledAt = performance.now();
           const body = await this.#write(site);
           const edit = this.#edits.slice(this.#journalled, count).join('; ');
           await this.#host.appendJournal({ id: this.id, baseRevision: this.revision, body, edit });

@@ -38,6 +38,8 @@ test('an edit is in the journal within two seconds, however fast others follow',
   }
   await vi.advanceTimersByTimeAsync(2000);
   expect(journal().at(-1)?.name).toBe('name 39');
+  // Each entry is the whole site: four seconds of editing make four of them, not forty.
+  expect(journal()).toHaveLength(4);
   expect(journal().flatMap(({ edit }) => edit.split('; '))).toEqual(edits.map((_, i) => `edit ${i}`));
   expect(saving.unjournalled).toBe(false);
 });
