@@ -39,9 +39,8 @@ export function freePlace(site: Site, { bay, level }: Stand, widthMm: number): n
   const loadedBy = bayPlace(site, bay.id)?.run.loadedBy ?? 'unknown';
   const gaps = gapsAt(resolveRules(site.rules), loadedBy, level?.heightMm ?? 0);
   const opening = { entry: bay.clearEntryMm, gaps, width: widthMm, others };
-  // The middle of the beam is the hardest place for it and never the first choice.
-  const first = catchingPlaces(opening).find(({ by }) => by !== 'middle of the beam');
-  const tight = catchingPlaces({ ...opening, gaps: { upright: 0, loads: 0 } })[0];
+  const [first] = catchingPlaces(opening);
+  const [tight] = catchingPlaces({ ...opening, gaps: { upright: 0, loads: 0 } });
   return (first ?? tight)?.at ?? null;
 }
 

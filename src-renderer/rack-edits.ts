@@ -7,6 +7,8 @@ import {
   addLevel,
   addRun,
   editBay,
+  editFrame,
+  editLevel,
   editRun,
   fillBays,
   moveBay,
@@ -199,4 +201,22 @@ export function fillLike(open: OpenSite, targets: readonly Bay[], what: 'goods' 
     fillBays(site, pattern.id, ids, what, newId),
   );
   if (done === null) open.say(`${countOf(ids.length, 'bay')} filled like bay ${pattern.name}.`);
+}
+
+/** Gives other frames the type, height and anchoring of one; surveys and damages stay their own. */
+export function likeFrame(open: OpenSite, { name, typeId, heightMm, anchored, restrained }: Frame, others: readonly Frame[]): void {
+  const what = countOf(others.length, 'frame');
+  const refused = open.edit(`Make ${what} like frame ${name}`, (site) =>
+    others.reduce((next, { id }) => editFrame(next, id, { typeId, heightMm, anchored, restrained }), site),
+  );
+  if (refused === null) open.sayDone(`${what} now like frame ${name}.`);
+}
+
+/** Gives other levels the beams, locks and deck of one; heights and goods stay their own. */
+export function likeLevel(open: OpenSite, { beamTypeId, locks, deck }: Level, others: readonly Level[]): void {
+  const what = countOf(others.length, 'level');
+  const refused = open.edit(`Give ${what} the same beams, locks and deck`, (site) =>
+    others.reduce((next, { id }) => editLevel(next, id, { beamTypeId, locks, deck }), site),
+  );
+  if (refused === null) open.sayDone(`${what} now with the same beams, locks and deck.`);
 }

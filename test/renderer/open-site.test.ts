@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { afterEach, beforeEach, expect, test, vi } from 'vitest';
-import { editBay, editEntry } from '../../src-core/site/edits';
+import { editBay, editEntry, editRun } from '../../src-core/site/edits';
 import type { Site } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
 import type { WorkerLike } from '../../src-renderer/audit-link';
@@ -319,4 +319,18 @@ test('switching the view between unit systems is no edit and changes nothing in 
   expect(open.reading.units).toBe('us');
   expect(open.saved).toBe('saved');
   expect(writeSite(open.site)).toBe(before);
+});
+
+test('goods put on one after the other stand from the left, each with the gap asked for, until there is no place', async () => {
+  const { open } = await openSite();
+  const crate = open.site.unitLoads[0];
+  const run = open.run?.id ?? '';
+  if (!crate) throw new Error('no unit load');
+  open.edit('Trucks', (site) => editRun(site, run, { loadedBy: 'class-400' }));
+  choose(open, 1, 0);
+  expect([0, 1, 2].map(() => putGoods(open, crate, false))).toEqual([null, null, null]);
+  // 3 × 800 and 4 gaps of 75 fill 2 700 mm (facts F-55).
+  expect(open.level?.placements.map((one) => one.atMm)).toEqual([75, 950, 1825]);
+  expect(putGoods(open, crate, false)).toMatch(/^There is no free place 800\smm wide on bay A2, level 1\./);
+  expect(open.level?.placements).toHaveLength(3);
 });
