@@ -114,12 +114,12 @@ function opening(input: PaperInput, visit: Visit, seen: readonly Seen[], rules: 
 const SHORT: Readonly<Record<BayVisit['checklist'][(typeof CHECKLIST)[number]], string>> = {
   yes: 'yes',
   no: 'NO',
-  'not-looked-at': 'not looked at',
+  'not-looked-at': '–',
 };
 
 function checklistTable(seen: readonly Seen[]): Block {
   return table(
-    'Answers by bay; “yes” = as it must be',
+    'Answers by bay: “yes” = as it must be, “–” = not looked at',
     ['Bay', ...CHECKLIST.map((item) => CHECKLIST_WORDS[item].name), 'By', 'On'],
     seen.map(({ bay, seen: one }) => [
       [bay.name],

@@ -52,7 +52,7 @@ export function pdfFacts(path: string): PdfFacts {
 export const pdfPages = (path: string): readonly string[] => run('pdftotext', '-raw', path, '-').split('\f').slice(0, -1);
 
 /** The document's structure as assistive technology reads it. */
-export const pdfStructure = (path: string): string => run('pdfinfo', '-struct-text', path);
+export const pdfStructure = (path: string): string => run('pdfinfo', '-struct', path);
 
 /** Pictures made of pixels: width, height and resolution of each. */
 export function pdfImages(path: string): readonly { readonly width: number; readonly height: number; readonly perInch: number }[] {

@@ -1,0 +1,285 @@
+/** Every kind of paper with 1 bay and with 200, on A4 and Letter, in both unit systems, as a PDF reader finds it. */
+import { mkdtemp, rm } from 'node:fs/promises';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { deflateSync } from 'node:zlib';
+import type { Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { PAPER_KINDS, type PaperKind } from '../../src-core/paper/paper';
+import { editFrame } from '../../src-core/site/edits';
+import type { Site } from '../../src-core/site/site';
+import { attachPhoto, finishBay, recordDamage } from '../../src-core/visit/edits';
+import { writeVisit } from '../../src-core/visit/read-visit';
+import { startVisit, type Visit } from '../../src-core/visit/visit';
+import { BesideStore } from '../../src-main/beside-store';
+import { foldersIn } from '../../src-main/file-names';
+import { nodeFs } from '../../src-main/fs-port';
+import { SiteStore } from '../../src-main/site-store';
+import { PAPER_TITLES } from '../../src-renderer/paper/titles';
+import { siteOf } from '../core/visit/make-run';
+import { pdfFacts, pdfImages, pdfPages, pdfStructure, squeezed } from './poppler';
+import { closeBrowser, startProgram, type Program } from './program';
+import { choice, command, eventually, withProgram } from './steps';
+
+afterAll(closeBrowser);
+
+/** A run in which every fourth frame is bent, by a little more each time. */
+function damagedSite(bays: number): Site {
+  let site = siteOf({ bays });
+  for (let n = 1; n <= bays; n += 4)
+    site = editFrame(site, `A-frame-${n}`, {
+      damages: [
+        {
+          id: `d${n}`,
+          member: 'upright-front',
+          alongMm: 4 + (n % 8),
+          acrossMm: 1,
+          gaugeMm: 1000,
+          torn: false,
+          note: '',
+          found: '2026-11-20',
+        },
+      ],
+    });
+  return site;
+}
+
+function visitOf(bays: number): Visit {
+  const all = Array.from({ length: bays }, (_, i) => ({ runId: 'run-A', bayId: `A-bay-${i + 1}` }));
+  let visit = startVisit({
+    id: 'v',
+    siteId: 'site',
+    name: `Round of ${bays}`,
+    kind: 'weekly',
+    person: 'R. Walker',
+    started: '2026-11-30',
+    bays: all,
+  });
+  for (let n = 1; n <= bays; n++) {
+    if (n % 4 === 1)
+      visit = recordDamage(visit, `A-bay-${n}`, {
+        id: `d${n}`,
+        on: 'frame',
+        frameId: `A-frame-${n}`,
+        member: 'upright-front',
+        alongMm: 4 + (n % 8),
+        acrossMm: 1,
+        gaugeMm: 1000,
+        torn: false,
+        note: '',
+        found: '2026-11-20',
+      });
+    visit = finishBay(visit, `A-bay-${n}`, { person: 'R. Walker', date: '2026-11-30' });
+  }
+  return visit;
+}
+
+/** Points to a tenth of a millimetre. */
+const SIZES = { A4: [595, 842], Letter: [612, 792] } as const;
+const WIDE: readonly PaperKind[] = ['off-load-list', 'site-register'];
+
+describe.each([1, 200])('%i bays', (bays) => {
+  let folder = '';
+  let program: Program;
+
+  beforeAll(async () => {
+    folder = await mkdtemp(join(tmpdir(), 'tallybeam-paper-'));
+    await new SiteStore({ fs: nodeFs, folder, program: '0.1.0' }).add(damagedSite(bays));
+    await new BesideStore(nodeFs, foldersIn(folder)).saveVisit({
+      siteId: 'site',
+      visitId: 'v',
+      body: writeVisit(visitOf(bays)),
+      baseRevision: null,
+    });
+    program = await startProgram({}, folder);
+    const { page } = program;
+    page.setDefaultTimeout(60_000);
+    await page
+      .getByRole('button', { name: /^Test depot/ })
+      .first()
+      .click();
+    await page.locator('[data-bay]').first().waitFor();
+    await command(page, 'Paper: print');
+  });
+  afterAll(async () => {
+    await program.close();
+    await rm(folder, { recursive: true, force: true });
+  });
+
+  async function printed(
+    page: Page,
+    kind: PaperKind,
+    sheet: 'A4' | 'Letter',
+    units: 'kilograms and millimetres' | 'pounds and inches',
+  ): Promise<string> {
+    await choice(page, 'Paper').selectOption({ label: PAPER_TITLES[kind] });
+    await choice(page, 'Sheet').selectOption({ label: sheet });
+    await choice(page, 'Units').selectOption({ label: units });
+    await page.getByRole('article', { name: new RegExp(`^${PAPER_TITLES[kind]}, `) }).waitFor();
+    const path = join(folder, `${kind}-${sheet}.pdf`);
+    await page.pdf({ path, tagged: true, outline: true, preferCSSPageSize: true, printBackground: true });
+    return path;
+  }
+
+  test.each(PAPER_KINDS)(
+    '%s: its foot on every page, heads repeated, tagged, nothing cut off, all in lines',
+    { timeout: 240_000 },
+    async (kind) => {
+      const { page, complaints } = program;
+      const path = await printed(page, kind, 'A4', 'kilograms and millimetres');
+      const facts = pdfFacts(path);
+      const pages = pdfPages(path);
+      expect(facts.tagged).toBe(true);
+      expect(facts.pages).toBe(pages.length);
+      if (bays === 200 && kind === 'site-register') expect(pages.length).toBeGreaterThan(5);
+      const size = WIDE.includes(kind) ? SIZES.A4.toReversed() : SIZES.A4;
+      for (const [width, height] of facts.sizes) expect([Math.round(width), Math.round(height)]).toEqual(size);
+      expect(pdfImages(path)).toEqual([]);
+
+      const checksum = /checksum ([0-9a-f]{16})/.exec(pages[0] ?? '')?.[1] ?? 'none';
+      pages.forEach((text, i) => {
+        const words = squeezed(text);
+        for (const needed of [
+          `Page${i + 1}of${pages.length}`,
+          `Testdepot·sitechecksum${checksum}`,
+          'Tallybeam0.1.0',
+          'Ruleset:European',
+          'Beamspan:clearentrybetweenuprights',
+          'Ratings:',
+          'Notchecked:',
+          'Whenindoubt,unloadfirst.',
+        ])
+          expect(words, `${kind}, page ${i + 1}`).toContain(needed);
+      });
+      expect(await cutOff(page)).toEqual([]);
+      expect(complaints).toEqual([]);
+    },
+  );
+
+  test('heads stand on every page that a table goes on to, and no row is lost or told twice', async () => {
+    const { page } = program;
+    const path = await printed(page, 'site-register', 'A4', 'kilograms and millimetres');
+    const pages = pdfPages(path).map(squeezed);
+    const rows = pages.map((text) =>
+      [...text.matchAll(/A(\d+)(?:Within|Close|Over|Notassessable|Notpossible)/g)].map(([, n]) => Number(n)),
+    );
+    expect(rows.flat()).toEqual(Array.from({ length: bays }, (_, i) => i + 1));
+    rows.forEach((there, i) => {
+      if (there.length > 0) expect(pages[i], `page ${i + 1}`).toContain('BayVerdictDecidedby');
+      // A head has more than one row under it, unless the table has but one.
+      if (bays > 1 && there.length > 0) expect(there.length, `page ${i + 1}`).toBeGreaterThan(1);
+    });
+  });
+
+  test('Letter in pounds and inches', { timeout: 240_000 }, async () => {
+    const { page } = program;
+    for (const kind of ['bay-sheet', 'site-register'] as const) {
+      const path = await printed(page, kind, 'Letter', 'pounds and inches');
+      const size = WIDE.includes(kind) ? SIZES.Letter.toReversed() : SIZES.Letter;
+      for (const [width, height] of pdfFacts(path).sizes) expect([Math.round(width), Math.round(height)]).toEqual(size);
+      // 1 860 kg a level is 4 100.6 lb, two levels 8 201.2 lb.
+      expect(pdfPages(path).join('')).toMatch(kind === 'bay-sheet' ? /4,101\slb/ : /8,201\slb/);
+    }
+  });
+
+  test('tables, headings and lists are told to assistive technology as such', async () => {
+    const { page } = program;
+    const structure = pdfStructure(await printed(page, 'visit-report', 'A4', 'kilograms and millimetres'));
+    for (const kind of ['H1', 'H2', 'Table', 'TR', 'TH', 'TD', 'L', 'LI']) expect(structure).toMatch(new RegExp(`^\\s*${kind}\\b`, 'm'));
+  });
+});
+
+test('photos are printed at 300 dots to the inch or more', async () => {
+  const folder = await mkdtemp(join(tmpdir(), 'tallybeam-photo-'));
+  try {
+    await new SiteStore({ fs: nodeFs, folder, program: '0.1.0' }).add(siteOf({ bays: 1 }));
+    const beside = new BesideStore(nodeFs, foldersIn(folder));
+    const { file } = await beside.addPhoto({ siteId: 'site', photoId: 'p', base64: greyPng(1600, 1200).toString('base64') });
+    let visit = startVisit({
+      id: 'v',
+      siteId: 'site',
+      name: 'One bay',
+      kind: 'event',
+      person: '',
+      started: '2026-11-30',
+      bays: [{ runId: 'run-A', bayId: 'A-bay-1' }],
+    });
+    visit = attachPhoto(visit, 'A-bay-1', { id: 'p', file, original: 'IMG_1.png', taken: '', note: 'front left' });
+    await beside.saveVisit({ siteId: 'site', visitId: 'v', body: writeVisit(visit), baseRevision: null });
+    await withProgram(
+      async ({ page }) => {
+        await page
+          .getByRole('button', { name: /^Test depot/ })
+          .first()
+          .click();
+        await page.locator('[data-bay]').first().waitFor();
+        await command(page, 'Paper: print');
+        await choice(page, 'Paper').selectOption({ label: PAPER_TITLES['visit-report'] });
+        const photo = page.getByRole('img', { name: /front left/ });
+        await eventually(() => photo.evaluate((image) => image instanceof HTMLImageElement && image.complete && image.naturalWidth)).toBe(
+          1600,
+        );
+        const path = join(folder, 'report.pdf');
+        await page.pdf({ path, tagged: true, outline: true, preferCSSPageSize: true, printBackground: true });
+        expect(pdfImages(path)).toMatchObject([{ width: 1600, height: 1200 }]);
+        expect(pdfImages(path)[0]?.perInch).toBeGreaterThanOrEqual(300);
+        expect(pdfPages(path).join('')).toContain('front left (IMG_1.png)');
+      },
+      {},
+      folder,
+    );
+  } finally {
+    await rm(folder, { recursive: true, force: true });
+  }
+});
+
+/** A picture of one grey, as PNG: signature, header, deflated rows, end. */
+function greyPng(width: number, height: number): Buffer {
+  const chunk = (name: string, data: Buffer): Buffer => {
+    const body = Buffer.concat([Buffer.from(name, 'latin1'), data]);
+    const frame = Buffer.alloc(8);
+    frame.writeUInt32BE(data.length, 0);
+    frame.writeUInt32BE(crc32(body), 4);
+    return Buffer.concat([frame.subarray(0, 4), body, frame.subarray(4)]);
+  };
+  const header = Buffer.alloc(13);
+  header.writeUInt32BE(width, 0);
+  header.writeUInt32BE(height, 4);
+  header.set([8, 0, 0, 0, 0], 8);
+  const row = Buffer.alloc(width + 1, 0x90);
+  row[0] = 0;
+  const pixels = deflateSync(Buffer.concat(Array.from({ length: height }, () => row)));
+  return Buffer.concat([
+    Buffer.from([0x89, 0x50, 0x4e, 0x47, 0x0d, 0x0a, 0x1a, 0x0a]),
+    chunk('IHDR', header),
+    chunk('IDAT', pixels),
+    chunk('IEND', Buffer.alloc(0)),
+  ]);
+}
+
+function crc32(bytes: Buffer): number {
+  let crc = 0xffffffff;
+  for (const byte of bytes) {
+    crc ^= byte;
+    for (let bit = 0; bit < 8; bit++) crc = crc & 1 ? (crc >>> 1) ^ 0xedb88320 : crc >>> 1;
+  }
+  return (crc ^ 0xffffffff) >>> 0;
+}
+
+/** Text of the paper that reaches past its own cell or past the sheet, as it is laid out for print. */
+async function cutOff(page: Page): Promise<string[]> {
+  await page.emulateMedia({ media: 'print' });
+  const faults = await page.evaluate(() => {
+    const paper = document.querySelector('.paper');
+    if (paper === null) return ['there is no paper'];
+    const edge = paper.getBoundingClientRect().right + 1;
+    return [...paper.querySelectorAll('td, th, p, li, dd, dt, text, figcaption')].flatMap((element) => {
+      const box = element.getBoundingClientRect();
+      const out =
+        box.right > edge || (!(element instanceof SVGElement) && element.scrollWidth > element.clientWidth + 2 && element.clientWidth > 0);
+      return out ? [`${element.tagName} "${element.textContent?.slice(0, 60)}"`] : [];
+    });
+  });
+  await page.emulateMedia({ media: null });
+  return faults.slice(0, 10);
+}
