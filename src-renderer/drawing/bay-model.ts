@@ -115,8 +115,7 @@ interface Kept {
 const kept = new WeakMap<Bay, Kept>();
 
 /** A bay of the run as it is drawn; the same object as long as nothing that is drawn of it changed. */
-export function bayDrawn(run: Run, bay: Bay, libraries: Libraries): BayDrawn {
-  const index = run.bays.indexOf(bay);
+export function bayDrawn(run: Run, bay: Bay, libraries: Libraries, index = run.bays.indexOf(bay)): BayDrawn {
   const from = [libraries, run.frames[index], run.frames[index + 1]];
   const before = kept.get(bay);
   if (before !== undefined && before.from.every((one, i) => one === from[i])) return before.drawn;

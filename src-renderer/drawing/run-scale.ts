@@ -10,7 +10,7 @@ export interface RunDrawn {
 }
 
 export function runDrawn(run: Run, libraries: Libraries): RunDrawn {
-  const bays = run.bays.map((bay) => bayDrawn(run, bay, libraries));
+  const bays = run.bays.map((bay, index) => bayDrawn(run, bay, libraries, index));
   const last = bays.at(-1);
   return { bays, frames: [...bays.map((bay) => bay.leftUpright), ...(last ? [last.rightUpright] : [])] };
 }

@@ -35,9 +35,18 @@ export function summed(lines: readonly LineLoad[]): readonly LineLoad[] {
 const asStanding = (load: BeamLoad, widthMm: number, mirrored: boolean): BeamLoad =>
   pairLoads([{ id: '', load, widthMm, at: 0, mirrored, frontShare: 0.5 }]).whole;
 
+/** Every unit load of the library stands in many places, and none of them changes it. */
+const peaks = new WeakMap<BeamLoad, number>();
+
 /** Greatest intensity of a load, N/mm, a point load taken as spread. */
 export function peakIntensity(load: BeamLoad | null): number {
   if (load === null) return 0;
+  const peak = peaks.get(load) ?? peakOf(load);
+  peaks.set(load, peak);
+  return peak;
+}
+
+function peakOf(load: BeamLoad): number {
   const points = load.points.map((point) => point.force / POINT_SPREAD);
   return Math.max(0, ...summed(load.lines).flatMap((line) => [line.wFrom, line.wTo]), ...points);
 }
