@@ -194,7 +194,6 @@ const twoWindows = (use: (second: Page, first: Page, saved: string, files: () =>
     await second.keyboard.press('Control+S');
     await second.getByText('Not saved: changed elsewhere').waitFor();
     expect([...(await siteFiles()).values()]).toEqual([saved]);
-    await second.getByRole('button', { name: 'Sort out…' }).click();
     await second.getByRole('dialog', { name: `${NAME} was changed elsewhere` }).waitFor();
     await use(second, first, saved, siteFiles);
   });
