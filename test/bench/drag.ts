@@ -1,5 +1,5 @@
 /**
- * npx vite build && npx tsx test/bench/drag.ts [folder of the built page]
+ * npm run bench:page [-- FOLDER of another built page]
  * Drags and nudges goods in the built page in Chromium, in a site of 100 placements and in two of 10,000: long tasks of
  * the page's thread during the drag, and its processor time from an edit to its painted findings. No test:
  * what else runs on the machine lengthens tasks.
