@@ -63,8 +63,8 @@ async function watchDevices(page: Page): Promise<() => Promise<{ keys: number; p
   await page.evaluate(() => {
     const seen = { keys: 0, pointers: 0 };
     Object.assign(globalThis, { seen });
-    addEventListener('keydown', ({ key }) => void (['Control', 'Shift', 'Alt'].includes(key) || (seen.keys += 1)), true);
-    addEventListener('pointerdown', () => void (seen.pointers += 1), true);
+    document.addEventListener('keydown', ({ key }) => void (['Control', 'Shift', 'Alt'].includes(key) || (seen.keys += 1)), true);
+    document.addEventListener('pointerdown', () => void (seen.pointers += 1), true);
   });
   return () => page.evaluate(() => (globalThis as unknown as { seen: { keys: number; pointers: number } }).seen);
 }
