@@ -55,6 +55,8 @@ export class Rounds {
   #waiting = new SvelteMap<string, () => Promise<void>>();
   #cache = createAuditCache();
   #revisions: Record<string, string> = {};
+  /** Changes of the follow-up that are not on the disk yet. */
+  #changes: ((book: FollowUp) => FollowUp)[] = [];
   #queue: Promise<void> = Promise.resolve();
   #timer: ReturnType<typeof setTimeout> | null = null;
 
@@ -83,7 +85,6 @@ export class Rounds {
     if (this.loaded) return;
     try {
       const kept = await this.host.listVisits(this.open.id);
-      const book = await this.host.readFollowUp(this.open.id);
       const unreadable: { name: string; problem: string }[] = [];
       const visits: Visit[] = [];
       for (const { id, text, revision, problem } of kept) {
@@ -92,12 +93,8 @@ export class Rounds {
         if (reading?.ok) visits.push(reading.document);
         else unreadable.push({ name: `Visit ${id}`, problem: problem ?? '' });
       }
-      if (book !== null) {
-        this.#revisions[FOLLOW_UP] = book.revision;
-        const reading = book.problem === null ? readFollowUp(JSON.parse(book.text)) : null;
-        if (reading?.ok) this.followUp = reading.document;
-        else unreadable.push({ name: 'The follow-up', problem: book.problem ?? '' });
-      }
+      const problem = await this.#takeFollowUp();
+      if (problem !== null) unreadable.push({ name: 'The follow-up', problem });
       this.visits = visits;
       this.unreadable = unreadable;
       this.loaded = true;
@@ -125,15 +122,54 @@ export class Rounds {
     this.#keepVisit(visit.id);
   };
 
+  /** Changes made elsewhere meanwhile stay: ours are made again on what is there. */
   editFollowUp = (change: (book: FollowUp) => FollowUp): void => {
     this.followUp = change(this.followUp);
+    this.#changes.push(change);
     this.#keep(FOLLOW_UP, async () => {
-      const baseRevision = this.#revisions[FOLLOW_UP] ?? null;
-      const body = writeFollowUp(this.followUp);
-      const { revision } = await this.host.saveFollowUp({ siteId: this.open.id, body, baseRevision });
-      this.#revisions[FOLLOW_UP] = revision;
+      try {
+        await this.#saveFollowUp();
+      } catch (error) {
+        if (failureOf(error).code !== 'stale') throw error;
+        await this.#takeFollowUp();
+        for (const ours of this.#changes) this.followUp = madeAgain(this.followUp, ours);
+        await this.#saveFollowUp();
+      }
     });
   };
+
+  /**
+   * Where another window changed the visit that is walked: ours stays as a visit of its own, and theirs
+   * is read. Nothing of either is lost.
+   */
+  sortOut = async (copyId: Id): Promise<void> => {
+    const ours = this.visit;
+    this.#waiting.clear();
+    this.loaded = false;
+    await this.load();
+    if (ours !== null) this.addVisit({ ...ours, id: copyId, name: `${ours.name} (copy)` });
+    this.failure = null;
+  };
+
+  async #saveFollowUp(): Promise<void> {
+    const sent = this.#changes.length;
+    const baseRevision = this.#revisions[FOLLOW_UP] ?? null;
+    const body = writeFollowUp(this.followUp);
+    const { revision } = await this.host.saveFollowUp({ siteId: this.open.id, body, baseRevision });
+    this.#revisions[FOLLOW_UP] = revision;
+    this.#changes.splice(0, sent);
+  }
+
+  /** @returns what is wrong with it; null where it could be read, or there is none */
+  async #takeFollowUp(): Promise<string | null> {
+    const book = await this.host.readFollowUp(this.open.id);
+    if (book === null) return null;
+    this.#revisions[FOLLOW_UP] = book.revision;
+    const reading = book.problem === null ? readFollowUp(JSON.parse(book.text)) : null;
+    if (!reading?.ok) return book.problem ?? '';
+    this.followUp = reading.document;
+    return null;
+  }
 
   /** @returns the name under which the photo is kept; null where it is not, and then why is said */
   addPhoto = async (photoId: Id, file: Blob): Promise<string | null> => {
@@ -237,6 +273,15 @@ export class Rounds {
 }
 
 const FOLLOW_UP = 'follow-up';
+
+/** A change that was made elsewhere as well, such as the closing of the same action, is not made twice. */
+function madeAgain(book: FollowUp, change: (book: FollowUp) => FollowUp): FollowUp {
+  try {
+    return change(book);
+  } catch {
+    return book;
+  }
+}
 
 /** Hash of the site's canonical text, the same wherever it is made. */
 export const checksumOf = async (site: Site): Promise<string> => sha256Of(writeSite(site));

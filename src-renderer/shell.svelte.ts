@@ -34,6 +34,8 @@ export class Shell {
   /** What last went wrong outside an open site, said until it is put away. */
   trouble = $state.raw<HostFailure | null>(null);
   busy = $state(false);
+  /** Whether a visit or its follow-up waits to be put on the disk. */
+  unsavedBeside: () => boolean = () => false;
 
   #makeWorker: (() => WorkerLike) | null;
   #today: (() => string) | undefined;
@@ -167,6 +169,14 @@ export class Shell {
   /** Back to the list of sites; asks first where something is not saved. */
   leave = (): void => {
     if (this.open === null) return;
+    if (this.unsavedBeside()) {
+      this.show('visits');
+      this.trouble = {
+        code: 'failed',
+        message: 'A visit or its follow-up is not on the disk yet. Wait until it is saved, or sort out why it is not.',
+      };
+      return;
+    }
     if (this.open.saved === 'saved') void this.closeSite();
     else this.dialog = { kind: 'leave' };
   };

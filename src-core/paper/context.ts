@@ -3,7 +3,6 @@ import type { NotChecked, RunAudit, SiteAudit } from '../audit/types';
 import { sourceWords } from '../audit/source-words';
 import { resolveRules, RULE_KEYS, RULE_SET_TITLES, sourceOf } from '../checks/rule-sets';
 import { RULES } from '../checks/rule-table';
-import { findRun } from '../site/lookup';
 import type { Bay, Frame, Id, Run, Site, Source } from '../site/site';
 import { FOOTER_CAUTIONS } from '../words/cautions';
 import { CHECK_WORDS } from '../words/check-names';
@@ -179,6 +178,3 @@ export function frameStands(run: Run, frame: Frame): string {
   if (left && right) return `between bays ${left.name} and ${right.name}`;
   return left ? `right of bay ${left.name}` : right ? `left of bay ${right.name}` : 'by itself';
 }
-
-/** Every bay of the runs that these ids name. */
-export const baysOf = (site: Site, runIds: readonly Id[]): readonly Bay[] => runIds.flatMap((id) => findRun(site, id).bays);

@@ -36,8 +36,6 @@ export function leaveOutBay(visit: Visit, bayId: Id): Visit {
   return { ...visit, bays: visit.bays.filter((bay) => bay.bayId !== bayId) };
 }
 
-export const renameVisit = (visit: Visit, name: string): Visit => ({ ...unsigned(visit), name });
-
 /** @throws RangeError if a bay is unfinished, or if there is none */
 export function sign(visit: Visit, signed: SignOff): Visit {
   unsigned(visit);
@@ -126,9 +124,8 @@ export const note = (visit: Visit, bayId: Id, notes: string): Visit => changed(v
 export const sameLock = (one: MissingLock, other: MissingLock): boolean =>
   one.levelId === other.levelId && one.beam === other.beam && one.end === other.end;
 
-function unsigned(visit: Visit): Visit {
+function unsigned(visit: Visit): void {
   if (visit.signed !== null) throw new RangeError(`visit "${visit.id}" was signed on ${visit.signed.date} and can no longer be changed`);
-  return visit;
 }
 
 function changed(visit: Visit, bayId: Id, change: (bay: BayVisit) => BayVisit): Visit {

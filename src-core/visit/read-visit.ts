@@ -2,14 +2,13 @@
  * A visit's file: strict reading, every problem with its place, and one canonical form in writing.
  *
  * Bays, frames and levels are only named by id here. The site may have changed since the visit, and
- * a visit outlives what it saw: `missingPlaces` tells what the site no longer has.
+ * a visit outlives what it saw: what the site no longer has is left out where it is shown.
  */
 import { choice, date, flag, isRecord, nullable, number, quote, report, text, type Reader } from '../site/fields';
 import { ownId } from '../site/ids';
 import { LIMITS } from '../site/limits';
 import { list, record, variant } from '../site/records';
 import { aLength, aLengthOrZero, aName, aPosition, someText } from '../site/schema-goods';
-import type { Id, Site } from '../site/site';
 import { namedId, readDocument, writeDocument, type DocumentKind, type DocumentReading } from './read-document';
 import {
   BEAM_MEMBERS,
@@ -160,28 +159,4 @@ function eachBayOnce({ bays }: Readonly<Record<string, unknown>>, reader: Reader
     if (typeof id === 'string' && ids.indexOf(id) < i)
       report(reader, `The bay ${quote(id)} stands twice in this visit. Keep one of them.`, 'bays', i, 'bayId');
   });
-}
-
-/** Bays, frames and levels that the visit names and the site does not have. */
-export function missingPlaces(visit: Visit, site: Site): readonly { readonly noun: 'bay' | 'frame' | 'level'; readonly id: Id }[] {
-  const bays = new Map(site.runs.flatMap((run) => run.bays.map((one) => [one.id, one] as const)));
-  const frames = new Set(site.runs.flatMap((run) => run.frames.map(({ id }) => id)));
-  const levels = new Set([...bays.values()].flatMap((one) => one.levels.map(({ id }) => id)));
-  const gone: { noun: 'bay' | 'frame' | 'level'; id: Id }[] = [];
-  const seenOnce = new Set<Id>();
-  const look = (noun: 'bay' | 'frame' | 'level', id: Id, there: { has(id: Id): boolean }) => {
-    if (there.has(id) || seenOnce.has(id)) return;
-    seenOnce.add(id);
-    gone.push({ noun, id });
-  };
-  for (const one of visit.bays) {
-    look('bay', one.bayId, bays);
-    for (const { levelId } of [...one.missingLocks, ...one.sags]) look('level', levelId, levels);
-    for (const { frameId } of one.plumb) look('frame', frameId, frames);
-    for (const damaged of one.damages) {
-      if (damaged.on === 'frame') look('frame', damaged.frameId, frames);
-      else look('level', damaged.levelId, levels);
-    }
-  }
-  return gone;
 }

@@ -10,17 +10,16 @@ function needTools(): void {
   if (ready) return;
   const there = () => ['pdftotext', 'pdfinfo', 'pdfimages'].every((tool) => spawnSync(tool, ['-v']).error === undefined);
   if (!there() && process.platform === 'linux' && process.getuid?.() === 0) {
-    const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
-    for (const args of [
-      ['update', '-q'],
-      ['install', '-y', '-q', 'poppler-utils'],
-    ])
-      spawnSync('apt-get', args, { env, stdio: ['ignore', 'ignore', 'inherit'] });
+    get('apt-get', 'update', '-q');
+    get('apt-get', 'install', '-y', '-q', 'poppler-utils');
   }
   if (!there())
     throw new Error('The tests of printed papers need Poppler’s pdftotext, pdfinfo and pdfimages: install the package "poppler-utils".');
   ready = true;
 }
+
+const get = (command: string, ...args: readonly string[]) =>
+  spawnSync(command, args, { env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' }, stdio: ['ignore', 'ignore', 'inherit'] });
 
 function run(tool: string, ...args: readonly string[]): string {
   needTools();

@@ -41,8 +41,11 @@ describe('visits', () => {
 
   test('a save on a revision that is gone is refused, and the other state stays', async () => {
     const store = storeIn(newFolder());
-    await store.saveVisit(first);
-    expect(await failure(store.saveVisit(first))).toMatchObject({ code: 'stale', message: expect.stringContaining('another window') });
+    const { revision } = await store.saveVisit(first);
+    // The same once more is there already.
+    expect(await store.saveVisit(first)).toEqual({ revision });
+    const other = { ...first, body: writeVisit(note(round, 'bay1', 'ours')) };
+    expect(await failure(store.saveVisit(other))).toMatchObject({ code: 'stale', message: expect.stringContaining('another window') });
     expect((await store.visits('s1'))[0]?.text).toBe(first.body);
   });
 
