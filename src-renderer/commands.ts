@@ -125,6 +125,14 @@ export const COMMANDS: readonly Command[] = [
   command('mirror', 'Goods', 'Turn left for right', ['M'], hasGoods, ({ open }) => mirrorGoods(open)),
   command('space-evenly', 'Goods', 'Space the level’s goods evenly', ['E'], hasLevel, ({ open }) => spaceEvenly(open)),
   command(
+    'push-apart',
+    'Goods',
+    ({ open }) => (open.pushing ? 'Leave neighbours where they are when putting down' : 'Push neighbours apart when putting down'),
+    [],
+    onRack,
+    ({ open }) => togglePushing(open),
+  ),
+  command(
     'unselect',
     'Goods',
     'Select nothing',
@@ -205,6 +213,15 @@ function openFrame(open: OpenSite, side: 0 | 1): void {
   const { run, bay } = open;
   const frame = run && bay ? run.frames[run.bays.indexOf(bay) + side] : undefined;
   if (frame && framePlace(open.site, frame.id)) open.openTask('frame', frame.id);
+}
+
+function togglePushing(open: OpenSite): void {
+  open.pushing = !open.pushing;
+  open.say(
+    open.pushing
+      ? 'Goods that are put down now push their neighbours apart.'
+      : 'Neighbours stay where they are now; goods put down onto others are shown as not possible.',
+  );
 }
 
 /** Walks through the bays of all runs. */

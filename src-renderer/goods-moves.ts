@@ -17,15 +17,19 @@ export function nudge(open: OpenSite, byMm: number): void {
     return;
   }
   const ids = places.map((place) => place.placement.id);
-  open.edit(
+  const refused = open.edit(
     `Move ${ids.length} unit loads`,
     (site) =>
-      places.reduce(
-        (next, place) => movePlacement(next, place.placement.id, { ...targetOf(place), atMm: place.placement.atMm + byMm }),
-        site,
+      open.roomFor(
+        places.reduce(
+          (next, place) => movePlacement(next, place.placement.id, { ...targetOf(place), atMm: place.placement.atMm + byMm }),
+          site,
+        ),
+        ids,
       ),
     `nudge ${ids.join(' ')}`,
   );
+  if (refused !== null) return;
   open.select({ placementIds: ids });
   open.sayDone(
     `${ids.length} unit loads moved ${byMm > 0 ? 'right' : 'left'} by ${formatQuantity(lengthOf(Math.abs(byMm)), open.reading)}.`,

@@ -6,24 +6,14 @@ import { createContext } from 'svelte';
 import { SvelteMap } from 'svelte/reactivity';
 import type { FrameAudit, LevelAudit, RunAudit } from '../src-core/audit/types';
 import type { Host } from '../src-core/host';
-import { movePlacement } from '../src-core/site/edits';
 import type { Id, Placement, Site } from '../src-core/site/site';
 import { formatQuantity, type Reading } from '../src-core/units/format';
 import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
 import { VERDICT_WORDS } from '../src-core/words/verdict-words';
 import type { WorkerLike } from './audit-link';
 import { Findings } from './findings.svelte';
-import {
-  bayPlace,
-  besideChosenBay,
-  frameOfDamage,
-  framePlace,
-  levelPlace,
-  nameOfPlace,
-  placementPlace,
-  targetOf,
-  type Target,
-} from './places';
+import { bayPlace, besideChosenBay, frameOfDamage, framePlace, levelPlace, nameOfPlace, placementPlace, type Target } from './places';
+import { moved, pushedApart } from './put-down';
 import { refusal, type Refused } from './refusal';
 import { Saving, type SavedState } from './saving.svelte';
 import { completed, existing, firstOf, NOTHING, type Selection } from './selection';
@@ -61,6 +51,8 @@ export class OpenSite {
   readonly findings: Findings;
   /** The unit load picked up by click or key that waits for its target. */
   carried = $state<Id | null>(null);
+  /** Whether goods push their neighbours apart where they are put down; else an overlap stands and is shown as not possible. */
+  pushing = $state(false);
   task = $state.raw<Task | null>(null);
   /** The form that was last asked for, to be given the focus. */
   asked = $state.raw<Task | null>(null);
@@ -79,6 +71,7 @@ export class OpenSite {
   #history = $state.raw<UndoHistory<Site>>() as UndoHistory<Site>;
   /** A change that is shown and checked but not made yet, while something is dragged or carried. */
   #trial = $state.raw<Site | null>(null);
+  #tried: Target | null = null;
   #wanted = $state.raw<Selection>(NOTHING);
   /** Where one was before, for going back. */
   #trail = $state.raw<readonly Selection[]>([]);
@@ -261,7 +254,7 @@ export class OpenSite {
     this.dropTrial();
     const from = placementPlace(this.site, placementId);
     if (from === null) return null;
-    const refused = this.edit(`Move ${from.unitLoad.name}`, (site) => moved(site, placementId, target), merge);
+    const refused = this.edit(`Move ${from.unitLoad.name}`, (site) => this.roomFor(moved(site, placementId, target), [placementId]), merge);
     if (refused !== null) return refused;
     if (this.carried === placementId) this.carried = null;
     const to = placementPlace(this.site, placementId);
@@ -273,16 +266,26 @@ export class OpenSite {
     return null;
   };
 
+  /** The site with room made for goods just put down, where that is wanted. */
+  roomFor = (site: Site, placementIds: readonly Id[]): Site => (this.pushing ? pushedApart(site, placementIds) : site);
+
   /** Shows and checks a move without making it; `keepTrial` makes it, `dropTrial` takes it back. */
   tryMove = (placementId: Id, target: Target): void => {
     if (placementPlace(this.#history.value, placementId) === null) return;
-    this.#trial = moved(this.#history.value, placementId, target);
+    const there = moved(this.#history.value, placementId, target);
+    this.#tried = target;
+    try {
+      this.#trial = this.roomFor(there, [placementId]);
+    } catch (error) {
+      // Shown where it is held; putting it down there says why it cannot stay.
+      if (!(error instanceof RangeError)) throw error;
+      this.#trial = there;
+    }
   };
 
   /** Makes the move that was tried, exactly as `move` would have. */
   keepTrial = (placementId: Id): void => {
-    const there = this.#trial && placementPlace(this.#trial, placementId);
-    if (there) this.move(placementId, targetOf(there));
+    if (this.#trial !== null && this.#tried !== null) this.move(placementId, this.#tried);
   };
 
   /** Puts down what is carried where it was tried, or where it stood. */
@@ -363,9 +366,6 @@ export class OpenSite {
 }
 
 export const [useOpenSite, setOpenSite, hasOpenSite] = createContext<OpenSite>();
-
-const moved = (site: Site, placementId: Id, target: Target): Site =>
-  movePlacement(site, placementId, { ...target, atMm: Math.round(target.atMm) });
 
 function todayHere(): string {
   const now = new Date();
