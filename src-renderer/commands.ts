@@ -7,7 +7,15 @@ import { copyGoods, cutGoods, deleteGoods, duplicateGoods, mirrorGoods, pasteGoo
 import { pressed, type KeyPress } from './keys';
 import type { OpenSite } from './open-site.svelte';
 import { allBays, framePlace } from './places';
-import { addBayAfter, addLevelOnTop, duplicateBayHere, duplicateLevelHere, removeBayHere, removeLevelHere } from './rack-edits';
+import {
+  addBayAfter,
+  addLevelOnTop,
+  duplicateBayHere,
+  duplicateLevelHere,
+  removeBayHere,
+  removeLevelHere,
+  shiftLevelHere,
+} from './rack-edits';
 import type { Screen, Shell } from './shell.svelte';
 
 export interface Surroundings {
@@ -38,6 +46,7 @@ const hasGoods: Allowed = (at) => onRack(at) && at.open.selection.placementIds.l
 const hasOne: Allowed = (at) => onRack(at) && at.open.selection.placementIds.length === 1;
 const movable: Allowed = (at) => hasGoods(at) || carrying(at);
 const still: Allowed = (at) => hasBay(at) && !carrying(at);
+const stillOnLevel: Allowed = (at) => hasLevel(at) && !carrying(at);
 
 const command = (
   id: string,
@@ -149,6 +158,8 @@ export const COMMANDS: readonly Command[] = [
   command('add-level', 'Rack', 'Add a level on top', [], hasBay, ({ open }) => addLevelOnTop(open)),
   command('duplicate-level', 'Rack', 'Duplicate this level on top', [], hasLevel, ({ open }) => duplicateLevelHere(open)),
   command('remove-level', 'Rack', 'Remove this level', [], hasLevel, ({ open }) => removeLevelHere(open)),
+  command('raise-level', 'Rack', 'Raise this level by one hole', ['Alt+ArrowUp'], stillOnLevel, ({ open }) => shiftLevelHere(open, 1)),
+  command('lower-level', 'Rack', 'Lower this level by one hole', ['Alt+ArrowDown'], stillOnLevel, ({ open }) => shiftLevelHere(open, -1)),
   command('fill-run', 'Rack', 'Give other bays this bay’s goods or levels…', [], hasBay, ({ shell }) => shell.ask({ kind: 'fill-run' })),
   command('bay-form', 'Rack', 'Bay: clear entry and notice', [], hasBay, ({ open }) => open.openTask('bay', open.bay?.id ?? '')),
   command('level-form', 'Rack', 'Level: height, beams, locks and deck', [], hasLevel, ({ open }) =>

@@ -12,13 +12,17 @@ import {
   editRun,
   fillBays,
   moveBay,
+  moveLevel,
   moveRun,
   removeBay,
   removeLevel,
   removeRun,
 } from '../src-core/site/edits';
 import { evenTemplate, runByTemplate } from '../src-core/site/new-site';
+import { onHolePitch } from '../src-core/site/placing';
 import type { Bay, Frame, Id, Level, LoadNotice, Run, Site } from '../src-core/site/site';
+import { formatQuantity } from '../src-core/units/format';
+import { lengthOf } from '../src-core/units/quantity';
 import { newId } from './ids';
 import { nextName, nextRunName } from './names';
 import type { OpenSite } from './open-site.svelte';
@@ -190,6 +194,25 @@ export function removeLevelHere(open: OpenSite): void {
   const number = bay.levels.indexOf(level) + 1;
   open.edit(`Delete level ${number} of bay ${bay.name}`, (site) => removeLevel(site, level.id));
   open.say(`Level ${number} of bay ${bay.name} deleted with its goods. Undo brings it back.`);
+}
+
+/** Where the holes of the uprights are not known: the commonest pitch in Europe, mm (common practice, no source). */
+const HOLE_PITCH = 50;
+
+/** The chosen level one hole up (+1) or down (−1), onto the pitch counted from the floor; it never passes a neighbour. */
+export function shiftLevelHere(open: OpenSite, by: 1 | -1): void {
+  const { bay, level } = open;
+  if (bay === null || level === null) return;
+  const index = bay.levels.indexOf(level);
+  const heightMm = onHolePitch(level.heightMm + by * HOLE_PITCH, HOLE_PITCH);
+  const next = bay.levels[index + by]?.heightMm ?? (by > 0 ? Infinity : 0);
+  if (by > 0 ? heightMm >= next : heightMm <= next)
+    return open.say(
+      by > 0 ? 'The level above is in the way.' : index === 0 ? 'This level is as low as it goes.' : 'The level below is in the way.',
+    );
+  const name = `Move level ${index + 1} of bay ${bay.name} ${by > 0 ? 'up' : 'down'}`;
+  if (open.edit(name, (site) => moveLevel(site, level.id, heightMm), `height ${level.id}`) === null)
+    open.sayDone(`Level ${index + 1} of bay ${bay.name} now at ${formatQuantity(lengthOf(heightMm), open.reading)}.`);
 }
 
 /** Gives other bays the goods, or the levels and goods, of the chosen one. */
