@@ -26,7 +26,7 @@ export async function withProgram(
 }
 
 /** Waits until what is asked for gives the value; retried, as the page comes to it in its own time. */
-export const eventually = <T>(ask: () => T | Promise<T>) => expect.poll(ask, { timeout: PATIENCE, interval: 50 });
+export const eventually = <T>(ask: () => T | Promise<T>, message = '') => expect.poll(ask, { timeout: PATIENCE, interval: 50, message });
 
 /** Findings of the newest state stand on the page. */
 export const checked = (page: Page): Promise<void> => page.locator('section[aria-label="Findings"][aria-busy="false"]').waitFor();
@@ -82,7 +82,7 @@ export const choice = (within: Page | Locator, label: string): Locator =>
 /** Types a value into a field as a user does, and leaves the field. */
 export async function type(field: Locator, text: string): Promise<void> {
   await field.fill(text);
-  await field.press('Enter');
+  await field.press('Tab');
 }
 
 /** A command by its words, through the list of all commands. */
