@@ -5,7 +5,7 @@ import { mkdirSync, writeFileSync } from 'node:fs';
 import { createServer } from 'node:net';
 import { join } from 'node:path';
 import { build } from 'vite';
-import { afterEach, beforeAll, afterAll, describe, expect, test } from 'vitest';
+import { afterEach, beforeAll, afterAll, describe, expect, test, vi } from 'vitest';
 import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { KEY_HEADER } from '../../src-core/host-wire';
@@ -64,7 +64,7 @@ test('it prints where it is and where the sites are, and nothing else with --qui
   const sites = temporaryFolder();
   const { said, address } = run(['--sites', sites]);
   expect(await address()).toMatch(/^http:\/\/127\.0\.0\.1:\d+\/#key=[\w-]{32}$/);
-  expect(said.out).toContain(`Sites are in ${sites}.`);
+  await vi.waitFor(() => expect(said.out).toContain(`Sites are in ${sites}.`), 10_000);
   const quiet = run(['--sites', sites, '--quiet']);
   expect(`${await quiet.address()}\n`).toBe(quiet.said.out);
 });
@@ -92,7 +92,7 @@ test('without a folder named, the sites are in the user’s own', async () => {
   const own = temporaryFolder();
   const { said, address } = run([], own);
   await address();
-  expect(said.out).toContain(`Sites are in ${join(own, 'sites')}.`);
+  await vi.waitFor(() => expect(said.out).toContain(`Sites are in ${join(own, 'sites')}.`), 10_000);
 });
 
 test('a port that is taken is told with what to do', async () => {

@@ -100,7 +100,7 @@ test('where the file system has no links, one still holds the lock after another
   expect(readdirSync(dirname(path))).toEqual([]);
 });
 
-const QUICK = { hold: 100, abandoned: 200, wait: 400 };
+const QUICK = { hold: 100, abandoned: 200, wait: 5000 };
 
 test.each([
   ['of a program on another machine', JSON.stringify({ machine: '00000000', pid: 1, token: 'x' })],
@@ -135,7 +135,7 @@ test('a lock that stays taken is told; a holder that was too slow gives up', asy
   let release = (): void => undefined;
   const held = withLock(nodeFs, path, () => new Promise<void>((resolve) => (release = resolve)));
   await new Promise((resolve) => setTimeout(resolve, 20));
-  const impatient = withLock(nodeFs, path, async () => undefined, { ...QUICK, abandoned: 60_000 });
+  const impatient = withLock(nodeFs, path, async () => undefined, { ...QUICK, abandoned: 60_000, wait: 300 });
   await expect(impatient).rejects.toMatchObject({
     code: 'timed-out',
     message: expect.stringContaining('another program is saving this site') as string,
