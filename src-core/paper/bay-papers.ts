@@ -4,6 +4,8 @@ import { dateWords } from '../units/dates';
 import { findBay } from '../site/lookup';
 import type { Id, Level, Site } from '../site/site';
 import type { Text } from '../units/text';
+import { stillOpen, type OpenAction } from '../visit/actions';
+import { actionBlocks } from './action-blocks';
 import { closingBlocks, frameStands, paperOf, runAuditOf, type PaperInput } from './context';
 import { findingBlocks, findingsOfBay, levelTitle, used, workedBlocks, type BayNames } from './findings';
 import { fact, facts, heading, kgCell, mmCell, NONE, paragraph, subheading, table, type Block, type Paper } from './paper';
@@ -25,8 +27,11 @@ function bayAt(input: PaperInput, bayId: Id): BayAt {
 
 const nameOf = ({ run, bay }: BayAt): string => `Bay ${bay.name}, run ${run.name}`;
 
-/** Drawing, loads, findings, assumptions, cautions and room to sign, of one bay. */
-export function baySheet(input: PaperInput, bayId: Id): Paper {
+/**
+ * Drawing, loads, findings, open actions, assumptions, cautions and room to sign, of one bay.
+ * @param actions of the site, from `actionsOf`: what visits found stands beside what was checked
+ */
+export function baySheet(input: PaperInput, bayId: Id, actions: readonly OpenAction[]): Paper {
   const at = bayAt(input, bayId);
   const { run, bay, audit, frames } = at;
   return paperOf(input, [bay], {
@@ -35,6 +40,7 @@ export function baySheet(input: PaperInput, bayId: Id): Paper {
     about: nameOf(at),
     blocks: [
       ...opening(at),
+      ...openOfBay(input, bayId, actions),
       { kind: 'drawing', drawing: 'bay', runId: run.id, bayId, levelId: null, says: drawingWords(at) },
       heading('Levels'),
       levelTable(at),
@@ -51,6 +57,12 @@ export function baySheet(input: PaperInput, bayId: Id): Paper {
       },
     ],
   });
+}
+
+/** What is open at the bay, before any verdict is read: a beam that was found damaged is in no check of loads. */
+function openOfBay({ site }: PaperInput, bayId: Id, actions: readonly OpenAction[]): readonly Block[] {
+  const open = stillOpen(actions).filter(({ bayIds }) => bayIds.includes(bayId));
+  return open.length === 0 ? [] : actionBlocks(site, open);
 }
 
 /** Every check of a bay, or of one of its levels, step by step. */

@@ -4,8 +4,9 @@ import { classOfDamage, type DamageClass } from '../checks/damage-class';
 import { resolveRules, type ResolvedRules } from '../checks/rule-sets';
 import { VERDICTS, worstVerdict, type Verdict } from '../checks/finding';
 import { sourceWords } from '../audit/source-words';
-import type { Bay, Run } from '../site/site';
+import type { Bay, Id, Run } from '../site/site';
 import { say } from '../units/text';
+import { stillOpen, type OpenAction } from '../visit/actions';
 import { duesOf } from '../visit/rounds';
 import type { FollowUp } from '../visit/follow-up';
 import type { Visit } from '../visit/visit';
@@ -15,11 +16,13 @@ import { closingBlocks, paperOf, runAuditOf, type PaperInput } from './context';
 import { used } from './findings';
 import { dayCell, fact, facts, heading, kgCell, NONE, table, type Block, type Cell, type Paper } from './paper';
 
-export function siteRegister(input: PaperInput, visits: readonly Visit[], followUp: FollowUp): Paper {
+export function siteRegister(input: PaperInput, visits: readonly Visit[], followUp: FollowUp, actions: readonly OpenAction[]): Paper {
   const { site } = input;
   const bays = site.runs.flatMap((run) => run.bays);
   const rules = resolveRules(site.rules);
   const dues = new Map(duesOf(site, visits, followUp).map((due) => [due.bayId, due]));
+  const open = new Map<Id, number>();
+  for (const { bayIds } of stillOpen(actions)) for (const id of bayIds) open.set(id, (open.get(id) ?? 0) + 1);
   const audited = site.runs.flatMap((run) => runAuditOf(input, run.id).bays);
   return paperOf(input, bays, {
     kind: 'site-register',
@@ -50,6 +53,7 @@ export function siteRegister(input: PaperInput, visits: readonly Visit[], follow
                   'Load notice and its source',
                   'Frames',
                   'Damage',
+                  '#Open actions',
                   'Visited',
                   'Next visit',
                   'Inspected',
@@ -66,6 +70,7 @@ export function siteRegister(input: PaperInput, visits: readonly Visit[], follow
                     notice(input, bay),
                     { verdict: framesVerdict(input, run, index) },
                     damageCell(run, index, rules, input.today),
+                    [String(open.get(bay.id) ?? 0)],
                     due === undefined || due.visited === null ? ['never'] : dayCell(due.visited),
                     due === undefined || due.nextVisit === null ? ['due'] : dayCell(due.nextVisit),
                     due === undefined || due.inspected === null ? ['never'] : dayCell(due.inspected),

@@ -4,13 +4,13 @@
  */
 import type { LevelAudit } from '../audit/types';
 import { say, type Text } from '../checks/finding';
-import type { Bay, Run } from '../site/site';
+import type { Bay, Id, Run } from '../site/site';
 import type { Action, ActionInput, ActionKind, LevelRef } from './actions';
 import { closingOf } from './follow-up';
 import { levelsOf } from './frame-actions';
 import { noticeDiffers } from './notice-seen';
 import { judgeSagOfLevel } from './sag-of-level';
-import type { BayVisit, BeamDamage, ChecklistItem, SagReading, Visit } from './visit';
+import type { BayVisit, BeamDamage, ChecklistItem, SagReading } from './visit';
 
 /** A finding of a visit, before it is known since when. */
 interface Found {
@@ -25,16 +25,26 @@ interface Since {
 }
 
 export function visitActions(input: ActionInput): readonly Action[] {
-  const visits = input.visits.toSorted((a, b) => (a.started < b.started ? -1 : a.started > b.started ? 1 : 0));
-  return input.site.runs.flatMap((run) => run.bays.flatMap((bay) => bayActions(input, run, bay, visits)));
+  const seen = new Map<Id, { readonly visitId: Id; readonly bay: BayVisit }[]>();
+  for (const { id: visitId, bays } of input.visits.toSorted((a, b) => (a.started < b.started ? -1 : a.started > b.started ? 1 : 0)))
+    for (const bay of bays)
+      if (bay.finished) {
+        const earlier = seen.get(bay.bayId);
+        if (earlier === undefined) seen.set(bay.bayId, [{ visitId, bay }]);
+        else earlier.push({ visitId, bay });
+      }
+  return input.site.runs.flatMap((run) => run.bays.flatMap((bay) => bayActions(input, run, bay, seen.get(bay.id) ?? [])));
 }
 
-function bayActions(input: ActionInput, run: Run, bay: Bay, visits: readonly Visit[]): readonly Action[] {
+function bayActions(
+  input: ActionInput,
+  run: Run,
+  bay: Bay,
+  visits: readonly { readonly visitId: Id; readonly bay: BayVisit }[],
+): readonly Action[] {
   const open = new Map<string, { found: Found; since: Since }>();
-  for (const visit of visits) {
-    const seen = visit.bays.find(({ bayId, finished }) => bayId === bay.id && finished);
-    if (seen === undefined) continue;
-    const now = { visitId: visit.id, date: seen.date };
+  for (const { visitId, bay: seen } of visits) {
+    const now = { visitId, date: seen.date };
     const found = foundAt(input, run, bay, seen);
     for (const key of open.keys()) if (!found.has(key) && settles(seen, key)) open.delete(key);
     for (const [key, one] of found) {
@@ -101,7 +111,10 @@ function foundAt(input: ActionInput, run: Run, bay: Bay, seen: BayVisit): Readon
       levels: [],
     });
   for (const damage of seen.damages) if (damage.on === 'beam') found.set(`beam:${damage.id}`, beamDamage(damage, bay, level, nameOf));
-  const audits = input.audit.runs.find(({ runId }) => runId === run.id)?.bays.find(({ bayId }) => bayId === bay.id)?.levels ?? [];
+  const audits =
+    seen.sags.length === 0
+      ? []
+      : (input.audit.runs.find(({ runId }) => runId === run.id)?.bays.find(({ bayId }) => bayId === bay.id)?.levels ?? []);
   for (const reading of seen.sags) {
     const audit = audits.find(({ levelId }) => levelId === reading.levelId);
     const one = audit && sagFound(input, audit, reading, level);

@@ -43,14 +43,14 @@ export async function makePaper(rounds: Rounds, wish: PaperWish, program: string
     return visit === null ? 'There is no visit yet. Begin one under Visits.' : visitReportOf(rounds, visit, program, person);
   if (wish.kind === 'off-load-list' || wish.kind === 'site-register') {
     const input = await inputFor(rounds, wish.kind === 'off-load-list' ? [] : site.runs.map(({ id }) => id), program, person);
-    if (wish.kind === 'site-register') return siteRegister(input, visits, followUp);
-    return offLoadSheet(input, actionsOf({ site, audit: input.audit, visits, followUp, today: input.today }));
+    const actions = actionsIn(rounds, input);
+    return wish.kind === 'site-register' ? siteRegister(input, visits, followUp, actions) : offLoadSheet(input, actions);
   }
   if (run === undefined || wish.bayId === null) return 'Choose a bay first.';
   const input = await inputFor(rounds, [run.id], program, person);
   switch (wish.kind) {
     case 'bay-sheet':
-      return baySheet(input, wish.bayId);
+      return baySheet(input, wish.bayId, actionsIn(rounds, input));
     case 'worked-calculation':
       return workedCalculation(input, wish.bayId, wish.levelId);
     case 'draft-notice':
@@ -65,10 +65,10 @@ export async function makePaper(rounds: Rounds, wish: PaperWish, program: string
   }
 }
 
+const actionsIn = ({ visits, followUp }: Rounds, { site, audit, today }: PaperInput) => actionsOf({ site, audit, visits, followUp, today });
+
 export async function visitReportOf(rounds: Rounds, visit: Visit, program: string, person: string): Promise<Paper> {
-  const { open, visits, followUp } = rounds;
   const runIds = [...new Set(visit.bays.map(({ runId }) => runId))];
   const input = await inputFor(rounds, runIds, program, person);
-  const actions = actionsOf({ site: open.site, audit: input.audit, visits, followUp, today: input.today });
-  return visitReport(input, visit, actions);
+  return visitReport(input, visit, actionsIn(rounds, input));
 }

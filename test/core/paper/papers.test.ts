@@ -92,7 +92,7 @@ test('the report shows who signed, notes, photos and what is not finished', () =
 });
 
 test('a bay sheet shows verdict, levels, goods, frames and what is missing', () => {
-  const sheet = baySheet(s10, 'A-bay-2');
+  const sheet = baySheet(s10, 'A-bay-2', []);
   expect(rowsOf(sheet, 'Beam levels of bay A2, from the top down')).toEqual([
     'Level 1 | 1 500 mm | Box 120 × 50 × 1.5 | missing | 1 860 kg | not known | – | Not assessable',
   ]);
@@ -100,12 +100,20 @@ test('a bay sheet shows verdict, levels, goods, frames and what is missing', () 
   expect(rowsOf(sheet, 'To be found out').join('\n')).toContain('load notice of bay A2');
   expect(rowsOf(sheet, 'What is not simply within').join('\n')).toContain('Level 1, Tiles (2nd from the left) | Unit load');
   expect(wordsOf(sheet).filter((line) => line.startsWith('Upright frame A-F2'))).toEqual(['Upright frame A-F2, between bays A1 and A2']);
-  expect(() => baySheet(s10, 'nowhere')).toThrow('nowhere');
+  expect(() => baySheet(s10, 'nowhere', [])).toThrow('nowhere');
+});
+
+test('a bay sheet says first what is open at the bay, whatever its verdict', () => {
+  const actions = actionsFor(s10, [s10Visit()]);
+  expect(rowsOf(baySheet(s10, 'A-bay-2', actions), 'Open actions, the most urgent first')).toHaveLength(6);
+  // Of the neighbour only what is about the frame between them.
+  expect(rowsOf(baySheet(s10, 'A-bay-1', actions), 'Open actions, the most urgent first')).toHaveLength(3);
+  expect(wordsOf(baySheet(s10, 'A-bay-3', actions))).not.toContain('What to do');
 });
 
 test('the same sheet reads in pounds and inches', () => {
   // 1 500 mm = 59.06 in and 1 860 kg = 4 100.6 lb, by the exact factors 25.4 mm and 0.45359237 kg.
-  expect(rowsOf(baySheet(s10, 'A-bay-2'), 'Beam levels of bay A2, from the top down', US)).toEqual([
+  expect(rowsOf(baySheet(s10, 'A-bay-2', []), 'Beam levels of bay A2, from the top down', US)).toEqual([
     'Level 1 | 59.1 in | Box 120 × 50 × 1.5 | missing | 4,101 lb | not known | – | Not assessable',
   ]);
 });
@@ -160,11 +168,11 @@ test('the register has a row for each of 200 bays, with rating source, damage an
     'A-bay-2',
     { person: 'R. W.', date: S10_DAY },
   );
-  const rows = rowsOf(siteRegister(inputOf(site), [visit], newFollowUp('site')), 'Bays of run A');
+  const rows = rowsOf(siteRegister(inputOf(site), [visit], newFollowUp('site'), actionsFor(inputOf(site), [visit])), 'Bays of run A');
   expect(rows).toHaveLength(200);
-  expect(rows[0]).toContain('| Amber | never | due | never');
+  expect(rows[0]).toContain('| Amber | 1 | never | due | never');
   expect(rows[1]).toContain('LN-1 (read from the load notice, 3 May 2024, A. Reader)');
-  expect(rows[1]).toContain('| – | 2 June 2026 | 9 June 2026 | never');
+  expect(rows[1]).toContain('| – | 0 | 2 June 2026 | 9 June 2026 | never');
 });
 
 test('a draft notice repeats what was entered, and lists what is missing and how to get it', () => {
@@ -204,11 +212,11 @@ test('every paper carries site, checksum, program, rule set, span, rating source
   const visit = s10Visit();
   const actions = actionsFor(input, [visit]);
   const papers = [
-    baySheet(input, 'A-bay-1'),
+    baySheet(input, 'A-bay-1', []),
     workedCalculation(input, 'A-bay-1'),
     visitReport(input, visit, actions),
     offLoadSheet(input, actions),
-    siteRegister(input, [visit], newFollowUp('site')),
+    siteRegister(input, [visit], newFollowUp('site'), actions),
     draftNotice(input, 'A-bay-1', ''),
     changeSheet(input, siteOf({ bays: 3, levels: 1 }), 'A-bay-1'),
   ];
@@ -262,7 +270,7 @@ test('many ratings are counted in the foot and listed in the paper', () => {
       runs: site.runs.map((run) => ({ ...run, bays: run.bays.map((bay, i) => (i === n - 1 ? { ...bay, noticeId: `n${n}` } : bay)) })),
     };
   }
-  const paper = siteRegister(inputOf(site), [], setResponsible(newFollowUp('site'), 'P. Responsible'));
+  const paper = siteRegister(inputOf(site), [], setResponsible(newFollowUp('site'), 'P. Responsible'), []);
   expect(paper.foot.ratings.length).toBeLessThanOrEqual(260);
   expect(paper.foot.ratings).toMatch(/ and \d+ more, listed in this paper$/);
   expect(rowsOf(paper, 'Where the ratings come from')).toHaveLength(14);
