@@ -90,20 +90,25 @@ export async function openDemo(page: Page): Promise<void> {
 /**
  * What axe finds on the page as it is, one line a finding.
  * @param rules ids of the only rules to run; all of them if left out
+ * @param within selector of the part to look at; the whole page if left out
  */
-export async function axeFindings(page: Page, rules: readonly string[] = []): Promise<string[]> {
+export async function axeFindings(page: Page, rules: readonly string[] = [], within = 'html'): Promise<string[]> {
   if (!(await page.evaluate(() => 'axe' in globalThis))) await page.evaluate(AXE);
-  return page.evaluate(async (only) => {
-    const { axe } = globalThis as unknown as {
-      axe: {
-        run(options: object): Promise<{
-          violations: { id: string; help: string; nodes: { target: unknown[]; failureSummary: string }[] }[];
-        }>;
+  return page.evaluate(
+    async ([part, only]) => {
+      const { axe } = globalThis as unknown as {
+        axe: {
+          run(
+            part: string,
+            options: object,
+          ): Promise<{ violations: { id: string; help: string; nodes: { target: unknown[]; failureSummary: string }[] }[] }>;
+        };
       };
-    };
-    const { violations } = await axe.run({ resultTypes: ['violations'], ...(only.length === 0 ? {} : { runOnly: only }) });
-    return violations.flatMap(({ id, help, nodes }) =>
-      nodes.map((node) => `${id}: ${help} at ${String(node.target[0])} ${node.failureSummary}`),
-    );
-  }, rules);
+      const { violations } = await axe.run(part, { resultTypes: ['violations'], ...(only.length === 0 ? {} : { runOnly: only }) });
+      return violations.flatMap(({ id, help, nodes }) =>
+        nodes.map((node) => `${id}: ${help} at ${String(node.target[0])} ${node.failureSummary}`),
+      );
+    },
+    [within, rules] as const,
+  );
 }

@@ -8,7 +8,11 @@ const LIBRARIES = ['Unit loads', 'Pallets', 'Load notices', 'Beam types', 'Frame
 /** Commands that go somewhere but are no screens of their own. */
 const NO_SCREENS = /^(Find a bay|Next bay|Previous bay|Level above|Level below|Back to where)/;
 
-type Visit = (name: string) => Promise<void>;
+/** `part` is a selector of what is new, where the rest of the page was visited before. */
+type Visit = (name: string, part?: string) => Promise<void>;
+
+/** Forms and findings beside the drawing. */
+const SIDE = 'aside';
 
 /** The list of sites, empty and not; to be walked on a fresh folder, and followed by `walkSite`. */
 export async function walkList(page: Page, visit: Visit): Promise<void> {
@@ -43,7 +47,7 @@ export async function walkBay(page: Page, visit: Visit): Promise<void> {
   await goToLevel(page, 2);
   await visit('front-heavy level');
   await page.locator('summary', { hasText: 'Worked calculation' }).first().click();
-  await visit('worked calculation');
+  await visit('worked calculation', SIDE);
   await goToBay(page, 'C2');
   await goToLevel(page, 3);
   await visit('level that is not assessable');
@@ -62,20 +66,20 @@ export async function walkBay(page: Page, visit: Visit): Promise<void> {
   await choice(page, 'Goods$').selectOption({ label: 'new goods…' });
   for (const bearing of BEARINGS) {
     await choice(page, 'Stands on the beams').selectOption({ label: bearing });
-    await visit(`goods to add, ${bearing}`);
+    await visit(`goods to add, ${bearing}`, bearing === BEARINGS[0] ? undefined : SIDE);
   }
   await type(page.getByRole('textbox', { name: /^Mass without pallet/ }), '-1');
-  await visit('goods to add, with an error at a field');
+  await visit('goods to add, with an error at a field', SIDE);
 
   await page.getByRole('button', { name: 'Bay…', exact: true }).click();
-  await visit('bay form');
+  await visit('bay form', SIDE);
   await page.getByRole('button', { name: 'Frames…' }).click();
   await page.getByRole('button', { name: 'Record damage' }).first().click();
-  await visit('frames form');
+  await visit('frames form', SIDE);
   await page.getByRole('button', { name: 'Level: height, beams, locks, deck…' }).click();
   await choice(page, 'Deck').selectOption({ label: 'mesh deck' });
   await checked(page);
-  await visit('level form');
+  await visit('level form', SIDE);
 }
 
 /** Every other screen that the command list goes to. */
@@ -96,7 +100,7 @@ export async function walkScreens(page: Page, visit: Visit): Promise<void> {
     if (screen.startsWith('Libraries')) {
       for (const library of LIBRARIES) {
         await page.getByRole('navigation', { name: 'Libraries' }).getByRole('button', { name: library }).click();
-        await visit(`library: ${library}`);
+        await visit(`library: ${library}`, library === LIBRARIES[0] ? undefined : 'main');
       }
     } else if (screen.startsWith('Rules')) {
       await page
@@ -132,7 +136,7 @@ export async function walkDialogs(page: Page, visit: Visit): Promise<void> {
     else await page.keyboard.press(key);
     const dialog = page.getByRole('dialog', { name: new RegExp(`^${name}`) });
     await dialog.waitFor();
-    await visit(`dialog: ${name}`);
+    await visit(`dialog: ${name}`, 'dialog');
     await page.keyboard.press('Escape');
     await dialog.waitFor({ state: 'detached' });
   }
