@@ -104,7 +104,7 @@ function imbalance(context: SiteContext, work: FrameWork, contents: FrameContent
     left: side(left, 'left'),
     right: side(right, 'right'),
     missing: contents.goodsMissing,
-    impossible: contents.impossible,
+    impossible: contents.impossible || storey.finding.verdict === 'not-possible',
     utilisation: storey.utilisation,
     utilisationMissing: storey.finding.missing,
     rules: context.rules,

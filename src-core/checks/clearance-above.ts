@@ -121,7 +121,7 @@ function worked({ height, beam, beamHeight, goods, rule, room, needed, rules }: 
     result: { symbol: 'a', quantity: lengthOf(room) },
     source: 'the beam above is taken as it hangs',
   };
-  if (rule === null || !(room > 0)) return [left];
+  if (rule === null || !(room > TOUCH)) return [left];
   return [
     left,
     {

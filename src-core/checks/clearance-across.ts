@@ -121,7 +121,7 @@ function worked(
     result: { symbol: 'a', quantity: lengthOf(room) },
     source: 'clearance holds for the real outline of the load',
   };
-  if (!(room > 0) || needed === 0) return [left];
+  if (!(room > TOUCH) || needed === 0) return [left];
   return [
     left,
     {

@@ -157,7 +157,7 @@ function worked(gap: Gap, needed: number, rules: ResolvedRules): readonly Worked
     result: { symbol: 'a', quantity: lengthOf(gap.room) },
     source: 'clearance holds for the real outline of the load',
   };
-  if (!(gap.room > 0)) return [room];
+  if (!(gap.room > TOUCH)) return [room];
   return [
     room,
     {

@@ -81,7 +81,8 @@ export function classOfDamage(damage: FoundDamage, rules: ResolvedRules, today: 
   if (missing.length > 0 || worst === undefined) return judged({ class: 'unclassed', because: 'not-known', missing });
   if (worst.class === 'green') return judged({ class: 'green', because: 'measured' });
   if (found === '') return judged({ class: 'amber', because: 'measured', missing: [dayFound(damage)] });
-  const lastAmberDay = addDays(found, 7 * rules.value.amberWeeks);
+  // A site may count in parts of a week; a day that has begun is not a whole one.
+  const lastAmberDay = addDays(found, Math.floor(7 * rules.value.amberWeeks));
   return daysBetween(lastAmberDay, today) > 0
     ? judged({ class: 'red', because: 'too-long-amber', lastAmberDay })
     : judged({ class: 'amber', because: 'measured', lastAmberDay });

@@ -87,13 +87,18 @@ function oneFinding(input: FrameDamageInput, damage: FoundDamage, judged: Damage
         return say`${member} ${bent(worst, damage)}: green. Record it, and measure it again at the next inspection.`;
       return say`${member} ${bent(worst, damage)}: amber. Do not reload what is emptied, and have it repaired by ${dateWords(judged.lastAmberDay ?? '')}; after that day it counts as red.`;
     },
-    worked: () => (byMillimetres ? judged.bends.flatMap((bend) => worked(bend, damage, rules)) : []),
+    worked: () =>
+      byMillimetres ? judged.bends.filter(({ ratio }) => Number.isFinite(ratio)).flatMap((bend) => worked(bend, damage, rules)) : [],
     notes,
   });
 }
 
-const bent = ({ direction, measuredMm, ratio, limitMm }: Bend, { gaugeMm }: FoundDamage): Text =>
-  say`is bent ${lengthOf(measuredMm)} ${direction === 'along' ? 'along the run' : 'in the plane of the frame'} over ${lengthOf(gaugeMm)}, ${ratioOf(ratio)} times the limit of ${lengthOf(limitMm)}`;
+function bent({ direction, measuredMm, ratio, limitMm }: Bend, { gaugeMm }: FoundDamage): Text {
+  const so = say`is bent ${lengthOf(measuredMm)} ${direction === 'along' ? 'along the run' : 'in the plane of the frame'} over ${lengthOf(gaugeMm)}`;
+  return Number.isFinite(ratio)
+    ? say`${so}, ${ratioOf(ratio)} times the limit of ${lengthOf(limitMm)}`
+    : say`${so}, where this site allows no bend at all`;
+}
 
 const unloadNow = ({ unload }: FrameDamageInput): Text =>
   say`Unload every level of ${listed(unload)} at once, bar them from reloading, and have the part repaired with the maker’s own.`;

@@ -36,7 +36,7 @@ export function frameImbalance(input: FrameImbalanceInput): Finding {
       check: 'frame-imbalance',
       place,
       verdict: 'not-possible',
-      says: () => say`Not worked out: goods beside ${frame} cannot stand as they were entered.`,
+      says: () => say`Not worked out: goods or beams at ${frame} cannot stand as they were entered.`,
     });
   if (missing.length > 0) return notAssessable('frame-imbalance', place, missing);
   const greater = Math.max(left.kg, right.kg);

@@ -3,6 +3,7 @@ import { lengthOf, quantity } from '../units/quantity';
 import { say, type Finding, type Missing, type Place, type Text, type WorkedStep } from './finding';
 import { finding, notAssessable } from './make-finding';
 import { inside } from './phrase';
+import { TOUCH } from './placement';
 import { ruleQuantity, ruleValue, sourceOf, type ResolvedRules } from './rule-sets';
 import { above, put } from './worked-values';
 
@@ -118,11 +119,11 @@ function leaning(input: GoodsFormInput, goods: FormedGoods): readonly Finding[] 
       verdict: 'over',
       demand: lengthOf(lean),
       allowed: lengthOf(allowed),
-      ...(allowed > 0 ? { utilisation: lean / allowed } : {}),
+      ...(allowed > TOUCH ? { utilisation: lean / allowed } : {}),
       says: (): Text =>
         say`${goods.name} leans ${lengthOf(lean)}, ${leans} of its height; up to ${ruleQuantity(rules, 'leanMost')} counts as upright. Take it down and stack it anew.`,
       worked: (): readonly WorkedStep[] =>
-        allowed > 0
+        allowed > TOUCH
           ? [
               {
                 what: 'Greatest lean',

@@ -71,7 +71,7 @@ function judge({ place, carried, rules }: OverhangInput, goods: AcrossBeams, fra
     verdict: far && !carried ? 'close' : 'within',
     demand: lengthOf(most),
     allowed: lengthOf(limit),
-    ...(limit > 0 ? { utilisation: Math.max(0, most) / limit } : {}),
+    ...(limit > TOUCH ? { utilisation: Math.max(0, most) / limit } : {}),
     says: () => {
       const stands =
         most >= 0
@@ -124,7 +124,7 @@ function worked(
       source: 'geometry',
     },
   ];
-  if (!(most > 0) || rules.value.overhangMost === 0) return steps;
+  if (!(most > 0) || rules.value.overhangMost < TOUCH) return steps;
   return [
     ...steps,
     {

@@ -122,6 +122,15 @@ test('S5: the lowest beams of one bay taken out: its frames are held from one si
   expect(of(frame(audited, 0), 'frame-storey').verdict).toBe('within');
 });
 
+test('beams that hang above the top of a frame are not possible, and so is what would follow from them', () => {
+  const site = s5(1500);
+  const [run] = site.runs as [Run];
+  const low: Site = { ...site, runs: [{ ...run, frames: run.frames.map((one) => ({ ...one, heightMm: 5900 })) }] };
+  const found = frame(audit(low), 1);
+  expect(of(found, 'frame-storey').verdict).toBe('not-possible');
+  expect(bay(audit(low)).verdict).toBe('not-possible');
+});
+
 // ---------------------------------------------------------------- S7: long-span shelf with a motor
 
 const archive = makeUnitLoad({ id: 'boxes', name: 'Archive boxes', widthMm: 1800, depthMm: 600, heightMm: 300, goodsKg: 120 });

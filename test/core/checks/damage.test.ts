@@ -160,3 +160,17 @@ test('the United States set unloads on any damage that is recorded', () => {
   expect(found?.verdict).toBe('over');
   expect(plain(found?.says ?? [])).toContain('asks to unload on any visible damage');
 });
+
+test('where one limit is set to nothing, any bend that way is red and no number without end is shown', () => {
+  const rules = resolveRules({ set: 'european', changed: [{ key: 'damageUprightAcross', value: 0, reason: 'owner’s rule' }] });
+  const [found] = frame([bend('upright-front', 0, 1)], { rules });
+  expect(found?.verdict).toBe('over');
+  expect(plain(found?.says ?? [])).toContain('is bent 1 mm in the plane of the frame over 1000 mm, where this site allows no bend at all: red');
+});
+
+test('a part of a week counts to its last whole day', () => {
+  // 2.5 weeks are 17.5 days: amber on the 17th day, red on the 18th
+  const rules = resolveRules({ set: 'european', changed: [{ key: 'amberWeeks', value: 2.5, reason: 'owner’s rule' }] });
+  const on = (today: string) => classOfDamage(bend('upright-front', 8, 0, { found: '2026-05-01' }), rules, today).class;
+  expect([on('2026-05-18'), on('2026-05-19')]).toEqual(['amber', 'red']);
+});
