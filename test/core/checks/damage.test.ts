@@ -165,7 +165,9 @@ test('where one limit is set to nothing, any bend that way is red and no number 
   const rules = resolveRules({ set: 'european', changed: [{ key: 'damageUprightAcross', value: 0, reason: 'owner’s rule' }] });
   const [found] = frame([bend('upright-front', 0, 1)], { rules });
   expect(found?.verdict).toBe('over');
-  expect(plain(found?.says ?? [])).toContain('is bent 1 mm in the plane of the frame over 1000 mm, where this site allows no bend at all: red');
+  expect(plain(found?.says ?? [])).toContain(
+    'is bent 1 mm in the plane of the frame over 1000 mm, where this site allows no bend at all: red',
+  );
 });
 
 test('a part of a week counts to its last whole day', () => {
