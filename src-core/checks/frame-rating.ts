@@ -2,7 +2,8 @@
  * What an upright frame may carry as it stands: by its maker's table, or by the one number that the load
  * notices of its bays give for the rack they describe; and what keeps either from holding.
  */
-import type { Missing, Text, WorkedStep } from './finding';
+import { massOf } from '../units/quantity';
+import { say, type Missing, type Text, type WorkedStep } from './finding';
 import type { FrameLevel, Storey } from './frame-loads';
 import { frameTableRating, type FrameTableAnswer, type FrameTableChoice, type FrameTableRow } from './frame-table';
 
@@ -73,11 +74,43 @@ export function storeyRatings(input: FrameRatingInput, storeys: readonly Storey[
   const read = new Map<number, StoreyRating>();
   return storeys.map(({ height }) => {
     const at = table.by === 'greatest-height' ? greatest : height;
-    const known = read.get(at) ?? byTable(input, table, frameTableRating(table.rows, at, input.choice));
+    const known = read.get(at) ?? lowerOf(input, byTable(input, table, frameTableRating(table.rows, at, input.choice)));
     read.set(at, known);
     return known;
   });
 }
+
+/** A notice that states less than the table holds: of two published ratings the lower one. */
+function lowerOf({ bays }: FrameRatingInput, rated: StoreyRating): StoreyRating {
+  const tableKg = rated.kg;
+  if (tableKg === null) return rated;
+  const lowest = lowestNotice(bays);
+  if (lowest === null || lowest.kg >= tableKg) return rated;
+  const note = say`The lower of two ratings is used: ${massOf(lowest.kg)} by the notice of ${lowest.bay.name}, ${massOf(tableKg)} by the maker’s table.`;
+  return { ...rated, ...ofNotice(lowest), notes: [...rated.notes, note], interpolated: false };
+}
+
+interface Stated {
+  readonly kg: number;
+  readonly bay: FrameBay;
+  readonly notice: FrameNotice;
+}
+
+function lowestNotice(bays: readonly FrameBay[]): Stated | null {
+  let lowest: Stated | null = null;
+  for (const bay of bays) {
+    const { notice } = bay;
+    if (notice !== null && notice.frameKg !== null && (lowest === null || notice.frameKg < lowest.kg))
+      lowest = { kg: notice.frameKg, bay, notice };
+  }
+  return lowest;
+}
+
+const ofNotice = ({ kg, bay, notice }: Stated): Pick<StoreyRating, 'kg' | 'by' | 'steps'> => ({
+  kg,
+  by: `the notice of ${bay.name}`,
+  steps: [noticeStep(kg, notice.from)],
+});
 
 function byTable({ frame }: FrameRatingInput, table: NonNullable<FrameRatingInput['table']>, answer: FrameTableAnswer): StoreyRating {
   if (answer.ok)
@@ -105,35 +138,19 @@ function byTable({ frame }: FrameRatingInput, table: NonNullable<FrameRatingInpu
 
 /** The lower of the numbers on the two bays' notices, each valid only for the rack that its notice shows. */
 function byNotices({ frame, bays, table }: FrameRatingInput): StoreyRating {
-  const missing: Missing[] = [];
-  let lowest: { readonly kg: number; readonly bay: FrameBay; readonly notice: FrameNotice } | null = null;
-  for (const bay of bays) {
+  const missing = bays.flatMap((bay): readonly Missing[] => {
     const { notice } = bay;
+    const input = `rating of ${frame}`;
     if (notice === null) {
-      missing.push({
-        input: `rating of ${frame}`,
-        how: `Enter the table of its frame type, or the load notice of ${bay.name} with the frame’s rating.`,
-        field: table === null ? `${bay.field}noticeId` : table.field,
-      });
-      continue;
+      const how = `Enter the table of its frame type, or the load notice of ${bay.name} with the frame’s rating.`;
+      return [{ input, how, field: table === null ? `${bay.field}noticeId` : table.field }];
     }
-    if (notice.frameKg === null)
-      missing.push({
-        input: `rating of ${frame}`,
-        how: `Enter the table of its frame type, or the frame’s rating from the load notice of ${bay.name}.`,
-        field: `${notice.field}frameKg`,
-      });
-    else if (lowest === null || notice.frameKg < lowest.kg) lowest = { kg: notice.frameKg, bay, notice };
-    missing.push(...shownBy(bay, notice));
-  }
-  return {
-    kg: lowest?.kg ?? null,
-    interpolated: false,
-    by: lowest === null ? 'the notice' : `the notice of ${lowest.bay.name}`,
-    notes: [],
-    steps: lowest === null ? [] : [noticeStep(lowest.kg, lowest.notice.from)],
-    missing,
-  };
+    const how = `Enter the table of its frame type, or the frame’s rating from the load notice of ${bay.name}.`;
+    return [...(notice.frameKg === null ? [{ input, how, field: `${notice.field}frameKg` }] : []), ...shownBy(bay, notice)];
+  });
+  const lowest = lowestNotice(bays);
+  const rated = lowest === null ? { kg: null, by: 'the notice', steps: [] } : ofNotice(lowest);
+  return { ...rated, interpolated: false, notes: [], missing };
 }
 
 const noticeStep = (kg: number, from: string): WorkedStep => ({

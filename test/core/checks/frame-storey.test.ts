@@ -232,6 +232,17 @@ test('without a table the lower number of the two notices holds, for the bays as
   expectWorked(finding);
 });
 
+test('of a table and a lower number on a notice the lower one holds, and a higher one changes nothing', () => {
+  const noticed = (frameKg: number) =>
+    frameStorey(s5(AT_1500, { bays: [bay('left', AT_1500, { frameKg }), bay('right', AT_1500)] })).finding;
+  expect(noticed(9000).utilisation).toBeCloseTo(8164 / 9000, 12);
+  expect(noticed(9000).notes.map(plain).join(' ')).toContain(
+    'The lower of two ratings is used: 9000 kg by the notice of bay left, 9800 kg by the maker’s table.',
+  );
+  expectWorked(noticed(9000));
+  expect(noticed(9900).utilisation).toBeCloseTo(8164 / 9800, 12);
+});
+
 test.each([
   ['no notice', null, 'bay:right:noticeId'],
   ['no number of the frame', { firstBeam: 1500, greatestGap: 1500 }, 'notice:right:frameKg'],
