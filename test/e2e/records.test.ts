@@ -34,7 +34,7 @@ test(
           await page.locator('[data-bay]').first().waitFor();
           await keep(1);
           await page.getByRole('button', { name: '← Back to the bay' }).click();
-        await command(page, 'Bay: clear entry');
+          await command(page, 'Bay: clear entry');
           await type(field(page, 'Clear entry'), '2650');
           await keep(2);
 

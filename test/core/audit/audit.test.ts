@@ -131,20 +131,23 @@ function rechecked(before: SiteAudit, after: SiteAudit): { readonly bays: readon
   };
 }
 
-test.each([6, 60])('of two runs of %i bays back to back, moving goods rechecks their bay and its mirror image, and the frames at both', (bays) => {
-  const site = depot(bays);
-  const cache = createAuditCache();
-  const before = auditSite(site, TODAY, cache);
-  const after = auditSite(
-    withBay(site, 0, 2, (bay) => moved(bay, 100)),
-    TODAY,
-    cache,
-  );
-  expect(rechecked(before, after)).toEqual({
-    bays: ['A-bay-2', `B-bay-${bays - 3}`],
-    frames: ['A-frame-2', 'A-frame-3', `B-frame-${bays - 3}`, `B-frame-${bays - 2}`],
-  });
-});
+test.each([6, 60])(
+  'of two runs of %i bays back to back, moving goods rechecks their bay and its mirror image, and the frames at both',
+  (bays) => {
+    const site = depot(bays);
+    const cache = createAuditCache();
+    const before = auditSite(site, TODAY, cache);
+    const after = auditSite(
+      withBay(site, 0, 2, (bay) => moved(bay, 100)),
+      TODAY,
+      cache,
+    );
+    expect(rechecked(before, after)).toEqual({
+      bays: ['A-bay-2', `B-bay-${bays - 3}`],
+      frames: ['A-frame-2', 'A-frame-3', `B-frame-${bays - 3}`, `B-frame-${bays - 2}`],
+    });
+  },
+);
 
 test('in a run that stands alone, moving goods from one bay to another rechecks these two and the frames at them', () => {
   const site = withRun(
