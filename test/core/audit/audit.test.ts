@@ -188,7 +188,9 @@ const EDITS: Readonly<Record<string, Edit>> = {
   damage: (site, run, frame, by) => withFrame(site, run, frame, (one) => ({ ...one, damages: [...one.damages, bent(by)] })),
   'take out': (site, run, bay) =>
     withRun(site, run, (one) =>
-      one.bays.length < 2 ? one : { ...one, bays: one.bays.filter((_, i) => i !== bay), frames: one.frames.slice(0, one.bays.length) },
+      one.bays.length < 2 || bay >= one.bays.length
+        ? one
+        : { ...one, bays: one.bays.filter((_, i) => i !== bay), frames: one.frames.slice(0, one.bays.length) },
     ),
   'turn round': (site, run) => withRun(site, run, (one) => ({ ...one, bays: one.bays.toReversed(), frames: one.frames.toReversed() })),
   rename: (site, run, _, by) => withRun(site, run, (one) => ({ ...one, name: `${one.name}${by}` })),
