@@ -34,6 +34,7 @@ async function largeText(page: Page): Promise<void> {
   await page.getByRole('button', { name: 'Halverwick depot (demo)' }).click();
   await page.getByRole('button', { name: 'Remove Halverwick depot (demo)…' }).click();
   await page.getByRole('dialog').getByRole('button', { name: 'Remove', exact: true }).click();
+  await page.getByRole('heading', { name: 'Nothing here yet' }).waitFor();
 }
 
 test(
@@ -93,6 +94,40 @@ for (const width of [1280, 640])
       ),
     LONG,
   );
+
+for (const [width, height] of [
+  [1280, 800],
+  [640, 900],
+] as const)
+  test(`at text of 200 % and ${width} px the cautions never hide what has the focus`, () =>
+    withProgram(
+      async ({ page }) => {
+        await largeText(page);
+        await openDemo(page);
+        await page.getByRole('button', { name: 'Frames…' }).click();
+        await page.locator('[data-form] input').first().focus();
+        for (let stop = 0; stop < 25; stop += 1) {
+          await page.keyboard.press('Tab');
+          const hidden = await page.evaluate(() => {
+            const { activeElement } = document;
+            const foot = document.querySelector('footer');
+            if (activeElement === null || foot === null || foot.contains(activeElement)) return null;
+            const [focus, cautions] = [activeElement.getBoundingClientRect(), foot.getBoundingClientRect()];
+            const seen = focus.bottom <= cautions.top + 1 || focus.top >= cautions.bottom - 1;
+            return seen ? null : `${activeElement.outerHTML.slice(0, 120)} at ${focus.bottom}, cautions from ${cautions.top}`;
+          });
+          expect(hidden).toBeNull();
+        }
+        // They leave most of the window to the work.
+        const room = await page.evaluate(() => {
+          const foot = document.querySelector('footer');
+          const box = foot?.getBoundingClientRect();
+          return box && getComputedStyle(foot as Element).position === 'sticky' ? box.height / innerHeight : 0;
+        });
+        expect(room).toBeLessThan(0.25);
+      },
+      { viewport: { width, height } },
+    ));
 
 test('with forced colours every verdict is still a word', () =>
   withProgram(
