@@ -5,7 +5,7 @@ import { say, type Text } from '../units/text';
 import { stillOpen, type OpenAction } from '../visit/actions';
 import { offLoadList } from '../visit/off-load';
 import { ACTION_WORDS } from '../words/visit-words';
-import { dayCell, heading, kgCell, NONE, paragraph, table, type Block, type Cell } from './paper';
+import { dayCell, heading, kgCell, NONE, paragraph, table, unbroken, type Block, type Cell } from './paper';
 
 export function actionBlocks(site: Site, actions: readonly OpenAction[]): readonly Block[] {
   const open = stillOpen(actions);
@@ -43,9 +43,9 @@ function openTable(open: readonly OpenAction[]): Block {
 }
 
 function dueCell({ due, overdue, kind }: OpenAction): Cell {
-  if (kind === 'unload' || kind === 'out-of-use' || kind === 'replace-lock') return ['at once'];
+  if (kind === 'unload' || kind === 'out-of-use' || kind === 'replace-lock') return [unbroken('at once')];
   if (due === null) return NONE;
-  return overdue !== null && overdue > 0 ? [`${dateWords(due)}, ${overdue} days late`] : [dateWords(due)];
+  return overdue !== null && overdue > 0 ? [`${unbroken(dateWords(due))}, ${overdue} days late`] : dayCell(due);
 }
 
 const reductionWords = ({ reductions }: OpenAction): Text =>

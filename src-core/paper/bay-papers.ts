@@ -110,12 +110,12 @@ function opening({ input, bay, run, audit }: BayAt): readonly Block[] {
   return [
     facts([
       fact('Verdict', { verdict: audit.verdict }),
-      fact('Decided by', audit.governing === null ? NONE : audit.governing.says),
       fact('Goods on beam levels', kgCell(audit.totalKg)),
       fact('Clear entry', mmCell(bay.clearEntryMm)),
       fact('Run', [run.name]),
       fact('Load notice', [stated]),
     ]),
+    ...(audit.governing === null ? [] : [paragraph(['Decided by: ', ...audit.governing.says])]),
   ];
 }
 

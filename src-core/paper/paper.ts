@@ -122,5 +122,8 @@ const NOT_KNOWN: Text = ['not known'];
 export const kgCell = (kg: number | null | undefined): Text => (kg === null || kg === undefined ? NOT_KNOWN : [massOf(kg)]);
 export const mmCell = (mm: number | null | undefined): Text => (mm === null || mm === undefined ? NOT_KNOWN : [lengthOf(mm)]);
 
+/** Words that stay on one line. */
+export const unbroken = (words: string): string => words.replaceAll(' ', '\u00a0');
+
 /** "4 May 2026", or that the day is not known. */
-export const dayCell = (date: string): Text => (date === '' ? NOT_KNOWN : [dateWords(date)]);
+export const dayCell = (date: string): Text => (date === '' ? NOT_KNOWN : [unbroken(dateWords(date))]);

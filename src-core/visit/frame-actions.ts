@@ -1,6 +1,7 @@
 /** What damaged and leaning frames ask for: the bays on both sides, and those tied to them from behind. */
 import { classOfDamage, MEMBER_WORDS, type DamageJudged } from '../checks/damage-class';
 import { say, type Text } from '../checks/finding';
+import { opening } from '../checks/phrase';
 import { resolveRules, type ResolvedRules } from '../checks/rule-sets';
 import { baysBehind } from '../site/behind';
 import type { Bay, Damage, Frame, Id, Run, Site } from '../site/site';
@@ -50,7 +51,7 @@ function ofDamages(at: FrameAt, rules: ResolvedRules, today: string): readonly A
 
 function ofDamage(at: FrameAt, damage: Damage, judged: DamageJudged): Action {
   const { frame } = at;
-  const part = say`${MEMBER_WORDS[damage.member]} of frame ${frame.name}`;
+  const part = say`${opening(MEMBER_WORDS[damage.member])} of frame ${frame.name}`;
   const action = base(at, `damage:${damage.id}`, damage.found);
   switch (judged.class) {
     case 'green':
@@ -58,7 +59,7 @@ function ofDamage(at: FrameAt, damage: Damage, judged: DamageJudged): Action {
         ...action,
         kind: 'watch',
         class: 'green',
-        says: say`Green: ${part}. Record it and measure it again at the next inspection.`,
+        says: say`${part}: record it, and measure it again at the next inspection.`,
         due: null,
         levels: [],
       };
@@ -69,8 +70,8 @@ function ofDamage(at: FrameAt, damage: Damage, judged: DamageJudged): Action {
         class: 'amber',
         says:
           judged.lastAmberDay === null
-            ? say`Amber: ${part}. Do not reload what is emptied at ${bayNames(at)}, and have it repaired. The day it was found is not known, so its clock cannot run.`
-            : say`Amber: ${part}. Do not reload what is emptied at ${bayNames(at)}, and have it repaired by ${dateWords(judged.lastAmberDay)}; after that day it counts as red.`,
+            ? say`${part}: do not reload what is emptied at ${bayNames(at)}, and have it repaired. The day it was found is not known, so its clock cannot run.`
+            : say`${part}: do not reload what is emptied at ${bayNames(at)}, and have it repaired by ${dateWords(judged.lastAmberDay)}; after that day it counts as red.`,
         due: judged.lastAmberDay,
       };
     case 'red':
@@ -80,12 +81,12 @@ function ofDamage(at: FrameAt, damage: Damage, judged: DamageJudged): Action {
         class: 'red',
         says:
           judged.because === 'too-long-amber'
-            ? say`Red, because amber since ${dateWords(damage.found)}: ${part}. ${unload(at)}`
+            ? say`${part}, amber since ${dateWords(damage.found)} and so red. ${unload(at)}`
             : judged.because === 'torn'
-              ? say`Red, dented or torn: ${part}. ${unload(at)}`
+              ? say`${part}, dented or torn. ${unload(at)}`
               : judged.because === 'any-damage'
-                ? say`Damaged: ${part}. This rule set asks to unload on any visible damage. ${unload(at)}`
-                : say`Red: ${part}. ${unload(at)}`,
+                ? say`${part} is damaged, and this rule set asks to unload on any visible damage. ${unload(at)}`
+                : say`${part}. ${unload(at)}`,
         due: judged.lastAmberDay,
       };
     case 'unclassed':
@@ -93,7 +94,7 @@ function ofDamage(at: FrameAt, damage: Damage, judged: DamageJudged): Action {
         ...action,
         kind: 'unload',
         class: 'unclassed',
-        says: say`Not classed: ${part}. Treat it as red until it is. ${unload(at)}`,
+        says: say`${part} is damaged and cannot be classed yet: treat it as red until it is. ${unload(at)}`,
         due: null,
       };
   }
