@@ -3,6 +3,9 @@
  * the one stretch in which it differs from the line before. A line that is torn or damaged is
  * noticed by its checksum and passed over, with those that build on it.
  */
+import { raiseSite, SITE_VERSION } from '../src-core/site/migrations';
+import { readSite } from '../src-core/site/read';
+import { writeSite } from '../src-core/site/write';
 import { sha256 } from './checked-site';
 
 export interface Edit {
@@ -16,8 +19,9 @@ export interface Edit {
 }
 
 type Line = Edit &
+  /** `version` of the site's form; the first journals named none. */
   (
-    | { readonly whole: string; readonly edits: readonly string[] }
+    | { readonly whole: string; readonly edits: readonly string[]; readonly version?: number }
     /** Keep the first `keep` letters, leave out `cut`, put `put` there; `from` and `to` prove the bodies. */
     | { readonly keep: number; readonly cut: number; readonly put: string; readonly from: string; readonly to: string }
   );
@@ -41,7 +45,8 @@ const framed = (line: Line): string => {
 };
 
 /** @param edits what was done before, since the file that these edits build on */
-export const wholeLine = (edit: Edit, body: string, edits: readonly string[]): string => framed({ ...edit, whole: body, edits });
+export const wholeLine = (edit: Edit, body: string, edits: readonly string[]): string =>
+  framed({ ...edit, whole: body, edits, version: SITE_VERSION });
 
 /** The line that turns one body into the next. */
 export function changeLine(edit: Edit, before: string, body: string): string {
@@ -60,6 +65,7 @@ export function replay(text: string): Replay | null {
   let last: Edit | null = null;
   let edits: readonly string[] = [];
   let damagedLines = 0;
+  let version = SITE_VERSION;
   const tookUp: string[] = [];
   for (const written of text.split('\n')) {
     if (written === '') continue;
@@ -69,12 +75,22 @@ export function replay(text: string): Replay | null {
       damagedLines++;
       continue;
     }
+    if ('whole' in line) version = line.version ?? 1;
     edits = [...('whole' in line ? line.edits : edits), line.edit];
     body = next;
     last = line;
     if (line.tookUp !== undefined) tookUp.push(line.tookUp);
   }
-  return body === null || last === null ? null : { body, editedAt: last.at, edits, base: last.base, tookUp, damagedLines };
+  return body === null || last === null
+    ? null
+    : { body: raised(body, version), editedAt: last.at, edits, base: last.base, tookUp, damagedLines };
+}
+
+/** The body in the present form, so that unsaved edits outlive a newer program. */
+function raised(body: string, version: number): string {
+  if (version >= SITE_VERSION) return body;
+  const reading = readSite(raiseSite(JSON.parse(body), version));
+  return reading.ok ? writeSite(reading.site) : body;
 }
 
 /** Only lines that this program wrote have the right checksum, so their content is as it writes it. */

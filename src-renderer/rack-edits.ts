@@ -18,7 +18,7 @@ import {
   removeLevel,
   removeRun,
 } from '../src-core/site/edits';
-import { evenTemplate, runByTemplate } from '../src-core/site/new-site';
+import { evenPlan, runByPlan } from '../src-core/site/new-site';
 import { onHolePitch } from '../src-core/site/placing';
 import type { Bay, Frame, Id, Level, LoadNotice, Run, Site } from '../src-core/site/site';
 import { formatQuantity } from '../src-core/units/format';
@@ -50,7 +50,7 @@ export interface RunPlan {
  */
 export function layOutRun(open: OpenSite, plan: RunPlan, notice: LoadNotice | null): Refused | null {
   const { name, bays: count, floorId } = plan;
-  const run: Run = { ...runByTemplate(evenTemplate(plan), { name, count, floorId, newId }), loadedBy: plan.loadedBy };
+  const run: Run = { ...runByPlan(evenPlan(plan), { name, count, floorId, newId }), loadedBy: plan.loadedBy };
   const refused = open.edit(`Lay out run ${name}`, (site) => addRun(notice === null ? site : addEntry(site, 'notices', notice), run));
   if (refused !== null) return refused;
   const bay = run.bays[0];
@@ -66,8 +66,8 @@ const withoutGoods = (bay: Bay): Bay => ({ ...bay, levels: bay.levels.map((level
 
 /** Everything of a first bay that nobody has stated is not known. */
 const firstBay = (name: string): Bay =>
-  runByTemplate(
-    evenTemplate({ clearEntryMm: 2700, levels: 3, firstBeamMm: 1500, pitchMm: 1500, noticeId: null, beamTypeId: null, frameTypeId: null }),
+  runByPlan(
+    evenPlan({ clearEntryMm: 2700, levels: 3, firstBeamMm: 1500, pitchMm: 1500, noticeId: null, beamTypeId: null, frameTypeId: null }),
     { name, count: 1, floorId: null, newId },
   ).bays.map((bay) => ({ ...bay, name }))[0] as Bay;
 
@@ -165,6 +165,8 @@ export function addLevelOnTop(open: OpenSite): void {
     beamTypeId: bay.levels.at(-1)?.beamTypeId ?? null,
     locks: 'unknown',
     deck: { kind: 'none' },
+    beamDamages: [],
+    sags: [],
     placements: [],
   };
   putOnTop(open, bay, level, `Add a level to bay ${bay.name}`);

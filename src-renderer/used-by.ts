@@ -10,6 +10,7 @@ export function usedBy(site: Site, library: Library, id: Id): readonly string[] 
   const names = new Map<Id, string>();
   for (const one of site.unitLoads) names.set(one.id, one.name);
   for (const one of site.notices) names.set(one.id, `load notice ${one.name}`);
+  for (const one of site.bayTemplates) names.set(one.id, `bay template ${one.name}`);
   for (const run of site.runs) {
     names.set(run.id, `run ${run.name}`);
     for (const frame of run.frames) names.set(frame.id, `frame ${frame.name}`);

@@ -7,6 +7,9 @@ import { RULES } from '../src-core/checks/rule-table';
 import type {
   Answer,
   Bay,
+  BayTemplate,
+  BeamDamage,
+  BeamSag,
   BeamType,
   BearingShape,
   Damage,
@@ -25,6 +28,7 @@ import type {
   Slope,
   Source,
   SteppedColumn,
+  TemplateGoods,
   UnitLoad,
 } from '../src-core/site/site';
 
@@ -108,6 +112,25 @@ const deck: fc.Arbitrary<Deck> = fc.oneof(
     source,
   }),
 );
+const beam = fc.constantFrom('front' as const, 'rear' as const);
+const beamDamage: fc.Arbitrary<Omit<BeamDamage, 'id'>> = fc.record({
+  beam,
+  member: fc.constantFrom('beam' as const, 'connector' as const),
+  torn: fc.boolean(),
+  note: fc.string({ maxLength: 10 }),
+  found: fc.constantFrom('', '2026-05-01'),
+});
+const sags: fc.Arbitrary<readonly BeamSag[]> = fc.uniqueArray(
+  fc.record({
+    beam,
+    loadedMm: orNull(numberIn(0, 60)),
+    unloadedMm: orNull(numberIn(0, 20)),
+    sidewaysMm: orNull(numberIn(0, 20)),
+    found: fc.constantFrom('', '2026-05-01'),
+  }),
+  { maxLength: 2, selector: ({ beam: which }) => which },
+);
+
 const damage: fc.Arbitrary<Omit<Damage, 'id'>> = fc.record({
   member: fc.constantFrom('upright-front', 'upright-rear', 'bracing', 'base-plate'),
   alongMm: orNull(numberIn(0, 30)),
@@ -233,6 +256,7 @@ export function arbitrarySite(): fc.Arbitrary<Site> {
           table: several(fc.record({ heightMm: length, ratedKg: rating }), 0).map((rows) => ordered(rows, 'heightMm')),
           plateWidthMm: orNull(length),
           plateDepthMm: orNull(length),
+          holePitchMm: orNull(length),
           source,
         }),
       ),
@@ -263,7 +287,16 @@ export function arbitrarySite(): fc.Arbitrary<Site> {
       let heightMm = 0;
       return times(3, (): Level => {
         heightMm += any(numberIn(1, 2500));
-        return { id: nextId('l'), heightMm, beamTypeId: oneOf(beamTypes), locks: any(answer), deck: any(deck), placements: placements(3) };
+        return {
+          id: nextId('l'),
+          heightMm,
+          beamTypeId: oneOf(beamTypes),
+          locks: any(answer),
+          deck: any(deck),
+          beamDamages: times(1, () => ({ id: nextId('e'), ...any(beamDamage) })),
+          sags: any(sags),
+          placements: placements(3),
+        };
       });
     };
     const bay = (): Bay => ({
@@ -287,6 +320,24 @@ export function arbitrarySite(): fc.Arbitrary<Site> {
         }),
       ),
       damages: times(1, () => ({ id: nextId('d'), ...any(damage) })),
+    });
+    const bayTemplates = times(1, (): BayTemplate => {
+      const withoutId = ({ id: _, ...rest }: Placement): TemplateGoods => rest;
+      return {
+        id: nextId('t'),
+        name: any(name),
+        clearEntryMm: any(numberIn(500, 4000)),
+        noticeId: oneOf(notices),
+        frameTypeId: oneOf(frameTypes),
+        frameHeightMm: any(length),
+        levels: levels().map(({ heightMm, beamTypeId, deck: its, placements: goods }) => ({
+          heightMm,
+          beamTypeId,
+          deck: its,
+          placements: goods.map(withoutId),
+        })),
+        onFloor: placements(1).map(withoutId),
+      };
     });
     const runs = times(3, (): Run => {
       const bays = times(3, bay);
@@ -341,6 +392,7 @@ export function arbitrarySite(): fc.Arbitrary<Site> {
       beamTypes,
       frameTypes,
       floors,
+      bayTemplates,
       runs: tied
         ? [{ ...first, backToBack: { runId: second.id, ...tie } }, { ...second, backToBack: { runId: first.id, ...tie } }, ...others]
         : runs,

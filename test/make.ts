@@ -112,6 +112,7 @@ export const makeFrameType = (part: Partial<FrameType> = {}): FrameType => ({
   table: [],
   plateWidthMm: null,
   plateDepthMm: null,
+  holePitchMm: null,
   source: UNKNOWN_SOURCE,
   ...part,
 });
@@ -145,6 +146,8 @@ export const makeLevel = (goods: readonly (readonly [UnitLoad, number])[] = [], 
   beamTypeId: null,
   locks: 'yes',
   deck: { kind: 'none' },
+  beamDamages: [],
+  sags: [],
   placements: goods.map(([unitLoad, atMm]) => makePlacement(unitLoad.id, atMm)),
   ...part,
 });
@@ -206,6 +209,7 @@ export const makeSite = (part: Partial<Site> = {}): Site => ({
   beamTypes: [],
   frameTypes: [],
   floors: [],
+  bayTemplates: [],
   runs: [],
   ...part,
 });

@@ -4,12 +4,27 @@
  */
 import { startReading, type Field, type Problem, type Reader } from './field';
 import { ENTRY_NOUNS, everyId, LIBRARIES } from './lookup';
-import { bay, frame, level, placement, rules, run, site as wholeSite } from './schema';
+import { bay, bayTemplate, frame, level, placement, rules, run, site as wholeSite } from './schema';
 import { pallet, unitLoad } from './schema-goods';
 import { beamType, floor, frameType, notice } from './schema-ratings';
 import type { Id, Site } from './site';
 
-const PARTS = { site: wholeSite, rules, run, bay, frame, level, placement, pallet, unitLoad, notice, beamType, frameType, floor } as const;
+const PARTS = {
+  site: wholeSite,
+  rules,
+  run,
+  bay,
+  frame,
+  level,
+  placement,
+  pallet,
+  unitLoad,
+  notice,
+  beamType,
+  frameType,
+  floor,
+  bayTemplate,
+} as const;
 export type PartName = keyof typeof PARTS;
 export type Part<K extends PartName> = (typeof PARTS)[K] extends Field<infer T> ? T : never;
 

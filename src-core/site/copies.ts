@@ -1,14 +1,17 @@
 /** Copies of bays, levels and goods with ids of their own. `newId` gives a fresh id at each call. */
-import type { Bay, Frame, Id, Level, Placement } from './site';
+import type { Bay, Frame, Id, Level, Placement, TemplateGoods } from './site';
 
 export type NewId = () => Id;
 
-export const copyOfGoods = (goods: readonly Placement[], newId: NewId): readonly Placement[] =>
+export const copyOfGoods = (goods: readonly TemplateGoods[], newId: NewId): readonly Placement[] =>
   goods.map((placement) => ({ ...placement, id: newId() }));
 
+/** A level of the same make. Damage and sag of the one say nothing of the other. */
 export const copyOfLevel = (level: Level, newId: NewId): Level => ({
   ...level,
   id: newId(),
+  beamDamages: [],
+  sags: [],
   placements: copyOfGoods(level.placements, newId),
 });
 

@@ -2,7 +2,7 @@
 import { requirePart, type Part, type PartName } from './check-part';
 import { changed, refuseNewId, replaced } from './edit-paths';
 import { ENTRY_NOUNS, findEntry, type Library, type LibraryEntry } from './lookup';
-import type { BeamType, FrameType, Id, Placement, Site } from './site';
+import type { BayTemplate, BeamType, FrameType, Id, Site, TemplateGoods } from './site';
 
 const PART_OF = {
   pallets: 'pallet',
@@ -11,11 +11,12 @@ const PART_OF = {
   beamTypes: 'beamType',
   frameTypes: 'frameType',
   floors: 'floor',
+  bayTemplates: 'bayTemplate',
 } as const satisfies Readonly<Record<Library, PartName>>;
 
 /** A place that uses a library entry, by its id; `bayId` and `runId` where it stands in one. */
 export interface Use {
-  readonly kind: 'unit load' | 'load notice' | 'run' | 'frame' | 'bay' | 'level' | 'floor of a bay';
+  readonly kind: 'unit load' | 'load notice' | 'run' | 'frame' | 'bay' | 'level' | 'floor of a bay' | 'bay template';
   readonly id: Id;
   readonly runId: Id | null;
   readonly bayId: Id | null;
@@ -61,6 +62,7 @@ export function removeEntry(site: Site, library: Library, id: Id): Site {
 
 /** Ratings by span and frame tables go from the least row up. */
 function inRows<T extends LibraryEntry<Library>>(entry: T): T {
+  if ('levels' in entry && Array.isArray(entry.levels)) return { ...entry, levels: ascendingBy((entry as BayTemplate).levels, 'heightMm') };
   if ('table' in entry) return { ...entry, table: ascendingBy((entry as FrameType).table, 'heightMm') };
   if ('ratings' in entry) return { ...entry, ratings: ascendingBy((entry as BeamType).ratings, 'spanMm') };
   return entry;
@@ -81,7 +83,7 @@ export function usesOf(site: Site, library: Library, id: Id): readonly Use[] {
         add('unit load', one.id);
         loads.add(one.id);
       }
-  const holds = (placements: readonly Placement[]) => loads.size > 0 && placements.some(({ unitLoadId }) => loads.has(unitLoadId));
+  const holds = (placements: readonly TemplateGoods[]) => loads.size > 0 && placements.some(({ unitLoadId }) => loads.has(unitLoadId));
   for (const run of site.runs) {
     if (library === 'floors' && run.floorId === id) add('run', run.id, run.id);
     if (library === 'frameTypes') for (const frame of run.frames) if (frame.typeId === id) add('frame', frame.id, run.id);
@@ -92,5 +94,11 @@ export function usesOf(site: Site, library: Library, id: Id): readonly Use[] {
       if (holds(bay.onFloor)) add('floor of a bay', bay.id, run.id, bay.id);
     }
   }
+  const inTemplate: (template: BayTemplate) => boolean = ({ noticeId, frameTypeId, levels, onFloor }) =>
+    (library === 'notices' && noticeId === id) ||
+    (library === 'frameTypes' && frameTypeId === id) ||
+    levels.some(({ beamTypeId, placements }) => (library === 'beamTypes' && beamTypeId === id) || holds(placements)) ||
+    holds(onFloor);
+  for (const template of site.bayTemplates) if (inTemplate(template)) add('bay template', template.id);
   return uses;
 }

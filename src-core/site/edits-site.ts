@@ -13,7 +13,7 @@ export function editSite(site: Site, part: Partial<Pick<Site, 'name' | 'notes' |
     requirePart(
       site,
       'site',
-      { ...after, pallets: [], unitLoads: [], notices: [], beamTypes: [], frameTypes: [], floors: [], runs: [] },
+      { ...after, pallets: [], unitLoads: [], notices: [], beamTypes: [], frameTypes: [], floors: [], bayTemplates: [], runs: [] },
       site,
     );
   return after;

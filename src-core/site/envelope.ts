@@ -1,16 +1,17 @@
 /**
  * The file round a site: one JSON document on one line,
  *
- * `{"format":"tallybeam-site","version":1,"program":"0.1.0","savedAt":"…Z","checksum":"sha256-<64 hex>","site":{…}}`
+ * `{"format":"tallybeam-site","version":2,"program":"0.1.0","savedAt":"…Z","checksum":"sha256-<64 hex>","site":{…}}`
  *
  * The checksum covers the whole text, with its own 64 digits taken as zeros, so every changed byte
  * is noticed. What the site inside must look like is `read.ts`'s subject.
  */
 import { isRecord, quote, type Problem } from './fields';
 import { keyFaults } from './json-keys';
+import { SITE_VERSION, STEPS } from './migrations';
 
 const SITE_FILE_FORMAT = 'tallybeam-site';
-export const SITE_FILE_VERSION = 1;
+export const SITE_FILE_VERSION = SITE_VERSION;
 /** Three times the file of a site of 10 000 bays with six levels each; more is no site file. */
 export const SITE_FILE_BYTES = 64 * 1024 * 1024;
 
@@ -22,7 +23,7 @@ export interface Migrations {
   readonly current: number;
   readonly steps: Readonly<Record<number, (site: unknown) => unknown>>;
 }
-const MIGRATIONS: Migrations = { current: SITE_FILE_VERSION, steps: {} };
+const MIGRATIONS: Migrations = { current: SITE_FILE_VERSION, steps: STEPS };
 
 export interface SiteFileFacts {
   /** Version of the program that wrote the file. */

@@ -13,7 +13,7 @@ export const isId = (value: unknown): value is string => typeof value === 'strin
 const canonicalId = (value: string): string => (isId(value) ? value : unwritable(ID_EXPECTS, value));
 
 /** Things that others in the site refer to. */
-type Target = 'pallet' | 'unit load' | 'load notice' | 'beam type' | 'frame type' | 'floor' | 'run';
+type Target = 'pallet' | 'unit load' | 'load notice' | 'beam type' | 'frame type' | 'floor' | 'bay template' | 'run';
 
 /** The id of its owner, unique in the whole site; `noun` says of what, where others may refer to it. */
 export function ownId(noun: Target | null = null): Field<string> {

@@ -30,6 +30,7 @@ export const LIMITS = {
   levelsInBay: 100,
   goodsOnLevel: 1_000,
   damagesOnFrame: 1_000,
+  damagesOnLevel: 1_000,
   libraryEntries: 500_000,
   /** Columns, points, bearers, feet, runners, table rows of one entry. */
   rows: 1_000,

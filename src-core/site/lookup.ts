@@ -79,7 +79,7 @@ export function findFrame(site: Site, frameId: Id): FramePlace {
 }
 
 /** The libraries of a site, by their key in it. */
-export const LIBRARIES = ['pallets', 'unitLoads', 'notices', 'beamTypes', 'frameTypes', 'floors'] as const;
+export const LIBRARIES = ['pallets', 'unitLoads', 'notices', 'beamTypes', 'frameTypes', 'floors', 'bayTemplates'] as const;
 export type Library = (typeof LIBRARIES)[number];
 export type LibraryEntry<K extends Library> = Site[K][number];
 
@@ -90,6 +90,7 @@ export const ENTRY_NOUNS: Readonly<Record<Library, string>> = {
   beamTypes: 'beam type',
   frameTypes: 'frame type',
   floors: 'floor',
+  bayTemplates: 'bay template',
 };
 
 export function findEntry<K extends Library>(site: Site, library: K, id: Id): LibraryEntry<K> {
@@ -114,6 +115,7 @@ export function everyId(site: Site): readonly Id[] {
       ids.push(bay.id);
       for (const level of bay.levels) {
         ids.push(level.id);
+        add(level.beamDamages);
         add(level.placements);
       }
       add(bay.onFloor);

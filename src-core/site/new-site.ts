@@ -1,7 +1,7 @@
-/** A site to start from, and runs laid out from a bay template. */
-import { copyOfFrame, copyOfLevel, type NewId } from './copies';
+/** A site to start from, and runs laid out from a bay's plan. */
+import { copyOfGoods, type NewId } from './copies';
 import { findBay } from './lookup';
-import type { Bay, Frame, Id, Level, Run, Site } from './site';
+import type { Bay, BayTemplate, Frame, Id, Level, Placement, Run, Site, TemplateGoods } from './site';
 
 /**
  * An empty site by the European rule set, with every check asked for. What is not known stays so
@@ -29,27 +29,36 @@ export const newSite = (id: Id, name: string): Site => ({
   beamTypes: [],
   frameTypes: [],
   floors: [],
+  bayTemplates: [],
   runs: [],
 });
 
-/** What the bays of a new run have in common. Goods stay where they are. */
-export interface BayTemplate {
-  readonly clearEntryMm: number;
-  readonly noticeId: Id | null;
-  readonly levels: readonly Omit<Level, 'id' | 'placements'>[];
-  readonly frame: Omit<Frame, 'id' | 'name'>;
-}
+/** What the bays of a new run have in common: a bay template without its name. */
+export type BayPlan = Omit<BayTemplate, 'id' | 'name'>;
 
-/** Any bay of the site serves as a template, with the frame on its right. */
-export function bayTemplate(site: Site, bayId: Id): BayTemplate {
+/** Any bay of the site serves as a plan, with the frame on its right; with its goods or without. */
+export function planOfBay(site: Site, bayId: Id, goods: 'with goods' | 'without goods'): BayPlan {
   const { run, bay, index } = findBay(site, bayId);
-  const { id: _id, name: _name, ...frame } = copyOfFrame(run.frames[index + 1] as Frame, '', () => '');
-  const levels = bay.levels.map(({ id: _, placements: __, ...level }) => level);
-  return { clearEntryMm: bay.clearEntryMm, noticeId: bay.noticeId, levels, frame };
+  const { typeId, heightMm } = run.frames[index + 1] as Frame;
+  const standing = (placements: readonly Placement[]): readonly TemplateGoods[] =>
+    goods === 'with goods' ? placements.map(({ id: _, ...placement }) => placement) : [];
+  return {
+    clearEntryMm: bay.clearEntryMm,
+    noticeId: bay.noticeId,
+    frameTypeId: typeId,
+    frameHeightMm: heightMm,
+    levels: bay.levels.map(({ heightMm, beamTypeId, deck, placements }) => ({
+      heightMm,
+      beamTypeId,
+      deck,
+      placements: standing(placements),
+    })),
+    onFloor: standing(bay.onFloor),
+  };
 }
 
-/** A template of equal beam levels from a few numbers; everything that is not stated is not known. */
-export function evenTemplate(plan: {
+/** A plan of equal beam levels from a few numbers; everything that is not stated is not known. */
+export function evenPlan(plan: {
   readonly clearEntryMm: number;
   readonly levels: number;
   readonly firstBeamMm: number;
@@ -57,34 +66,57 @@ export function evenTemplate(plan: {
   readonly noticeId: Id | null;
   readonly beamTypeId: Id | null;
   readonly frameTypeId: Id | null;
-}): BayTemplate {
-  const { clearEntryMm, noticeId, beamTypeId } = plan;
+}): BayPlan {
+  const { clearEntryMm, noticeId, beamTypeId, frameTypeId } = plan;
   const heights = Array.from({ length: plan.levels }, (_, i) => plan.firstBeamMm + i * plan.pitchMm);
-  const levels = heights.map((heightMm) => ({ heightMm, beamTypeId, locks: 'unknown' as const, deck: { kind: 'none' as const } }));
-  // Frames reach past the topmost beam, in steps of 100 mm; their real height can be entered.
-  const heightMm = Math.ceil(((heights.at(-1) ?? 0) + 300) / 100) * 100;
-  const frame = { typeId: plan.frameTypeId, heightMm, anchored: 'unknown', restrained: 'unknown', plumb: null, damages: [] } as const;
-  return { clearEntryMm, noticeId, levels, frame };
+  return {
+    clearEntryMm,
+    noticeId,
+    frameTypeId,
+    // Frames reach past the topmost beam, in steps of 100 mm; their real height can be entered.
+    frameHeightMm: Math.ceil(((heights.at(-1) ?? 0) + 300) / 100) * 100,
+    levels: heights.map((heightMm) => ({ heightMm, beamTypeId, deck: { kind: 'none' }, placements: [] })),
+    onFloor: [],
+  };
 }
 
-/** A run of `count` bays by a template, named "A1", "A2" … after it, its frames by the bays at their sides. */
-export function runByTemplate(
-  template: BayTemplate,
+/** A bay by a plan. What has to be seen at the rack is not known. */
+export const bayByPlan = (plan: BayPlan, name: string, newId: NewId): Bay => ({
+  id: newId(),
+  name,
+  clearEntryMm: plan.clearEntryMm,
+  noticeId: plan.noticeId,
+  levels: plan.levels.map(({ heightMm, beamTypeId, deck, placements }): Level => ({
+    id: newId(),
+    heightMm,
+    beamTypeId,
+    locks: 'unknown',
+    deck,
+    beamDamages: [],
+    sags: [],
+    placements: copyOfGoods(placements, newId),
+  })),
+  onFloor: copyOfGoods(plan.onFloor, newId),
+});
+
+export const frameByPlan = (plan: BayPlan, name: string, newId: NewId): Frame => ({
+  id: newId(),
+  name,
+  typeId: plan.frameTypeId,
+  heightMm: plan.frameHeightMm,
+  anchored: 'unknown',
+  restrained: 'unknown',
+  plumb: null,
+  damages: [],
+});
+
+/** A run of `count` bays by a plan, named "A1", "A2" … after it, its frames by the bays at their sides. */
+export function runByPlan(
+  plan: BayPlan,
   { name, count, floorId, newId }: { readonly name: string; readonly count: number; readonly floorId: Id | null; readonly newId: NewId },
 ): Run {
   if (!(Number.isInteger(count) && count >= 0)) throw new RangeError(`A run has a whole number of bays, not ${count}.`);
-  const bays = Array.from({ length: count }, (_, i): Bay => ({
-    id: newId(),
-    name: `${name}${i + 1}`,
-    clearEntryMm: template.clearEntryMm,
-    noticeId: template.noticeId,
-    levels: template.levels.map((level) => copyOfLevel({ ...level, id: '', placements: [] }, newId)),
-    onFloor: [],
-  }));
-  const frames = Array.from({ length: count + 1 }, (_, i): Frame => ({
-    ...template.frame,
-    id: newId(),
-    name: `${name}${i}|${name}${i + 1}`,
-  }));
+  const bays = Array.from({ length: count }, (_, i) => bayByPlan(plan, `${name}${i + 1}`, newId));
+  const frames = Array.from({ length: count + 1 }, (_, i) => frameByPlan(plan, `${name}${i}|${name}${i + 1}`, newId));
   return { id: newId(), name, floorId, loadedBy: 'unknown', twoDeep: 'unknown', backToBack: null, frames, bays };
 }

@@ -63,6 +63,7 @@ export const frameType = record<FrameType>(
     table: list('rows', record('row of the frame table', { heightMm: aLength, ratedKg: aRating }), LIMITS.rows),
     plateWidthMm: lengthStated,
     plateDepthMm: lengthStated,
+    holePitchMm: lengthStated,
     source,
   },
   (value, reader) => ascending(value, 'table', 'heightMm', true, 'The frame table goes from the least height to the greatest', reader),

@@ -37,7 +37,23 @@ import {
   unitLoad,
 } from './schema-goods';
 import { beamType, floor, frameType, notice } from './schema-ratings';
-import type { Bay, Damage, Deck, Frame, Level, Placement, PlumbReading, Rules, Run, Site } from './site';
+import type {
+  Bay,
+  BayTemplate,
+  BeamDamage,
+  BeamSag,
+  Damage,
+  Deck,
+  Frame,
+  Level,
+  Placement,
+  PlumbReading,
+  Rules,
+  Run,
+  Site,
+  TemplateGoods,
+  TemplateLevel,
+} from './site';
 
 export const placement = record<Placement>('placement', {
   id: ownId(),
@@ -62,14 +78,34 @@ const deck = variant<Deck, 'kind'>('deck', 'kind', {
   panels: deckOfPanels,
 });
 
-export const level = record<Level>('level', {
+const beam = choice(['front', 'rear'] as const);
+const measured = nullable(aLengthOrZero, 'where it was not measured');
+
+const beamDamage = record<BeamDamage>('damage of a beam', {
   id: ownId(),
-  heightMm: aLength,
-  beamTypeId: nullable(reference('beam type')),
-  locks: answer,
-  deck,
-  placements: list('placements', placement, LIMITS.goodsOnLevel),
+  beam,
+  member: choice(['beam', 'connector']),
+  torn: flag,
+  note: someText,
+  found: date,
 });
+
+const sag = record<BeamSag>('sag reading', { beam, loadedMm: measured, unloadedMm: measured, sidewaysMm: measured, found: date });
+
+export const level = record<Level>(
+  'level',
+  {
+    id: ownId(),
+    heightMm: aLength,
+    beamTypeId: nullable(reference('beam type')),
+    locks: answer,
+    deck,
+    beamDamages: list('damages', beamDamage, LIMITS.damagesOnLevel),
+    sags: list('sag readings', sag, 2),
+    placements: list('placements', placement, LIMITS.goodsOnLevel),
+  },
+  (value, reader) => once(value, 'sags', 'beam', 'read', reader),
+);
 
 export const bay = record<Bay>(
   'bay',
@@ -84,11 +120,40 @@ export const bay = record<Bay>(
   (value, reader) => ascending(value, 'levels', 'heightMm', true, 'Levels go from the lowest up', reader),
 );
 
+const goodsOfTemplate = record<TemplateGoods>('placement of a bay template', {
+  unitLoadId: reference('unit load'),
+  atMm: aPosition,
+  mirrored: flag,
+  towardsFrontMm: aPosition,
+});
+
+const levelOfTemplate = record<TemplateLevel>('level of a bay template', {
+  heightMm: aLength,
+  beamTypeId: nullable(reference('beam type')),
+  deck,
+  placements: list('placements', goodsOfTemplate, LIMITS.goodsOnLevel),
+});
+
+export const bayTemplate = record<BayTemplate>(
+  'bay template',
+  {
+    id: ownId('bay template'),
+    name: aName,
+    clearEntryMm: aLength,
+    noticeId: nullable(reference('load notice'), 'where there is none'),
+    frameTypeId: nullable(reference('frame type')),
+    frameHeightMm: aLength,
+    levels: list('levels', levelOfTemplate, LIMITS.levelsInBay),
+    onFloor: list('placements', goodsOfTemplate, LIMITS.goodsOnLevel),
+  },
+  (value, reader) => ascending(value, 'levels', 'heightMm', true, 'Levels go from the lowest up', reader),
+);
+
 const damage = record<Damage>('damage', {
   id: ownId(),
   member: choice(['upright-front', 'upright-rear', 'bracing', 'base-plate']),
-  alongMm: nullable(aLengthOrZero, 'where it was not measured'),
-  acrossMm: nullable(aLengthOrZero, 'where it was not measured'),
+  alongMm: measured,
+  acrossMm: measured,
   gaugeMm: aLength,
   torn: flag,
   note: someText,
@@ -192,6 +257,7 @@ export const site = record<Site>(
     beamTypes: library('beam types', beamType),
     frameTypes: library('frame types', frameType),
     floors: library('floors', floor),
+    bayTemplates: library('bay templates', bayTemplate),
     runs: list('runs', run, LIMITS.runs),
   },
   tiesAgree,

@@ -43,6 +43,7 @@ export interface Site {
   readonly beamTypes: readonly BeamType[];
   readonly frameTypes: readonly FrameType[];
   readonly floors: readonly Floor[];
+  readonly bayTemplates: readonly BayTemplate[];
   readonly runs: readonly Run[];
 }
 
@@ -171,6 +172,8 @@ export interface FrameType {
   readonly table: readonly { readonly heightMm: number; readonly ratedKg: number }[];
   readonly plateWidthMm: number | null;
   readonly plateDepthMm: number | null;
+  /** From hole to hole up the uprights: beams stand at whole multiples of it; null = not known. */
+  readonly holePitchMm: number | null;
   readonly source: Source;
 }
 
@@ -187,6 +190,22 @@ export interface Floor {
   readonly thicknessMm: number | null;
   readonly source: Source;
 }
+
+/** A bay to lay out more by, kept under a name. Of what is seen at the rack (locks, damage, plumb) it says nothing. */
+export interface BayTemplate {
+  readonly id: Id;
+  readonly name: string;
+  readonly clearEntryMm: number;
+  readonly noticeId: Id | null;
+  readonly frameTypeId: Id | null;
+  readonly frameHeightMm: number;
+  /** From the lowest up. */
+  readonly levels: readonly TemplateLevel[];
+  readonly onFloor: readonly TemplateGoods[];
+}
+
+export type TemplateLevel = Pick<Level, 'heightMm' | 'beamTypeId' | 'deck'> & { readonly placements: readonly TemplateGoods[] };
+export type TemplateGoods = Omit<Placement, 'id'>;
 
 // ---------------------------------------------------------------- the rack
 
@@ -257,7 +276,33 @@ export interface Level {
   readonly beamTypeId: Id | null;
   readonly locks: Answer;
   readonly deck: Deck;
+  /** Damage of its beams and their connectors that is no sag. */
+  readonly beamDamages: readonly BeamDamage[];
+  /** The latest sag reading of each beam, at most one a beam. */
+  readonly sags: readonly BeamSag[];
   readonly placements: readonly Placement[];
+}
+
+export interface BeamDamage {
+  readonly id: Id;
+  readonly beam: 'front' | 'rear';
+  readonly member: 'beam' | 'connector';
+  /** Dent, buckle, tear, split or cracked weld. */
+  readonly torn: boolean;
+  readonly note: string;
+  /** ISO date, or empty where it is not known. */
+  readonly found: string;
+}
+
+/** One beam's sag at mid-span below the line through its ends; unloaded it is the permanent set. Null = not measured. */
+export interface BeamSag {
+  readonly beam: 'front' | 'rear';
+  readonly loadedMm: number | null;
+  readonly unloadedMm: number | null;
+  /** Permanent set sideways, unloaded. */
+  readonly sidewaysMm: number | null;
+  /** ISO date, or empty where it is not known. */
+  readonly found: string;
 }
 
 export type Deck =

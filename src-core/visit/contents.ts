@@ -1,5 +1,6 @@
 /** What a record holds: the inputs and the figures, as JSON text; how two compare, and when one is void. */
 import { isRecord } from '../site/fields';
+import { raiseSite, SITE_VERSION } from '../site/migrations';
 import type { Id, Site } from '../site/site';
 import { differences, type Difference } from './differences';
 import { extractOf } from './extract';
@@ -16,7 +17,7 @@ export interface RecordContents {
 
 /** @throws RangeError if the site has none of the bays */
 export const contentsText = (site: Site, bayIds: readonly Id[], figures: unknown, paper: unknown = null): string =>
-  JSON.stringify({ site: extractOf(site, bayIds), bayIds, figures, paper } satisfies RecordContents);
+  JSON.stringify({ version: SITE_VERSION, site: extractOf(site, bayIds), bayIds, figures, paper });
 
 /**
  * @throws RangeError if the text is not the contents of a record; one that verified always is
@@ -25,7 +26,10 @@ export function readContents(text: string): RecordContents {
   const json: unknown = JSON.parse(text);
   if (!isRecord(json) || !['site', 'bayIds', 'figures', 'paper'].every((key) => key in json))
     throw new RangeError('the text holds no site, bays, figures and paper of a record');
-  return json as unknown as RecordContents;
+  const { version, bayIds, figures, paper } = json;
+  // The first records named no version.
+  const site = raiseSite(json['site'], typeof version === 'number' ? version : 1);
+  return { site, bayIds, figures, paper } as RecordContents;
 }
 
 /** What differs from an earlier to a later record: first of the inputs, then of the figures. */

@@ -24,6 +24,7 @@ export function extractOf(site: Site, bayIds: readonly Id[]): Site {
     beamTypes: kept(site.beamTypes),
     frameTypes: kept(site.frameTypes),
     floors: kept(site.floors),
+    bayTemplates: [],
     // A run behind that is not in the extract cannot be named by it.
     runs: runs.map((run) => (run.backToBack !== null && !there.has(run.backToBack.runId) ? { ...run, backToBack: null } : run)),
   };

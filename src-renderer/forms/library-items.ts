@@ -110,6 +110,7 @@ const FRESH: { readonly [K in LibraryKind]: (id: Id, name: string) => LibraryIte
     table: [],
     plateWidthMm: null,
     plateDepthMm: null,
+    holePitchMm: null,
     source: NO_SOURCE,
   }),
   floor: (id, name) => ({

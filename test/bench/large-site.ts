@@ -47,6 +47,7 @@ const TYPES = {
       id: 'frame',
       plateWidthMm: 120,
       plateDepthMm: 120,
+      holePitchMm: 50,
       table: [
         { heightMm: 1500, ratedKg: 12_000 },
         { heightMm: 3000, ratedKg: 8000 },

@@ -1,6 +1,6 @@
 /** Small sites for the page's tests. */
 import { freshItem } from '../../src-renderer/forms/library-items';
-import { evenTemplate, newSite, runByTemplate } from '../../src-core/site/new-site';
+import { evenPlan, newSite, runByPlan } from '../../src-core/site/new-site';
 import type { Site } from '../../src-core/site/site';
 
 /** Ids in order, so that two builds are equal: "x1", "x2" … */
@@ -16,7 +16,7 @@ export function smallSite(bays = 3): Site {
   const newId = countingIds();
   const crate = { ...freshItem('unitLoad', 'crate', 'Crate'), widthMm: 800, depthMm: 1200, heightMm: 900, goodsKg: 400 };
   const notice = { ...freshItem('notice', 'notice', 'Notice 1'), levelKg: [2000] };
-  const template = evenTemplate({
+  const template = evenPlan({
     clearEntryMm: 2700,
     levels: 3,
     firstBeamMm: 1500,
@@ -25,7 +25,7 @@ export function smallSite(bays = 3): Site {
     beamTypeId: null,
     frameTypeId: null,
   });
-  const run = runByTemplate(template, { name: 'A', count: bays, floorId: null, newId });
+  const run = runByPlan(template, { name: 'A', count: bays, floorId: null, newId });
   const [first, ...others] = run.bays;
   const [lowest, ...upper] = first?.levels ?? [];
   if (first === undefined || lowest === undefined) throw new Error('the run has no bay or level');

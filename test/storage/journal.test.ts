@@ -2,6 +2,9 @@ import { mkdirSync, readFileSync, utimesSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
+import { readSite } from '../../src-core/site/read';
+import { writeSite } from '../../src-core/site/write';
+import { sha256 } from '../../src-main/checked-site';
 import { foldersIn, machineTag } from '../../src-main/file-names';
 import { nodeFs, type FsPort } from '../../src-main/fs-port';
 import { Journal } from '../../src-main/journal';
@@ -60,6 +63,20 @@ describe('lines', () => {
     expect(replay(lines.join(''))).toMatchObject({ body: 'one', edits: ['1'], damagedLines: 2 });
     const whole = wholeLine({ ...said, edit: '4' }, 'four', ['1', '2', '3']);
     expect(replay(lines.join('') + whole)).toMatchObject({ body: 'four', edits: ['1', '2', '3', '4'], damagedLines: 2 });
+  });
+
+  test('unsaved edits of the first version come back as a site of the present one', () => {
+    const { site } = JSON.parse(readFileSync(join(import.meta.dirname, '../fixtures/site-v1.tallybeam.json'), 'utf8')) as { site: object };
+    const json = JSON.stringify({ ...said, whole: JSON.stringify(site), edits: [] });
+    const line = `\n${sha256(json).slice(0, 16)} ${json}\n`;
+    const before = JSON.stringify(site);
+    const after = before.replace('"notes":"', '"notes":"Moved. ');
+    const found = replay(line + changeLine({ ...said, edit: 'Change notes' }, before, after));
+    const reading = readSite(JSON.parse(found?.body ?? 'null'));
+    if (!reading.ok) throw new Error(JSON.stringify(reading.problems));
+    expect(reading.site.notes).toMatch(/^Moved. /);
+    expect(writeSite(reading.site)).toBe(found?.body);
+    expect(found).toMatchObject({ edits: ['Move pallet', 'Change notes'], damagedLines: 0 });
   });
 
   test('nothing usable is nothing', () => {

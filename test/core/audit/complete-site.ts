@@ -44,6 +44,7 @@ const frameType = makeFrameType({
   id: 'frame-type',
   plateWidthMm: 120,
   plateDepthMm: 120,
+  holePitchMm: 50,
   table: [
     { heightMm: 1500, ratedKg: 12_000 },
     { heightMm: 3000, ratedKg: 8000 },

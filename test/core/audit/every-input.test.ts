@@ -139,6 +139,7 @@ const NEEDED: readonly (readonly [path: RegExp, checks: readonly CheckName[]])[]
 /** Inputs without which nothing in bay A1 is held up, and why. */
 const NOT_NEEDED: readonly (readonly [path: RegExp, why: string])[] = [
   [/^pallets\.0\.ratedKg$/, 'no check compares a pallet with its own rating'],
+  [/^frameTypes\.0\.holePitchMm$/, 'beams are set at the holes that there are; the pitch only guides where a beam is put'],
   [/^pallets\.0\.source\.kind$|massSource\.kind$|^floors\.0\.source\.kind$|deck\.source\.kind$/, 'an origin that is printed'],
   [/^unitLoads\.\d\.palletId$/, 'null means that there is no pallet'],
   [/^unitLoads\.[013]\.chocked$/, 'they stand flat'],

@@ -94,6 +94,7 @@ export const FRAME: FrameType = {
   table: [],
   plateWidthMm: 120,
   plateDepthMm: 120,
+  holePitchMm: null,
   source: SOURCE,
 };
 
@@ -113,6 +114,8 @@ export const level = (placements: readonly Placement[], change: Partial<Level> =
   beamTypeId: 'beam',
   locks: 'yes',
   deck: { kind: 'none' },
+  beamDamages: [],
+  sags: [],
   placements,
   ...change,
 });
@@ -165,6 +168,7 @@ export function rack({ unitLoads, levels, pallets = [], notice = {}, beam = {}, 
     beamTypes: [{ ...BEAM, ...beam }],
     frameTypes: frame === null ? [] : [{ ...FRAME, ...frame }],
     floors: [],
+    bayTemplates: [],
     runs: [
       {
         id: 'run',

@@ -20,7 +20,7 @@ import {
   removeRun,
 } from '../../../src-core/site/edits';
 import { findBay, findFrame, findLevel, findRun } from '../../../src-core/site/lookup';
-import { bayTemplate, evenTemplate, newSite, runByTemplate } from '../../../src-core/site/new-site';
+import { planOfBay, evenPlan, newSite, runByPlan } from '../../../src-core/site/new-site';
 import { readSite } from '../../../src-core/site/read';
 import type { Bay, Site } from '../../../src-core/site/site';
 import { makeBay, makeFrame, makeLevel, makeNotice, makePlacement, makeRun, makeSite, makeUnitLoad } from '../../make';
@@ -164,7 +164,7 @@ test('a tie is made and undone on both runs', () => {
 });
 
 test('a template gives runs like any bay of the site, without its goods', () => {
-  const run = runByTemplate(bayTemplate(site, 'a1'), { name: 'C', count: 4, floorId: null, newId });
+  const run = runByPlan(planOfBay(site, 'a1', 'without goods'), { name: 'C', count: 4, floorId: null, newId });
   const after = sound(addRun(site, run));
   expect(names(after, run.id)).toEqual(['C1', 'C2', 'C3', 'C4']);
   expect(run.frames.map(({ name }) => name)).toEqual(['C0|C1', 'C1|C2', 'C2|C3', 'C3|C4', 'C4|C5']);
@@ -177,12 +177,12 @@ test('a template gives runs like any bay of the site, without its goods', () => 
 
 test('ten bays of five levels come from one template on an empty site', () => {
   const plan = { clearEntryMm: 2700, levels: 5, firstBeamMm: 1500, pitchMm: 1600, noticeId: null, beamTypeId: null, frameTypeId: null };
-  const run = runByTemplate(evenTemplate(plan), { name: 'A', count: 10, floorId: null, newId });
+  const run = runByPlan(evenPlan(plan), { name: 'A', count: 10, floorId: null, newId });
   const after = sound(addRun(newSite('s', 'Depot'), run));
   expect(after.runs[0]?.bays.map(({ levels }) => levels.length)).toEqual(Array(10).fill(5));
   expect(heights(after, run.bays[9]?.id)).toEqual([1500, 3100, 4700, 6300, 7900]);
   expect(run.frames[0]?.heightMm).toBe(8200);
-  expect(() => runByTemplate(evenTemplate(plan), { name: 'A', count: 1.5, floorId: null, newId })).toThrow(/whole number of bays, not 1.5/);
+  expect(() => runByPlan(evenPlan(plan), { name: 'A', count: 1.5, floorId: null, newId })).toThrow(/whole number of bays, not 1.5/);
 });
 
 test.each<[string, () => Site, string]>([

@@ -18,14 +18,14 @@ const fault = (reading: ReturnType<typeof readSiteFile>) => (reading.ok ? 'none'
 describe('a written file', () => {
   test('has its keys in order, on one line, and a checksum over the text with zeros for its digits', () => {
     expect(file).toMatch(
-      /^\{"format":"tallybeam-site","version":1,"program":"0\.1\.0","savedAt":"2026-12-01T08:30:00\.000Z","checksum":"sha256-[0-9a-f]{64}","site":\{.*\}\}$/,
+      /^\{"format":"tallybeam-site","version":2,"program":"0\.1\.0","savedAt":"2026-12-01T08:30:00\.000Z","checksum":"sha256-[0-9a-f]{64}","site":\{.*\}\}$/,
     );
     const digits = /sha256-([0-9a-f]{64})/.exec(file)?.[1] ?? '';
     expect(digits).toBe(hash(file.replace(digits, '0'.repeat(64))));
   });
 
   test('is read back with the same site, version, program and time', () => {
-    expect(readSiteFile(file, hash)).toEqual({ ok: true, version: 1, facts, site: JSON.parse(body) });
+    expect(readSiteFile(file, hash)).toEqual({ ok: true, version: 2, facts, site: JSON.parse(body) });
   });
 
   test('cannot carry a time or program version that would not be read back', () => {
@@ -78,7 +78,7 @@ describe('what is no site file is named', () => {
     ['[]', 'not-a-site-file', 'format: Must be "tallybeam-site", but it names no format'],
     ['{"format":"goods-list","version":1}', 'not-a-site-file', 'its format is "goods-list"'],
     [file.slice(0, 200), 'altered', ': Breaks off or is damaged'],
-    ['{"format":"tallybeam-site","version":"1"}', 'faulty', 'version: Must be a whole number from 1 to 1, but is "1"'],
+    ['{"format":"tallybeam-site","version":"1"}', 'faulty', 'version: Must be a whole number from 1 to 2, but is "1"'],
     ['{"format":"tallybeam-site","version":0}', 'faulty', 'version: Must be a whole number'],
     ['{"format":"tallybeam-site","version":1}', 'faulty', 'site: Is missing'],
     [file.replace('"site":', '"colour":1,"site":'), 'faulty', 'colour: No site file has the key "colour"'],
@@ -94,7 +94,7 @@ describe('what is no site file is named', () => {
   test('a newer file is refused by its version and the program that wrote it', () => {
     const reading = readSiteFile(writeSiteFile(body, { ...facts, program: '7.2.0' }, hash, 9), hash);
     expect(fault(reading)).toBe('newer-version');
-    expect(messages(reading).join()).toContain('version 9; this program reads versions up to 1. It was written by Tallybeam 7.2.0.');
+    expect(messages(reading).join()).toContain('version 9; this program reads versions up to 2. It was written by Tallybeam 7.2.0.');
     expect(fault(readUnchecked('{"format":"tallybeam-site","version":9}'))).toBe('newer-version');
   });
 
@@ -128,7 +128,7 @@ describe('read as unchecked', () => {
         const text = JSON.stringify(value);
         const site: unknown = JSON.parse(text);
         const written = writeSiteFile(text, facts, hash);
-        expect(readUnchecked(written)).toEqual({ ok: true, version: 1, facts, site });
+        expect(readUnchecked(written)).toEqual({ ok: true, version: 2, facts, site });
         // Minus zero and the like are written in another form than they are read in.
         expect(readSiteFile(written, hash).ok).toBe(JSON.stringify(site) === text);
       }),

@@ -1,6 +1,6 @@
 /** A run of bays with goods, for visits, records and paper; ids are names that can be read. */
 import { addEntry, addRun } from '../../../src-core/site/edits';
-import { evenTemplate, newSite, runByTemplate } from '../../../src-core/site/new-site';
+import { evenPlan, newSite, runByPlan } from '../../../src-core/site/new-site';
 import type { Placement, Run, Site } from '../../../src-core/site/site';
 import { BEAM, FRAME, goods, NOTICE } from '../audit/rack';
 
@@ -17,7 +17,7 @@ let count = 0;
 
 /** Ids as "A-bay-2", "A-frame-1", "A2-level-1", counted from 1; three pallets on every level. */
 function runOf({ name = 'A', bays = 3, levels = 2 }: RunPlan): Run {
-  const template = evenTemplate({
+  const template = evenPlan({
     clearEntryMm: 2700,
     levels,
     firstBeamMm: 1500,
@@ -26,7 +26,7 @@ function runOf({ name = 'A', bays = 3, levels = 2 }: RunPlan): Run {
     beamTypeId: 'beam',
     frameTypeId: 'frame',
   });
-  const run = runByTemplate(template, { name, count: bays, floorId: null, newId: () => `made-${(count += 1)}` });
+  const run = runByPlan(template, { name, count: bays, floorId: null, newId: () => `made-${(count += 1)}` });
   return {
     ...run,
     id: `run-${name}`,
