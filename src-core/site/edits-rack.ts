@@ -126,18 +126,6 @@ export function fillBays(
   return bayIds.filter((id) => id !== patternId).reduce((next, id) => changeBay(next, id, filled), site);
 }
 
-/** `fillBays` for all other bays of the run. */
-export function fillRun(site: Site, patternId: Id, what: 'levels' | 'levels and goods' | 'goods', newId: NewId): Site {
-  const { run } = findBay(site, patternId);
-  return fillBays(
-    site,
-    patternId,
-    run.bays.map(({ id }) => id),
-    what,
-    newId,
-  );
-}
-
 // ---------------------------------------------------------------- levels
 
 export const addLevel = (site: Site, bayId: Id, level: Level): Site =>
@@ -156,6 +144,23 @@ export function editLevel(site: Site, levelId: Id, part: Partial<Level>): Site {
 }
 
 export const moveLevel = (site: Site, levelId: Id, heightMm: number): Site => editLevel(site, levelId, { heightMm });
+
+/** Two levels of one bay exchange their heights, each with its beams, deck and goods. */
+export function swapLevels(site: Site, levelId: Id, otherId: Id): Site {
+  const { bay, level } = findLevel(site, levelId);
+  const other = bay.levels.find(({ id }) => id === otherId);
+  if (other === undefined)
+    throw new RangeError('Only levels of the same bay change places. Copy the level and paste it into the other bay.');
+  return changeBay(site, bay.id, (one) => ({
+    ...one,
+    levels: inOrder(
+      one.levels.map((each) => {
+        if (each === level) return changed(level, { heightMm: other.heightMm });
+        return each === other ? changed(other, { heightMm: level.heightMm }) : each;
+      }),
+    ),
+  }));
+}
 
 /** The level once more, with its goods, at another height of the same bay. */
 export function duplicateLevel(site: Site, levelId: Id, heightMm: number, newId: NewId): Site {

@@ -12,6 +12,7 @@ import {
   usesOf,
 } from '../../../src-core/site/edits';
 import { problemsIn } from '../../../src-core/site/check-part';
+import { planOfBay } from '../../../src-core/site/new-site';
 import { findEntry, type Library } from '../../../src-core/site/lookup';
 import type { Site } from '../../../src-core/site/site';
 import {
@@ -79,6 +80,40 @@ test('what is in use cannot be removed, what is not can', () => {
   expect(() => removeEntry(site, 'floors', 'floor')).toThrow('is used in one place');
   expect(removeEntry(site, 'pallets', 'spare-pallet').pallets.map(({ id }) => id)).toEqual(['pallet']);
   expect(() => removeEntry(site, 'pallets', 'gone')).toThrow('there is no pallet with the id "gone"');
+});
+
+/** The site with its bay kept as a template and taken out, so that the template alone uses the libraries. */
+const kept: Site = addEntry({ ...site, runs: [] }, 'bayTemplates', {
+  id: 'plan',
+  name: 'Long bay',
+  ...planOfBay(site, 'bay', 'with goods'),
+});
+
+test.each<[Library, string]>([
+  ['unitLoads', 'goods'],
+  ['unitLoads', 'other'],
+  ['notices', 'notice'],
+  ['beamTypes', 'beam'],
+  ['frameTypes', 'upright'],
+])('%s %s cannot be removed while a bay template uses it, and can when the template is gone', (library, id) => {
+  expect(usesOf(kept, library, id).filter((use) => use.kind === 'bay template')).toEqual([
+    { kind: 'bay template', id: 'plan', runId: null, bayId: null },
+  ]);
+  expect(() => removeEntry(kept, library, id)).toThrow('is used in');
+  const without = removeEntry(kept, 'bayTemplates', 'plan');
+  expect(usesOf(without, library, id).filter((use) => use.kind === 'bay template')).toEqual([]);
+});
+
+test('a template changes by itself: bays that were laid out by it stay the same objects, and nothing uses it', () => {
+  const both: Site = { ...kept, runs: site.runs };
+  const after = editEntry(both, 'bayTemplates', 'plan', {
+    clearEntryMm: 2200,
+    levels: findEntry(both, 'bayTemplates', 'plan').levels.toReversed(),
+  });
+  expect(after.runs).toBe(both.runs);
+  expect(findEntry(after, 'bayTemplates', 'plan').levels.map(({ heightMm }) => heightMm)).toEqual([1500, 3000]);
+  expect(usesOf(after, 'bayTemplates', 'plan')).toEqual([]);
+  expect(() => editEntry(both, 'bayTemplates', 'plan', { noticeId: 'gone' })).toThrow('There is no load notice with the id "gone"');
 });
 
 test('an entry is changed in place and the racks keep their identity', () => {

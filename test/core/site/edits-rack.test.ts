@@ -10,7 +10,6 @@ import {
   editLevel,
   editRun,
   fillBays,
-  fillRun,
   moveBay,
   moveLevel,
   moveRun,
@@ -18,6 +17,7 @@ import {
   removeBay,
   removeLevel,
   removeRun,
+  swapLevels,
 } from '../../../src-core/site/edits';
 import { findBay, findFrame, findLevel, findRun } from '../../../src-core/site/lookup';
 import { planOfBay, evenPlan, newSite, runByPlan } from '../../../src-core/site/new-site';
@@ -133,9 +133,20 @@ test('a level is copied with its goods, and pasted over one at the same height',
   expect(() => findLevel(pasted, 'b1-l1')).toThrow('there is no level with the id "b1-l1" in this site');
 });
 
-test('a run is filled from one bay with its goods, its levels, or both', () => {
+test('two levels of a bay change places with all that stands on them; levels of two bays do not', () => {
+  const after = sound(swapLevels(site, 'a1-l1', 'a1-l2'));
+  const { bay } = findBay(after, 'a1');
+  expect(bay.levels.map(({ id, heightMm, placements }) => [id, heightMm, placements[0]?.id])).toEqual([
+    ['a1-l2', 1500, 'a1-l2-g'],
+    ['a1-l1', 3000, 'a1-l1-g'],
+  ]);
+  expect(swapLevels(after, 'a1-l2', 'a1-l1')).toEqual(site);
+  expect(() => swapLevels(site, 'a1-l1', 'a2-l2')).toThrow('Only levels of the same bay change places.');
+});
+
+test('bays are filled from one bay with its goods, its levels, or both', () => {
   const bare = ['a2-l1', 'a2-l2', 'a3-l1'].reduce((next, id) => editLevel(next, id, { placements: [] }), moveLevel(site, 'a2-l2', 3300));
-  const withGoods = sound(fillRun(bare, 'a1', 'goods', newId));
+  const withGoods = sound(fillBays(bare, 'a1', ['a2', 'a3'], 'goods', newId));
   expect(findBay(withGoods, 'a2').bay.levels.map(({ heightMm, placements }) => [heightMm, placements.length])).toEqual([
     [1500, 1],
     [3300, 1],
@@ -173,6 +184,29 @@ test('a template gives runs like any bay of the site, without its goods', () => 
     [1500, 0],
     [3000, 0],
   ]);
+});
+
+test('a plan with goods lays out the goods in every bay, each with an id of its own, and nothing that has to be seen at the rack', () => {
+  const seen = editLevel(site, 'a1-l1', {
+    locks: 'yes',
+    sags: [{ beam: 'front', loadedMm: 4, unloadedMm: null, sidewaysMm: null, found: '2026-11-30' }],
+  });
+  const run = runByPlan(planOfBay(seen, 'a1', 'with goods'), { name: 'C', count: 3, floorId: null, newId });
+  const after = sound(addRun(seen, run));
+  for (const { id } of run.bays) {
+    const { bay } = findBay(after, id);
+    expect(
+      bay.levels.map(({ locks, sags, placements }) => [locks, sags.length, placements.map(({ unitLoadId, atMm }) => [unitLoadId, atMm])]),
+    ).toEqual([
+      ['unknown', 0, [['goods', 75]]],
+      ['unknown', 0, [['goods', 75]]],
+    ]);
+    expect(bay.onFloor).toMatchObject([{ unitLoadId: 'goods', atMm: 0 }]);
+  }
+  const ids = run.bays.flatMap((bay) => [...bay.onFloor, ...bay.levels.flatMap(({ placements }) => placements)].map(({ id }) => id));
+  expect(new Set(ids).size).toBe(9);
+  // Frames stand to the right of the bay that was the plan, and are like it.
+  expect(run.frames.map(({ heightMm }) => heightMm)).toEqual([5001, 5001, 5001, 5001]);
 });
 
 test('ten bays of five levels come from one template on an empty site', () => {
