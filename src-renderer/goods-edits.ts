@@ -101,6 +101,7 @@ export function copyGoods(open: OpenSite): void {
   const places = chosen(open);
   if (places.length === 0) return;
   open.copied = places.map(({ placement: { id: _, ...rest } }) => rest);
+  open.copiedLevel = null;
   open.say(`${nameOf(places)} copied.`);
 }
 

@@ -6,7 +6,7 @@ import { createContext } from 'svelte';
 import { SvelteMap } from 'svelte/reactivity';
 import type { FrameAudit, LevelAudit, RunAudit } from '../src-core/audit/types';
 import type { Host } from '../src-core/host';
-import type { Id, Placement, Site } from '../src-core/site/site';
+import type { Id, Level, Placement, Site } from '../src-core/site/site';
 import { formatQuantity, type Reading } from '../src-core/units/format';
 import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
 import { VERDICT_WORDS } from '../src-core/words/verdict-words';
@@ -65,6 +65,10 @@ export class OpenSite {
   copied: readonly Omit<Placement, 'id'>[] = [];
   /** ISO date of today. */
   readonly today: () => string;
+  /** A level that was copied whole, after any goods; null where goods were copied last. */
+  copiedLevel = $state.raw<Level | null>(null);
+  /** The bay template last kept or laid out by, to be offered first. */
+  lastTemplate: Id | null = null;
   /** Text typed into fields that could not be taken over yet, by field, so that it outlives the form. */
   readonly drafts = new SvelteMap<string, string>();
 

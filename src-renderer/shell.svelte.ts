@@ -16,6 +16,7 @@ export type Screen = 'rack' | 'run' | 'layout' | 'libraries' | 'rules' | 'visits
 
 export type Dialog =
   | { readonly kind: 'commands' | 'find' | 'move-to' | 'new-run' | 'new-site' | 'preferences' | 'stale' | 'leave' | 'fill-run' }
+  | { readonly kind: 'add-bays' | 'keep-template' | 'paste-level' }
   | { readonly kind: 'recovered'; readonly recovered: RecoveredEdits; readonly site: Site | null; readonly problem: string | null }
   | { readonly kind: 'remove-site' | 'mend-site'; readonly entry: SiteEntry }
   | { readonly kind: 'altered'; readonly name: string; readonly text: string }
