@@ -14,6 +14,7 @@ import { positions, unitLoad, type Stated, type Weighed } from '../checks/unit-l
 import type { BeamType } from '../site/site';
 import { solveBeam, type BeamAnswer } from '../statics/beam';
 import { reduce } from '../statics/reduction';
+import { beamConditionFindings } from './beam-condition';
 import { asked, type BayWork, type LevelWork, type SiteContext, type StandingLoad } from './context';
 import { frameTypesMissing } from './level-work';
 import { runnersFinding } from './runners';
@@ -28,7 +29,12 @@ export const levelName = (index: number): string => `Level ${index + 1}`;
  */
 export function auditLevel(context: SiteContext, bay: BayWork, work: LevelWork, more: readonly Finding[]): LevelAudit {
   const rated = ratingOf(bay, work);
-  const findings = [...goodsFindings(context, bay, work, rated), ...beamFindings(context, bay, work, rated), ...more];
+  const findings = [
+    ...goodsFindings(context, bay, work, rated),
+    ...beamFindings(context, bay, work, rated),
+    ...beamConditionFindings(context, bay, work, rated),
+    ...more,
+  ];
   return {
     levelId: work.level.id,
     verdict: verdictOfFindings(findings),

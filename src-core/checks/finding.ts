@@ -27,6 +27,7 @@ export const CHECKS = [
   'full-complement',
   'section-stress',
   'section-deflection',
+  'beam-sag',
   // decks and shelves
   'deck-panel',
   'area-load',

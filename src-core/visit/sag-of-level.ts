@@ -1,11 +1,11 @@
-/** Joins a sag reading with what the site and its audit know of the level. */
-import { dateWords } from '../units/dates';
+/** A sag reading of a visit, judged by what the site and its audit know of the level. */
+import { sagInput } from '../audit/sag-input';
 import type { LevelAudit } from '../audit/types';
-import { fixityOf } from '../checks/pair';
 import { resolveRules } from '../checks/rule-sets';
+import { judgeSag, type SagJudgement } from '../checks/sag';
 import { findLevel } from '../site/lookup';
 import type { Site } from '../site/site';
-import { judgeSag, type SagJudgement } from './sag';
+import { dateWords } from '../units/dates';
 import type { SagReading } from './visit';
 
 /**
@@ -16,39 +16,25 @@ export function judgeSagOfLevel(site: Site, audit: LevelAudit, reading: SagReadi
   const { level, levelIndex, bay } = findLevel(site, reading.levelId);
   const { span, effects, totalKg, ratedKg } = audit;
   if (span === null) return null;
-  const type = site.beamTypes.find(({ id }) => id === level.beamTypeId);
   const notice = site.notices.find(({ id }) => id === bay.noticeId);
-  const rigidity =
-    type === undefined || type.secondMomentMm4 === null || type.elasticModulusNPerMm2 === null
-      ? null
-      : type.secondMomentMm4 * type.elasticModulusNPerMm2;
-  const stiffness = type?.connectorNmmPerRad ?? null;
-  return judgeSag({
-    beam: `the ${reading.beam} beam of level ${levelIndex + 1} of bay ${bay.name}`,
-    span,
-    spanFrom: site.rules.span === 'clear-entry' ? `clear entry of bay ${bay.name}` : `upright centre to upright centre of bay ${bay.name}`,
-    loadedMm: reading.loadedMm,
-    unloadedMm: reading.unloadedMm,
-    sidewaysMm: reading.sidewaysMm,
-    section:
-      rigidity === null || type === undefined
-        ? null
-        : {
-            rigidity,
-            from: `section of beam type ${type.name}`,
-            fixity: stiffness === null ? null : fixityOf(stiffness, rigidity, span),
-          },
-    declared: effects === null || totalKg === null ? null : { load: effects.loads[reading.beam], kg: totalKg },
-    rated:
-      ratedKg === null
-        ? null
-        : {
-            kg: ratedKg,
-            from:
-              notice === undefined
-                ? 'rating of the beam type'
-                : `load notice ${notice.name}${notice.issued === '' ? '' : `, issued ${dateWords(notice.issued)}`}`,
-          },
-    rules: resolveRules(site.rules),
-  });
+  const from =
+    notice === undefined
+      ? 'rating of the beam type'
+      : `load notice ${notice.name}${notice.issued === '' ? '' : `, issued ${dateWords(notice.issued)}`}`;
+  return judgeSag(
+    sagInput({
+      rules: resolveRules(site.rules),
+      spanBy: site.rules.span,
+      bay,
+      level,
+      index: levelIndex,
+      beamType: site.beamTypes.find(({ id }) => id === level.beamTypeId) ?? null,
+      span,
+      effects,
+      totalKg,
+      rated: ratedKg === null ? null : { kg: ratedKg, from },
+      reading,
+      found: null,
+    }),
+  );
 }

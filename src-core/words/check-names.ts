@@ -25,6 +25,7 @@ export const CHECK_WORDS: Readonly<Record<CheckName, CheckWords>> = {
   },
   'section-stress': { name: 'Bending stress', asks: 'Is the stress in the worse beam within its design stress?' },
   'section-deflection': { name: 'Sag in millimetres', asks: 'Is the sag of the worse beam within the limit of the rule set?' },
+  'beam-sag': { name: 'Measured sag', asks: 'Does each beam that was measured sag no further than allowed, loaded and unloaded?' },
   'deck-panel': { name: 'Deck panel', asks: 'Does each panel carry its part of the goods within its own rating?' },
   'area-load': { name: 'Area load', asks: 'Is the load per area under the heaviest goods within the level’s rated share?' },
   'clearance-along': { name: 'Clearance along', asks: 'Is there room enough between goods, and from goods to uprights?' },
@@ -46,5 +47,8 @@ export const CHECK_WORDS: Readonly<Record<CheckName, CheckWords>> = {
   'height-to-depth': { name: 'Height to depth', asks: 'Is the run low enough for its depth, or held at the top?' },
   'anchor-pull': { name: 'Anchor pull', asks: 'How hard would a sideways force at the top pull on the floor anchors?' },
   plumb: { name: 'Plumb', asks: 'Do the uprights stand upright enough?' },
-  damage: { name: 'Damage', asks: 'Is every measured bend within the limit, and is nothing torn or dented?' },
+  damage: {
+    name: 'Damage',
+    asks: 'Is every measured bend within the limit, and is nothing torn, dented or, of the beams, damaged at all?',
+  },
 };

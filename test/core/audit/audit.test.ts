@@ -9,6 +9,7 @@ import type { Bay, Damage, Floor, Frame, Run, Site } from '../../../src-core/sit
 import { goods, level, rack, SOURCE, stand } from './rack';
 
 const TODAY = '2026-06-01';
+const SAG = { beam: 'front', loadedMm: 6, unloadedMm: 1, sidewaysMm: 0, found: TODAY } as const;
 
 /** A site of two runs of so many bays, standing back to back on one floor. */
 function depot(bays = 6): Site {
@@ -27,7 +28,7 @@ function depot(bays = 6): Site {
       ...bay,
       id: `${name}-bay-${i}`,
       name: `${name}${i}`,
-      levels: [level([stand('a', 75), stand('b', 1825)]), level([stand('b', 950)], { heightMm: 3000 })],
+      levels: [level([stand('a', 75), stand('b', 1825)], { sags: [SAG] }), level([stand('b', 950)], { heightMm: 3000 })],
     })),
   });
   const floor: Floor = {

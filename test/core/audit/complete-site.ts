@@ -87,6 +87,7 @@ function bay(name: string): Bay {
       heightMm: 1500,
       beamTypeId: 'beam',
       deck: { kind: 'panels', count: 4, panelKg: 600, massKg: 40, source: MAKER },
+      sags: [{ beam: 'front', loadedMm: 6, unloadedMm: 1, sidewaysMm: 0, found: '2026-05-20' }],
     },
   );
   const upper = makeLevel(

@@ -126,6 +126,7 @@ const NEEDED: readonly (readonly [path: RegExp, checks: readonly CheckName[]])[]
   [/^runs\.0\.bays\.0\.levels\.0\.beamTypeId$/, ['notice-match', 'clearance-above', ...FRAME_LOADS, 'floor-area']],
   [/^runs\.0\.bays\.0\.levels\.1\.beamTypeId$/, ['notice-match', 'pallet-bearing', 'clearance-above', ...FRAME_LOADS, 'floor-area']],
   [/^runs\.0\.bays\.0\.levels\.\d\.locks$/, ['notice-match']],
+  [/^runs\.0\.bays\.0\.levels\.0\.sags\.0\.(loadedMm|unloadedMm|sidewaysMm)$/, ['beam-sag']],
   [/^runs\.0\.bays\.0\.levels\.0\.deck\.massKg$/, [...FRAME_LOADS, 'floor-area', 'anchor-pull']],
   // The next bay shares a frame.
   [/^runs\.0\.bays\.1\.levels\.\d\.beamTypeId$/, FRAME_LOADS],
@@ -153,6 +154,7 @@ const NOT_NEEDED: readonly (readonly [path: RegExp, why: string])[] = [
   [/^runs\.1\.frames\.\d\.(anchored|restrained|plumb|damages)/, 'the run behind'],
   [/^runs\.1\.frames\.0\.typeId$/, 'the frame behind that does not stand at this bay'],
   [/^runs\.1\.bays\.\d\.(noticeId|levels\.\d\.locks)$/, 'the run behind'],
+  [/^runs\.(0\.bays\.1|1\.bays\.\d)\.levels\.0\.sags\.0\./, 'beams of other bays'],
 ];
 
 const all = unknowable(completeSite());
@@ -206,9 +208,11 @@ test('a field of what is missing names the thing that lacks it', () => {
       ? 'levelKg'
       : path.includes('deck')
         ? 'deck.massKg'
-        : last(path) === 'kind' && path.includes('source')
-          ? 'source'
-          : last(path);
+        : path.includes('sags')
+          ? `sags.front.${last(path)}`
+          : last(path) === 'kind' && path.includes('source')
+            ? 'source'
+            : last(path);
     expect(fields, nameOf(path)).toContain(name);
   }
 });

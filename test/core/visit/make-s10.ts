@@ -6,7 +6,7 @@
 import { editEntry, editBay } from '../../../src-core/site/edits';
 import type { Site } from '../../../src-core/site/site';
 import { answer, finishBay, markLock, recordDamage, recordSag, restInOrder, seeNotice } from '../../../src-core/visit/edits';
-import { boxSecondMoment } from '../../../src-core/visit/implied-load';
+import { boxSecondMoment } from '../../../src-core/checks/implied-load';
 import { startVisit, type Visit } from '../../../src-core/visit/visit';
 import { siteOf } from './make-run';
 

@@ -1,6 +1,6 @@
 /** The worked calculation of a measured sag, each line in the symbols of its values. */
-import type { WorkedStep, WorkedValue } from '../checks/finding';
-import { ruleValue, sourceOf } from '../checks/rule-sets';
+import type { WorkedStep, WorkedValue } from './finding';
+import { ruleValue, sourceOf } from './rule-sets';
 import { forceOf, lengthOf, massOf, momentOf, quantity, ratioOf, weightOf, STANDARD_GRAVITY, type Quantity } from '../units/quantity';
 import type { ImpliedLoad } from './implied-load';
 import type { SagInput, SagJudgement } from './sag';
@@ -11,67 +11,82 @@ const BACK_CHECK = 'measured against calculated sag; common practice, no source'
 const READ = 'measured at the rack';
 const value = (symbol: string, is: string, amount: Quantity, from: string): WorkedValue => ({ symbol, is, quantity: amount, from });
 
-export function sagSteps(input: SagInput, found: Found): readonly WorkedStep[] {
-  const { limitMm, elasticMm } = found;
-  const span = value('L', 'span', lengthOf(input.span), input.spanFrom);
-  const limit = value('s_lim', 'allowed sag', lengthOf(limitMm), 'line above');
+/** One reading against its limit. */
+interface Against {
+  readonly measured: Quantity;
+  readonly limit: Quantity;
+  readonly ratio: number;
+}
+
+interface Limited extends Found {
+  readonly loaded: Against | null;
+  readonly set: Against | null;
+  readonly sideways: Against | null;
+}
+
+const spanOf = (input: SagInput): WorkedValue => value('L', 'span', lengthOf(input.span), input.spanFrom);
+const limitOf = ({ limitMm }: Found): WorkedValue => value('s_lim', 'allowed sag', lengthOf(limitMm), 'line above');
+
+/** Allowed sag, and each reading as its part of what is allowed. */
+export function limitSteps(input: SagInput, found: Limited): readonly WorkedStep[] {
+  const limit = limitOf(found);
+  const down = { way: 'down', symbol: '0', rule: 'setVertical', mm: input.unloadedMm, set: found.set } as const;
+  const sideways = { way: 'sideways', symbol: 'h', rule: 'setHorizontal', mm: input.sidewaysMm, set: found.sideways } as const;
   return [
     {
       what: 'Allowed sag',
       formula: 'L / n',
-      values: [span, ruleValue(input.rules, 'deflectionDivisor', 'n')],
-      result: { symbol: 's_lim', quantity: lengthOf(limitMm) },
+      values: [spanOf(input), ruleValue(input.rules, 'deflectionDivisor', 'n')],
+      result: { symbol: 's_lim', quantity: lengthOf(found.limitMm) },
       source: sourceOf(input.rules, 'deflectionDivisor'),
     },
-    ...shareOfLimit(
-      'Permanent set down, of the allowed sag',
-      's_0',
-      'p_0',
-      input.unloadedMm,
-      found.setPercent,
-      limit,
-      input,
-      'setVertical',
-    ),
-    ...shareOfLimit(
-      'Permanent set sideways, of the allowed sag',
-      's_h',
-      'p_h',
-      input.sidewaysMm,
-      found.sidewaysPercent,
-      limit,
-      input,
-      'setHorizontal',
-    ),
-    ...elasticSteps(input, elasticMm),
-    ...impliedSteps(input, found, span, limit),
+    ...[down, sideways].flatMap((one) => setSteps(input, limit, one)),
+    ...(found.loaded === null || !Number.isFinite(found.loaded.ratio)
+      ? []
+      : [
+          {
+            what: 'Loaded sag over the allowed one',
+            formula: 's / s_lim',
+            values: [value('s', 'reading loaded', found.loaded.measured, READ), limit],
+            result: { symbol: 'r_s', quantity: ratioOf(found.loaded.ratio) },
+            source: 'measured over limit: over above 1',
+          },
+        ]),
   ];
 }
 
-function shareOfLimit(
-  what: string,
-  symbol: string,
-  result: string,
-  mm: number | null,
-  percent: number | null,
-  limit: WorkedValue,
-  input: SagInput,
-  rule: 'setVertical' | 'setHorizontal',
-): readonly WorkedStep[] {
-  if (mm === null || percent === null) return [];
+interface SetReading {
+  readonly way: 'down' | 'sideways';
+  readonly symbol: '0' | 'h';
+  readonly rule: 'setVertical' | 'setHorizontal';
+  readonly mm: number | null;
+  readonly set: Against | null;
+}
+
+function setSteps(input: SagInput, limit: WorkedValue, { way, symbol, rule, mm, set }: SetReading): readonly WorkedStep[] {
+  if (mm === null || set === null) return [];
+  const percent: WorkedStep = {
+    what: `Permanent set ${way}, of the allowed sag`,
+    formula: `100 · s_${symbol} / s_lim`,
+    values: [value(`s_${symbol}`, `set ${way}, read unloaded`, lengthOf(mm), READ), limit],
+    result: { symbol: `p_${symbol}`, quantity: set.measured },
+    source: sourceOf(input.rules, rule),
+  };
+  if (!Number.isFinite(set.ratio)) return [percent];
   return [
+    percent,
     {
-      what,
-      formula: `100 · ${symbol} / s_lim`,
-      values: [value(symbol, 'reading unloaded', lengthOf(mm), READ), limit],
-      result: { symbol: result, quantity: quantity('percent', percent) },
-      source: sourceOf(input.rules, rule),
+      what: `Permanent set ${way} over its limit`,
+      formula: `p_${symbol} / p_most_${symbol}`,
+      values: [value(`p_${symbol}`, 'of the allowed sag', set.measured, 'line above'), ruleValue(input.rules, rule, `p_most_${symbol}`)],
+      result: { symbol: `r_${symbol}`, quantity: ratioOf(set.ratio) },
+      source: 'measured over limit: out of use above 1',
     },
   ];
 }
 
-function elasticSteps({ loadedMm, unloadedMm }: SagInput, elasticMm: number | null): readonly WorkedStep[] {
-  if (loadedMm === null || unloadedMm === null || elasticMm === null) return [];
+function elasticSteps({ loadedMm, unloadedMm }: SagInput, elasticMm: number): readonly WorkedStep[] {
+  if (loadedMm === null || unloadedMm === null) return [];
   return [
     {
       what: 'Elastic sag',
@@ -83,16 +98,23 @@ function elasticSteps({ loadedMm, unloadedMm }: SagInput, elasticMm: number | nu
   ];
 }
 
-function impliedSteps(input: SagInput, found: Found, span: WorkedValue, limit: WorkedValue): readonly WorkedStep[] {
-  const { elasticMm, implied, atLeastKg } = found;
+/** What load the elastic sag stands for. */
+export function impliedSteps(input: SagInput, found: Found): readonly WorkedStep[] {
+  const { elasticMm, implied, atLeastKg, limitMm } = found;
   if (elasticMm === null) return [];
   const elastic = value('s_el', 'elastic sag', lengthOf(elasticMm), 'line above');
+  const span = spanOf(input);
   if (atLeastKg !== null && input.rated !== null)
     return [
+      ...elasticSteps(input, elasticMm),
       {
         what: 'Even load on the pair, at least',
         formula: 'm_rated · s_el / s_lim',
-        values: [value('m_rated', 'rating of the pair', massOf(input.rated.kg), input.rated.from), elastic, limit],
+        values: [
+          value('m_rated', 'rating of the pair', massOf(input.rated.kg), input.rated.from),
+          elastic,
+          value('s_lim', 'allowed sag', lengthOf(limitMm), `span and ${sourceOf(input.rules, 'deflectionDivisor')}`),
+        ],
         result: { symbol: 'm_least', quantity: massOf(atLeastKg) },
         source: `${BACK_CHECK}; equal only where the rating is governed by deflection`,
       },
@@ -100,6 +122,7 @@ function impliedSteps(input: SagInput, found: Found, span: WorkedValue, limit: W
   if (implied === null || input.section === null) return [];
   const rigidity = value('EI', 'rigidity of one beam', quantity('rigidity', input.section.rigidity), input.section.from);
   return [
+    ...elasticSteps(input, elasticMm),
     ...endSteps(input, implied.pinned, 'pinned', elastic, rigidity, span, implied.pinned),
     ...endSteps(input, implied.stiffer, 'stiffer', elastic, rigidity, span, implied.pinned),
   ];

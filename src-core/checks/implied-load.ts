@@ -5,7 +5,7 @@
  * A pinned beam sags most, so pinned ends give the smallest load that explains the sag: a measured sag
  * never proves that a load is small.
  */
-import { evenDeflectionFactor, stiffnessFor } from '../checks/pair';
+import { evenDeflectionFactor, stiffnessFor } from './pair';
 import { solveBeam } from '../statics/beam';
 import type { BeamLoad } from '../statics/load';
 import { deflectionIn } from '../statics/segment';

@@ -2,7 +2,7 @@ import { expect, test } from 'vitest';
 import { fixityOf } from '../../../src-core/checks/pair';
 import type { BeamLoad } from '../../../src-core/statics/load';
 import { weightOf } from '../../../src-core/units/quantity';
-import { boxSecondMoment, impliedLoad } from '../../../src-core/visit/implied-load';
+import { boxSecondMoment, impliedLoad } from '../../../src-core/checks/implied-load';
 
 // Bay scenario S10 of the domain facts, whose arithmetic was checked by a script apart from this program:
 // 2.7 m, three 620 kg pallets of 800 mm at 75 mm gaps, box 120 × 50 × 1.5, E = 210 000 N/mm², elastic sag 13 mm.
