@@ -231,7 +231,7 @@ function togglePushing(open: OpenSite): void {
   open.say(
     open.pushing
       ? 'Goods that are put down now push their neighbours apart.'
-      : 'Neighbours stay where they are now; goods put down onto others are shown as not possible.',
+      : 'Neighbours stay where they are now; goods are refused where they would stand in others.',
   );
 }
 

@@ -1,48 +1,18 @@
 /** What is done with goods: put on, taken off, copied, turned, spaced. Each is one step of undo. */
-import { resolveRules } from '../src-core/checks/rule-sets';
-import { addEntry, evenlySpace, mirrorPlacement, placeGoods, removePlacements } from '../src-core/site/edits';
-import type { Bay, Id, Level, Placement, Site, UnitLoad } from '../src-core/site/site';
+import { addEntry, evenlySpace, mirrorPlacement, removePlacements } from '../src-core/site/edits';
+import type { Id, Placement, Site, UnitLoad } from '../src-core/site/site';
 import { formatQuantity } from '../src-core/units/format';
 import { lengthOf } from '../src-core/units/quantity';
-import { gapsAt } from './drawing/gaps';
-import { catchingPlaces, overlaps } from './drawing/snap';
+import { putOn, standOf } from './finding-room';
 import { newId } from './ids';
+import { afterGoods } from './neighbours';
 import type { OpenSite } from './open-site.svelte';
-import { bayPlace, levelPlace, nameOfPlace, placementPlace, type PlacementPlace, type Target } from './places';
+import { nameOfPlace, placementPlace, type PlacementPlace } from './places';
 import { refusal, type Refused } from './refusal';
 import { countOf } from './say';
 
 /** Goods as they were copied: what they are and how they stand, without their ids. */
-export type CopiedGoods = readonly Omit<Placement, 'id'>[];
-
-interface Stand {
-  readonly bay: Bay;
-  readonly level: Level | null;
-}
-
-const standOf = (site: Site, bayId: Id, levelId: Id | null): Stand | null => {
-  if (levelId === null) {
-    const bay = bayPlace(site, bayId)?.bay;
-    return bay ? { bay, level: null } : null;
-  }
-  const place = levelPlace(site, levelId);
-  return place ? { bay: place.bay, level: place.level } : null;
-};
-
-const targetAt = ({ bay, level }: Stand, atMm: number): Target =>
-  level ? { levelId: level.id, atMm } : { levelId: null, bayId: bay.id, atMm };
-
-/** The leftmost place that keeps the gaps asked for, else the leftmost that is free at all; null where none is. */
-export function freePlace(site: Site, { bay, level }: Stand, widthMm: number): number | null {
-  const width = (id: Id) => site.unitLoads.find((one) => one.id === id)?.widthMm ?? 0;
-  const others = (level?.placements ?? bay.onFloor).map((one) => ({ at: one.atMm, width: width(one.unitLoadId) }));
-  const loadedBy = bayPlace(site, bay.id)?.run.loadedBy ?? 'unknown';
-  const gaps = gapsAt(resolveRules(site.rules), loadedBy, level?.heightMm ?? 0);
-  const opening = { entry: bay.clearEntryMm, gaps, width: widthMm, others };
-  const [first] = catchingPlaces(opening);
-  const [tight] = catchingPlaces({ ...opening, gaps: { upright: 0, loads: 0 } });
-  return (first ?? tight)?.at ?? null;
-}
+type CopiedGoods = readonly Omit<Placement, 'id'>[];
 
 /**
  * Puts goods on the chosen level, or on the floor of the bay, at its first free place.
@@ -52,16 +22,11 @@ export function putGoods(open: OpenSite, unitLoad: UnitLoad, isNew: boolean): Re
   const { bayId, levelId } = open.selection;
   const stand = bayId === null ? null : standOf(open.site, bayId, levelId);
   if (stand === null) return refusal('No bay is chosen. Choose the bay and level that the goods go to.');
-  const at = freePlace(open.site, stand, unitLoad.widthMm);
   const place = nameOfPlace(stand.bay, stand.level);
-  if (at === null)
-    return refusal(
-      `There is no free place ${formatQuantity(lengthOf(unitLoad.widthMm), open.reading)} wide on ${place}. Make room there, or choose another level.`,
-    );
   const id = newId();
   const refused = open.edit(`Put ${unitLoad.name} on ${place}`, (site) => {
     const stocked = isNew ? addEntry(site, 'unitLoads', unitLoad) : site;
-    return placeGoods(stocked, { id, unitLoadId: unitLoad.id, mirrored: false }, targetAt(stand, at));
+    return putOn(stocked, stand, { id, unitLoadId: unitLoad.id, atMm: null, mirrored: false, towardsFrontMm: 0 }, open);
   });
   if (refused !== null) return refused;
   open.lastGoods = unitLoad.id;
@@ -80,13 +45,11 @@ export function deleteGoods(open: OpenSite): void {
   const places = chosen(open);
   if (places.length === 0) return;
   const name = nameOf(places);
-  open.edit(`Take off ${name}`, (site) =>
-    removePlacements(
-      site,
-      places.map(({ placement }) => placement.id),
-    ),
-  );
-  open.sayDone(`${name} taken off. Undo puts it back.`);
+  const ids = places.map(({ placement }) => placement.id);
+  const neighbour = afterGoods(open.site, ids);
+  if (open.edit(`Take off ${name}`, (site) => removePlacements(site, ids)) !== null) return;
+  open.goOnTo(neighbour);
+  open.sayDone(`${name} taken off. Undo puts ${ids.length === 1 ? 'it' : 'them'} back.`);
 }
 
 export function mirrorGoods(open: OpenSite): void {
@@ -124,37 +87,37 @@ export function duplicateGoods(open: OpenSite): void {
   addCopies(open, copies, first.bay.id, first.level?.id ?? null, 'Duplicate');
 }
 
-/** Each copy at its own place where that is free, else at the first that is; what finds none is left out and said. */
+/** Each copy where it stood if that is free, else at the first place that is, or at one that is made; what finds none is left out and said. */
 function addCopies(open: OpenSite, copies: CopiedGoods, bayId: Id, levelId: Id | null, verb: string): void {
   const ids: Id[] = [];
-  const put = (site: Site): Site =>
-    copies.reduce((next, copy) => {
-      const stand = standOf(next, bayId, levelId);
-      const unitLoad = next.unitLoads.find((one) => one.id === copy.unitLoadId);
-      if (stand === null || unitLoad === undefined) return next;
-      const at = isFree(next, stand, copy, unitLoad.widthMm) ? copy.atMm : freePlace(next, stand, unitLoad.widthMm);
-      if (at === null) return next;
-      const { unitLoadId, mirrored, towardsFrontMm } = copy;
+  let whyNot = '';
+  const put = (before: Site): Site => {
+    const after = copies.reduce((site, copy) => {
+      const stand = standOf(site, bayId, levelId);
+      if (stand === null) return site;
       const id = newId();
-      ids.push(id);
-      return placeGoods(next, { id, unitLoadId, mirrored }, { ...targetAt(stand, at), towardsFrontMm });
-    }, site);
-  open.edit(`${verb} ${countOf(copies.length, 'unit load')}`, put);
+      try {
+        const next = putOn(site, stand, { ...copy, id }, open);
+        ids.push(id);
+        return next;
+      } catch (error) {
+        if (!(error instanceof RangeError)) throw error;
+        whyNot = error.message;
+        return site;
+      }
+    }, before);
+    if (ids.length === 0) throw new RangeError(whyNot);
+    return after;
+  };
+  if (open.editGoods(`${verb} ${countOf(copies.length, 'unit load')}`, put) !== null) return;
   const stand = standOf(open.site, bayId, levelId);
   if (stand === null) return;
-  const place = nameOfPlace(stand.bay, stand.level);
-  if (ids.length === 0) return open.say(`There is no free place for that on ${place}.`);
   open.select({ placementIds: ids });
+  const done = `${countOf(ids.length, 'unit load')} put on ${nameOfPlace(stand.bay, stand.level)}.`;
   const left = copies.length - ids.length;
-  open.sayDone(
-    `${countOf(ids.length, 'unit load')} put on ${place}.${left > 0 ? ` ${countOf(left, 'unit load')} found no free place there.` : ''}`,
-  );
-}
-
-function isFree(site: Site, { bay, level }: Stand, { atMm }: Pick<Placement, 'atMm'>, width: number): boolean {
-  const widths = new Map(site.unitLoads.map((one) => [one.id, one.widthMm]));
-  const others = level?.placements ?? bay.onFloor;
-  return others.every((one) => !overlaps({ at: atMm, width }, { at: one.atMm, width: widths.get(one.unitLoadId) ?? 0 }));
+  if (left === 0) return open.sayDone(done);
+  open.refusedMove = `${countOf(left, 'unit load')} of ${copies.length} found no place. ${whyNot}`;
+  open.say(`${done} ${open.refusedMove}`);
 }
 
 /** The goods of the level in their order, with equal gaps between them and to the uprights. */
@@ -162,6 +125,15 @@ export function spaceEvenly(open: OpenSite): void {
   const { bay, level } = open;
   if (bay === null || level === null || level.placements.length === 0) return;
   const place = nameOfPlace(bay, level);
+  const wide = level.placements.reduce(
+    (sum, { unitLoadId }) => sum + (open.site.unitLoads.find(({ id }) => id === unitLoadId)?.widthMm ?? 0),
+    0,
+  );
+  if (wide > bay.clearEntryMm) {
+    const said = (mm: number) => formatQuantity(lengthOf(mm), open.reading);
+    open.refusedMove = `The goods of ${place} are ${said(wide)} wide together, ${said(wide - bay.clearEntryMm)} more than the clear entry. Take one off first.`;
+    return open.say(open.refusedMove);
+  }
   if (open.edit(`Space the goods of ${place} evenly`, (site) => evenlySpace(site, level.id)) === null)
     open.sayDone(`Goods of ${place} spaced evenly.`);
 }

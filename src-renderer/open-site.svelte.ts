@@ -13,7 +13,8 @@ import { VERDICT_WORDS } from '../src-core/words/verdict-words';
 import type { WorkerLike } from './audit-link';
 import { Findings } from './findings.svelte';
 import { bayPlace, besideChosenBay, frameOfDamage, framePlace, levelPlace, nameOfPlace, placementPlace, type Target } from './places';
-import { moved, pushedApart } from './put-down';
+import type { Neighbour } from './neighbours';
+import { moved, putDown } from './put-down';
 import { refusal, type Refused } from './refusal';
 import { Saving, type SavedState } from './saving.svelte';
 import { completed, existing, firstOf, NOTHING, type Selection } from './selection';
@@ -51,8 +52,10 @@ export class OpenSite {
   readonly findings: Findings;
   /** The unit load picked up by click or key that waits for its target. */
   carried = $state<Id | null>(null);
-  /** Whether goods push their neighbours apart where they are put down; else an overlap stands and is shown as not possible. */
+  /** Whether goods push their neighbours apart where they are put down; else they are refused where they would stand in others. */
   pushing = $state(false);
+  /** Why goods were not put where they were to go, beside the drawing until the next change; null where nothing was refused. */
+  refusedMove = $state<string | null>(null);
   task = $state.raw<Task | null>(null);
   /** The form that was last asked for, to be given the focus. */
   asked = $state.raw<Task | null>(null);
@@ -63,12 +66,12 @@ export class OpenSite {
   /** What was last put on a level, to be offered first. */
   lastGoods: Id | null = null;
   copied: readonly Omit<Placement, 'id'>[] = [];
-  /** ISO date of today. */
-  readonly today: () => string;
   /** A level that was copied whole, after any goods; null where goods were copied last. */
   copiedLevel = $state.raw<Level | null>(null);
   /** The bay template last kept or laid out by, to be offered first. */
   lastTemplate: Id | null = null;
+  /** ISO date of today. */
+  readonly today: () => string;
   /** Text typed into fields that could not be taken over yet, by field, so that it outlives the form. */
   readonly drafts = new SvelteMap<string, string>();
 
@@ -132,9 +135,23 @@ export class OpenSite {
   select = (part: Partial<Selection>): void => {
     const before = this.selection;
     this.#wanted = completed(this.site, before, part);
+    this.refusedMove = null;
     if (before.bayId !== null && this.selection.bayId !== before.bayId) this.#trail = [...this.#trail.slice(-99), before];
     this.#follow();
     if (this.carried !== null && part.placementIds && !part.placementIds.includes(this.carried)) this.putBack();
+  };
+
+  /** What was selected as it was taken out, to be selected again when undo brings it back. */
+  #takenOut: { readonly wanted: Selection; readonly steps: number } | null = null;
+  /** What the focus goes to now that what had it is gone; asked anew each time. */
+  goingOn = $state.raw<Neighbour['focus'] | null>(null);
+
+  /** Chooses what is left beside something that was taken out, and brings the focus there. */
+  goOnTo = (neighbour: Neighbour | null): void => {
+    if (neighbour === null) return;
+    this.#takenOut = { wanted: this.#wanted, steps: this.steps };
+    this.select(neighbour.select);
+    this.goingOn = { ...neighbour.focus };
   };
 
   /** Forms of bay and level stay with what is chosen. */
@@ -235,6 +252,8 @@ export class OpenSite {
     this.dropTrial();
     const name = this.undoName;
     if (name === null) return;
+    if (this.#takenOut?.steps === this.steps) this.#wanted = this.#takenOut.wanted;
+    this.#takenOut = null;
     this.#history = undo(this.#history);
     this.#lastMerge = null;
     this.#changed(`Undo: ${name}`);
@@ -254,11 +273,15 @@ export class OpenSite {
   // ------------------------------------------------------------ moving goods
 
   /** The one command behind dragging, keys, clicks and the menu. Positions are whole millimetres. */
-  move = (placementId: Id, target: Target, merge: string | null = null): Refused | null => {
+  move = (placementId: Id, target: Target, merge?: string): Refused | null => {
     this.dropTrial();
     const from = placementPlace(this.site, placementId);
     if (from === null) return null;
-    const refused = this.edit(`Move ${from.unitLoad.name}`, (site) => this.roomFor(moved(site, placementId, target), [placementId]), merge);
+    const refused = this.editGoods(
+      `Move ${from.unitLoad.name}`,
+      (site) => this.roomFor(moved(site, placementId, target), [placementId]),
+      merge ?? null,
+    );
     if (refused !== null) return refused;
     if (this.carried === placementId) this.carried = null;
     const to = placementPlace(this.site, placementId);
@@ -270,8 +293,28 @@ export class OpenSite {
     return null;
   };
 
-  /** The site with room made for goods just put down, where that is wanted. */
-  roomFor = (site: Site, placementIds: readonly Id[]): Site => (this.pushing ? pushedApart(site, placementIds) : site);
+  /** Several at once, as one step of undo. */
+  moveAll = (moves: readonly { readonly placementId: Id; readonly target: Target }[], merge?: string): Refused | null => {
+    const placementIds = moves.map(({ placementId }) => placementId);
+    const all = (site: Site) => moves.reduce((next, { placementId, target }) => moved(next, placementId, target), site);
+    const refused = this.editGoods(`Move ${moves.length} unit loads`, (site) => this.roomFor(all(site), placementIds), merge ?? null);
+    if (refused === null) this.select({ placementIds });
+    return refused;
+  };
+
+  /**
+   * The site with goods just put down on it: neighbours pushed apart, where that is wanted.
+   * @throws RangeError if they would stand in others
+   */
+  roomFor = (site: Site, placementIds: readonly Id[]): Site =>
+    putDown({ before: this.#history.value, after: site, placementIds, pushing: this.pushing, reading: this.reading });
+
+  /** An edit that puts goods down; why it was refused stays in sight beside the drawing. */
+  editGoods = (name: string, change: (site: Site) => Site, merge: string | null = null): Refused | null => {
+    const refused = this.edit(name, change, merge);
+    this.refusedMove = refused;
+    return refused;
+  };
 
   /** Shows and checks a move without making it; `keepTrial` makes it, `dropTrial` takes it back. */
   tryMove = (placementId: Id, target: Target): void => {
@@ -364,6 +407,7 @@ export class OpenSite {
   };
 
   #changed(name: string): void {
+    this.refusedMove = null;
     this.findings.follow(this.#history.value);
     this.saving.edited(this.#history.value, name);
   }
