@@ -25,6 +25,7 @@ import { formatQuantity } from '../src-core/units/format';
 import { lengthOf } from '../src-core/units/quantity';
 import { newId } from './ids';
 import { nextName, nextRunName } from './names';
+import { afterBay, afterLevel, afterRun } from './neighbours';
 import type { OpenSite } from './open-site.svelte';
 import type { Refused } from './refusal';
 import { countOf } from './say';
@@ -114,7 +115,9 @@ export function removeBayHere(open: OpenSite): void {
 }
 
 export function removeBayFrom(open: OpenSite, run: Run, bay: Bay): void {
-  open.edit(`Delete bay ${bay.name}`, (site) => removeBay(site, bay.id));
+  const neighbour = afterBay(open.site, bay.id);
+  if (open.edit(`Delete bay ${bay.name}`, (site) => removeBay(site, bay.id)) !== null) return;
+  open.goOnTo(neighbour);
   open.say(`Bay ${bay.name} of run ${run.name} deleted. Undo brings it back.`);
 }
 
@@ -151,7 +154,9 @@ export function shiftRun(open: OpenSite, run: Run, by: 1 | -1): void {
 }
 
 export function removeRunFrom(open: OpenSite, run: Run): void {
-  open.edit(`Delete run ${run.name}`, (site) => removeRun(site, run.id));
+  const neighbour = afterRun(open.site, run.id);
+  if (open.edit(`Delete run ${run.name}`, (site) => removeRun(site, run.id)) !== null) return;
+  open.goOnTo(neighbour);
   open.say(`Run ${run.name} with ${countOf(run.bays.length, 'bay')} deleted. Undo brings it back.`);
 }
 
@@ -194,7 +199,9 @@ export function removeLevelHere(open: OpenSite): void {
   const { bay, level } = open;
   if (bay === null || level === null) return;
   const number = bay.levels.indexOf(level) + 1;
-  open.edit(`Delete level ${number} of bay ${bay.name}`, (site) => removeLevel(site, level.id));
+  const neighbour = afterLevel(open.site, level.id);
+  if (open.edit(`Delete level ${number} of bay ${bay.name}`, (site) => removeLevel(site, level.id)) !== null) return;
+  open.goOnTo(neighbour);
   open.say(`Level ${number} of bay ${bay.name} deleted with its goods. Undo brings it back.`);
 }
 
