@@ -104,9 +104,3 @@ function keptIn(
   }
   return places;
 }
-
-/** Nearest height on the upright's hole pitch, counted from `first`; US pitches are 2, 3 or 4 in, European 50 or 75 mm (common practice). */
-export function onHolePitch(height: number, pitch: number, first = 0): number {
-  if (!(pitch > 0)) throw new RangeError(`hole pitch must be above 0 mm, got ${pitch}`);
-  return first + Math.round((height - first) / pitch) * pitch;
-}

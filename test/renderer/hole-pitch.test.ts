@@ -1,5 +1,6 @@
 import { afterEach, expect, test } from 'vitest';
 import { moveLevel } from '../../src-core/site/edits';
+import { freshItem } from '../../src-renderer/forms/library-items';
 import { OpenSite } from '../../src-renderer/open-site.svelte';
 import { shiftLevelHere } from '../../src-renderer/rack-edits';
 import { MemoryHost } from './memory-host';
@@ -37,7 +38,35 @@ test('a level between two holes comes onto the pitch', () => {
   expect(heights(open)).toEqual([1500, 3050, 4500]);
   put(open, 3012);
   shiftLevelHere(open, -1);
-  expect(heights(open)).toEqual([1500, 2950, 4500]);
+  expect(heights(open)).toEqual([1500, 3000, 4500]);
+});
+
+test('a level goes by the pitch of its bay’s frames where both have it, and by 50 mm where they differ', () => {
+  const open = openSite(2);
+  const withPitch = (pitches: readonly (number | null)[]) =>
+    open.edit('Frames', (site) => {
+      const types = pitches.map((holePitchMm, i) => ({ ...freshItem('frameType', `t${i}`, `Type ${i}`), holePitchMm }));
+      const [run] = site.runs;
+      if (run === undefined) return site;
+      const frames = run.frames.map((frame, i) => ({ ...frame, typeId: `t${i % 2}` }));
+      return { ...site, frameTypes: types, runs: [{ ...run, frames }] };
+    });
+  withPitch([75, 75]);
+  shiftLevelHere(open, 1);
+  // 3000 = 40 × 75.
+  expect(heights(open)).toEqual([1500, 3075, 4500]);
+  withPitch([50.8, 50.8]);
+  put(open, 3048);
+  shiftLevelHere(open, -1);
+  // 3048 mm = 120 in = 60 holes of 2 in; 59 × 50.8 = 2997.2.
+  expect(heights(open)).toEqual([1500, 2997.2, 4500]);
+  withPitch([50, 75]);
+  put(open, 3000);
+  shiftLevelHere(open, 1);
+  expect(heights(open)).toEqual([1500, 3050, 4500]);
+  withPitch([75, null]);
+  shiftLevelHere(open, 1);
+  expect(heights(open)).toEqual([1500, 3100, 4500]);
 });
 
 test('a level stops below the one above it, above the one below it, and above the floor', () => {

@@ -1,6 +1,6 @@
 import * as fc from 'fast-check';
 import { expect, test } from 'vitest';
-import { evenPlaces, freeGaps, onHolePitch, pushApart, type Standing } from '../../../src-core/site/placing';
+import { evenPlaces, freeGaps, pushApart, type Standing } from '../../../src-core/site/placing';
 
 const gaps = { upright: 75, loads: 75 };
 
@@ -84,13 +84,4 @@ test('pushed apart, every gap is kept, or there is no room for them all', () => 
     }),
     { numRuns: 2000 },
   );
-});
-
-test('heights catch on the hole pitch of the upright', () => {
-  // Pitches of 50 and 75 mm and 2 in: facts.md F-60, common practice, no source.
-  expect(onHolePitch(1512, 50)).toBe(1500);
-  expect(onHolePitch(1512, 75)).toBe(1500);
-  expect(onHolePitch(1540, 75, 30)).toBe(1530);
-  expect(onHolePitch(1500, 50.8)).toBeCloseTo(1524, 9);
-  expect(() => onHolePitch(1500, 0)).toThrow('hole pitch must be above 0 mm, got 0');
 });
