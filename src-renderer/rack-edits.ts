@@ -1,11 +1,13 @@
 /** Changing the rack itself: runs, bays and levels added, copied, moved and taken out. Each is one step of undo. */
 import type { LoadedBy } from '../src-core/checks/clearance-rules';
-import { copyOfBay, copyOfFrame, copyOfLevel } from '../src-core/site/copies';
+import { copyOfBay, copyOfFrame } from '../src-core/site/copies';
 import {
   addBay,
   addEntry,
   addLevel,
   addRun,
+  duplicateBay,
+  duplicateLevel,
   editBay,
   editFrame,
   editLevel,
@@ -17,9 +19,10 @@ import {
   removeBay,
   removeLevel,
   removeRun,
+  swapLevels,
 } from '../src-core/site/edits';
-import { holesOf, nextHole } from '../src-core/site/holes';
-import { evenPlan, runByPlan } from '../src-core/site/new-site';
+import { bayByPlan, evenPlan, frameByPlan, planOfBay, runByPlan, type BayPlan } from '../src-core/site/new-site';
+import { onHolePitch } from '../src-core/site/placing';
 import type { Bay, Frame, Id, Level, LoadNotice, Run, Site } from '../src-core/site/site';
 import { formatQuantity } from '../src-core/units/format';
 import { lengthOf } from '../src-core/units/quantity';
@@ -27,20 +30,15 @@ import { newId } from './ids';
 import { nextName, nextRunName } from './names';
 import { afterBay, afterLevel, afterRun } from './neighbours';
 import type { OpenSite } from './open-site.svelte';
+import { bayPlace } from './places';
 import type { Refused } from './refusal';
 import { countOf } from './say';
 
+/** A run to lay out: its bays all alike, by a plan. */
 export interface RunPlan {
   readonly name: string;
   readonly bays: number;
-  readonly clearEntryMm: number;
-  readonly levels: number;
-  /** Floor to top of the first beam, and from beam to beam. */
-  readonly firstBeamMm: number;
-  readonly pitchMm: number;
-  readonly noticeId: Id | null;
-  readonly beamTypeId: Id | null;
-  readonly frameTypeId: Id | null;
+  readonly plan: BayPlan;
   readonly floorId: Id | null;
   readonly loadedBy: LoadedBy;
 }
@@ -49,39 +47,61 @@ export interface RunPlan {
  * @param notice a load notice that is entered together with the run
  * @returns why it was refused, as a sentence; null if it was made
  */
-export function layOutRun(open: OpenSite, plan: RunPlan, notice: LoadNotice | null): Refused | null {
-  const { name, bays: count, floorId } = plan;
-  const run: Run = { ...runByPlan(evenPlan(plan), { name, count, floorId, newId }), loadedBy: plan.loadedBy };
+export function layOutRun(
+  open: OpenSite,
+  { name, bays: count, plan, floorId, loadedBy }: RunPlan,
+  notice: LoadNotice | null,
+): Refused | null {
+  const run: Run = { ...runByPlan(plan, { name, count, floorId, newId }), loadedBy };
   const refused = open.edit(`Lay out run ${name}`, (site) => addRun(notice === null ? site : addEntry(site, 'notices', notice), run));
   if (refused !== null) return refused;
   const bay = run.bays[0];
   open.select({ runId: run.id, bayId: bay?.id ?? null });
   open.select({ levelId: bay?.levels[0]?.id ?? null });
-  open.say(`Run ${name} laid out: ${countOf(count, 'bay')} of ${countOf(plan.levels, 'level')}.`);
+  const goods = goodsInPlan(plan);
+  const standing = goods === 0 ? '' : `, each with ${countOf(goods, 'unit load')}`;
+  open.say(`Run ${name} laid out: ${countOf(count, 'bay')} of ${countOf(plan.levels.length, 'level')}${standing}.`);
   return null;
 }
 
+export const goodsInPlan = ({ levels, onFloor }: BayPlan): number =>
+  levels.reduce((sum, level) => sum + level.placements.length, onFloor.length);
+
 const bayNames = (site: Site): ReadonlySet<string> => new Set(site.runs.flatMap((run) => run.bays.map((bay) => bay.name)));
 
-const withoutGoods = (bay: Bay): Bay => ({ ...bay, levels: bay.levels.map((level) => ({ ...level, placements: [] })), onFloor: [] });
+/** For the first bay of a run: everything that nobody has stated is not known. */
+export const FIRST_BAY: BayPlan = evenPlan({
+  clearEntryMm: 2700,
+  levels: 3,
+  firstBeamMm: 1500,
+  pitchMm: 1500,
+  noticeId: null,
+  beamTypeId: null,
+  frameTypeId: null,
+});
 
-/** Everything of a first bay that nobody has stated is not known. */
-const firstBay = (name: string): Bay =>
-  runByPlan(
-    evenPlan({ clearEntryMm: 2700, levels: 3, firstBeamMm: 1500, pitchMm: 1500, noticeId: null, beamTypeId: null, frameTypeId: null }),
-    { name, count: 1, floorId: null, newId },
-  ).bays.map((bay) => ({ ...bay, name }))[0] as Bay;
-
-/** The frame that closes a bay which is put in after `index`. */
-function frameAfter(run: Run, index: number, bayName: string): Frame {
-  const like = (run.frames[index + 1] ?? run.frames.at(-1)) as Frame;
-  return copyOfFrame(like, `${bayName}|`, newId);
-}
-
-function insertBay(open: OpenSite, run: Run, bay: Bay, after: number, what: string): void {
-  if (open.edit(what, (site) => addBay(site, run.id, bay, frameAfter(run, after, bay.name), after + 1)) !== null) return;
-  open.select({ bayId: bay.id });
-  open.say(`Bay ${bay.name} added to run ${run.name}.`);
+/**
+ * Puts bays by a plan into a run, to the right of the bay with this index; -1 for the left end.
+ * @returns why it was refused, as a sentence; null if they were added
+ */
+export function addBays(open: OpenSite, run: Run, plan: BayPlan, { after, count }: { after: number; count: number }): Refused | null {
+  const taken = new Set(bayNames(open.site));
+  let last = run.bays[after]?.name ?? `${run.name}0`;
+  const bays = Array.from({ length: count }, () => {
+    last = nextName(last, taken);
+    taken.add(last);
+    return bayByPlan(plan, last, newId);
+  });
+  const [first] = bays;
+  if (first === undefined) return null;
+  const what = count === 1 ? `bay ${first.name}` : countOf(count, 'bay');
+  const refused = open.edit(`Add ${what}`, (site) =>
+    bays.reduce((next, bay, i) => addBay(next, run.id, bay, frameByPlan(plan, `${bay.name}|`, newId), after + 1 + i), site),
+  );
+  if (refused !== null) return refused;
+  open.select({ bayId: first.id });
+  open.say(count === 1 ? `Bay ${first.name} added to run ${run.name}.` : `${what}, ${first.name} to ${last}, added to run ${run.name}.`);
+  return null;
 }
 
 /** An empty bay like the chosen one, to its right. */
@@ -89,16 +109,14 @@ export function addBayAfter(open: OpenSite): void {
   const { run, bay } = open;
   if (run === null) return;
   if (bay === null) return addBayTo(open, run);
-  const name = nextName(bay.name, bayNames(open.site));
-  insertBay(open, run, copyOfBay(withoutGoods(bay), name, newId), run.bays.indexOf(bay), `Add bay ${name}`);
+  addBays(open, run, planOfBay(open.site, bay.id, 'without goods'), { after: run.bays.indexOf(bay), count: 1 });
 }
 
 /** An empty bay at the right end of the run, like its last one. */
 export function addBayTo(open: OpenSite, run: Run): void {
   const last = run.bays.at(-1);
-  const name = nextName(last?.name ?? `${run.name}0`, bayNames(open.site));
-  const bay = last ? copyOfBay(withoutGoods(last), name, newId) : firstBay(name);
-  insertBay(open, run, bay, run.bays.length - 1, `Add bay ${name}`);
+  const plan = last ? planOfBay(open.site, last.id, 'without goods') : FIRST_BAY;
+  addBays(open, run, plan, { after: run.bays.length - 1, count: 1 });
 }
 
 export function duplicateBayHere(open: OpenSite): void {
@@ -107,7 +125,10 @@ export function duplicateBayHere(open: OpenSite): void {
 
 export function copyBay(open: OpenSite, run: Run, bay: Bay): void {
   const name = nextName(bay.name, bayNames(open.site));
-  insertBay(open, run, copyOfBay(bay, name, newId), run.bays.indexOf(bay), `Duplicate bay ${bay.name}`);
+  const refused = open.edit(`Duplicate bay ${bay.name}`, (site) => duplicateBay(site, bay.id, { name, frameName: `${name}|`, newId }));
+  if (refused !== null) return;
+  open.select({ bayId: open.site.runs.find(({ id }) => id === run.id)?.bays[run.bays.indexOf(bay) + 1]?.id ?? null });
+  open.say(`Bay ${bay.name} duplicated as bay ${name}.`);
 }
 
 export function removeBayHere(open: OpenSite): void {
@@ -123,6 +144,7 @@ export function removeBayFrom(open: OpenSite, run: Run, bay: Bay): void {
 
 export function shiftBay(open: OpenSite, run: Run, bay: Bay, by: 1 | -1): void {
   const side = by > 0 ? 'right' : 'left';
+  if (run.bays[run.bays.indexOf(bay) + by] === undefined) return open.say(`No bay of run ${run.name} stands further ${side}.`);
   if (open.edit(`Move bay ${bay.name} ${side}`, (site) => moveBay(site, bay.id, run.bays.indexOf(bay) + by)) === null)
     open.say(`Bay ${bay.name} moved ${side}. The frames stay where they stand.`);
 }
@@ -150,7 +172,10 @@ export function copyRun(open: OpenSite, run: Run): void {
 
 export function shiftRun(open: OpenSite, run: Run, by: 1 | -1): void {
   const index = open.site.runs.findIndex((one) => one.id === run.id);
-  open.edit(`Move run ${run.name} ${by > 0 ? 'down' : 'up'}`, (site) => moveRun(site, run.id, index + by));
+  const way = by > 0 ? 'down' : 'up';
+  if (open.site.runs[index + by] === undefined) return open.say(`Run ${run.name} is the ${by > 0 ? 'last' : 'first'} of the site.`);
+  if (open.edit(`Move run ${run.name} ${way}`, (site) => moveRun(site, run.id, index + by)) === null)
+    open.say(`Run ${run.name} moved ${way}.`);
 }
 
 export function removeRunFrom(open: OpenSite, run: Run): void {
@@ -160,13 +185,13 @@ export function removeRunFrom(open: OpenSite, run: Run): void {
   open.say(`Run ${run.name} with ${countOf(run.bays.length, 'bay')} deleted. Undo brings it back.`);
 }
 
-/** A level on top, as far above the highest as that is above the one below it. */
+/** An empty level on top. */
 export function addLevelOnTop(open: OpenSite): void {
   const { bay } = open;
   if (bay === null) return;
   const level: Level = {
     id: newId(),
-    heightMm: nextHeight(bay),
+    heightMm: nextHeight(bay.levels),
     beamTypeId: bay.levels.at(-1)?.beamTypeId ?? null,
     locks: 'unknown',
     deck: { kind: 'none' },
@@ -174,25 +199,27 @@ export function addLevelOnTop(open: OpenSite): void {
     sags: [],
     placements: [],
   };
-  putOnTop(open, bay, level, `Add a level to bay ${bay.name}`);
+  putOnTop(open, bay, `Add a level to bay ${bay.name}`, (site) => addLevel(site, bay.id, level));
 }
 
 export function duplicateLevelHere(open: OpenSite): void {
   const { bay, level } = open;
   if (bay === null || level === null) return;
-  const copy = { ...copyOfLevel(level, newId), heightMm: nextHeight(bay) };
-  putOnTop(open, bay, copy, `Duplicate level ${bay.levels.indexOf(level) + 1} of bay ${bay.name}`);
+  putOnTop(open, bay, `Duplicate level ${bay.levels.indexOf(level) + 1} of bay ${bay.name}`, (site) =>
+    duplicateLevel(site, level.id, nextHeight(bay.levels), newId),
+  );
 }
 
-function putOnTop(open: OpenSite, bay: Bay, level: Level, what: string): void {
-  if (open.edit(what, (site) => addLevel(site, bay.id, level)) !== null) return;
-  open.select({ levelId: level.id });
+function putOnTop(open: OpenSite, bay: Bay, what: string, put: (site: Site) => Site): void {
+  if (open.edit(what, put) !== null) return;
+  open.select({ levelId: bayPlace(open.site, bay.id)?.bay.levels.at(-1)?.id ?? null });
   open.say(`Level ${bay.levels.length + 1} added to bay ${bay.name}.`);
 }
 
-function nextHeight(bay: Bay): number {
-  const top = bay.levels.at(-1)?.heightMm ?? 0;
-  return top + (top - (bay.levels.at(-2)?.heightMm ?? 0) || 1500);
+/** As far above the highest level as that is above the one below it. */
+export function nextHeight(levels: readonly Pick<Level, 'heightMm'>[]): number {
+  const top = levels.at(-1)?.heightMm ?? 0;
+  return top + (top - (levels.at(-2)?.heightMm ?? 0) || 1500);
 }
 
 export function removeLevelHere(open: OpenSite): void {
@@ -205,12 +232,15 @@ export function removeLevelHere(open: OpenSite): void {
   open.say(`Level ${number} of bay ${bay.name} deleted with its goods. Undo brings it back.`);
 }
 
-/** The chosen level one hole up (+1) or down (−1), by the holes of the bay's frames; it never passes a neighbour. */
+/** Where the holes of the uprights are not known: the commonest pitch in Europe, mm (common practice, no source). */
+const HOLE_PITCH = 50;
+
+/** The chosen level one hole up (+1) or down (−1), onto the pitch counted from the floor; it never passes a neighbour. */
 export function shiftLevelHere(open: OpenSite, by: 1 | -1): void {
-  const { run, bay, level } = open;
-  if (run === null || bay === null || level === null) return;
+  const { bay, level } = open;
+  if (bay === null || level === null) return;
   const index = bay.levels.indexOf(level);
-  const heightMm = nextHole(level.heightMm, holesOf(open.site, run, run.bays.indexOf(bay)).pitch, by);
+  const heightMm = onHolePitch(level.heightMm + by * HOLE_PITCH, HOLE_PITCH);
   const next = bay.levels[index + by]?.heightMm ?? (by > 0 ? Infinity : 0);
   if (by > 0 ? heightMm >= next : heightMm <= next)
     return open.say(
@@ -221,8 +251,19 @@ export function shiftLevelHere(open: OpenSite, by: 1 | -1): void {
     open.sayDone(`Level ${index + 1} of bay ${bay.name} now at ${formatQuantity(lengthOf(heightMm), open.reading)}.`);
 }
 
-/** Gives other bays the goods, or the levels and goods, of the chosen one. */
-export function fillLike(open: OpenSite, targets: readonly Bay[], what: 'goods' | 'levels and goods'): void {
+/** The chosen level and the one above (+1) or below (−1) exchange their heights, each with its beams and goods. */
+export function swapLevelHere(open: OpenSite, by: 1 | -1): void {
+  const { bay, level } = open;
+  if (bay === null || level === null) return;
+  const number = bay.levels.indexOf(level) + 1;
+  const other = bay.levels[number - 1 + by];
+  if (other === undefined) return open.say(by > 0 ? 'This is the highest level of the bay.' : 'This is the lowest level of the bay.');
+  if (open.edit(`Swap levels ${number} and ${number + by} of bay ${bay.name}`, (site) => swapLevels(site, level.id, other.id)) === null)
+    open.sayDone(`Levels ${number} and ${number + by} of bay ${bay.name} swapped, each with its beams and goods.`);
+}
+
+/** Gives other bays, of whichever run, what the chosen one has. */
+export function fillLike(open: OpenSite, targets: readonly Bay[], what: 'levels' | 'levels and goods' | 'goods'): void {
   const pattern = open.bay;
   if (pattern === null || targets.length === 0) return;
   const ids = targets.map((bay) => bay.id);

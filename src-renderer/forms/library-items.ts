@@ -1,9 +1,10 @@
 /** The site's libraries as the page lists them: where they stand, what they are called, a first entry of each. */
 import { addEntry } from '../../src-core/site/edits';
 import type { Library } from '../../src-core/site/lookup';
-import type { BeamType, Floor, FrameType, Id, LoadNotice, Pallet, Site, UnitLoad } from '../../src-core/site/site';
+import type { BayTemplate, BeamType, Floor, FrameType, Id, LoadNotice, Pallet, Site, UnitLoad } from '../../src-core/site/site';
 import { newId } from '../ids';
 import type { OpenSite } from '../open-site.svelte';
+import { FIRST_BAY } from '../rack-edits';
 import { NO_SOURCE } from './options';
 
 export type LibraryKind = keyof LibraryItem;
@@ -15,6 +16,7 @@ export interface LibraryItem {
   beamType: BeamType;
   frameType: FrameType;
   floor: Floor;
+  bayTemplate: BayTemplate;
 }
 
 export const LIBRARIES: readonly { readonly kind: LibraryKind; readonly list: Library; readonly title: string; readonly item: string }[] = [
@@ -24,6 +26,7 @@ export const LIBRARIES: readonly { readonly kind: LibraryKind; readonly list: Li
   { kind: 'beamType', list: 'beamTypes', title: 'Beam types', item: 'beam type' },
   { kind: 'frameType', list: 'frameTypes', title: 'Frame types', item: 'frame type' },
   { kind: 'floor', list: 'floors', title: 'Floors', item: 'floor' },
+  { kind: 'bayTemplate', list: 'bayTemplates', title: 'Bay templates', item: 'bay template' },
 ];
 
 export function libraryOf(kind: LibraryKind) {
@@ -124,6 +127,7 @@ const FRESH: { readonly [K in LibraryKind]: (id: Id, name: string) => LibraryIte
     thicknessMm: null,
     source: NO_SOURCE,
   }),
+  bayTemplate: (id, name) => ({ id, name, ...FIRST_BAY }),
 };
 
 export const freshItem = <K extends LibraryKind>(kind: K, id: Id, name: string): LibraryItem[K] => FRESH[kind](id, name);
