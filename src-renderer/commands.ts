@@ -5,16 +5,22 @@
 import { changeBay, changeLevel, nudge } from './goods-moves';
 import { copyGoods, cutGoods, deleteGoods, duplicateGoods, mirrorGoods, pasteGoods, spaceEvenly } from './goods-edits';
 import { pressed, type KeyPress } from './keys';
+import { copyLevelHere, pasteLevelHere } from './level-clipboard';
 import type { OpenSite } from './open-site.svelte';
 import { allBays, framePlace } from './places';
 import {
   addBayAfter,
   addLevelOnTop,
+  copyRun,
   duplicateBayHere,
   duplicateLevelHere,
   removeBayHere,
   removeLevelHere,
+  removeRunFrom,
+  shiftBay,
   shiftLevelHere,
+  shiftRun,
+  swapLevelHere,
 } from './rack-edits';
 import type { Screen, Shell } from './shell.svelte';
 
@@ -39,6 +45,7 @@ type Allowed = (at: Surroundings) => boolean;
 
 const always: Allowed = () => true;
 const onRack: Allowed = ({ shell }) => shell.screen === 'rack';
+const hasRun: Allowed = (at) => onRack(at) && at.open.run !== null;
 const hasBay: Allowed = (at) => onRack(at) && at.open.bay !== null;
 const hasLevel: Allowed = (at) => hasBay(at) && at.open.level !== null;
 const carrying: Allowed = (at) => onRack(at) && at.open.carried !== null;
@@ -47,6 +54,7 @@ const hasOne: Allowed = (at) => onRack(at) && at.open.selection.placementIds.len
 const movable: Allowed = (at) => hasGoods(at) || carrying(at);
 const still: Allowed = (at) => hasBay(at) && !carrying(at);
 const stillOnLevel: Allowed = (at) => hasLevel(at) && !carrying(at);
+const levelCopied: Allowed = (at) => hasBay(at) && at.open.copiedLevel !== null;
 
 const command = (
   id: string,
@@ -103,7 +111,26 @@ export const COMMANDS: readonly Command[] = [
   ),
   command('copy', 'Edit', 'Copy goods', ['Mod+C'], hasGoods, ({ open }) => copyGoods(open)),
   command('cut', 'Edit', 'Cut goods', ['Mod+X'], hasGoods, ({ open }) => cutGoods(open)),
-  command('paste', 'Edit', 'Paste goods on this level', ['Mod+V'], hasBay, ({ open }) => pasteGoods(open)),
+  command(
+    'paste',
+    'Edit',
+    'Paste goods on this level',
+    ['Mod+V'],
+    (at) => hasBay(at) && !levelCopied(at),
+    ({ open }) => pasteGoods(open),
+  ),
+  command(
+    'copy-level',
+    'Edit',
+    'Copy this level with its goods',
+    ['Mod+C'],
+    (at) => stillOnLevel(at) && !hasGoods(at),
+    ({ open }) => copyLevelHere(open),
+  ),
+  command('paste-level', 'Edit', 'Paste the copied level into this bay', ['Mod+V'], levelCopied, ({ open }) => pasteLevelHere(open)),
+  command('paste-level-to', 'Edit', 'Paste the copied level into several bays…', ['Mod+Shift+V'], levelCopied, ({ shell }) =>
+    shell.ask({ kind: 'paste-level' }),
+  ),
   command('duplicate', 'Edit', 'Duplicate goods', ['Mod+D'], hasGoods, ({ open }) => duplicateGoods(open)),
   command('delete', 'Edit', 'Take goods off', ['Delete', 'Backspace'], hasGoods, ({ open }) => deleteGoods(open)),
   command('select-all', 'Edit', 'Select all goods of this level', ['Mod+A'], hasBay, ({ open }) =>
@@ -153,13 +180,23 @@ export const COMMANDS: readonly Command[] = [
   // ------------------------------------------------------------ rack
   command('new-run', 'Rack', 'New run of bays…', [], always, ({ shell }) => shell.ask({ kind: 'new-run' })),
   command('add-bay', 'Rack', 'Add an empty bay to the right', [], hasBay, ({ open }) => addBayAfter(open)),
+  command('add-bays', 'Rack', 'Add several bays, or by a template…', [], hasRun, ({ shell }) => shell.ask({ kind: 'add-bays' })),
+  command('keep-template', 'Rack', 'Keep this bay as a template…', ['T'], hasBay, ({ shell }) => shell.ask({ kind: 'keep-template' })),
   command('duplicate-bay', 'Rack', 'Duplicate this bay', ['Mod+Shift+D'], hasBay, ({ open }) => duplicateBayHere(open)),
   command('remove-bay', 'Rack', 'Remove this bay', [], hasBay, ({ open }) => removeBayHere(open)),
+  command('bay-left', 'Rack', 'Move this bay left in its run', ['Alt+Shift+ArrowLeft'], still, (at) => moveBayHere(at, -1)),
+  command('bay-right', 'Rack', 'Move this bay right in its run', ['Alt+Shift+ArrowRight'], still, (at) => moveBayHere(at, 1)),
   command('add-level', 'Rack', 'Add a level on top', [], hasBay, ({ open }) => addLevelOnTop(open)),
   command('duplicate-level', 'Rack', 'Duplicate this level on top', [], hasLevel, ({ open }) => duplicateLevelHere(open)),
   command('remove-level', 'Rack', 'Remove this level', [], hasLevel, ({ open }) => removeLevelHere(open)),
   command('raise-level', 'Rack', 'Raise this level by one hole', ['Alt+ArrowUp'], stillOnLevel, ({ open }) => shiftLevelHere(open, 1)),
   command('lower-level', 'Rack', 'Lower this level by one hole', ['Alt+ArrowDown'], stillOnLevel, ({ open }) => shiftLevelHere(open, -1)),
+  command('swap-level-up', 'Rack', 'Swap this level with the one above', ['Alt+Shift+ArrowUp'], stillOnLevel, ({ open }) =>
+    swapLevelHere(open, 1),
+  ),
+  command('swap-level-down', 'Rack', 'Swap this level with the one below', ['Alt+Shift+ArrowDown'], stillOnLevel, ({ open }) =>
+    swapLevelHere(open, -1),
+  ),
   command('fill-run', 'Rack', 'Give other bays this bay’s goods or levels…', [], hasBay, ({ shell }) => shell.ask({ kind: 'fill-run' })),
   command('bay-form', 'Rack', 'Bay: clear entry and notice', [], hasBay, ({ open }) => open.openTask('bay', open.bay?.id ?? '')),
   command('level-form', 'Rack', 'Level: height, beams, locks and deck', [], hasLevel, ({ open }) =>
@@ -175,6 +212,10 @@ export const COMMANDS: readonly Command[] = [
     ({ open }) => open.run !== null,
     ({ open }) => open.openTask('run', open.run?.id ?? ''),
   ),
+  command('duplicate-run', 'Rack', 'Duplicate this run', [], hasRun, ({ open }) => open.run && copyRun(open, open.run)),
+  command('run-up', 'Rack', 'Move this run up in the site', [], hasRun, ({ open }) => open.run && shiftRun(open, open.run, -1)),
+  command('run-down', 'Rack', 'Move this run down in the site', [], hasRun, ({ open }) => open.run && shiftRun(open, open.run, 1)),
+  command('remove-run', 'Rack', 'Remove this run', [], hasRun, ({ open }) => open.run && removeRunFrom(open, open.run)),
 
   // ------------------------------------------------------------ go to
   command('find', 'Go to', 'Find a bay or goods by name…', ['Mod+F'], always, ({ shell }) => shell.ask({ kind: 'find' })),
@@ -197,6 +238,10 @@ export const COMMANDS: readonly Command[] = [
   screen('run', 'Run elevation with frame loads'),
   screen('layout', 'Layout of runs and bays'),
   screen('libraries', 'Libraries: goods, notices, ratings', ['Mod+L']),
+  command('templates', 'Go to', 'Bay templates', [], always, ({ shell, open }) => {
+    shell.show('libraries');
+    open.openTask('bayTemplate', '');
+  }),
   screen('rules', 'Rules'),
   screen('visits', 'Visits: rounds, damage, open actions'),
   screen('records', 'Records: frozen checks and visits'),
@@ -219,6 +264,10 @@ export const COMMANDS: readonly Command[] = [
   // ------------------------------------------------------------ help
   command('show-help', 'Help', 'Help, cautions and about', ['F1'], always, ({ shell }) => shell.show('help')),
 ];
+
+function moveBayHere({ open }: Surroundings, by: 1 | -1): void {
+  if (open.run && open.bay) shiftBay(open, open.run, open.bay, by);
+}
 
 function openFrame(open: OpenSite, side: 0 | 1): void {
   const { run, bay } = open;
@@ -262,13 +311,15 @@ export const isForDrawing = (chord: string): boolean => /^(Shift\+|Alt\+)*(\w|Ar
 export function commandFor(
   event: KeyPress,
   at: Surroundings,
-  focus: { inField: boolean; inDrawing: boolean },
+  focus: { inField: boolean; inDrawing: boolean; textMarked?: boolean },
   mac: boolean,
 ): Command | null {
   for (const one of COMMANDS) {
     const chord = one.keys.find((key) => pressed(event, key, mac));
     if (chord === undefined || !one.when(at)) continue;
     if (isForDrawing(chord) && !focus.inDrawing) continue;
+    // Text that is marked on the page is copied as text, unless goods are chosen.
+    if (focus.textMarked && chord === 'Mod+C' && !hasGoods(at)) continue;
     if (focus.inField && KEPT_BY_FIELDS.includes(chord)) continue;
     return one;
   }
@@ -283,6 +334,7 @@ const KEPT_BY_FIELDS: readonly string[] = [
   'Mod+C',
   'Mod+X',
   'Mod+V',
+  'Mod+Shift+V',
   'Mod+A',
   'Delete',
   'Backspace',
