@@ -21,8 +21,8 @@ import {
   removeRun,
   swapLevels,
 } from '../src-core/site/edits';
+import { holesOf, nextHole } from '../src-core/site/holes';
 import { bayByPlan, evenPlan, frameByPlan, planOfBay, runByPlan, type BayPlan } from '../src-core/site/new-site';
-import { onHolePitch } from '../src-core/site/placing';
 import type { Bay, Frame, Id, Level, LoadNotice, Run, Site } from '../src-core/site/site';
 import { formatQuantity } from '../src-core/units/format';
 import { lengthOf } from '../src-core/units/quantity';
@@ -232,15 +232,12 @@ export function removeLevelHere(open: OpenSite): void {
   open.say(`Level ${number} of bay ${bay.name} deleted with its goods. Undo brings it back.`);
 }
 
-/** Where the holes of the uprights are not known: the commonest pitch in Europe, mm (common practice, no source). */
-const HOLE_PITCH = 50;
-
-/** The chosen level one hole up (+1) or down (−1), onto the pitch counted from the floor; it never passes a neighbour. */
+/** The chosen level one hole up (+1) or down (−1), by the holes of the bay's frames; it never passes a neighbour. */
 export function shiftLevelHere(open: OpenSite, by: 1 | -1): void {
-  const { bay, level } = open;
-  if (bay === null || level === null) return;
+  const { run, bay, level } = open;
+  if (run === null || bay === null || level === null) return;
   const index = bay.levels.indexOf(level);
-  const heightMm = onHolePitch(level.heightMm + by * HOLE_PITCH, HOLE_PITCH);
+  const heightMm = nextHole(level.heightMm, holesOf(open.site, run, run.bays.indexOf(bay)).pitch, by);
   const next = bay.levels[index + by]?.heightMm ?? (by > 0 ? Infinity : 0);
   if (by > 0 ? heightMm >= next : heightMm <= next)
     return open.say(
