@@ -8,7 +8,7 @@ import { dirname, join, relative, resolve } from 'node:path';
 import { afterAll, expect, test } from 'vitest';
 
 const top = resolve(import.meta.dirname, '..');
-const CORE_ORDER = ['units', 'statics', 'goods', 'checks', 'site', 'audit', 'visit', 'words', 'paper'];
+const CORE_ORDER = ['units', 'statics', 'goods', 'checks', 'site', 'audit', 'visit', 'package', 'words', 'paper'];
 
 interface Import {
   readonly file: string;
