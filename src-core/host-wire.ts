@@ -3,6 +3,7 @@
  * arguments, one plain answer. What comes from the page is checked here before the host sees it.
  */
 import type { Host, HostErrorCode, HostFailure, Preferences } from './host';
+import { IF_VISIT_DIFFERS } from './package/join';
 import { isId } from './site/fields';
 
 export type HostMethod = keyof Host;
@@ -16,6 +17,9 @@ export const KEY_HEADER = 'x-tallybeam-key';
 export const KEY_IN_ADDRESS = '#key=';
 /** Over HTTP: an id that the page makes each time it is loaded, so that each load has a journal of its own. */
 export const TAB_HEADER = 'x-tallybeam-tab';
+
+/** Bytes of a package that are carried at once: a multiple of three, so that pieces of base64 end where bytes do. */
+export const PACKAGE_PIECE = 6 * 1024 * 1024;
 
 const LONGEST_NAME = 200;
 
@@ -40,6 +44,11 @@ const optional =
   (value) =>
     value === undefined || value === null || check(value);
 const flag: Check = (value) => typeof value === 'boolean';
+const whole: Check = (value) => typeof value === 'number' && Number.isSafeInteger(value) && value >= 0;
+const chainId: Check = (value) => typeof value === 'string' && /^[0-9a-f]{16}$/.test(value);
+const takePackage: Check = (value) =>
+  object({ as: (as) => as === 'copy' })(value) ||
+  object({ as: (as) => as === 'join', ifVisitDiffers: (choice) => IF_VISIT_DIFFERS.some((known) => known === choice) })(value);
 
 /** A plain object with these keys and no other; with `partly`, not all of them. */
 const object =
@@ -86,8 +95,14 @@ const ARGUMENTS: Readonly<Record<HostMethod, readonly Check[]>> = {
   addPhoto: [object({ siteId, photoId: siteId, base64: siteText })],
   readPhoto: [siteId, text(LONGEST_NAME)],
   listRecords: [siteId],
-  readRecord: [siteId, (value) => Number.isInteger(value)],
+  readRecord: [siteId, whole, optional(chainId)],
   appendRecord: [object({ siteId, draft: anyObject, contents: siteText })],
+  makePackage: [siteId, flag],
+  readPackage: [whole],
+  sendPackage: [whole, text(PACKAGE_PIECE * 2)],
+  lookAtPackage: [],
+  takePackage: [takePackage],
+  dropPackage: [],
   readPreferences: [],
   savePreferences: [object(PREFERENCES, true)],
   savePdf: [text(LONGEST_NAME)],
@@ -150,8 +165,14 @@ export function hostOver(carry: (method: HostMethod, given: readonly unknown[]) 
     addPhoto: (request) => ask('addPhoto', request),
     readPhoto: (siteId, file) => ask('readPhoto', siteId, file),
     listRecords: (siteId) => ask('listRecords', siteId),
-    readRecord: (siteId, number) => ask('readRecord', siteId, number),
+    readRecord: (siteId, number, chain = null) => ask('readRecord', siteId, number, chain),
     appendRecord: (request) => ask('appendRecord', request),
+    makePackage: (siteId, withPhotos) => ask('makePackage', siteId, withPhotos),
+    readPackage: (from) => ask('readPackage', from),
+    sendPackage: (from, base64) => nothing('sendPackage', from, base64),
+    lookAtPackage: () => ask('lookAtPackage'),
+    takePackage: (how) => ask('takePackage', how),
+    dropPackage: () => nothing('dropPackage'),
     readPreferences: () => ask('readPreferences'),
     savePreferences: (change) => ask('savePreferences', change),
     savePdf: inWindow ? (name) => ask('savePdf', name) : null,

@@ -4,6 +4,7 @@
  *
  * The page knows sites by id, never by path. Every method may reject with a `HostError`.
  */
+import type { IfVisitDiffers } from './package/join';
 import type { FrozenRecord, RecordDraft } from './visit/records';
 
 /** One site in the list. `problem` is a sentence if its file cannot be read. */
@@ -42,6 +43,8 @@ export interface RecoveredEdits {
   readonly baseRevision: string | null;
   /** Journal lines that were damaged and could not be used. */
   readonly damagedLines: number;
+  /** Made in another page of this run of the program, which may still be open, or in this one before it was loaded again. */
+  readonly otherPage: boolean;
 }
 
 export interface SaveRequest {
@@ -118,6 +121,52 @@ export interface RecordsOnDisk {
   /** Number of the first one that was altered, and a sentence; null where all are as they were written. */
   readonly altered: number | null;
   readonly message: string | null;
+  /** Chains that came in packages and went on apart from the site's own; each is verified by itself. */
+  readonly others: readonly OtherRecords[];
+}
+
+export interface OtherRecords extends Omit<RecordsOnDisk, 'others'> {
+  /** Names the chain where one of its records is read. */
+  readonly chain: string;
+}
+
+export interface PackageCounts {
+  readonly visits: number;
+  readonly photos: number;
+  /** Photos that visits name and that are not with them. */
+  readonly photosMissing: number;
+  readonly records: number;
+}
+
+/** A package that the host keeps ready for the page: a site's file with everything that is kept beside it. */
+export interface MadePackage extends PackageCounts {
+  readonly bytes: number;
+}
+
+/** What a package holds, and what bringing it in would do. Everything in it was read and verified. */
+export interface PackageLook extends PackageCounts {
+  readonly siteName: string;
+  /** ISO time. */
+  readonly madeAt: string;
+  /** The site of the same id that is here already; null where there is none. */
+  readonly here: {
+    readonly name: string;
+    /** What would become of the parts of the package, a sentence each. */
+    readonly steps: readonly string[];
+    /** Visits that are here in another state: what becomes of them is asked. */
+    readonly visitsDiffer: readonly string[];
+    /** Why they cannot be brought into the site here; null where they can. */
+    readonly problem: string | null;
+  } | null;
+}
+
+export type TakePackage = { readonly as: 'copy' } | { readonly as: 'join'; readonly ifVisitDiffers: IfVisitDiffers };
+
+export interface TakenPackage {
+  /** Id of the site that holds it now. */
+  readonly id: string;
+  /** What was done, a sentence each. */
+  readonly done: readonly string[];
 }
 
 export interface Preferences {
@@ -166,9 +215,25 @@ export interface Host {
   readPhoto(siteId: string, file: string): Promise<string>;
   /** Every record, verified against alteration. */
   listRecords(siteId: string): Promise<RecordsOnDisk>;
-  readRecord(siteId: string, number: number): Promise<string>;
+  /** @param chain one of the `others`; the site's own if it is left out */
+  readRecord(siteId: string, number: number, chain?: string | null): Promise<string>;
   /** Seals a record behind the last one; it can no longer be changed unnoticed. */
   appendRecord(request: AppendRecord): Promise<FrozenRecord>;
+  /**
+   * Puts a site and all that is kept beside it into one package, as they are on the disk. The page reads
+   * it piece by piece; one package at a time is kept for a page.
+   */
+  makePackage(siteId: string, withPhotos: boolean): Promise<MadePackage>;
+  /** The bytes from there on in base64, at most `PACKAGE_PIECE` of them. */
+  readPackage(from: number): Promise<string>;
+  /** The next piece of a package from elsewhere; `from` 0 begins a new one. */
+  sendPackage(from: number, base64: string): Promise<void>;
+  /** Reads and verifies the whole package that was sent. */
+  lookAtPackage(): Promise<PackageLook>;
+  /** Brings in the package that was looked at, whole or not at all. */
+  takePackage(how: TakePackage): Promise<TakenPackage>;
+  /** The package that was made or sent is not needed any more. */
+  dropPackage(): Promise<void>;
   readPreferences(): Promise<Preferences>;
   savePreferences(change: Partial<Preferences>): Promise<Preferences>;
   /** Saves the page as PDF; null where the host has none and the page's own print is used. */

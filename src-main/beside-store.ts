@@ -6,15 +6,20 @@
  *   beside/<site>/follow-up.json
  *   beside/<site>/photos/<photo>.jpg
  *   beside/<site>/records/chain.jsonl, head.json, 000001.json …
+ *   beside/<site>/records-of/<chain>/…   chains that came in packages and went on apart
+ *   beside/<site>/put-aside/…            what something else took the place of
  */
 import { dirname, join } from 'node:path';
 import type { PhotoRequest, KeptText, SaveFollowUp, SaveVisit } from '../src-core/host';
+import type { PICTURE_ENDS } from '../src-core/package/parts';
+import { isPhotoName } from '../src-core/package/parts';
 import { readFollowUp, writeFollowUp } from '../src-core/visit/follow-up';
 import type { DocumentReading } from '../src-core/visit/read-document';
 import { readVisit, writeVisit } from '../src-core/visit/read-visit';
 import { sentences, revisionOf } from './checked-site';
 import { checkedId, type Folders } from './file-names';
 import { systemCode, type FsPort } from './fs-port';
+import { withLock } from './lock';
 import { HostError, telling } from './trouble';
 import { Turns } from './turns';
 import { renameOver, writeBeside } from './whole-file';
@@ -24,20 +29,37 @@ export const PHOTO_BYTES = 24 * 1024 * 1024;
 const DOCUMENT_END = '.json';
 
 /** First bytes of the kinds of picture that the page can show, and the end of their names. */
-const PICTURES: readonly (readonly [end: string, starts: readonly number[]])[] = [
+const PICTURES: readonly (readonly [end: (typeof PICTURE_ENDS)[number], starts: readonly number[]])[] = [
   ['jpg', [0xff, 0xd8, 0xff]],
   ['png', [0x89, 0x50, 0x4e, 0x47]],
   ['webp', [0x52, 0x49, 0x46, 0x46]],
 ];
 
+/** The end of a picture's name as its first bytes tell it; null if they are no picture's. */
+export const pictureEnd = (bytes: Uint8Array): (typeof PICTURE_ENDS)[number] | null =>
+  PICTURES.find(([, starts]) => starts.every((byte, i) => bytes[i] === byte))?.[0] ?? null;
+
 export class BesideStore {
   readonly #fs: FsPort;
   readonly #folder: string;
+  readonly #locks: string;
   readonly #turns = new Turns();
 
   constructor(fs: FsPort, folders: Folders) {
     this.#fs = fs;
     this.#folder = folders.beside;
+    this.#locks = folders.locks;
+  }
+
+  /** Changes beside one site, one after another in this program. */
+  turn<T>(siteId: string, task: () => Promise<T>): Promise<T> {
+    return this.#turns.take(checkedId(siteId), task);
+  }
+
+  /** For changes that no other program may make at the same time. */
+  async locked<T>(siteId: string, task: () => Promise<T>): Promise<T> {
+    await this.#fs.makeFolder(this.#locks);
+    return withLock(this.#fs, join(this.#locks, `${checkedId(siteId)}.beside.lock`), task);
   }
 
   folderOf(siteId: string, ...parts: readonly string[]): string {
@@ -71,6 +93,7 @@ export class BesideStore {
       if (visit.id !== visitId || visit.siteId !== siteId)
         throw new HostError('bad-request', `The visit was not saved: it says it is ${visit.id} of site ${visit.siteId}.`);
       return this.#replace(
+        siteId,
         this.folderOf(siteId, 'visits', checkedId(visitId) + DOCUMENT_END),
         writeVisit(visit),
         baseRevision,
@@ -83,7 +106,7 @@ export class BesideStore {
     return telling('The follow-up was not saved', () => {
       const book = checked('The follow-up was not saved', body, readFollowUp);
       if (book.siteId !== siteId) throw new HostError('bad-request', `The follow-up was not saved: it says it is of site ${book.siteId}.`);
-      return this.#replace(this.#followUpPath(siteId), writeFollowUp(book), baseRevision, 'The follow-up');
+      return this.#replace(siteId, this.#followUpPath(siteId), writeFollowUp(book), baseRevision, 'The follow-up');
     });
   }
 
@@ -96,8 +119,8 @@ export class BesideStore {
           'too-large',
           `The photo was not kept: it is larger than ${PHOTO_BYTES / 1024 / 1024} MiB. Make it smaller and attach it again.`,
         );
-      const end = PICTURES.find(([, starts]) => starts.every((byte, i) => bytes[i] === byte))?.[0];
-      if (end === undefined)
+      const end = pictureEnd(bytes);
+      if (end === null)
         throw new HostError(
           'bad-request',
           'The photo was not kept: it is no JPEG, PNG or WebP picture. Save it as one and attach it again.',
@@ -106,6 +129,16 @@ export class BesideStore {
       await this.write(this.folderOf(siteId, 'photos', file), bytes);
       return { file };
     });
+  }
+
+  /** Names of the photos that are kept beside the site. */
+  async photoNames(siteId: string): Promise<readonly string[]> {
+    return (await this.#namesIn(this.folderOf(siteId, 'photos'))).filter(isPhotoName).toSorted();
+  }
+
+  /** Whether anything is kept beside a site of that id, even if the site itself is gone. */
+  async keepsAnything(siteId: string): Promise<boolean> {
+    return (await this.#namesIn(this.folderOf(siteId))).length > 0;
   }
 
   /** @returns the photo's bytes in base64 */
@@ -146,6 +179,11 @@ export class BesideStore {
     await this.#fs.syncFolder(dirname(path));
   }
 
+  /** Names of the folders in `records-of`. */
+  otherChains(siteId: string): Promise<readonly string[]> {
+    return this.#namesIn(this.folderOf(siteId, 'records-of'));
+  }
+
   /** The folder and those above it, as far up as that of everything beside the sites. */
   async makeFolders(folder: string): Promise<void> {
     const below = folder
@@ -180,8 +218,8 @@ export class BesideStore {
     return { id, text, revision: revisionOf(bytes), problem: problemOf(text, read) };
   }
 
-  #replace(path: string, text: string, baseRevision: string | null, what: string): Promise<{ readonly revision: string }> {
-    return this.#turns.take(path, async () => {
+  #replace(siteId: string, path: string, text: string, baseRevision: string | null, what: string): Promise<{ readonly revision: string }> {
+    return this.turn(siteId, async () => {
       const present = await this.read(path);
       const revision = present === null ? null : revisionOf(present);
       const bytes = new TextEncoder().encode(text);

@@ -28,6 +28,8 @@ export interface Folders {
   readonly journal: string;
   readonly leftOut: string;
   readonly locks: string;
+  /** What is being brought in, until it is in its places. */
+  readonly incoming: string;
   /** Visits, photos and records, a folder for each site. */
   readonly beside: string;
 }
@@ -40,6 +42,7 @@ export const foldersIn = (sites: string): Folders => ({
   journal: join(sites, 'journal'),
   leftOut: join(sites, 'journal', 'left-out'),
   locks: join(sites, 'locks'),
+  incoming: join(sites, 'incoming'),
   beside: join(sites, 'beside'),
 });
 

@@ -138,7 +138,9 @@ export class Journal {
       if (latest === null) return null;
       const { body, editedAt, edits, base, damagedLines } = latest.state;
       this.#offered.set(id, latest);
-      return { body, editedAt, edits, baseRevision: base, damagedLines };
+      const otherPage =
+        latest.name.includes(`.${thisMaker.machine}-${thisMaker.pid}-`) && !latest.name.includes(`-${this.#options.session}-`);
+      return { body, editedAt, edits, baseRevision: base, damagedLines, otherPage };
     });
   }
 

@@ -9,8 +9,11 @@ import { writeSite } from '../src-core/site/write';
 import { BesideStore } from './beside-store';
 import { foldersIn } from './file-names';
 import { nodeFs, type FsPort } from './fs-port';
+import { Incoming } from './incoming';
 import { Journal } from './journal';
 import { JournalFiles, type JournalPlace } from './journal-files';
+import { PackageDesk } from './package-desk';
+import { PackageStore } from './package-store';
 import { RecordStore } from './record-store';
 import type { Settings } from './settings';
 import { SiteStore } from './site-store';
@@ -46,19 +49,32 @@ const JOURNAL_LIMITS: TimeLimits = { quick: 500, bytes: 900 };
 const READY_WITHIN = 3000;
 const SITES_FOLDER = 'sitesFolder';
 
+/** The sites of one folder with what is kept beside them. */
+interface Kept {
+  readonly store: SiteStore;
+  readonly beside: BesideStore;
+  readonly records: RecordStore;
+  readonly incoming: Incoming;
+  readonly packages: PackageStore;
+}
+
 /** One store for all pages of this run. */
 export class Machine {
   readonly #options: MachineOptions;
   readonly #fs: FsPort;
   readonly #now: () => Date;
   readonly #notices: string[] = [];
-  #store: SiteStore;
+  #kept: Kept;
 
   private constructor(options: MachineOptions, folder: string) {
     this.#options = options;
     this.#fs = options.fs ?? nodeFs;
     this.#now = options.now ?? (() => new Date());
-    this.#store = this.#storeIn(folder);
+    this.#kept = this.#keptIn(folder);
+  }
+
+  get #store(): SiteStore {
+    return this.#kept.store;
   }
 
   /** Makes ready: the folder, what an earlier run left in it, and sites of which only the journal is left. */
@@ -80,7 +96,7 @@ export class Machine {
   /** Goes on with another folder and remembers it. */
   async useFolder(folder: string): Promise<void> {
     this.#options.settings.set({ [SITES_FOLDER]: folder });
-    this.#store = this.#storeIn(folder);
+    this.#kept = this.#keptIn(folder);
     await this.#makeReady();
   }
 
@@ -95,6 +111,7 @@ export class Machine {
       return there;
     };
     const { settings } = this.#options;
+    const desk = new PackageDesk(() => this.#kept.packages);
     return {
       about: async () => this.#about([...journals.values()].flatMap(({ notices }) => notices)),
       listSites: () => this.#store.list(),
@@ -122,37 +139,45 @@ export class Machine {
       readPreferences: async () => settings.preferences(),
       savePreferences: async (change) => settings.savePreferences(change),
       ...window,
-      close: () => journals.forEach((one) => one.close()),
+      makePackage: (siteId, withPhotos) => desk.make(siteId, withPhotos),
+      readPackage: (from) => desk.read(from),
+      sendPackage: (from, base64) => desk.send(from, base64),
+      lookAtPackage: () => desk.look(),
+      takePackage: (how) => desk.take(how),
+      dropPackage: async () => desk.drop(),
+      close: () => {
+        journals.forEach((one) => one.close());
+        desk.drop();
+      },
     };
   }
 
-  /** What is kept beside the sites of the folder that is in use when it is asked for. */
+  /** What is kept beside the sites of the folder that is in use when it is asked for; all pages take turns at it. */
   #beside() {
-    const { version: program } = this.#options;
-    let made: { store: SiteStore; beside: BesideStore; records: RecordStore } | null = null;
-    const kept = () => {
-      if (made?.store === this.#store) return made;
-      const fs = withTimeLimit(this.#fs, this.#options.limits ?? TIME_LIMITS);
-      const beside = new BesideStore(fs, this.#store.folders);
-      made = { store: this.#store, beside, records: new RecordStore({ fs, beside, program, now: this.#now }) };
-      return made;
-    };
     return {
-      listVisits: (siteId) => kept().beside.visits(siteId),
-      saveVisit: (request) => kept().beside.saveVisit(request),
-      readFollowUp: (siteId) => kept().beside.followUp(siteId),
-      saveFollowUp: (request) => kept().beside.saveFollowUp(request),
-      addPhoto: (request) => kept().beside.addPhoto(request),
-      readPhoto: (siteId, file) => kept().beside.readPhoto(siteId, file),
-      listRecords: (siteId) => kept().records.list(siteId),
-      readRecord: (siteId, number) => kept().records.contents(siteId, number),
-      appendRecord: (request) => kept().records.append(request),
+      listVisits: (siteId) => this.#kept.beside.visits(siteId),
+      saveVisit: (request) => this.#kept.beside.saveVisit(request),
+      readFollowUp: (siteId) => this.#kept.beside.followUp(siteId),
+      saveFollowUp: (request) => this.#kept.beside.saveFollowUp(request),
+      addPhoto: (request) => this.#kept.beside.addPhoto(request),
+      readPhoto: (siteId, file) => this.#kept.beside.readPhoto(siteId, file),
+      listRecords: (siteId) => this.#kept.records.list(siteId),
+      readRecord: (siteId, number, chain) => this.#kept.records.contents(siteId, number, chain),
+      appendRecord: (request) => this.#kept.records.append(request),
     } satisfies Partial<Host>;
   }
 
-  #storeIn(folder: string): SiteStore {
-    const fs = withTimeLimit(this.#fs, this.#options.limits ?? TIME_LIMITS);
-    return new SiteStore({ fs, folder, program: this.#options.version, now: this.#now });
+  #keptIn(folder: string): Kept {
+    const { version: program, limits = TIME_LIMITS } = this.#options;
+    const fs = withTimeLimit(this.#fs, limits);
+    const now = this.#now;
+    const store = new SiteStore({ fs, folder, program, now });
+    // Waits of its own: a site's file that is slow must not keep visits from being saved.
+    const besideFs = withTimeLimit(this.#fs, limits);
+    const beside = new BesideStore(besideFs, store.folders);
+    const records = new RecordStore({ fs: besideFs, beside, program, now });
+    const incoming = new Incoming(besideFs, store.folders);
+    return { store, beside, records, incoming, packages: new PackageStore({ store, beside, records, incoming, program, now }) };
   }
 
   #journalPlaces(store: SiteStore): readonly JournalPlace[] {
@@ -168,7 +193,13 @@ export class Machine {
   async #makeReady(): Promise<void> {
     await mkdir(join(this.#options.ownFolder, 'journal'), { recursive: true });
     const fs = withTimeLimit(this.#fs, this.#options.limits ?? TIME_LIMITS);
-    const ready = sweep(fs, foldersIn(this.sitesFolder), this.#now()).then(() => this.#putBackLost());
+    const { incoming } = this.#kept;
+    const ready = sweep(fs, foldersIn(this.sitesFolder), this.#now())
+      .then(() => incoming.finish(this.#now()))
+      .then((told) => void this.#notices.push(...told))
+      // What could not be finished now is finished before the next package is brought in.
+      .catch(() => undefined)
+      .then(() => this.#putBackLost());
     // A folder that does not answer must not keep the program from coming up and saying so.
     await atMost(READY_WITHIN, ready);
   }

@@ -133,6 +133,17 @@ export class SiteStore {
     }
   }
 
+  /** The file of a site that is not here yet, as `save` would write it. @throws HostError where it cannot be saved */
+  fileOf(site: Site): Uint8Array {
+    const { body } = checkBody(writeSite(site));
+    return this.#fileOf(body, this.#now().toISOString());
+  }
+
+  /** Whether a file of that site is here, readable or not. */
+  async has(id: string): Promise<boolean> {
+    return (await this.#present(id)) !== null;
+  }
+
   generations(id: string): Promise<readonly Generation[]> {
     return telling('The earlier states could not be listed', () => listEarlier(this.#fs, this.folders, id));
   }
@@ -142,6 +153,10 @@ export class SiteStore {
     const reading = checkBytes(bytes);
     if (reading.ok) return reading.text;
     throw new HostError(reading.code, `This earlier state cannot be opened; its file was left as it is.\n${sentences(reading.problems)}`);
+  }
+
+  #fileOf(body: string, savedAt: string): Uint8Array {
+    return new TextEncoder().encode(writeSiteFile(body, { program: this.#program, savedAt }, sha256));
   }
 
   #pathOf(id: string): string {
@@ -178,7 +193,7 @@ export class SiteStore {
     const present = await this.#present(id);
     this.#compare(id, present, baseRevision);
     const savedAt = this.#now().toISOString();
-    const bytes = new TextEncoder().encode(writeSiteFile(body, { program: this.#program, savedAt }, sha256));
+    const bytes = this.#fileOf(body, savedAt);
     const revision = revisionOf(bytes);
     const temp = await writeBeside(this.#fs, path, bytes);
     try {

@@ -20,6 +20,7 @@ export async function sweep(fs: FsPort, folders: Folders, now: Date): Promise<vo
     folders.setAside,
     folders.journal,
     folders.locks,
+    folders.incoming,
     ...ids.map((id) => join(folders.earlier, id)),
     ...beside.flatMap((own) => [own, ...['visits', 'photos', 'records'].map((part) => join(own, part))]),
   ];

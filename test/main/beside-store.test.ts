@@ -152,7 +152,7 @@ describe('records', () => {
       [3, 'Check 3', '0.1.0', '2026'],
     ]);
     expect(await recordsIn(folder).contents('s1', 2)).toBe(request(2).contents);
-    expect(await recordsIn(newFolder()).list('s1')).toEqual({ records: [], altered: null, message: null });
+    expect(await recordsIn(newFolder()).list('s1')).toEqual({ records: [], altered: null, message: null, others: [] });
   });
 
   test('one edited byte of any of its files is told with the record', async () => {

@@ -6,6 +6,7 @@ import { describe, expect, test } from 'vitest';
 import type { Host, HostFailure } from '../../src-core/host';
 import { HOST_METHODS } from '../../src-core/host-wire';
 import { bodyOf, numbered, numberIn } from '../storage/make';
+import { fill, packageOf, PHOTO, recordOf, send } from './make-package';
 
 export interface Carried {
   readonly host: Host;
@@ -120,6 +121,52 @@ export function hostContract(name: string, inWindow: boolean, carry: () => Promi
         code: 'unreadable',
         message: expect.stringContaining('not JSON') as string,
       });
+    });
+
+    test('hands a site over with its visits, photos and records, whole and in pieces', async () => {
+      const { host, nextPage } = await carry();
+      // Larger than one piece of a package.
+      const photo = Buffer.concat([PHOTO, Buffer.alloc(8 * 1024 * 1024, 0x5a)]);
+      await fill(host, photo);
+      expect(await host.makePackage('s', true)).toMatchObject({ visits: 1, photos: 1, photosMissing: 0, records: 2 });
+      const file = await packageOf(host);
+      expect(file.length).toBeGreaterThan(photo.length);
+      expect(await host.dropPackage()).toBeUndefined();
+      expect((await failure(host.readPackage(0))).code).toBe('bad-request');
+
+      const next = await nextPage();
+      const look = await send(next, file);
+      expect(look).toMatchObject({ siteName: 'Test depot', visits: 1, photos: 1, photosMissing: 0, records: 2 });
+      expect(look.here).toMatchObject({ name: 'Test depot', visitsDiffer: [], problem: null });
+      const { id, done } = await next.takePackage({ as: 'copy' });
+      expect(id).not.toBe('s');
+      expect(done).toContain('2 records are added.');
+      expect((await next.listVisits(id)).map((visit) => [visit.id, visit.problem])).toEqual([['v1', null]]);
+      expect(Buffer.from(await next.readPhoto(id, 'p1.jpg'), 'base64').equals(photo)).toBe(true);
+      const { records, altered, others } = await next.listRecords(id);
+      expect([records.length, altered, others]).toEqual([2, null, []]);
+      expect(await next.readRecord(id, 2)).toBe(recordOf(2).contents);
+      expect((await next.readFollowUp(id))?.text).toContain('E. Engineer');
+      // The same once more, into the site that is here: everything is there already.
+      await send(next, file);
+      const again = await next.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' });
+      expect(again).toEqual({
+        id: 's',
+        done: ['1 visit is here already, the same.', '2 records are here already, verified and the same.'],
+      });
+    }, 60_000);
+
+    test('refuses pieces of a package that do not follow each other, and what is no package', async () => {
+      const { host } = await carry();
+      await host.sendPackage(0, 'AAAA');
+      expect((await failure(host.sendPackage(7, 'AAAA'))).code).toBe('bad-request');
+      expect(await failure(host.lookAtPackage())).toMatchObject({
+        code: 'altered',
+        message: expect.stringContaining('not brought in') as string,
+      });
+      expect((await failure(host.takePackage({ as: 'copy' }))).code).toBe('bad-request');
+      for (const wrong of [{ as: 'merge' }, { as: 'join' }, { as: 'copy', id: '../x' }, null])
+        expect((await failure(host.takePackage(wrong as never))).code, JSON.stringify(wrong)).toBe('bad-request');
     });
 
     test('adds the demo once', async () => {

@@ -49,7 +49,7 @@ export function memoryBeside(call: (name: string) => Promise<void>) {
     },
     listRecords: async () => {
       await call('listRecords');
-      return { records: [...records], altered: null, message: null };
+      return { records: [...records], altered: null, message: null, others: [] };
     },
     readRecord: async (_, number) => {
       await call('readRecord');

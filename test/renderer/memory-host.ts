@@ -1,5 +1,5 @@
 /** A host that keeps sites in memory, with revisions and journal as the real ones keep them, and can be made to fail. */
-import type { Host, HostFailure, JournalRequest, Preferences, SiteOnDisk } from '../../src-core/host';
+import type { Host, HostFailure, JournalRequest, PackageLook, Preferences, SiteOnDisk, TakePackage } from '../../src-core/host';
 import { memoryBeside } from './memory-beside';
 
 interface Kept {
@@ -70,6 +70,7 @@ export class MemoryHost implements Host {
           edits: journal.map((one) => one.edit),
           baseRevision: last.baseRevision,
           damagedLines: 0,
+          otherPage: false,
         }
       : null;
     return { id, text: body, revision: String(revision), savedAt: SAVED_AT, recovered };
@@ -111,6 +112,35 @@ export class MemoryHost implements Host {
   async clearJournal(id: string) {
     await this.#call('clearJournal');
     this.#site(id).journal = [];
+  }
+  /** The bytes of the package that was sent last, or is made next. */
+  packed = new Uint8Array();
+  look: PackageLook = { siteName: 'Depot', madeAt: SAVED_AT, visits: 1, photos: 0, photosMissing: 0, records: 0, here: null };
+  taken: TakePackage | null = null;
+  async makePackage() {
+    await this.#call('makePackage');
+    return { bytes: this.packed.length, visits: 1, photos: 0, photosMissing: 0, records: 2 };
+  }
+  async readPackage(from: number) {
+    await this.#call('readPackage');
+    return Buffer.from(this.packed.subarray(from, from + 5)).toString('base64');
+  }
+  async sendPackage(from: number, base64: string) {
+    await this.#call('sendPackage');
+    this.packed = Uint8Array.from([...this.packed.subarray(0, from), ...Buffer.from(base64, 'base64')]);
+  }
+  async lookAtPackage() {
+    await this.#call('lookAtPackage');
+    return this.look;
+  }
+  async takePackage(how: TakePackage) {
+    await this.#call('takePackage');
+    this.taken = how;
+    this.kept.set('taken', { body: this.kept.values().next().value?.body ?? '', revision: 1, journal: [] });
+    return { id: 'taken', done: ['1 visit is added.'] };
+  }
+  async dropPackage() {
+    await this.#call('dropPackage');
   }
   async readPreferences() {
     await this.#call('readPreferences');

@@ -108,6 +108,8 @@ describe('after a crash', () => {
       edits: ['Add bay', 'Move pallet'],
       baseRevision: 'r1',
       damagedLines: 0,
+      // Another opening in this very process, as another page of one server is.
+      otherPage: true,
     });
     expect(await journalIn(folder).recovered('other', 'saved')).toBeNull();
   });

@@ -147,7 +147,7 @@ describe('invalid files', () => {
 
   test('of a newer program are told by their version', async () => {
     const folder = newFolder();
-    writeFileSync(join(folder, 's.tallybeam.json'), '{"format":"tallybeam-site","version":2,"program":"3.0.0"}');
+    writeFileSync(join(folder, 's.tallybeam.json'), '{"format":"tallybeam-site","version":99,"program":"3.0.0"}');
     const { code, message } = await failure(storeIn(folder).read('s'));
     expect(code).toBe('newer-version');
     expect(message).toContain('written by Tallybeam 3.0.0');

@@ -29,13 +29,22 @@ const GOOD: Readonly<Record<HostMethod, readonly unknown[]>> = {
   addPhoto: [{ siteId: 'depot', photoId: 'p1', base64: 'AA==' }],
   readPhoto: ['depot', 'p1.jpg'],
   listRecords: ['depot'],
-  readRecord: ['depot', 1],
+  readRecord: ['depot', 1, '0123456789abcdef'],
   appendRecord: [{ siteId: 'depot', draft: {}, contents: '{}' }],
+  makePackage: ['depot', true],
+  readPackage: [0],
+  sendPackage: [0, 'AAAA'],
+  lookAtPackage: [],
+  takePackage: [{ as: 'join', ifVisitDiffers: 'keep-both' }],
+  dropPackage: [],
   readPreferences: [],
   savePreferences: [{ theme: 'dark' }],
   savePdf: ['Depot'],
   chooseSitesFolder: [],
 };
+
+/** These are about the one package that is kept for the page. */
+const WITHOUT_ID: readonly string[] = ['readPackage', 'sendPackage', 'takePackage'] satisfies readonly HostMethod[];
 
 const heard: { method: string; given: readonly unknown[] }[] = [];
 let answer: (method: string) => Promise<unknown> = async (method) => `${method} done`;
@@ -141,7 +150,7 @@ describe.each(HOST_METHODS)('%s', (method) => {
         for (const one of heard) {
           const [first] = one.given;
           const named = typeof first === 'object' && first !== null ? ids.map((id) => (first as Record<string, unknown>)[id]) : [first];
-          if (!['importSite', 'savePdf', 'savePreferences'].includes(method))
+          if (![...WITHOUT_ID, 'importSite', 'savePdf', 'savePreferences'].includes(method))
             for (const id of named) if (id !== undefined) expect(id).toMatch(/^[A-Za-z0-9_-]{1,64}$/);
         }
       }),

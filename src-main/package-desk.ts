@@ -1,0 +1,70 @@
+/** The one package that a page has made or is sending: carried in pieces, so that neither carrier needs it in one message. */
+import type { MadePackage, PackageLook, TakenPackage, TakePackage } from '../src-core/host';
+import { PACKAGE_PIECE } from '../src-core/host-wire';
+import { PACKAGE_BYTES } from '../src-core/package/listing';
+import { contentsOf, type PackageContents } from './package-contents';
+import { readPackage } from './package-file';
+import type { PackageStore } from './package-store';
+import { HostError } from './trouble';
+
+export class PackageDesk {
+  readonly #store: () => PackageStore;
+  #made: Uint8Array | null = null;
+  #pieces: Uint8Array[] = [];
+  #contents: PackageContents | null = null;
+
+  /** @param store that of the folder in use */
+  constructor(store: () => PackageStore) {
+    this.#store = store;
+  }
+
+  async make(siteId: string, withPhotos: boolean): Promise<MadePackage> {
+    this.drop();
+    const { bytes, told } = await this.#store().make(siteId, withPhotos);
+    this.#made = bytes;
+    return told;
+  }
+
+  async read(from: number): Promise<string> {
+    if (this.#made === null) throw gone('export it again');
+    return Buffer.from(this.#made.subarray(from, from + PACKAGE_PIECE)).toString('base64');
+  }
+
+  async send(from: number, base64: string): Promise<void> {
+    if (from === 0) this.drop();
+    const there = this.#pieces.reduce((sum, piece) => sum + piece.length, 0);
+    if (from !== there) throw gone('bring the file in again');
+    const piece = new Uint8Array(Buffer.from(base64, 'base64'));
+    if (there + piece.length > PACKAGE_BYTES)
+      throw new HostError(
+        'too-large',
+        `The file is larger than ${PACKAGE_BYTES / 1024 / 1024} MiB, more than any package. Check that it is the right one.`,
+      );
+    this.#contents = null;
+    this.#pieces.push(piece);
+  }
+
+  async look(): Promise<PackageLook> {
+    if (this.#contents === null) {
+      this.#contents = contentsOf(readPackage(new Uint8Array(Buffer.concat(this.#pieces))));
+      // Its parts are kept now; the file itself may be large.
+      this.#pieces = [];
+    }
+    return this.#store().look(this.#contents);
+  }
+
+  async take(how: TakePackage): Promise<TakenPackage> {
+    if (this.#contents === null) throw gone('bring the file in again');
+    const taken = await this.#store().take(this.#contents, how);
+    this.drop();
+    return taken;
+  }
+
+  drop(): void {
+    this.#made = null;
+    this.#pieces = [];
+    this.#contents = null;
+  }
+}
+
+const gone = (mend: string): HostError => new HostError('bad-request', `The package is not kept here any more: ${mend}.`);
