@@ -69,12 +69,11 @@ export class AuditLink {
     if (site === before) return;
     this.#site = site;
     this.#version += 1;
-    for (const runId of runsTouched(before, site)) this.#touchedAt.set(runId, this.#version);
-    if (this.#worker === null) {
-      this.#auditHere(before, site);
-      return;
-    }
-    this.#worker.postMessage({ kind: 'change', version: this.#version, today: this.today(), change: changeOf(before, site) });
+    const change = changeOf(before, site);
+    const touched = runsTouched(before, site, change);
+    for (const runId of touched) this.#touchedAt.set(runId, this.#version);
+    if (this.#worker === null) this.#auditHere(site, touched);
+    else this.#worker.postMessage({ kind: 'change', version: this.#version, today: this.today(), change });
   }
 
   /** The site as text, written off the page's thread where it is the one last sent. */
@@ -138,11 +137,11 @@ export class AuditLink {
     this.close();
     const site = this.#site;
     if (site === null) return;
-    this.#auditHere(null, site);
+    this.#auditHere(site, runsTouched(null, site));
   }
 
-  #auditHere(before: Site | null, site: Site): void {
-    for (const runId of runsTouched(before, site)) {
+  #auditHere(site: Site, runIds: readonly Id[]): void {
+    for (const runId of runIds) {
       try {
         this.listener.audited(lightRun(auditRun(site, runId, this.today(), this.cache)));
       } catch (error) {

@@ -6,9 +6,9 @@
 import type { BayAudit, FrameAudit, RunAudit } from '../src-core/audit/types';
 import type { Bay, Frame, Id, Run, Site } from '../src-core/site/site';
 
-/** A list by id: its order, and the entries that are new or changed. */
+/** A list by id: its order, null where that stayed, and the entries that are new or changed. */
 interface ListChange<T> {
-  readonly order: readonly Id[];
+  readonly order: readonly Id[] | null;
   readonly changed: readonly T[];
 }
 
@@ -27,11 +27,21 @@ export interface SiteChange {
 }
 
 function listChange<T>(before: readonly T[], after: readonly T[], idOf: (one: T) => Id): ListChange<T> {
+  // An empty list is always told whole: the other side may still hold one that was taken out before.
+  const inOrder =
+    before.length > 0 && before.length === after.length && before.every((one, i) => one === after[i] || idOf(one) === idOf(after[i] as T));
+  // One edit changes a few of a thousand, and then their ids need not be written out and read again.
+  if (inOrder) return { order: null, changed: after.filter((one, i) => one !== before[i]) };
   const known = new Set<T>(before);
   return { order: after.map(idOf), changed: after.filter((one) => !known.has(one)) };
 }
 
 function applyList<T>(before: readonly T[], { order, changed }: ListChange<T>, idOf: (one: T) => Id): readonly T[] {
+  if (changed.length === 0 && order === null) return before;
+  if (order === null) {
+    const instead = new Map(changed.map((one) => [idOf(one), one]));
+    return before.map((one) => instead.get(idOf(one)) ?? one);
+  }
   const byId = new Map([...before, ...changed].map((one) => [idOf(one), one]));
   return order.flatMap((id) => byId.get(id) ?? []);
 }
@@ -103,10 +113,12 @@ export const applyAuditChange = (before: RunAudit | undefined, { run, bays, fram
   frames: applyList(before?.frames ?? [], frames, frameIdOf),
 });
 
-/** Ids of the runs whose findings an edit may change: themselves and whoever stands back to back with them. */
-export function runsTouched(before: Site | null, after: Site): readonly Id[] {
+/**
+ * Ids of the runs whose findings an edit may change: themselves and whoever stands back to back with them.
+ * @param change what `changeOf` gives for the two
+ */
+export function runsTouched(before: Site | null, after: Site, { rest, runs } = changeOf(before, after)): readonly Id[] {
   const all = after.runs.map(idOf);
-  const { rest, runs } = changeOf(before, after);
   if (before === null || Object.keys(rest).length > 0) return all;
   const changed = new Set(runs.map(({ run }) => run.id));
   for (const run of before.runs) if (!all.includes(run.id)) changed.add(run.id);
