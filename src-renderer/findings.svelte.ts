@@ -80,8 +80,14 @@ export class Findings {
   run(runId: Id | null, near: Near): RunAudit | null {
     const light = this.audits.get(runId ?? '');
     if (light === undefined) return null;
-    const bays = light.bays.map((bay) => (bay.bayId === near.bay?.bayId ? near.bay : bay));
-    const frames = light.frames.map((frame) => near.frames.find(({ frameId }) => frameId === frame.frameId) ?? frame);
+    const bays = [...light.bays];
+    const at = bays.findIndex(({ bayId }) => bayId === near.bay?.bayId);
+    if (at >= 0 && near.bay !== null) bays[at] = near.bay;
+    const frames = [...light.frames];
+    for (const frame of near.frames) {
+      const i = frames.findIndex(({ frameId }) => frameId === frame.frameId);
+      if (i >= 0) frames[i] = frame;
+    }
     const verdict = worstVerdict([...bays, ...light.findings.filter(({ counts }) => counts)].map((one) => one.verdict));
     return { ...light, verdict, bays, frames };
   }
@@ -95,6 +101,16 @@ export class Findings {
       // The worker met the same trouble and tells it.
       return null;
     }
+  }
+
+  /** A bay of the run with every calculation; null where its audit breaks down. */
+  wholeBay(site: Site, runId: Id, bayId: Id): BayAudit | null {
+    return orNull(() => auditBay(site, runId, bayId, this.today(), this.#cache));
+  }
+
+  /** A frame of the run with every calculation; null where its audit breaks down. */
+  wholeFrame(site: Site, runId: Id, frameId: Id): FrameAudit | null {
+    return orNull(() => auditFrame(site, runId, frameId, this.today(), this.#cache));
   }
 
   /** A frame anywhere in the site, light. */
@@ -113,6 +129,15 @@ export class Findings {
 
   close(): void {
     this.#link.close();
+  }
+}
+
+/** The worker meets the same trouble and tells it. */
+function orNull<T>(audit: () => T): T | null {
+  try {
+    return audit();
+  } catch {
+    return null;
   }
 }
 

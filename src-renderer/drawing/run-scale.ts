@@ -38,8 +38,11 @@ export interface RunScale {
 
 /** The whole run in the width where its figures have room so, else as wide as they need. */
 export function runScale({ bays, frames }: RunDrawn, { width, tallest, leastPitch, edge, top }: RunSheet): RunScale {
-  const highest = Math.max(1, ...bays.map((bay) => bay.height));
-  const narrowest = Math.min(...bays.map((bay) => bay.entry + bay.leftUpright.width));
+  let [highest, narrowest] = [1, Infinity];
+  for (const bay of bays) {
+    highest = Math.max(highest, bay.height);
+    narrowest = Math.min(narrowest, bay.entry + bay.leftUpright.width);
+  }
   const across = [...bays.map((bay) => bay.entry), ...frames.map((frame) => frame.width)].reduce((sum, mm) => sum + mm, 0);
   const fits = Math.min(tallest / highest, (width - 2 * edge) / Math.max(1, across));
   const rate = Math.max(fits, Number.isFinite(narrowest) ? leastPitch / narrowest : 0);

@@ -58,19 +58,44 @@ export const CUT = 0.94;
 
 const meanIntensity = (goods: GoodsDrawn): number => weightOf(goods.weighed.grossKg ?? 0) / goods.unitLoad.widthMm;
 
+/** What of a bay the rate of its skylines goes by: its lowest level's room in mm, greatest mean and peak intensity in N/mm. */
+interface Greatest {
+  readonly room: number;
+  readonly mean: number;
+  readonly peak: number;
+}
+/** A drawn bay is never changed, and most bays of a run stay the same from edit to edit. */
+const greatest = new WeakMap<BayDrawn, Greatest>();
+
+function greatestOf(bay: BayDrawn): Greatest {
+  const known = greatest.get(bay);
+  if (known !== undefined) return known;
+  const beams = bay.levels.filter((level) => level.levelId !== null);
+  const goods = beams.flatMap((level) => level.goods);
+  const found = {
+    room: Math.min(...beams.map((level) => level.room)),
+    mean: Math.max(0, ...goods.map(meanIntensity)),
+    peak: Math.max(0, ...goods.map((one) => peakIntensity(one.weighed.pieces))),
+  };
+  greatest.set(bay, found);
+  return found;
+}
+
 /**
  * px per N/mm for the skylines of these bays, one rate for all so that they compare: as high as the
  * lowest level's room allows.
  * @param scale px per mm of the drawing
  */
 export function skylineRate(bays: readonly BayDrawn[], scale: number): number {
-  const beams = bays.flatMap((bay) => bay.levels.filter((level) => level.levelId !== null));
-  const room = Math.min(...beams.map((level) => level.room)) * scale;
-  const goods = beams.flatMap((level) => level.goods);
-  const mean = Math.max(0, ...goods.map(meanIntensity));
-  const peak = Math.max(0, ...goods.map((one) => peakIntensity(one.weighed.pieces)));
+  let [room, mean, peak] = [Infinity, 0, 0];
+  for (const bay of bays) {
+    const own = greatestOf(bay);
+    room = Math.min(room, own.room);
+    mean = Math.max(mean, own.mean);
+    peak = Math.max(peak, own.peak);
+  }
   if (!Number.isFinite(room) || peak === 0) return 0;
-  return room * clamp(CUT / peak, FILLED.least / mean, FILLED.most / mean);
+  return room * scale * clamp(CUT / peak, FILLED.least / mean, FILLED.most / mean);
 }
 
 export interface SkylinePlace {

@@ -39,6 +39,8 @@ export function keyOf({ check, place }: Finding, index: number): string {
 export interface FindingGroup {
   readonly heading: string;
   readonly findings: readonly Finding[];
+  /** The same findings with their calculations, where `findings` have none. Asked for only where they are written out. */
+  readonly whole?: () => readonly Finding[];
 }
 
 export interface Audits {
@@ -60,23 +62,32 @@ export function groupsOf({ run, bay, level, frames, frameName }: Audits, levelNa
   return groups.filter((group) => group.findings.length > 0).map((group) => ({ ...group, findings: byWeight(group.findings) }));
 }
 
+/** Frames and bays of the run with every calculation; null where the audit of one broke down. */
+export interface Whole {
+  readonly frame: (frameId: Id) => FrameAudit | null;
+  readonly bay: (bayId: Id) => BayAudit | null;
+}
+
 /** Beside the run's elevation: the chosen frame, every other frame that is not within, what bays and run say of themselves. */
-export function runGroups(run: Run, audit: RunAudit, chosenFrameId: Id | null): readonly FindingGroup[] {
+export function runGroups(run: Run, audit: RunAudit, chosenFrameId: Id | null, whole: Whole): readonly FindingGroup[] {
+  const nameOf = new Map(run.frames.map(({ id, name }) => [id, name]));
   const frames = audit.frames
     .filter((frame) => frame.frameId === chosenFrameId || (chosenFrameId === null && frame.verdict !== 'within'))
-    .map((frame) => ({ heading: `Frame ${run.frames.find(({ id }) => id === frame.frameId)?.name ?? ''}`, findings: frame.findings }));
+    .map(({ frameId, findings }) => ({
+      heading: `Frame ${nameOf.get(frameId) ?? ''}`,
+      findings,
+      whole: () => byWeight(whole.frame(frameId)?.findings ?? findings),
+    }));
   const index = run.frames.findIndex(({ id }) => id === chosenFrameId);
   const beside = chosenFrameId === null ? run.bays : run.bays.slice(Math.max(0, index - 1), index + 1);
-  const bays = beside.map((bay) => {
-    const findings = audit.bays.find(({ bayId }) => bayId === bay.id)?.findings ?? [];
-    return {
-      heading: `Bay ${bay.name}`,
-      findings: chosenFrameId === null ? findings.filter(({ verdict }) => verdict !== 'within') : findings,
-    };
+  const told = ({ verdict }: Finding) => chosenFrameId !== null || verdict !== 'within';
+  const audits = new Map(audit.bays.map((bay) => [bay.bayId, bay]));
+  const bays = beside.map(({ id, name }) => {
+    const findings = audits.get(id)?.findings.filter(told) ?? [];
+    return { heading: `Bay ${name}`, findings, whole: () => byWeight(whole.bay(id)?.findings.filter(told) ?? findings) };
   });
-  return [...frames, { heading: 'The run', findings: audit.findings }, ...bays]
-    .filter((group) => group.findings.length > 0)
-    .map((group) => ({ ...group, findings: byWeight(group.findings) }));
+  const own = { heading: 'The run', findings: byWeight(audit.findings) };
+  return [...frames, own, ...bays].filter((group) => group.findings.length > 0);
 }
 
 /** What is missing, each input once, in the order in which findings ask for it, with the checks that wait for it. */
