@@ -35,7 +35,7 @@ export function keepTemplate(open: OpenSite, bay: Bay, name: string, goods: 'wit
 export const firstTemplate = ({ site, lastTemplate }: OpenSite): Id | null =>
   (site.bayTemplates.find(({ id }) => id === lastTemplate) ?? site.bayTemplates.at(-1))?.id ?? null;
 
-/** What a bay by this plan is, in one line: "2 700 mm clear · 3 levels at 1 500, …". */
+/** What a bay by this plan is: "2 700 mm clear", "3 levels at 1 500 mm, …". */
 export function planFacts(plan: BayPlan, site: Site, reading: Reading): readonly string[] {
   const length = (mm: number) => formatQuantity(lengthOf(mm), reading);
   const { levels } = plan;
@@ -47,7 +47,7 @@ export function planFacts(plan: BayPlan, site: Site, reading: Reading): readonly
     levels.length === 0
       ? 'no beam levels'
       : `${countOf(levels.length, 'level')} at ${listed(levels.map((level) => length(level.heightMm)))}`,
-    notice === undefined ? 'no load notice' : `load notice ${notice}`,
+    notice === undefined ? 'no load notice' : `rated by ${notice}`,
     `frames ${frame ?? 'of unknown type'}, ${length(plan.frameHeightMm)} high`,
     goods === 0 ? 'no goods' : countOf(goods, 'unit load'),
   ];

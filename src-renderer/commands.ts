@@ -181,20 +181,22 @@ export const COMMANDS: readonly Command[] = [
   command('new-run', 'Rack', 'New run of bays…', [], always, ({ shell }) => shell.ask({ kind: 'new-run' })),
   command('add-bay', 'Rack', 'Add an empty bay to the right', [], hasBay, ({ open }) => addBayAfter(open)),
   command('add-bays', 'Rack', 'Add several bays, or by a template…', [], hasRun, ({ shell }) => shell.ask({ kind: 'add-bays' })),
-  command('keep-template', 'Rack', 'Keep this bay as a template…', ['T'], hasBay, ({ shell }) => shell.ask({ kind: 'keep-template' })),
+  command('keep-template', 'Rack', 'Keep this bay as a template…', ['Mod+Shift+S'], hasBay, ({ shell }) =>
+    shell.ask({ kind: 'keep-template' }),
+  ),
   command('duplicate-bay', 'Rack', 'Duplicate this bay', ['Mod+Shift+D'], hasBay, ({ open }) => duplicateBayHere(open)),
   command('remove-bay', 'Rack', 'Remove this bay', [], hasBay, ({ open }) => removeBayHere(open)),
-  command('bay-left', 'Rack', 'Move this bay left in its run', ['Alt+Shift+ArrowLeft'], still, (at) => moveBayHere(at, -1)),
-  command('bay-right', 'Rack', 'Move this bay right in its run', ['Alt+Shift+ArrowRight'], still, (at) => moveBayHere(at, 1)),
+  command('bay-left', 'Rack', 'Move this bay left in its run', ['Mod+Shift+ArrowLeft'], still, (at) => moveBayHere(at, -1)),
+  command('bay-right', 'Rack', 'Move this bay right in its run', ['Mod+Shift+ArrowRight'], still, (at) => moveBayHere(at, 1)),
   command('add-level', 'Rack', 'Add a level on top', [], hasBay, ({ open }) => addLevelOnTop(open)),
   command('duplicate-level', 'Rack', 'Duplicate this level on top', [], hasLevel, ({ open }) => duplicateLevelHere(open)),
   command('remove-level', 'Rack', 'Remove this level', [], hasLevel, ({ open }) => removeLevelHere(open)),
   command('raise-level', 'Rack', 'Raise this level by one hole', ['Alt+ArrowUp'], stillOnLevel, ({ open }) => shiftLevelHere(open, 1)),
   command('lower-level', 'Rack', 'Lower this level by one hole', ['Alt+ArrowDown'], stillOnLevel, ({ open }) => shiftLevelHere(open, -1)),
-  command('swap-level-up', 'Rack', 'Swap this level with the one above', ['Alt+Shift+ArrowUp'], stillOnLevel, ({ open }) =>
+  command('swap-level-up', 'Rack', 'Swap this level with the one above', ['Mod+Shift+ArrowUp'], stillOnLevel, ({ open }) =>
     swapLevelHere(open, 1),
   ),
-  command('swap-level-down', 'Rack', 'Swap this level with the one below', ['Alt+Shift+ArrowDown'], stillOnLevel, ({ open }) =>
+  command('swap-level-down', 'Rack', 'Swap this level with the one below', ['Mod+Shift+ArrowDown'], stillOnLevel, ({ open }) =>
     swapLevelHere(open, -1),
   ),
   command('fill-run', 'Rack', 'Give other bays this bay’s goods or levels…', [], hasBay, ({ shell }) => shell.ask({ kind: 'fill-run' })),
@@ -342,6 +344,10 @@ const KEPT_BY_FIELDS: readonly string[] = [
   'Escape',
   'PageUp',
   'PageDown',
+  'Mod+Shift+ArrowLeft',
+  'Mod+Shift+ArrowRight',
+  'Mod+Shift+ArrowUp',
+  'Mod+Shift+ArrowDown',
 ];
 
 export const nameOf = (one: Command, at: Surroundings): string => (typeof one.name === 'string' ? one.name : one.name(at));
