@@ -5,6 +5,7 @@ import { say, type Text } from '../units/text';
 import { stillOpen, type OpenAction } from '../visit/actions';
 import { offLoadList } from '../visit/off-load';
 import { ACTION_WORDS } from '../words/visit-words';
+import { counted } from './context';
 import { dayCell, heading, kgCell, NONE, paragraph, table, unbroken, type Block, type Cell } from './paper';
 
 export function actionBlocks(site: Site, actions: readonly OpenAction[]): readonly Block[] {
@@ -29,23 +30,25 @@ export function actionBlocks(site: Site, actions: readonly OpenAction[]): readon
 function openTable(open: readonly OpenAction[]): Block {
   return table(
     'Open actions, the most urgent first',
-    ['#No.', 'Action', 'Class', 'What was found', 'Found', '#Days', 'By'],
+    ['#No.', 'Action', 'Class', 'What was found', 'Found', 'By'],
     open.map((action, i) => [
       [String(i + 1)],
       [ACTION_WORDS[action.kind]],
       action.class === null ? NONE : { damage: action.class },
       [...action.says, ...reductionWords(action)],
-      dayCell(action.found),
-      action.age === null ? NONE : [String(action.age)],
+      foundCell(action),
       dueCell(action),
     ]),
   );
 }
 
+const foundCell = ({ found, age }: OpenAction): Cell =>
+  age === null || age <= 0 ? dayCell(found) : [`${unbroken(dateWords(found))}, ${unbroken(`${counted(age, 'day')} ago`)}`];
+
 function dueCell({ due, overdue, kind }: OpenAction): Cell {
   if (kind === 'unload' || kind === 'out-of-use' || kind === 'replace-lock') return [unbroken('at once')];
   if (due === null) return NONE;
-  return overdue !== null && overdue > 0 ? [`${unbroken(dateWords(due))}, ${overdue} days late`] : dayCell(due);
+  return overdue !== null && overdue > 0 ? [`${unbroken(dateWords(due))}, ${unbroken(`${counted(overdue, 'day')} late`)}`] : dayCell(due);
 }
 
 const reductionWords = ({ reductions }: OpenAction): Text =>
@@ -66,7 +69,7 @@ export function locationBlocks(site: Site, open: readonly OpenAction[]): readonl
         [runName],
         [bayName],
         [String(level)],
-        [what === 'unload' ? 'Unload, and bar it' : 'Do not reload'],
+        [unbroken(what === 'unload' ? 'Unload, and bar it' : 'Do not reload')],
         goods === '' ? ['nothing'] : [goods],
         kgCell(goodsKg),
         [because.map((action) => open.indexOf(action) + 1).join(', ')],

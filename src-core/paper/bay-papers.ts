@@ -7,7 +7,7 @@ import type { Text } from '../units/text';
 import { stillOpen, type OpenAction } from '../visit/actions';
 import { actionBlocks } from './action-blocks';
 import { closingBlocks, frameStands, paperOf, runAuditOf, type PaperInput } from './context';
-import { findingBlocks, findingsOfBay, levelTitle, used, workedBlocks, type BayNames } from './findings';
+import { findingBlocks, findingsInFull, findingsOfBay, levelTitle, used, USED_REMARK, type BayNames } from './findings';
 import { fact, facts, heading, kgCell, mmCell, NONE, paragraph, subheading, table, type Block, type Paper } from './paper';
 
 interface BayAt extends BayNames {
@@ -68,7 +68,7 @@ function openOfBay({ site }: PaperInput, bayId: Id, actions: readonly OpenAction
 /** Every check of a bay, or of one of its levels, step by step. */
 export function workedCalculation(input: PaperInput, bayId: Id, levelId: Id | null = null): Paper {
   const at = bayAt(input, bayId);
-  const { run, bay, audit, frames } = at;
+  const { bay, audit, frames } = at;
   const levels = levelId === null ? audit.levels.toReversed() : audit.levels.filter((level) => level.levelId === levelId);
   if (levelId !== null && levels.length === 0) throw new RangeError(`bay "${bayId}" has no level "${levelId}"`);
   return paperOf(input, [bay], {
@@ -80,22 +80,18 @@ export function workedCalculation(input: PaperInput, bayId: Id, levelId: Id | nu
       goodsTable(at),
       ...levels.flatMap((level): Block[] => [
         heading(levelTitle(bay, level.levelId)),
-        {
-          kind: 'drawing',
-          drawing: 'level',
-          runId: run.id,
-          bayId,
-          levelId: level.levelId,
-          says: `${levelTitle(bay, level.levelId)}: goods, load intensity, shear force, bending moment and deflection along the beam`,
-        },
-        ...level.findings.flatMap((one) => workedBlocks(at, one)),
+        ...levelDrawing(at, level.levelId),
+        ...findingsInFull(at, level.findings),
       ]),
       ...(levelId === null
         ? [
             heading('Bay'),
-            ...audit.findings.flatMap((one) => workedBlocks(at, one)),
+            ...findingsInFull(at, audit.findings),
             heading('Upright frames and floor'),
-            ...frames.flatMap((frame) => frame.findings.flatMap((one) => workedBlocks(at, one))),
+            ...findingsInFull(
+              at,
+              frames.flatMap((frame) => frame.findings),
+            ),
           ]
         : []),
       ...closingBlocks(input, [bay]),
@@ -103,6 +99,21 @@ export function workedCalculation(input: PaperInput, bayId: Id, levelId: Id | nu
     ],
   });
 }
+
+/** Nothing where nothing stands: there is no load to draw. */
+const levelDrawing = ({ run, bay }: BayAt, levelId: Id): readonly Block[] =>
+  bay.levels.find(({ id }) => id === levelId)?.placements.length === 0
+    ? []
+    : [
+        {
+          kind: 'drawing',
+          drawing: 'level',
+          runId: run.id,
+          bayId: bay.id,
+          levelId,
+          says: `${levelTitle(bay, levelId)}: load intensity, shear force, bending moment and deflection along the beam`,
+        },
+      ];
 
 function opening({ input, bay, run, audit }: BayAt): readonly Block[] {
   const notice = input.site.notices.find(({ id }) => id === bay.noticeId);
@@ -116,6 +127,7 @@ function opening({ input, bay, run, audit }: BayAt): readonly Block[] {
       fact('Load notice', [stated]),
     ]),
     ...(audit.governing === null ? [] : [paragraph(['Decided by: ', ...audit.governing.says])]),
+    USED_REMARK,
   ];
 }
 

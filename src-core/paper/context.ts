@@ -4,6 +4,8 @@ import { sourceWords } from '../audit/source-words';
 import { resolveRules, RULE_KEYS, RULE_SET_TITLES, sourceOf } from '../checks/rule-sets';
 import { RULES } from '../checks/rule-table';
 import type { Bay, Frame, Id, Run, Site, Source } from '../site/site';
+import { ratioOf } from '../units/quantity';
+import { say } from '../units/text';
 import { FOOTER_CAUTIONS } from '../words/cautions';
 import { CHECK_WORDS } from '../words/check-names';
 import { facts, fact, heading, list, table, type Block, type Foot, type Paper } from './paper';
@@ -21,6 +23,9 @@ export interface PaperInput {
 
 /** About so many letters stand in two lines of the foot. */
 const FOOT_LETTERS = 260;
+
+/** One rating's name and source may be longer than all lines of the foot. */
+const PART_LETTERS = 150;
 
 /** @param bays that the paper is about; every bay of the site where it is about all */
 export function footOf(input: PaperInput, bays: readonly Bay[]): Foot {
@@ -50,8 +55,9 @@ export const spanWords = ({ rules }: Site): string =>
   rules.span === 'clear-entry' ? 'clear entry between uprights' : 'upright centre to upright centre';
 
 /** As many as have room; the rest is counted, and stands in the part on sources. */
-function shortened(parts: readonly string[], none: string): string {
-  if (parts.length === 0) return none;
+function shortened(all: readonly string[], none: string): string {
+  if (all.length === 0) return none;
+  const parts = all.map((part) => (part.length > PART_LETTERS ? `${part.slice(0, PART_LETTERS - 1)}…` : part));
   let text = parts[0] ?? '';
   for (let i = 1; i < parts.length; i++) {
     const longer = `${text}; ${parts[i]}`;
@@ -121,6 +127,7 @@ export function closingBlocks(
       fact('Frame tables', [
         site.rules.frameTable === 'interpolate' ? 'interpolated between rows; never beyond an end' : 'next taller row; never beyond an end',
       ]),
+      fact('“Close” begins', say`above ${ratioOf(rules.value.closeAbove)} used`),
       fact('Two amber damages on one frame', [site.rules.twoAmbersMakeRed ? 'count as red' : 'stay amber']),
       fact('Site checksum (SHA-256)', [input.checksum]),
     ]),

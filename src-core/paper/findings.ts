@@ -130,8 +130,35 @@ function missingBlocks(findings: readonly Finding[]): readonly Block[] {
   ];
 }
 
+/** What the column "Used" says, for whoever has not seen the program. */
+export const USED_REMARK: Block = remark(['Used: the share of what is allowed that is taken up. 1 is all of it; more than 1 is too much.']);
+
+/** Findings in full: first those that compare without a calculation, in one table, then each worked calculation. */
+export function findingsInFull(names: BayNames, findings: readonly Finding[]): readonly Block[] {
+  const compared = findings.filter(({ worked }) => worked.length === 0);
+  return [
+    ...(compared.length === 0
+      ? []
+      : [
+          table(
+            'Compared without a calculation',
+            ['Check', 'Where', 'Verdict', 'What was found'],
+            compared.map((one) => [
+              [CHECK_WORDS[one.check].name],
+              [placeTitle(names, one.place)],
+              { verdict: one.verdict },
+              [...one.says, ...[...one.notes, ...one.missing.map(notKnown)].flatMap((text) => [' ', ...text])],
+            ]),
+          ),
+        ]),
+    ...findings.filter(({ worked }) => worked.length > 0).flatMap((one) => workedBlocks(names, one)),
+  ];
+}
+
+const notKnown = ({ input, how }: Finding['missing'][number]): Text => say`Not known: ${input}. ${how}`;
+
 /** The worked calculation of a finding, with its sentence and notes. */
-export function workedBlocks(names: BayNames, one: Finding): readonly Block[] {
+function workedBlocks(names: BayNames, one: Finding): readonly Block[] {
   return [
     subheading(`${CHECK_WORDS[one.check].name}: ${placeTitle(names, one.place)}`),
     {
@@ -142,10 +169,8 @@ export function workedBlocks(names: BayNames, one: Finding): readonly Block[] {
       ],
     },
     paragraph(one.says),
-    ...(one.worked.length === 0
-      ? [remark(['This check compares without a calculation.'])]
-      : [{ kind: 'worked', steps: one.worked } as const]),
+    { kind: 'worked', steps: one.worked },
     ...list(one.notes),
-    ...list(one.missing.map(({ input, how }) => say`Not known: ${input}. ${how}`)),
+    ...list(one.missing.map(notKnown)),
   ];
 }

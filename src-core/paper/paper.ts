@@ -116,14 +116,14 @@ export function table(caption: string, columns: readonly string[], rows: readonl
 /** A cell that says that nothing is there. */
 export const NONE: Text = ['–'];
 
-const NOT_KNOWN: Text = ['not known'];
+/** Words that stay on one line. */
+export const unbroken = (words: string): string => words.replaceAll(' ', '\u00a0');
+
+const NOT_KNOWN: Text = [unbroken('not known')];
 
 /** A mass or length in a cell; what is not known says so. */
 export const kgCell = (kg: number | null | undefined): Text => (kg === null || kg === undefined ? NOT_KNOWN : [massOf(kg)]);
 export const mmCell = (mm: number | null | undefined): Text => (mm === null || mm === undefined ? NOT_KNOWN : [lengthOf(mm)]);
-
-/** Words that stay on one line. */
-export const unbroken = (words: string): string => words.replaceAll(' ', '\u00a0');
 
 /** "4 May 2026", or that the day is not known. */
 export const dayCell = (date: string): Text => (date === '' ? NOT_KNOWN : [unbroken(dateWords(date))]);

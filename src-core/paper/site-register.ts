@@ -13,7 +13,7 @@ import type { Visit } from '../visit/visit';
 import { CHECK_WORDS } from '../words/check-names';
 import { VERDICT_WORDS } from '../words/verdict-words';
 import { closingBlocks, paperOf, runAuditOf, type PaperInput } from './context';
-import { used } from './findings';
+import { used, USED_REMARK } from './findings';
 import { dayCell, fact, facts, heading, kgCell, NONE, table, type Block, type Cell, type Paper } from './paper';
 
 export function siteRegister(input: PaperInput, visits: readonly Visit[], followUp: FollowUp, actions: readonly OpenAction[]): Paper {
@@ -37,6 +37,7 @@ export function siteRegister(input: PaperInput, visits: readonly Visit[], follow
           .map(({ verdict, count }) => fact(VERDICT_WORDS[verdict].word, [String(count)])),
         fact('Answers for the racks', [followUp.responsible === '' ? 'not named' : followUp.responsible]),
       ]),
+      USED_REMARK,
       ...site.runs.flatMap((run): Block[] => [
         heading(`Run ${run.name}`),
         ...(run.bays.length === 0

@@ -26,6 +26,7 @@ import {
   remark,
   subheading,
   table,
+  unbroken,
   type Block,
   type Cell,
   type Paper,
@@ -163,7 +164,7 @@ function damageBlocks(input: PaperInput, seen: readonly Seen[], rules: ResolvedR
     heading('Damage'),
     table(
       'Bow measured over the gauge length, each direction against its own limit',
-      ['Bay', 'Part', '#Along the run', '#In the frame’s plane', '#Gauge', '#Times the limit', 'Class', 'Found', 'Amber until'],
+      ['Bay', 'Part', '#Along the run', '#In the frame’s plane', '#Gauge', 'Times the limit', 'Class', 'Found', 'Amber until'],
       all.map(({ run, bay, damage, judged }) => {
         const until = judged.lastAmberDay === null ? NONE : dayCell(judged.lastAmberDay);
         if (damage.on === 'beam')
@@ -204,7 +205,7 @@ function ratios({ torn }: FrameDamage, { bends }: DamageJudged): Text {
   if (torn) return ['dent or tear'];
   const shown = bends.filter(({ ratio }) => Number.isFinite(ratio));
   if (shown.length === 0) return NONE;
-  return shown.flatMap(({ direction, ratio }, i) => [...(i === 0 ? [] : [', ']), ratioOf(ratio), ` ${direction}`]);
+  return shown.flatMap(({ direction, ratio }, i) => [...(i === 0 ? [] : [', ']), ratioOf(ratio), `\u00a0${direction}`]);
 }
 
 function levelAuditOf(input: PaperInput, levelId: Id): LevelAudit | null {
@@ -297,7 +298,7 @@ function noteBlocks(seen: readonly Seen[]): readonly Block[] {
   const photos = seen.flatMap(({ bay, seen: one }) =>
     one.photos.map((photo) => ({
       file: photo.file,
-      says: `Bay ${bay.name}${photo.note === '' ? '' : `: ${photo.note}`} (${photo.original}${photo.taken === '' ? '' : `, ${photo.taken.slice(0, 10)}`})`,
+      says: `Bay ${bay.name}${photo.note === '' ? '' : `: ${photo.note}`} (${photo.original}${photo.taken === '' ? '' : `, ${unbroken(dateWords(photo.taken.slice(0, 10)))}`})`,
     })),
   );
   return [

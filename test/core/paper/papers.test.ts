@@ -80,7 +80,7 @@ test('the report shows who signed, notes, photos and what is not finished', () =
   expect(open).toContain('1 bay will still be looked at');
   expect(open).toContain('Signed: not yet');
   expect(open).toContain('Bay A1: Aisle blocked.');
-  expect(open).toContain('p.jpg: Bay A1: front left (IMG 7.JPG, 2026-06-02)');
+  expect(open).toContain('p.jpg: Bay A1: front left (IMG 7.JPG, 2 June 2026)');
   const signed = sign(finishBay(visit, 'A-bay-2', { person: 'R. W.', date: S10_DAY }), {
     person: 'R. W.',
     role: 'shift lead',
@@ -93,8 +93,9 @@ test('the report shows who signed, notes, photos and what is not finished', () =
 
 test('a bay sheet shows verdict, levels, goods, frames and what is missing', () => {
   const sheet = baySheet(s10, 'A-bay-2', []);
+  // A set of 4 mm is 29.6 % of the 13.5 mm allowed (span/200), and 20 % takes a beam out of use: 0.296 / 0.2 = 1.48.
   expect(rowsOf(sheet, 'Beam levels of bay A2, from the top down')).toEqual([
-    'Level 1 | 1 500 mm | Box 120 × 50 × 1.5 | missing | 1 860 kg | not known | – | Not assessable',
+    'Level 1 | 1 500 mm | Box 120 × 50 × 1.5 | missing | 1 860 kg | not known | 1.48 | Over',
   ]);
   expect(rowsOf(sheet, 'Goods, from the left upright’s face')).toHaveLength(3);
   expect(rowsOf(sheet, 'To be found out').join('\n')).toContain('load notice of bay A2');
@@ -114,7 +115,7 @@ test('a bay sheet says first what is open at the bay, whatever its verdict', () 
 test('the same sheet reads in pounds and inches', () => {
   // 1 500 mm = 59.06 in and 1 860 kg = 4 100.6 lb, by the exact factors 25.4 mm and 0.45359237 kg.
   expect(rowsOf(baySheet(s10, 'A-bay-2', []), 'Beam levels of bay A2, from the top down', US)).toEqual([
-    'Level 1 | 59.1 in | Box 120 × 50 × 1.5 | missing | 4,101 lb | not known | – | Not assessable',
+    'Level 1 | 59.1 in | Box 120 × 50 × 1.5 | missing | 4,101 lb | not known | 1.48 | Over',
   ]);
 });
 

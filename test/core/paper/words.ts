@@ -35,7 +35,7 @@ export function blockWords(block: Block, reading: Reading): string[] {
     case 'drawing':
       return [block.says];
     case 'photos':
-      return block.photos.map(({ file, says }) => `${file}: ${says}`);
+      return block.photos.map(({ file, says }) => `${file}: ${plainSpaces(says)}`);
     case 'worked':
       return block.steps.flatMap((step) => [
         `${step.what}: ${step.formula} = ${plainSpaces(formatQuantity(step.result.quantity, reading))}`,
