@@ -15,7 +15,10 @@ export type Entry = { readonly ok: true; readonly value: number } | { readonly o
 /** Longer text is no number that anyone means. */
 const LONGEST = 60;
 
-const FRACTIONS: Readonly<Record<string, string>> = { '½': '1/2', '¼': '1/4', '¾': '3/4', '⅛': '1/8', '⅜': '3/8', '⅝': '5/8', '⅞': '7/8' };
+/** Signs such as ½. */
+const FRACTION_SIGNS = /[¼-¾⅐-⅞]/g;
+/** Marks without width or of writing direction, as they come along with pasted text. */
+const UNSEEN = /[\u00ad\u200b-\u200f\u2060\u2066-\u2069\u202a-\u202e\ufeff]/g;
 
 /** Digits with any signs between them, or a fraction with or without a whole number before it. */
 const LEADING_FRACTION = /^(?:(\d+)(?: |-| - ))?(\d+) ?\/ ?(\d+)/;
@@ -52,7 +55,8 @@ function readUnsigned(typed: string, text: string, kind: QuantityKind, reading: 
   const compound = pair && splitCompound(unitText, pair.large);
   const unit = compound ? unitNamed(kind, pair.large) : unitOf(unitText, kind, reading);
   if (!unit) return refuse(unitMessage(text, unitText, kind));
-  const first = readPart(typed, reading, unit);
+  // Shares are often thirds; a rule has none.
+  const first = readPart(typed, reading, unit, kind === 'ratio');
   if (!first.ok) return first;
   const value = times(first.value, unit.factor);
   if (compound) return readCompound(value, first.value, compound, text, pair, reading);
@@ -62,15 +66,20 @@ function readUnsigned(typed: string, text: string, kind: QuantityKind, reading: 
 }
 
 function plainText(text: string): string {
-  const halved = text.replaceAll(/[½¼¾⅛⅜⅝⅞]/g, (sign) => ` ${FRACTIONS[sign] ?? ''}`);
-  return halved
-    .normalize('NFKC')
-    .replaceAll(/[−–—]/g, '-')
-    .replaceAll('⁄', '/')
-    .replaceAll(/[“”″]|''|′′/g, '"')
-    .replaceAll(/[‘’′]/g, "'")
-    .replaceAll(/\s+/g, ' ')
-    .trim();
+  return (
+    text
+      .replaceAll(UNSEEN, '')
+      .replaceAll(FRACTION_SIGNS, (sign) => ` ${sign.normalize('NFKC')}`)
+      // Typed for the marks of feet and inches where a keyboard has nothing better.
+      .replaceAll(/[´`]/g, "'")
+      .normalize('NFKC')
+      .replaceAll(/[−–—]/g, '-')
+      .replaceAll('⁄', '/')
+      .replaceAll(/[“”″]|''|′′/g, '"')
+      .replaceAll(/[‘’′]/g, "'")
+      .replaceAll(/\s+/g, ' ')
+      .trim()
+  );
 }
 
 /** What stands after the leading number; null where there is none. */
@@ -80,12 +89,13 @@ function afterNumber(typed: string): string | null {
 }
 
 /** The leading number, whole, decimal or with a fraction, and what follows it. */
-function readPart(typed: string, { locale }: Reading, unit: Unit): Part {
+function readPart(typed: string, { locale }: Reading, unit: Unit, anyFraction = false): Part {
   const fraction = LEADING_FRACTION.exec(typed);
   if (fraction) {
     const [all, whole = '0', top = '', bottom = ''] = fraction;
     const rest = typed.slice(all.length).trim();
-    if (!['2', '4', '8', '16', '32', '64'].includes(bottom) || Number(top) >= Number(bottom))
+    const ofRule = ['2', '4', '8', '16', '32', '64'].includes(bottom) && Number(top) < Number(bottom);
+    if (!ofRule && !(anyFraction && Number(bottom) > 0))
       return refuse(
         `“${top}/${bottom}” is no fraction of a rule. Type halves, quarters, eighths, down to 64ths, each less than one; or decimals.`,
       );
@@ -102,7 +112,7 @@ function unitOf(unitText: string, kind: QuantityKind, { units }: Reading): Unit 
 
 /** `6 in` of `ft 6 in`; null where no second number follows the larger unit. */
 function splitCompound(unitText: string, large: string): string | null {
-  const [, name = '', second] = /^([a-z'"]+)\.? ?-? ?(\d.*|[.,]\d.*)$/i.exec(unitText) ?? [];
+  const [, name = '', second] = /^([a-z'"]+)\.?(?:,(?= )| and(?= ))? ?-? ?(\d.*|[.,]\d.*)$/i.exec(unitText) ?? [];
   const kind = large === 'ft' ? 'length' : 'mass';
   return second !== undefined && unitNamed(kind, unitKey(name))?.symbol === large ? second : null;
 }
@@ -138,7 +148,8 @@ function unitMessage(text: string, unitText: string, kind: QuantityKind): string
       : `Type the number alone or with ${symbols.slice(0, -1).join(', ')}${symbols.length > 1 ? ' or ' : ''}${symbols.at(-1)}.`;
   if (kind === 'mass' && /^tons?$/.test(key))
     return `“${text}” may be tonnes (1000 kg), short tons (2000 lb) or long tons (2240 lb). Type t, short ton or long ton.`;
-  if (/^e[+-]?\d/.test(key)) return `“${text}” is written with an exponent. Write the number out in full.`;
+  if (/^(e[+-]?\d|\^)/.test(unitText.toLowerCase()) || /^[x×*·] ?10 ?\^/.test(unitText))
+    return `“${text}” is written with an exponent. Write the number out in full.`;
   if (/\d.*\d/.test(unitText.replace(/[a-z]\d$/i, '')) || /\d/.test(unitText.charAt(0)) || / \d/.test(unitText))
     return `“${text}” holds more than one number. Type one number with one unit.`;
   const other = kindNamed(key);

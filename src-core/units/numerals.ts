@@ -38,8 +38,14 @@ function marksOf(locale: string): Marks | null {
 function readMarks(locale: string): Marks {
   const parts = new Intl.NumberFormat(locale, { numberingSystem: 'latn', useGrouping: 'always' }).formatToParts(1_234_567.5);
   const mark = (wanted: string) => parts.find(({ type }) => type === wanted)?.value.replace('’', "'") ?? '';
-  const language = new Intl.DisplayNames('en', { type: 'language' }).of(locale.split('-')[0] ?? '') ?? locale;
-  return { decimal: mark('decimal'), group: mark('group'), language };
+  return { decimal: mark('decimal'), group: mark('group'), language: languageOf(locale, mark('decimal')) };
+}
+
+/** The language alone, where its country writes as it does elsewhere: "English", but "English (South Africa)". */
+function languageOf(locale: string, decimal: string): string {
+  const [language = locale] = locale.split('-');
+  const usual = new Intl.NumberFormat(language).formatToParts(0.5).find(({ type }) => type === 'decimal')?.value;
+  return new Intl.DisplayNames('en', { type: 'language' }).of(usual === decimal ? language : locale) ?? locale;
 }
 
 /** Digits in groups of three, one sign between them: "1 250", "12.345.678". */

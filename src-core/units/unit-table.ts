@@ -19,7 +19,8 @@ export interface Unit {
   readonly perUnit: number;
   /**
    * What is doubtful in a number of it such as "1,234": a thousand tonnes, or metres, is no likely
-   * number on a rack, and nobody measures thousandths of a millimetre.
+   * number on a rack, and nobody measures thousandths of a millimetre or weighs goods for a rack to the
+   * gram. "1.234" kg taken for 1.234 kg where 1 234 kg was meant would let an overload pass.
    */
   readonly doubt: Doubt;
 }
@@ -51,10 +52,10 @@ export const UNITS: Readonly<Record<QuantityKind, readonly Unit[]>> = {
     unit('ft', ft, ["'", 'foot', 'feet'], 'thousands'),
   ],
   mass: [
-    unit('kg', one, ['kgs', 'kilo', 'kilos', 'kilogram', 'kilograms']),
-    unit('g', '0.001', ['gram', 'grams']),
+    unit('kg', one, ['kgs', 'kilo', 'kilos', 'kilogram', 'kilograms', 'kilogramme', 'kilogrammes'], 'decimals'),
+    unit('g', '0.001', ['gram', 'grams', 'gramme', 'grammes']),
     unit('t', '1000', ['tonne', 'tonnes', 'metricton', 'metrictons'], 'thousands'),
-    unit('lb', lb, ['lbs', 'pound', 'pounds']),
+    unit('lb', lb, ['lbs', 'lbm', '#', 'pound', 'pounds'], 'decimals'),
     unit('oz', over(lb, exact('16')), ['ounce', 'ounces']),
     unit('short ton', times(lb, exact('2000')), ['shortton', 'shorttons', 'uston', 'ustons'], 'thousands'),
     unit('long ton', times(lb, exact('2240')), ['longton', 'longtons'], 'thousands'),
@@ -139,7 +140,7 @@ export const UNITS: Readonly<Record<QuantityKind, readonly Unit[]>> = {
   ],
   ratio: [unit('', one), unit('%', '0.01', ['percent', 'pct'])],
   percent: [unit('%', one, ['percent', 'pct'])],
-  count: [unit('', one)],
+  count: [unit('', one, [], 'decimals')],
 };
 
 /** What a kind of quantity is called. */
