@@ -48,6 +48,11 @@ async function states(): Promise<readonly (readonly [string, Surroundings])[]> {
   carrying.open.pickUp('p1');
   const onFloor = await surroundings();
   onFloor.open.select({ levelId: null });
+  const copied = await surroundings();
+  copied.open.copiedLevel = copied.open.level;
+  const copiedAndChosen = await surroundings();
+  copiedAndChosen.open.copiedLevel = copiedAndChosen.open.level;
+  copiedAndChosen.open.select({ placementIds: ['p1'] });
   const rules = await surroundings();
   rules.shell.show('rules');
   return [
@@ -57,6 +62,8 @@ async function states(): Promise<readonly (readonly [string, Surroundings])[]> {
     ['several chosen', several],
     ['carrying', carrying],
     ['floor chosen', onFloor],
+    ['level copied', copied],
+    ['level copied, goods chosen', copiedAndChosen],
     ['another screen', rules],
   ];
 }
@@ -136,6 +143,34 @@ test.each([
   at.open.select({ placementIds: ['p1'] });
   at.open.pickUp('p1');
   expect(idFor(event, DRAWING)).toBe(id);
+});
+
+test('with a level chosen and no goods, the keys that copy and paste goods copy and paste the level', () => {
+  const [copy, paste] = [press('c', { ctrlKey: true }), press('v', { ctrlKey: true })];
+  expect([copy, paste].map((event) => idFor(event, DRAWING))).toEqual(['copy-level', 'paste']);
+  at.open.copiedLevel = at.open.level;
+  expect([copy, paste].map((event) => idFor(event, ELSEWHERE))).toEqual(['copy-level', 'paste-level']);
+  at.open.select({ placementIds: ['p1'] });
+  expect(idFor(copy, DRAWING)).toBe('copy');
+  at.open.select({ levelId: null });
+  expect(idFor(copy, DRAWING)).toBeNull();
+});
+
+test('text that is marked on the page is copied as text; goods that are chosen come first', () => {
+  const copy = press('c', { ctrlKey: true });
+  const marked = { ...DRAWING, textMarked: true };
+  expect(commandFor(copy, at, marked, false)).toBeNull();
+  at.open.select({ placementIds: ['p1'] });
+  expect(commandFor(copy, at, marked, false)?.id).toBe('copy');
+});
+
+test.each([
+  ['Ctrl, Shift and the up arrow swap the level with the one above', press('ArrowUp', { ctrlKey: true, shiftKey: true }), 'swap-level-up'],
+  ['Ctrl, Shift and the right arrow move the bay', press('ArrowRight', { ctrlKey: true, shiftKey: true }), 'bay-right'],
+  ['Ctrl, Shift and S keep the bay as a template', press('S', { ctrlKey: true, shiftKey: true }), 'keep-template'],
+])('%s; in a field the arrows mark text', (_, event, id) => {
+  expect(idFor(event, ELSEWHERE)).toBe(id);
+  if (event.key.startsWith('Arrow')) expect(idFor(event, FIELD)).toBeNull();
 });
 
 test('on a Mac the command key stands for Ctrl, in deed and in print', () => {

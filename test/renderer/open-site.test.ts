@@ -5,11 +5,29 @@ import type { Site } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
 import type { WorkerLike } from '../../src-renderer/audit-link';
 import type { FromWorker } from '../../src-renderer/audit-protocol';
+import { keepTemplate } from '../../src-renderer/bay-templates';
 import { deleteGoods, duplicateGoods, mirrorGoods, putGoods, spaceEvenly } from '../../src-renderer/goods-edits';
 import { changeBay, changeLevel, nudge } from '../../src-renderer/goods-moves';
+import { copyLevelHere, pasteLevelHere, pasteLevelInto } from '../../src-renderer/level-clipboard';
 import { OpenSite } from '../../src-renderer/open-site.svelte';
 import { placementPlace, targetOf, type Target } from '../../src-renderer/places';
-import { addBayAfter, addLevelOnTop, duplicateBayHere, removeBayHere, removeLevelHere } from '../../src-renderer/rack-edits';
+import {
+  addBayAfter,
+  addBays,
+  addLevelOnTop,
+  copyRun,
+  duplicateBayHere,
+  duplicateLevelHere,
+  fillLike,
+  layOutRun,
+  removeBayHere,
+  removeLevelHere,
+  removeRunFrom,
+  shiftBay,
+  shiftLevelHere,
+  shiftRun,
+  swapLevelHere,
+} from '../../src-renderer/rack-edits';
 import { applyChange } from '../../src-renderer/site-change';
 import { MemoryHost } from './memory-host';
 import { smallSite } from './sites';
@@ -79,6 +97,55 @@ const EDITS: readonly ((open: OpenSite, a: number, b: number) => void)[] = [
     if (bayId !== undefined) open.edit('Change clear entry', (site) => editBay(site, bayId, { clearEntryMm: 2000 + (b % 2000) }));
   },
   (open, _, b) => void open.edit('Change mass', (site) => editEntry(site, 'unitLoads', 'crate', { goodsKg: b })),
+  // Levels: copied, pasted, duplicated, swapped, moved.
+  (open, a, b) => {
+    choose(open, a % 3, b % 3);
+    copyLevelHere(open);
+    choose(open, b % 3, a % 3);
+    pasteLevelHere(open);
+  },
+  (open, _, b) => void pasteLevelInto(open, open.run?.bays ?? [], 500 + (b % 5000)),
+  (open) => duplicateLevelHere(open),
+  (open, _, b) => swapLevelHere(open, b % 2 === 0 ? 1 : -1),
+  (open, _, b) => shiftLevelHere(open, b % 2 === 0 ? 1 : -1),
+  (open, a) => fillLike(open, open.run?.bays.slice(a % 4) ?? [], a % 2 === 0 ? 'levels' : 'levels and goods'),
+  // Templates: kept, changed, laid out by.
+  (open, a, b) => void (open.bay && keepTemplate(open, open.bay, `Template ${b}`, a % 2 === 0 ? 'with goods' : 'without goods')),
+  (open, _, b) => {
+    const id = open.site.bayTemplates.at(-1)?.id;
+    if (id !== undefined) open.edit('Change template', (site) => editEntry(site, 'bayTemplates', id, { clearEntryMm: 1000 + b }));
+  },
+  (open, a, b) => {
+    const plan = open.site.bayTemplates.at(-1);
+    if (plan && open.run) addBays(open, open.run, plan, { after: a % open.run.bays.length, count: 1 + (b % 3) });
+  },
+  (open, _, b) => {
+    const plan = open.site.bayTemplates.at(0);
+    if (plan) layOutRun(open, { name: `R${b}`, bays: 1 + (b % 4), plan, floorId: null, loadedBy: 'unknown' }, null);
+  },
+  // Runs and bays: duplicated, changing places, taken out.
+  (open) => open.run && copyRun(open, open.run),
+  (open, _, b) => open.run && shiftRun(open, open.run, b % 2 === 0 ? 1 : -1),
+  (open, _, b) => open.run && open.bay && shiftBay(open, open.run, open.bay, b % 2 === 0 ? 1 : -1),
+  (open) => open.run && removeRunFrom(open, open.run),
+];
+
+/** Beginnings of the names of steps that the random sequences are to have made, each of them at least once. */
+const STEPS = [
+  ...[
+    'Put Crate',
+    'Move Crate',
+    'Turn Crate',
+    'Duplicate 1 unit load',
+    'Take off Crate',
+    'Space',
+    'Add bay',
+    'Duplicate bay',
+    'Delete bay',
+    'Add a level',
+  ],
+  ...['Delete level', 'Change clear entry', 'Change mass', 'Paste a level', 'Duplicate level', 'Swap levels', 'Move level', 'Give'],
+  ...['Keep bay', 'Change template', 'Add 2 bays', 'Lay out run', 'Duplicate run', 'Move run', 'Move bay', 'Delete run'],
 ];
 
 function selectSome(open: OpenSite, a: number): boolean {
@@ -93,8 +160,9 @@ test('1,000 random sequences: undo-all gives the first file, redo-all the last, 
     { weight: 6, arbitrary: fc.record({ edit: fc.nat(EDITS.length - 1), a: fc.nat(50), b: fc.nat(5000) }) },
     { weight: 1, arbitrary: fc.constantFrom('undo' as const, 'redo' as const, 'save' as const) },
   );
+  const made = new Set<string>();
   await fc.assert(
-    fc.asyncProperty(fc.array(action, { maxLength: 14 }), async (actions) => {
+    fc.asyncProperty(fc.array(action, { maxLength: 20 }), async (actions) => {
       const { open, host } = await openSite(smallSite(), writingWorker);
       const first = writeSite(open.site);
       const onDisk = () => host.kept.get(open.id)?.body;
@@ -106,6 +174,7 @@ test('1,000 random sequences: undo-all gives the first file, redo-all the last, 
           // Time between edits, so that none is taken into the one before it.
           vi.advanceTimersByTime(2000);
           EDITS[one.edit]?.(open, one.a, one.b);
+          if (open.undoName !== null) made.add(open.undoName);
         }
         if (open.saved === 'saved') expect(writeSite(open.site)).toBe(onDisk());
         else if (writeSite(open.site) === onDisk()) expect(onDiskByAnotherWay(open)).toBe(true);
@@ -120,6 +189,7 @@ test('1,000 random sequences: undo-all gives the first file, redo-all the last, 
     }),
     { numRuns: 1000 },
   );
+  expect(STEPS.filter((name) => ![...made].some((one) => one.startsWith(name)))).toEqual([]);
 }, 120_000);
 
 /** Edits that lead back to the same content, like turning goods twice, are still edits since the save. */
