@@ -9,7 +9,7 @@ import { dateWords } from '../units/dates';
 import { say, type BeamSide, type Finding, type Place, type Text } from './finding';
 import { finding } from './make-finding';
 import { opening } from './phrase';
-import { RULE_SET_TITLES, type ResolvedRules } from './rule-sets';
+import { RULE_SET_TITLES, type ResolvedRules, type RuleSetName } from './rule-sets';
 
 export interface FoundBeamDamage {
   readonly id: string;
@@ -49,7 +49,7 @@ export const beamDamage = ({ place, level, damages, rules }: BeamDamageInput): r
         const part = opening(damagedPart(damage, level));
         const note = damage.note.trim() === '' ? '' : ` (${damage.note.trim()})`;
         const found = damage.found === '' ? 'The day on which it was found is not known.' : `Found on ${dateWords(damage.found)}.`;
-        return say`${part}${note} ${whyRed(damage, rules)} ${unloadForBeam(level)} ${found}`;
+        return say`${part}${note} ${whyRed(damage, rules.set)} ${unloadForBeam(level)} ${found}`;
       },
       notes: () => [
         say`A competent person confirms the class. No share of its rating is left to a damaged beam, and none is taken off by this program.`,
@@ -57,9 +57,10 @@ export const beamDamage = ({ place, level, damages, rules }: BeamDamageInput): r
     }),
   );
 
-function whyRed({ torn }: FoundBeamDamage, rules: ResolvedRules): string {
+/** The rest of a sentence that begins with the part. */
+export function whyRed({ torn }: Pick<FoundBeamDamage, 'torn'>, set: RuleSetName): string {
   if (torn) return 'has a dent, buckle, tear, split or cracked weld, which no millimetres excuse: red.';
-  return rules.set === 'united-states'
-    ? `is damaged, and the ${RULE_SET_TITLES[rules.set]} rule set asks to unload on any visible damage.`
+  return set === 'united-states'
+    ? `is damaged, and the ${RULE_SET_TITLES[set]} rule set asks to unload on any visible damage.`
     : 'is damaged. No limit is published that would excuse damage of a beam or its connectors, so it counts as red.';
 }

@@ -10,6 +10,7 @@ import type { Text } from '../checks/finding';
 import { daysBetween } from '../units/dates';
 import type { Id, Site } from '../site/site';
 import { visitActions } from './bay-actions';
+import { beamActions } from './beam-actions';
 import { closingOf, type Closing, type FollowUp, type Reduction } from './follow-up';
 import { damageActions } from './frame-actions';
 import type { Visit } from './visit';
@@ -87,7 +88,8 @@ export interface ActionInput {
  */
 export function actionsOf(input: ActionInput): readonly OpenAction[] {
   const { followUp, today } = input;
-  const actions = [...damageActions(input), ...visitActions(input)];
+  const byVisits = visitActions(input);
+  const actions = [...damageActions(input), ...beamActions(input, byVisits.sagsSince), ...byVisits.actions];
   return actions
     .map((action): OpenAction => ({
       ...action,

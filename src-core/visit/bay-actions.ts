@@ -1,9 +1,15 @@
 /**
  * What the visits of a bay ask for, one after the other: a finding stays until a later visit looks at
  * the same thing and finds it in order. What a visit did not look at it does not settle.
+ *
+ * What was carried into the site is told from there: damages and sags are told here only where an earlier
+ * program finished the bay, which carried no beams.
  */
 import type { LevelAudit } from '../audit/types';
+import { damagedPart, unloadForBeam } from '../checks/beam-damage';
+import { joined } from '../checks/beam-sag';
 import { say, type Text } from '../checks/finding';
+import { opening } from '../checks/phrase';
 import type { Bay, Id, Run } from '../site/site';
 import type { Action, ActionInput, ActionKind, LevelRef } from './actions';
 import { closingOf } from './follow-up';
@@ -17,14 +23,24 @@ interface Found {
   readonly kind: ActionKind;
   readonly says: Text;
   readonly levels: readonly LevelRef[];
+  /** It went into the site, which speaks of it from then on. */
+  readonly carried?: boolean;
 }
 
-interface Since {
+/** The visit that first found it, of those that found it without a break. */
+export interface Since {
   readonly visitId: string;
   readonly date: string;
 }
 
-export function visitActions(input: ActionInput): readonly Action[] {
+export interface ToldByVisits {
+  readonly actions: readonly Action[];
+  /** Since when each sag that the site speaks of has been found, by `sagKey`. */
+  readonly sagsSince: ReadonlyMap<string, Since>;
+}
+
+export function visitActions(input: ActionInput): ToldByVisits {
+  const sagsSince = new Map<string, Since>();
   const seen = new Map<Id, { readonly visitId: Id; readonly bay: BayVisit }[]>();
   for (const { id: visitId, bays } of input.visits.toSorted((a, b) => (a.started < b.started ? -1 : a.started > b.started ? 1 : 0)))
     for (const bay of bays)
@@ -33,7 +49,10 @@ export function visitActions(input: ActionInput): readonly Action[] {
         if (earlier === undefined) seen.set(bay.bayId, [{ visitId, bay }]);
         else earlier.push({ visitId, bay });
       }
-  return input.site.runs.flatMap((run) => run.bays.flatMap((bay) => bayActions(input, run, bay, seen.get(bay.id) ?? [])));
+  const actions = input.site.runs.flatMap((run) =>
+    run.bays.flatMap((bay) => bayActions(input, run, bay, seen.get(bay.id) ?? [], sagsSince)),
+  );
+  return { actions, sagsSince };
 }
 
 function bayActions(
@@ -41,6 +60,7 @@ function bayActions(
   run: Run,
   bay: Bay,
   visits: readonly { readonly visitId: Id; readonly bay: BayVisit }[],
+  sagsSince: Map<string, Since>,
 ): readonly Action[] {
   const open = new Map<string, { found: Found; since: Since }>();
   for (const { visitId, bay: seen } of visits) {
@@ -53,23 +73,47 @@ function bayActions(
       open.set(key, { found: one, since: before && !closed ? before.since : now });
     }
   }
-  return Array.from(open, ([key, { found, since }]) => ({
-    ...found,
-    id: idOf(key, since),
-    class: null,
-    runId: run.id,
-    frameId: null,
-    bayIds: [bay.id],
-    found: since.date,
-    due: null,
-  }));
+  for (const [key, { found, since }] of open) {
+    const closed = closingOf(input.followUp, idOf(key, since)) !== null;
+    if (closed || (!found.carried && !knownBySite(bay, key))) continue;
+    if (key.startsWith('sag:')) sagsSince.set(key, since);
+    open.delete(key);
+  }
+  return Array.from(
+    open,
+    ([
+      key,
+      {
+        found: { kind, says, levels },
+        since,
+      },
+    ]) => ({
+      kind,
+      says,
+      levels,
+      id: idOf(key, since),
+      class: null,
+      runId: run.id,
+      frameId: null,
+      bayIds: [bay.id],
+      found: since.date,
+      due: null,
+    }),
+  );
 }
 
 const idOf = (key: string, since: Since): string => `${key}@${since.visitId}`;
 
 const itemKey = (bay: BayVisit, item: ChecklistItem) => `${item}:${bay.bayId}`;
 const lockKey = (levelId: string, beam: string, end: string) => `lock:${levelId}:${beam}:${end}`;
-const sagKey = ({ levelId, beam }: SagReading) => `sag:${levelId}:${beam}`;
+export const sagKey = ({ levelId, beam }: Pick<SagReading, 'levelId' | 'beam'>) => `sag:${levelId}:${beam}`;
+
+/** Whether the site has the damage, or a reading of the beam, whoever put it there. */
+function knownBySite({ levels }: Bay, key: string): boolean {
+  const [what, about, beam] = key.split(':');
+  if (what === 'beam') return levels.some(({ beamDamages }) => beamDamages.some(({ id }) => id === about));
+  return what === 'sag' && levels.some(({ id, sags }) => id === about && sags.some((one) => one.beam === beam));
+}
 
 /** Whether the visit has looked at the same thing again, so that what an earlier one found no longer stands. */
 function settles(seen: BayVisit, key: string): boolean {
@@ -77,6 +121,7 @@ function settles(seen: BayVisit, key: string): boolean {
   const [what = ''] = key.split(':');
   if (what === 'lock') return checklist.locks !== 'not-looked-at';
   if (what === 'sag') return seen.sags.some((reading) => sagKey(reading) === key);
+  if (what === 'beam') return false;
   if (what === 'notice') return [checklist.notices, notice.there, notice.matches].some((answer) => answer !== 'not-looked-at');
   return what in checklist && checklist[what as ChecklistItem] !== 'not-looked-at';
 }
@@ -110,39 +155,36 @@ function foundAt(input: ActionInput, run: Run, bay: Bay, seen: BayVisit): Readon
       says: say`${differs.length > 0 ? joined(differs) : say`The load notice of bay ${bay.name} is not as it must be.`} No rating holds here until the supplier confirms one in writing.`,
       levels: [],
     });
-  for (const damage of seen.damages) if (damage.on === 'beam') found.set(`beam:${damage.id}`, beamDamage(damage, bay, level, nameOf));
+  const carried = seen.carried !== null;
+  for (const damage of seen.damages)
+    if (damage.on === 'beam')
+      found.set(`beam:${damage.id}`, {
+        ...beamDamage(damage, `${nameOf(damage.levelId)} of bay ${bay.name}`, level(damage.levelId)),
+        carried,
+      });
   const audits =
     seen.sags.length === 0
       ? []
       : (input.audit.runs.find(({ runId }) => runId === run.id)?.bays.find(({ bayId }) => bayId === bay.id)?.levels ?? []);
   for (const reading of seen.sags) {
     const audit = audits.find(({ levelId }) => levelId === reading.levelId);
-    const one = audit && sagFound(input, audit, reading, level);
-    if (one) found.set(sagKey(reading), one);
+    const one = audit && sagFound(input, audit, reading, level(reading.levelId));
+    if (one) found.set(sagKey(reading), { ...one, carried });
   }
   return found;
 }
 
-function beamDamage(damage: BeamDamage, bay: Bay, level: (id: string) => LevelRef, nameOf: (id: string) => string): Found {
-  const part = damage.member === 'beam' ? `${damage.beam} beam` : `connector of the ${damage.beam} beam`;
-  return {
-    kind: 'unload',
-    says: say`The ${part} of ${nameOf(damage.levelId)} of bay ${bay.name} is damaged${damage.note === '' ? '' : ` (${damage.note})`}. No millimetres excuse a damaged beam: unload the level at once and have the beam replaced by the maker’s own.`,
-    levels: [level(damage.levelId)],
-  };
-}
+const beamDamage = (damage: BeamDamage, of: string, level: LevelRef): Found => ({
+  kind: 'unload',
+  says: say`${opening(damagedPart(damage, of))} is damaged${damage.note === '' ? '' : ` (${damage.note})`}. No millimetres excuse a damaged beam. ${unloadForBeam(of)}`,
+  levels: [level],
+});
 
-function sagFound(input: ActionInput, audit: LevelAudit, reading: SagReading, level: (id: string) => LevelRef): Found | null {
+function sagFound(input: ActionInput, audit: LevelAudit, reading: SagReading, level: LevelRef): Found | null {
   const judged = judgeSagOfLevel(input.site, audit, reading);
   if (judged === null || judged.verdict !== 'over') return null;
-  return {
-    kind: judged.outOfUse ? 'out-of-use' : 'unload',
-    says: judged.outOfUse ? say`${joined(judged.says)} Unload the level, and take both beams out.` : joined(judged.says),
-    levels: [level(reading.levelId)],
-  };
+  return { kind: judged.outOfUse ? 'out-of-use' : 'unload', says: joined(judged.says), levels: [level] };
 }
-
-const joined = (texts: readonly Text[]): Text => texts.flatMap((text, i) => (i === 0 ? [...text] : [' ', ...text]));
 
 const PUT_RIGHT: Readonly<Record<ChecklistItem, (bay: Bay) => Text>> = {
   locks: (bay) =>

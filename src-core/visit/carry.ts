@@ -1,27 +1,93 @@
 /** Carries what a bay's visit found into the site, so that its checks know of it from then on. */
-import type { Answer, Bay, Damage, Frame, Id, Level, Site } from '../site/site';
+import type { Answer, Bay, Frame, Id, Level, Site } from '../site/site';
+import { carrySags, damagesBefore, sameFind, withBeamDamages, withFrameDamages, type Finds } from './carry-finds';
 import { differences } from './differences';
-import { bayOf } from './edits';
-import type { BayVisit, FrameDamage, Seen, Visit } from './visit';
+import { bayOf, finishBay, markCarried } from './edits';
+import { closingOf, type FollowUp } from './follow-up';
+import type { BayVisit, Seen, SeenDamage, Visit } from './visit';
 
 /**
- * Damage of frames and plumb readings as they were measured; locks and anchors as they were answered.
- * What was not looked at stays as the site has it. Damage keeps its id, so that carrying twice changes
- * nothing. Places that the site no longer has are left out.
+ * Damages and plumb readings as they were measured, sag readings of beams, locks and anchors as they were
+ * answered. What was not looked at stays as the site has it. Damage keeps its id, so that carrying twice
+ * changes nothing; what this visit carried before and no longer has is taken back. Places that the site no
+ * longer has are left out.
  * @returns the same site where nothing of it changes
  * @throws RangeError if the visit has no such bay
  */
-export function carryIntoSite(site: Site, visit: Visit, bayId: Id): Site {
-  const seen = bayOf(visit, bayId);
+export const carryIntoSite = (site: Site, visit: Visit, bayId: Id): Site => carried(site, bayOf(visit, bayId));
+
+export interface Finishing {
+  readonly bayId: Id;
+  readonly person: string;
+  readonly date: string;
+  readonly followUp: FollowUp;
+  readonly newId: () => Id;
+}
+
+/**
+ * Finishes a bay and carries it. What was closed since it was carried, and is not in the site any more, is
+ * not carried again; where it was measured anew meanwhile it has come back, and is a new damage under an id
+ * of its own, so that what was closed stays closed.
+ * @throws RangeError if the visit is signed, has no such bay, or the bay is finished already
+ */
+export function finishInto(
+  site: Site,
+  visit: Visit,
+  { bayId, followUp, newId, ...by }: Finishing,
+): { readonly site: Site; readonly visit: Visit } {
+  const before = bayOf(visit, bayId);
+  const known = damagesBefore(site);
+  const was = before.carried;
+  const settled = (damage: SeenDamage): boolean =>
+    !known.has(damage.id) && ['damage', 'beam-damage'].some((kind) => closingOf(followUp, `${kind}:${damage.id}`) !== null);
+  const asCarried = (damage: SeenDamage): boolean => was?.damages.some((one) => sameFind(one, damage)) ?? false;
+  let after = visit;
+  for (const damage of before.damages)
+    if (settled(damage) && !asCarried(damage)) after = swapDamage(after, bayId, damage.id, { ...damage, id: newId() });
+  after = finishBay(after, bayId, by);
+  const seen = bayOf(after, bayId);
+  const own = new Set(was?.damages.map(({ id }) => id));
+  // Whoever replaces the beams of a level takes the readings of both off.
+  const replaced = ({ levelId, beam }: BayVisit['sags'][number]) =>
+    followUp.closings.some(({ actionId }) => actionId.startsWith(`sag:${levelId}:`)) && !hasReading(site, levelId, beam);
+  const carrying: BayVisit = {
+    ...seen,
+    damages: seen.damages.filter((damage) => !settled(damage)),
+    sags: seen.sags.filter((reading) => !(replaced(reading) && was?.sags.some((one) => sameFind(one, reading)))),
+  };
+  return {
+    site: carried(site, carrying),
+    visit: markCarried(after, bayId, { damages: seen.damages.filter(({ id }) => own.has(id) || !known.has(id)), sags: seen.sags }),
+  };
+}
+
+const swapDamage = (visit: Visit, bayId: Id, oldId: Id, damage: SeenDamage): Visit => {
+  const { damages } = bayOf(visit, bayId);
+  const others = damages.map((one) => (one.id === oldId ? damage : one));
+  return { ...visit, bays: visit.bays.map((bay) => (bay.bayId === bayId ? { ...bay, damages: others } : bay)) };
+};
+
+const hasReading = (site: Site, levelId: Id, beam: 'front' | 'rear'): boolean =>
+  site.runs.some(({ bays }) =>
+    bays.some(({ levels }) => levels.some(({ id, sags }) => id === levelId && sags.some((one) => one.beam === beam))),
+  );
+
+function carried(site: Site, seen: BayVisit): Site {
+  const finds: Finds = { damages: seen.damages, was: seen.carried, places: placesOf(site) };
   const runs = mapped(site.runs, (run) => {
-    const index = run.bays.findIndex(({ id }) => id === bayId);
+    const index = run.bays.findIndex(({ id }) => id === seen.bayId);
     const own = new Set([run.frames[index]?.id, run.frames[index + 1]?.id]);
-    const frames = mapped(run.frames, (frame) => carryIntoFrame(frame, seen, index >= 0 && own.has(frame.id)));
-    const bays = mapped(run.bays, (bay) => (bay.id === bayId ? carryIntoBay(bay, seen) : bay));
+    const frames = mapped(run.frames, (frame) => carryIntoFrame(frame, seen, finds, index >= 0 && own.has(frame.id)));
+    const bays = mapped(run.bays, (bay) => carryIntoBay(bay, seen, finds));
     return frames === run.frames && bays === run.bays ? run : { ...run, frames, bays };
   });
   return runs === site.runs ? site : { ...site, runs };
 }
+
+const placesOf = (site: Site): ReadonlySet<Id> =>
+  new Set(
+    site.runs.flatMap(({ frames, bays }) => [...frames.map(({ id }) => id), ...bays.flatMap(({ levels }) => levels.map(({ id }) => id))]),
+  );
 
 /** The same list where every entry stays the same. */
 function mapped<T>(all: readonly T[], change: (one: T) => T): readonly T[] {
@@ -31,42 +97,30 @@ function mapped<T>(all: readonly T[], change: (one: T) => T): readonly T[] {
 
 const answered = (seen: Seen, before: Answer): Answer => (seen === 'not-looked-at' ? before : seen);
 
-function carryIntoBay(bay: Bay, { checklist, missingLocks }: BayVisit): Bay {
-  if (checklist.locks === 'not-looked-at') return bay;
-  const without = new Set(missingLocks.map(({ levelId }) => levelId));
-  const locksOf = ({ id }: Level): Answer => {
-    if (checklist.locks === 'yes') return 'yes';
-    // "Not all are there", without saying where: none of the levels is known to be locked.
-    return without.size === 0 || without.has(id) ? 'no' : 'yes';
-  };
-  const levels = mapped(bay.levels, (level) => (locksOf(level) === level.locks ? level : { ...level, locks: locksOf(level) }));
+function carryIntoBay(bay: Bay, seen: BayVisit, finds: Finds): Bay {
+  const own = bay.id === seen.bayId;
+  const levels = mapped(bay.levels, (level) => {
+    const beamDamages = withBeamDamages(level, finds);
+    const sags = own ? carrySags(level, seen) : level.sags;
+    const locks = own ? locksOf(level, seen) : level.locks;
+    return beamDamages === level.beamDamages && sags === level.sags && locks === level.locks
+      ? level
+      : { ...level, locks, beamDamages, sags };
+  });
   return levels === bay.levels ? bay : { ...bay, levels };
 }
 
-function carryIntoFrame(frame: Frame, { checklist, plumb, damages }: BayVisit, ofBay: boolean): Frame {
+function locksOf({ id, locks }: Level, { checklist, missingLocks }: BayVisit): Answer {
+  if (checklist.locks !== 'no') return answered(checklist.locks, locks);
+  const without = new Set(missingLocks.map(({ levelId }) => levelId));
+  // "Not all are there", without saying where: none of the levels is known to be locked.
+  return without.size === 0 || without.has(id) ? 'no' : 'yes';
+}
+
+function carryIntoFrame(frame: Frame, { checklist, plumb }: BayVisit, finds: Finds, ofBay: boolean): Frame {
   const reading = plumb.find(({ frameId }) => frameId === frame.id);
-  const own = damages.filter((damage): damage is FrameDamage => damage.on === 'frame' && damage.frameId === frame.id);
   const anchored = ofBay ? answered(checklist.anchors, frame.anchored) : frame.anchored;
   const { frameId: _, ...offsets } = reading ?? { frameId: '' };
-  const after = {
-    ...frame,
-    anchored,
-    plumb: 'heightMm' in offsets ? offsets : frame.plumb,
-    damages: own.reduce(withDamage, frame.damages),
-  };
+  const after = { ...frame, anchored, plumb: 'heightMm' in offsets ? offsets : frame.plumb, damages: withFrameDamages(frame, finds) };
   return differences(frame, after).length === 0 ? frame : after;
 }
-
-function withDamage(damages: readonly Damage[], { on: _, frameId: __, ...damage }: FrameDamage): readonly Damage[] {
-  return damages.some(({ id }) => id === damage.id) ? damages.map((one) => (one.id === damage.id ? damage : one)) : [...damages, damage];
-}
-
-/** A damage that was repaired is no longer the frame's; its record stays. */
-export const repaired = (site: Site, damageId: Id): Site => ({
-  ...site,
-  runs: site.runs.map((run) =>
-    run.frames.some(({ damages }) => damages.some(({ id }) => id === damageId))
-      ? { ...run, frames: run.frames.map((frame) => ({ ...frame, damages: frame.damages.filter(({ id }) => id !== damageId) })) }
-      : run,
-  ),
-});

@@ -68,7 +68,7 @@ const isObject = (value: unknown): value is Things => typeof value === 'object' 
 /** What a thing of a list is told by: its own id, or that of what it speaks of. */
 function idOf(one: unknown): string | null {
   if (!isObject(one)) return null;
-  for (const key of ['id', 'levelId', 'bayId', 'frameId']) {
+  for (const key of ['id', 'levelId', 'bayId', 'frameId', 'beam']) {
     const value = one[key];
     if (typeof value === 'string') return [value, ...['beam', 'check', 'end'].map((more) => one[more] ?? '')].join(' ');
   }

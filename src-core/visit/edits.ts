@@ -9,6 +9,7 @@ import {
   CHECKLIST,
   unseenBay,
   type BayVisit,
+  type Carried,
   type ChecklistItem,
   type MissingLock,
   type NoticeSeen,
@@ -60,6 +61,9 @@ export function bayOf(visit: Visit, bayId: Id): BayVisit {
 /** What was not looked at stays so: finishing says that no more will be looked at, not that all is well. */
 export const finishBay = (visit: Visit, bayId: Id, by: { readonly person: string; readonly date: string }): Visit =>
   changed(visit, bayId, (bay) => ({ ...bay, ...by, finished: true }));
+
+/** Notes what finishing put into the site, so that the site can follow when the bay is taken up again. */
+export const markCarried = (visit: Visit, bayId: Id, carried: Carried): Visit => swapped(visit, { ...bayOf(visit, bayId), carried });
 
 export function resumeBay(visit: Visit, bayId: Id): Visit {
   unsigned(visit);

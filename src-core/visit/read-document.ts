@@ -9,13 +9,17 @@ export interface DocumentKind<T> {
   readonly version: number;
   /** The document with its version. */
   readonly field: Field<T & { readonly version: number }>;
+  /** One step a version, from the given one to the next, on a copy; where the document is not as it must be it stays so. */
+  readonly steps?: Readonly<Record<number, (json: Readonly<Record<string, unknown>>) => unknown>>;
 }
 
 export type DocumentReading<T> =
   { readonly ok: true; readonly document: T } | { readonly ok: false; readonly problems: readonly Problem[] };
 
-/** The document in parsed JSON; the answer's parts are the given data itself. A newer version is refused by its number. */
-export function readDocument<T extends object>({ noun, version, field }: DocumentKind<T>, json: unknown): DocumentReading<T> {
+/** The document in parsed JSON; the answer's parts are the given data itself. An earlier version is raised, a newer one refused by its number. */
+export function readDocument<T extends object>(kind: DocumentKind<T>, given: unknown): DocumentReading<T> {
+  const { noun, version, field } = kind;
+  const json = raised(kind, given);
   if (isRecord(json) && typeof json.version === 'number' && json.version > version) {
     const message = `This ${noun} was saved by a newer program (file version ${json.version}; this program reads up to ${version}). Open it there, or update this program.`;
     return { ok: false, problems: [{ path: 'version', message }] };
@@ -31,6 +35,16 @@ export function readDocument<T extends object>({ noun, version, field }: Documen
   if (reader.problems.length > 0) return { ok: false, problems: reader.problems.slice(0, LIMITS.problems) };
   const { version: _, ...document } = json as T & { version: number };
   return { ok: true, document: document as unknown as T };
+}
+
+function raised<T extends object>({ version, steps = {} }: DocumentKind<T>, given: unknown): unknown {
+  let json = given;
+  while (isRecord(json) && typeof json.version === 'number' && json.version < version) {
+    const step = steps[json.version];
+    if (step === undefined) break;
+    json = step(json);
+  }
+  return json;
 }
 
 /**

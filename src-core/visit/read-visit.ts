@@ -4,7 +4,7 @@
  * Bays, frames and levels are only named by id here. The site may have changed since the visit, and
  * a visit outlives what it saw: what the site no longer has is left out where it is shown.
  */
-import { choice, date, flag, isRecord, nullable, number, quote, report, text, type Reader } from '../site/fields';
+import { choice, date, flag, isRecord, nullable, number, quote, report, text, type Field, type Reader } from '../site/fields';
 import { ownId } from '../site/ids';
 import { LIMITS } from '../site/limits';
 import { list, record, variant } from '../site/records';
@@ -16,6 +16,7 @@ import {
   VISIT_KINDS,
   type BayVisit,
   type BeamDamage,
+  type Carried,
   type ChecklistItem,
   type FrameDamage,
   type MissingLock,
@@ -45,30 +46,31 @@ const checklist = record<Readonly<Record<ChecklistItem, Seen>>>('checklist', {
   floor: seen,
 });
 
-const damage = variant<SeenDamage, 'on'>('damage', 'on', {
-  frame: record<FrameDamage>('damage of a frame', {
-    id: ownId(),
-    on: choice(['frame']),
-    frameId: namedId('frame'),
-    member: choice(FRAME_MEMBERS),
-    alongMm: measured,
-    acrossMm: measured,
-    gaugeMm: aLength,
-    torn: flag,
-    note: someText,
-    found: date,
-  }),
-  beam: record<BeamDamage>('damage of a beam', {
-    id: ownId(),
-    on: choice(['beam']),
-    levelId: namedId('level'),
-    beam,
-    member: choice(BEAM_MEMBERS),
-    torn: flag,
-    note: someText,
-    found: date,
-  }),
-});
+const damageOf = (id: Field<string>) =>
+  variant<SeenDamage, 'on'>('damage', 'on', {
+    frame: record<FrameDamage>('damage of a frame', {
+      id,
+      on: choice(['frame']),
+      frameId: namedId('frame'),
+      member: choice(FRAME_MEMBERS),
+      alongMm: measured,
+      acrossMm: measured,
+      gaugeMm: aLength,
+      torn: flag,
+      note: someText,
+      found: date,
+    }),
+    beam: record<BeamDamage>('damage of a beam', {
+      id,
+      on: choice(['beam']),
+      levelId: namedId('level'),
+      beam,
+      member: choice(BEAM_MEMBERS),
+      torn: flag,
+      note: someText,
+      found: date,
+    }),
+  });
 
 const notice = record<NoticeSeen>('notice as seen', {
   there: seen,
@@ -104,6 +106,12 @@ const photo = record<Photo>('photo', {
   note: someText,
 });
 
+/** By their ids the damages are those of the visit, or were. */
+const carried = record<Carried>('what was put into the site', {
+  damages: list('damages', damageOf(namedId('damage')), LIMITS.damagesOnFrame),
+  sags: list('sag readings', sag, LIMITS.levelsInBay * 2),
+});
+
 const bay = record<BayVisit>('bay of a visit', {
   runId: namedId('run'),
   bayId: namedId('bay'),
@@ -117,19 +125,21 @@ const bay = record<BayVisit>('bay of a visit', {
     LIMITS.levelsInBay * 4,
   ),
   notice,
-  damages: list('damages', damage, LIMITS.damagesOnFrame),
+  damages: list('damages', damageOf(ownId()), LIMITS.damagesOnFrame),
   sags: list('sag readings', sag, LIMITS.levelsInBay * 2),
   plumb: list('plumb readings', plumb, 2),
   photos: list('photos', photo, LIMITS.rows),
   notes: text(LIMITS.notesLength),
+  carried: nullable(carried, 'where nothing was put into the site yet'),
 });
 
 /** Version of the file; a newer one is refused by its number. */
-export const VISIT_VERSION = 1;
+export const VISIT_VERSION = 2;
 
 const kind: DocumentKind<Visit> = {
   noun: 'visit',
   version: VISIT_VERSION,
+  steps: { 1: withCarried },
   field: record(
     'visit',
     {
@@ -151,6 +161,12 @@ export const readVisit = (json: unknown): DocumentReading<Visit> => readDocument
 
 /** @throws RangeError if the visit holds what `readVisit` would refuse in a single value, quoting it */
 export const writeVisit = (visit: Visit): string => writeDocument(kind, visit);
+
+/** Version 1 did not say what was put into the site, and beams never were. */
+function withCarried(json: Readonly<Record<string, unknown>>): unknown {
+  const bays = Array.isArray(json.bays) ? json.bays.map((one: unknown) => (isRecord(one) ? { ...one, carried: null } : one)) : json.bays;
+  return { ...json, version: 2, bays };
+}
 
 function eachBayOnce({ bays }: Readonly<Record<string, unknown>>, reader: Reader): void {
   if (!Array.isArray(bays)) return;

@@ -53,6 +53,15 @@ export interface BayVisit {
   readonly plumb: readonly PlumbSeen[];
   readonly photos: readonly Photo[];
   readonly notes: string;
+  /** What finishing put into the site; null before that, and where an earlier program finished it, which carried no beams. */
+  readonly carried: Carried | null;
+}
+
+/** What a bay's visit put into the site, as it was when it did. */
+export interface Carried {
+  /** Those that the site did not know before. */
+  readonly damages: readonly SeenDamage[];
+  readonly sags: readonly SagReading[];
 }
 
 export interface MissingLock {
@@ -172,6 +181,7 @@ export const unseenBay = (runId: Id, bayId: Id): BayVisit => ({
   plumb: [],
   photos: [],
   notes: '',
+  carried: null,
 });
 
 export interface VisitStart {

@@ -49,8 +49,8 @@ function damaged(path: readonly (string | number)[], value: unknown): unknown {
 }
 
 test.each([
-  [['version'], 2, 'version', 'newer program'],
-  [['version'], 0, 'version', 'from 1 to 1'],
+  [['version'], 3, 'version', 'newer program'],
+  [['version'], 0, 'version', 'from 2 to 2'],
   [['name'], ' ', 'name', 'visible'],
   [['kind'], 'monthly', 'kind', '"weekly"'],
   [['started'], '2026-02-30', 'started', 'YYYY-MM-DD'],
