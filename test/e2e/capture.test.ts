@@ -1,10 +1,11 @@
 /**
  * From an empty program to a saved run of 10 bays by 5 levels with goods and a load notice, by keys
- * alone and by the mouse alone. One action is a key or chord, a click, a drag, or one filled field.
+ * alone and by the mouse alone; the run is filled like its first bay, or laid out by a template kept
+ * from a bay. One action is a key or chord, a click, a drag, or one filled field.
  */
 import type { Locator, Page } from 'playwright-core';
 import { afterAll, expect, test } from 'vitest';
-import { closeBrowser } from './program';
+import { closeBrowser, type Program } from './program';
 import { checked, eventually, field, withProgram } from './steps';
 
 afterAll(closeBrowser);
@@ -69,7 +70,8 @@ async function watchDevices(page: Page): Promise<() => Promise<{ keys: number; p
   return () => page.evaluate(() => (globalThis as unknown as { seen: { keys: number; pointers: number } }).seen);
 }
 
-async function byKeysAlone(page: Page, hands: Hands): Promise<void> {
+/** A site with one run, whose first bay has goods on every level. */
+async function firstBayByKeys(page: Page, hands: Hands, bays: number): Promise<void> {
   await hands.press('Tab');
   await hands.type(/^Name of a new site/, 'Quayside store');
   await hands.press('Enter');
@@ -80,7 +82,7 @@ async function byKeysAlone(page: Page, hands: Hands): Promise<void> {
   await hands.press('Enter');
   await page.getByRole('dialog', { name: 'New run of bays' }).waitFor();
   await hands.press('Tab');
-  await hands.type(/^Number of bays/, String(RUN.bays));
+  await hands.type(/^Number of bays/, String(bays));
   await hands.press('Tab', 2);
   await hands.type(/^Beam levels/, String(RUN.levels));
   await hands.press('Tab', 4);
@@ -106,7 +108,10 @@ async function byKeysAlone(page: Page, hands: Hands): Promise<void> {
     await hands.press('Control+V');
     await eventually(() => page.locator('[data-placement]').count()).toBe(level);
   }
+}
 
+async function byKeysAlone(page: Page, hands: Hands): Promise<void> {
+  await firstBayByKeys(page, hands, RUN.bays);
   await hands.press('Control+K');
   await hands.type(/^Command/, 'give other bays');
   await hands.press('Enter');
@@ -117,35 +122,71 @@ async function byKeysAlone(page: Page, hands: Hands): Promise<void> {
   await hands.press('Control+S');
 }
 
-async function byMouseAlone(page: Page, hands: Hands): Promise<void> {
-  const button = (name: string | RegExp) => page.getByRole('button', { name, exact: true }).first();
+async function byKeysAndTemplate(page: Page, hands: Hands): Promise<void> {
+  await firstBayByKeys(page, hands, 1);
+  await hands.press('Control+Shift+S');
+  await page.getByRole('dialog', { name: 'Keep bay A1 as a template' }).waitFor();
+  await hands.press('Enter');
+  await page.getByRole('dialog').waitFor({ state: 'detached' });
+
+  await hands.press('Control+K');
+  await hands.type(/^Command/, 'new run');
+  await hands.press('Enter');
+  await page.getByRole('dialog', { name: 'New run of bays' }).waitFor();
+  await hands.press('Tab');
+  await hands.type(/^Number of bays/, String(RUN.bays));
+  await hands.press('Enter');
+  await page.getByRole('dialog').waitFor({ state: 'detached' });
+  await hands.press('Control+S');
+}
+
+const button = (page: Page, name: string) => page.getByRole('button', { name, exact: true }).first();
+
+async function firstBayByMouse(page: Page, hands: Hands, bays: number): Promise<void> {
   await hands.fill(page.getByLabel('Name of a new site'), 'Quayside store');
-  await hands.click(button('Make site'));
-  await hands.click(button('Lay out a run…'));
+  await hands.click(button(page, 'Make site'));
+  await hands.click(button(page, 'Lay out a run…'));
   const run = page.getByRole('dialog', { name: 'New run of bays' });
-  await hands.fill(field(run, 'Number of bays'), String(RUN.bays));
+  await hands.fill(field(run, 'Number of bays'), String(bays));
   await hands.fill(field(run, 'Beam levels'), String(RUN.levels));
   await hands.fill(field(run, 'Rating of each level'), String(RUN.levelKg));
   await hands.fill(field(run, 'Unit loads per level'), String(RUN.unitLoadsPerLevel));
-  await hands.click(button('Lay out the run'));
+  await hands.click(button(page, 'Lay out the run'));
 
-  await hands.click(button('Add goods…'));
+  await hands.click(button(page, 'Add goods…'));
   const form = page.locator('[data-form]').first();
   await hands.fill(field(form, 'Name'), GOODS.name);
   await hands.fill(field(form, 'Mass without pallet'), String(GOODS.goodsKg));
-  await hands.click(button('Put on this level'));
+  await hands.click(button(page, 'Put on this level'));
   for (let level = 2; level <= RUN.levels; level += 1) {
     await hands.click(page.locator(`[data-level="${level}"]`), { x: 4, y: 4 });
     await page.locator(`[data-level="${level}"][aria-current="true"]`).waitFor();
-    await hands.click(button('Put on this level'));
+    await hands.click(button(page, 'Put on this level'));
     await eventually(() => page.locator('[data-placement]').count()).toBe(level);
   }
+}
 
-  await hands.click(button('Menu'));
-  await hands.click(button('Give other bays this bay’s goods or levels…'));
-  await hands.click(button('Fill'));
+async function byMouseAlone(page: Page, hands: Hands): Promise<void> {
+  await firstBayByMouse(page, hands, RUN.bays);
+  await hands.click(button(page, 'Menu'));
+  await hands.click(button(page, 'Give other bays this bay’s goods or levels…'));
+  await hands.click(button(page, 'Fill'));
   await page.getByRole('dialog').waitFor({ state: 'detached' });
-  await hands.click(button('Save'));
+  await hands.click(button(page, 'Save'));
+}
+
+async function byMouseAndTemplate(page: Page, hands: Hands): Promise<void> {
+  await firstBayByMouse(page, hands, 1);
+  await hands.click(button(page, 'Bay…'));
+  await hands.click(button(page, 'Keep this bay as a template…'));
+  await hands.click(button(page, 'Keep it'));
+  await page.getByRole('dialog').waitFor({ state: 'detached' });
+  await hands.click(button(page, 'Menu'));
+  await hands.click(button(page, 'New run of bays…'));
+  await hands.fill(field(page.getByRole('dialog', { name: 'New run of bays' }), 'Number of bays'), String(RUN.bays));
+  await hands.click(button(page, 'Lay out the run'));
+  await page.getByRole('dialog').waitFor({ state: 'detached' });
+  await hands.click(button(page, 'Save'));
 }
 
 interface SavedFile {
@@ -162,7 +203,12 @@ interface SavedFile {
   };
 }
 
-async function expectSaved(page: Page, siteFiles: () => Promise<ReadonlyMap<string, string>>): Promise<void> {
+/** @param runs how many bays each run has; the last is the one of ten */
+async function expectSaved(
+  page: Page,
+  siteFiles: () => Promise<ReadonlyMap<string, string>>,
+  runs: readonly number[] = [RUN.bays],
+): Promise<void> {
   await page
     .getByText(/^All changes saved/)
     .first()
@@ -173,10 +219,8 @@ async function expectSaved(page: Page, siteFiles: () => Promise<ReadonlyMap<stri
   expect(site.name).toBe('Quayside store');
   expect(site.unitLoads).toMatchObject([GOODS]);
   expect(site.notices).toMatchObject([{ levelKg: [RUN.levelKg], unitLoadsPerLevel: RUN.unitLoadsPerLevel }]);
-  expect(site.runs).toHaveLength(1);
-  const bays = site.runs[0]?.bays ?? [];
-  expect(bays).toHaveLength(RUN.bays);
-  for (const bay of bays) {
+  expect(site.runs.map((run) => run.bays.length)).toEqual(runs);
+  for (const bay of site.runs.flatMap((run) => run.bays)) {
     expect(bay.noticeId).toBe(site.notices[0]?.id);
     expect(bay.levels).toHaveLength(RUN.levels);
     for (const level of bay.levels) expect(level.placements.map((one) => one.unitLoadId)).toEqual([site.unitLoads[0]?.id]);
@@ -184,25 +228,39 @@ async function expectSaved(page: Page, siteFiles: () => Promise<ReadonlyMap<stri
   await checked(page);
 }
 
+/** From the empty program to the saved file; gives the number of actions. */
+async function capture(
+  { page, siteFiles }: Program,
+  by: 'keys' | 'mouse',
+  way: (page: Page, hands: Hands) => Promise<void>,
+  runs: readonly number[] = [RUN.bays],
+): Promise<number> {
+  await page.getByRole('heading', { name: 'Nothing here yet' }).waitFor();
+  const devices = await watchDevices(page);
+  const hands = new Hands(page);
+  await way(page, hands);
+  await expectSaved(page, siteFiles, runs);
+  // By the mouse, text goes into a filled field at once; no key moves, chooses or presses anything.
+  expect(await devices()).toEqual(by === 'keys' ? { keys: hands.strokes, pointers: 0 } : { keys: 0, pointers: hands.strokes });
+  return hands.actions;
+}
+
 test('by keys alone, in fewer than 60 actions', () =>
-  withProgram(async ({ page, siteFiles }) => {
-    await page.getByRole('heading', { name: 'Nothing here yet' }).waitFor();
-    const devices = await watchDevices(page);
-    const hands = new Hands(page);
-    await byKeysAlone(page, hands);
-    await expectSaved(page, siteFiles);
-    expect(await devices()).toEqual({ keys: hands.strokes, pointers: 0 });
-    expect(hands.actions).toBeLessThan(MOST_ACTIONS);
+  withProgram(async (program) => {
+    expect(await capture(program, 'keys', byKeysAlone)).toBeLessThan(MOST_ACTIONS);
   }));
 
 test('by the mouse alone, in fewer than 60 actions', () =>
-  withProgram(async ({ page, siteFiles }) => {
-    await page.getByRole('heading', { name: 'Nothing here yet' }).waitFor();
-    const devices = await watchDevices(page);
-    const hands = new Hands(page);
-    await byMouseAlone(page, hands);
-    await expectSaved(page, siteFiles);
-    // Text goes into a filled field at once; no key moves, chooses or presses anything.
-    expect(await devices()).toEqual({ keys: 0, pointers: hands.strokes });
-    expect(hands.actions).toBeLessThan(MOST_ACTIONS);
+  withProgram(async (program) => {
+    expect(await capture(program, 'mouse', byMouseAlone)).toBeLessThan(MOST_ACTIONS);
+  }));
+
+test('by keys alone from a template that is kept on the way, in fewer than 60 actions', () =>
+  withProgram(async (program) => {
+    expect(await capture(program, 'keys', byKeysAndTemplate, [1, RUN.bays])).toBeLessThan(MOST_ACTIONS);
+  }));
+
+test('by the mouse alone from a template that is kept on the way, in fewer than 60 actions', () =>
+  withProgram(async (program) => {
+    expect(await capture(program, 'mouse', byMouseAndTemplate, [1, RUN.bays])).toBeLessThan(MOST_ACTIONS);
   }));
