@@ -6,6 +6,7 @@ import type { FrameBay } from '../checks/frame-rating';
 import { frameStorey, type FrameStoreyAnswer } from '../checks/frame-storey';
 import { anchorPull, heightToDepth, type Asked } from '../checks/height-to-depth';
 import { plumb } from '../checks/plumb';
+import { perhapsTied } from '../site/behind';
 import type { Answer, FrameType } from '../site/site';
 import { weightOf } from '../units/quantity';
 import { asked, type BayWork, type FrameWork, type SiteContext } from './context';
@@ -117,6 +118,8 @@ function standingFindings(context: SiteContext, work: FrameWork, contents: Frame
   const top = contents.levels.at(-1)?.highest ?? null;
   const depthMissing = frameTypesMissing([{ frame, type: null }])[0] as Missing;
   const slender = { place, frame: nameOf(work), height: top, depth: type?.depthMm ?? null, depthMissing, rules };
+  // Asked only where it is told: putting the run behind together is work.
+  const behind = frame.damages.length > 0 && perhapsTied(run) ? work.behind() : [];
   const found: Finding[] = [];
   if (asked(context, 'height-to-depth'))
     found.push(
@@ -164,10 +167,8 @@ function standingFindings(context: SiteContext, work: FrameWork, contents: Frame
       ...frameDamage({
         place,
         frame: nameOf(work),
-        unload: [
-          ...baysOf(work).map(({ bay }) => `bay ${bay.bay.name}`),
-          ...(run.backToBack?.rowSpacers === 'yes' ? work.behind().map((one) => `the bays at ${nameOf(one)} behind it`) : []),
-        ],
+        unload: [...baysOf(work).map(({ bay }) => `bay ${bay.bay.name}`), ...behind.map((one) => `the bays at ${nameOf(one)} behind it`)],
+        perhapsTied: behind[0] !== undefined && run.backToBack?.rowSpacers === 'unknown' ? `run ${behind[0].run.name}` : null,
         damages: frame.damages,
         twoAmbersMakeRed: context.site.rules.twoAmbersMakeRed,
         rules,

@@ -14,6 +14,8 @@ export interface FrameDamageInput {
   readonly frame: string;
   /** What a red frame has to be relieved of: "bay A1", "bay A2", and those tied to it from behind. */
   readonly unload: readonly string[];
+  /** "run B" where it is not known whether it is tied to the frame from behind, and so counts as tied. */
+  readonly perhapsTied: string | null;
   readonly damages: readonly FoundDamage[];
   readonly twoAmbersMakeRed: boolean;
   readonly rules: ResolvedRules;
@@ -100,8 +102,14 @@ function bent({ direction, measuredMm, ratio, limitMm }: Bend, { gaugeMm }: Foun
     : say`${so}, where this site allows no bend at all`;
 }
 
-const unloadNow = ({ unload }: FrameDamageInput): Text =>
-  say`Unload every level of ${listed(unload)} at once, bar them from reloading, and have the part repaired with the maker’s own.`;
+const unloadNow = ({ unload, perhapsTied }: FrameDamageInput): Text => {
+  const now = say`Unload every level of ${listed(unload)} at once, bar them from reloading, and have the part repaired with the maker’s own.`;
+  return perhapsTied === null ? now : say`${now} ${countsAsTied(perhapsTied)}`;
+};
+
+/** Whoever unloads had better unload too much. */
+export const countsAsTied = (run: string): Text =>
+  say`Whether row spacers tie ${run} behind it to this frame is not known, so it counts as tied.`;
 
 function notesOf({ rules }: FrameDamageInput, { bends, because }: DamageJudged): readonly Text[] {
   const origins = [...new Set(bends.map(({ rule }) => sourceOf(rules, rule)))];

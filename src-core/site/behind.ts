@@ -9,16 +9,19 @@ const NOMINAL_UPRIGHT = 100;
 /** Frames tied by row spacers stand directly behind each other, within this many mm. */
 const BEHIND = 200;
 
+/** Whether a run behind is tied to this one by row spacers. Spacers not known count as there. */
+export const perhapsTied = ({ backToBack }: Run): boolean => backToBack !== null && backToBack.rowSpacers !== 'no';
+
 /**
  * The bays behind a frame: those at the frame tied to it, or the one that stands there. Where the two
  * runs are not equally long it is not known at which end they are flush; then what could stand behind
  * in either case is given, because whoever unloads had better unload too much.
  *
- * Empty where nothing is tied: no run behind, or no row spacers. Spacers not known count as there.
+ * Empty where nothing is tied, as `perhapsTied` has it.
  * @throws RangeError if the run has no such frame
  */
 export function baysBehind(site: Site, run: Run, frameIndex: number): readonly { readonly runId: Id; readonly bay: Bay }[] {
-  if (run.backToBack === null || run.backToBack.rowSpacers === 'no') return [];
+  if (run.backToBack === null || !perhapsTied(run)) return [];
   const { runId } = run.backToBack;
   const behind = site.runs.find(({ id }) => id === runId);
   if (behind === undefined) return [];

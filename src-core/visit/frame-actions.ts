@@ -1,4 +1,5 @@
 /** What damaged and leaning frames ask for: the bays on both sides, and those tied to them from behind. */
+import { countsAsTied } from '../checks/damage';
 import { classOfDamage, MEMBER_WORDS, type DamageJudged } from '../checks/damage-class';
 import { say, type Text } from '../checks/finding';
 import { opening } from '../checks/phrase';
@@ -131,8 +132,13 @@ function baysAtFrame({ site, run, index }: FrameAt): readonly { readonly runId: 
   return [...own, ...baysBehind(site, run, index)];
 }
 
-const unload = (at: FrameAt): Text =>
-  say`Unload every level of ${bayNames(at)} at once, bar them from reloading, and have the part replaced by the maker’s own.`;
+function unload(at: FrameAt): Text {
+  const { site, run } = at;
+  const now = say`Unload every level of ${bayNames(at)} at once, bar them from reloading, and have the part replaced by the maker’s own.`;
+  if (run.backToBack?.rowSpacers !== 'unknown') return now;
+  const behind = site.runs.find(({ id }) => id === run.backToBack?.runId);
+  return behind === undefined ? now : say`${now} ${countsAsTied(`run ${behind.name}`)}`;
+}
 
 function bayNames(at: FrameAt): string {
   const names = baysAtFrame(at).map(({ bay }) => `bay ${bay.name}`);

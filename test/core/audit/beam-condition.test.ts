@@ -8,7 +8,7 @@
 import { expect, test } from 'vitest';
 import { auditRun, auditSite } from '../../../src-core/audit/audit';
 import type { Finding } from '../../../src-core/checks/finding';
-import { editLevel, editRun } from '../../../src-core/site/edits';
+import { editFrame, editLevel } from '../../../src-core/site/edits';
 import type { BeamDamage, BeamSag, Site } from '../../../src-core/site/site';
 import { plain } from '../plain';
 import { expectWorked } from '../worked';
@@ -152,12 +152,11 @@ test('a load implied beyond the rating is close by the likely fixity alone, and 
 });
 
 test('between upright centres the span needs the frame types', () => {
-  const site = found({ sags: [sag({ loadedMm: 4 })] });
-  const centres: Site = { ...site, rules: { ...site.rules, span: 'centre-to-centre' } };
+  const clear = found({ sags: [sag({ loadedMm: 4 })] });
+  const centres: Site = { ...clear, rules: { ...clear.rules, span: 'centre-to-centre' } };
   // 2 700 mm and 100 mm of upright: 2 800/200 = 14 mm.
   expect(upper(centres).of('beam-sag')[0]?.allowed).toEqual({ value: 14, kind: 'length' });
-  const [run] = centres.runs;
-  const untyped = editRun(centres, 'run-A', { frames: (run?.frames ?? []).map((frame) => ({ ...frame, typeId: null })) });
+  const untyped = ['A-F1', 'A-F2'].reduce((site, id) => editFrame(site, id, { typeId: null }), centres);
   expect(upper(untyped).of('beam-sag')).toMatchObject([{ verdict: 'not-assessable', missing: [{ field: 'frame:A-F1:typeId' }, {}] }]);
 });
 

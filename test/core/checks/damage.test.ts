@@ -99,6 +99,7 @@ const frame = (damages: readonly FoundDamage[], part: Partial<FrameDamageInput> 
     place: { runId: 'r', frameId: 'f' },
     frame: 'frame F2',
     unload: ['bay A1', 'bay A2'],
+    perhapsTied: null,
     damages,
     twoAmbersMakeRed: true,
     rules: rulesOf('european'),

@@ -112,6 +112,25 @@ test('red empties both bays and the tied ones behind; the list names each level 
   expect(list[0]?.because).toHaveLength(2);
 });
 
+test.each(['yes', 'unknown', 'no'] as const)('row spacers %s: finding, action and off-load list name the same bays', (rowSpacers) => {
+  let site = withRun(siteOf({ bays: 3 }), { name: 'B', bays: 3 });
+  site = editRun(site, 'run-A', { backToBack: { runId: 'run-B', gapMm: 200, rowSpacers } });
+  const { frameId: _, on: __, ...torn } = bend({ torn: true });
+  site = editFrame(site, 'A-frame-2', { damages: [torn] });
+  const [action] = actions(site, [], '2026-06-02');
+  const finding = auditSite(site, '2026-06-02').runs[0]?.frames[1]?.findings.find(({ check }) => check === 'damage');
+  const [told, found] = [plain(action?.says ?? []), plain(finding?.says ?? [])];
+  const bays = new Set(offLoadList(site, actions(site, [], '2026-06-02')).map(({ bayName }) => bayName));
+  expect(bays.has('B2') && bays.has('B3')).toBe(rowSpacers !== 'no');
+  // Mirrored: behind A's second frame of four stands B's third.
+  expect(found.includes('the bays at frame B-F3 behind it')).toBe(rowSpacers !== 'no');
+  expect(told.includes('bay B2 and bay B3')).toBe(rowSpacers !== 'no');
+  for (const text of [told, found])
+    expect(text.includes('Whether row spacers tie run B behind it to this frame is not known, so it counts as tied.')).toBe(
+      rowSpacers === 'unknown',
+    );
+});
+
 test('“unload” goes before “do not reload”, and closed actions ask for nothing', () => {
   const { frameId: _, on: __, ...amber } = bend({ acrossMm: 0 });
   const site = editFrame(siteOf(), 'A-frame-2', { damages: [amber] });
