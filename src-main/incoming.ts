@@ -12,7 +12,7 @@ import { isRecord } from '../src-core/site/fields';
 import { sha256 } from './checked-site';
 import { isAlive, machineTag, thisMaker, type Folders } from './file-names';
 import { systemCode, type FsPort } from './fs-port';
-import { HostError } from './trouble';
+import { HostError, troubleOf } from './trouble';
 import { addSurely, renameOver, writeBeside } from './whole-file';
 
 export interface Placing {
@@ -80,8 +80,12 @@ export class Incoming {
         await this.#carryOut(who, steps);
       });
     } catch (error) {
-      if (!noted) await this.#drop(who);
-      throw error;
+      if (!noted) {
+        await this.#drop(who);
+        throw error;
+      }
+      const { code, message } = troubleOf(error, 'Not everything of the package is in its place yet');
+      throw new HostError(code, `${message} Nothing of it is lost: the rest is put there when the program is started again.`, error);
     } finally {
       underWay.delete(who);
     }

@@ -45,7 +45,7 @@ export class PackageStore {
     return telling(NOT_MADE, async () => {
       const { site } = await store.read(siteId);
       return this.#inTurn(siteId, async () => {
-        const { parts, visits, names } = await this.#gather(siteId, withPhotos);
+        const { parts, visits, names } = await instead(NOT_MADE, () => this.#gather(siteId, withPhotos));
         const bytes = writePackage(parts, { program, madeAt: now().toISOString(), siteId, siteName: site.name });
         const records = [...parts.keys()].filter((name) => /^records(-\d+)?\/\d/.test(name)).length;
         return { bytes, told: { bytes: bytes.length, ...countsOf(visits, withPhotos ? names : []), records } };
@@ -114,7 +114,7 @@ export class PackageStore {
   ): Promise<TakenPackage> {
     const { beside, incoming } = this.#options;
     return this.#inTurn(id, async () => {
-      const plan: Plan = await planOf(contents, id, choice, this.#options);
+      const plan: Plan = await instead(NOT_TAKEN, () => planOf(contents, id, choice, this.#options));
       await incoming.place(more(plan.placings), (task) => beside.locked(id, task));
       return { id, done: [...says, ...plan.says] };
     });
@@ -145,7 +145,7 @@ export class PackageStore {
       if (bytes !== null) parts.set(nameOfPart({ kind: 'photo', file }), bytes);
     }
     for (const [i, { id, lines, verdict }] of (await records.chainsInTurn(siteId)).entries()) {
-      if (!verdict.whole) throw new HostError('altered', `${NOT_MADE}. ${verdict.message}`);
+      if (!verdict.whole) throw new HostError('altered', verdict.message);
       if (lines.length === 0) continue;
       const chain = i + 1;
       parts.set(nameOfPart({ kind: 'chain', chain }), encode(`${lines.join('\n')}\n`));
@@ -158,11 +158,20 @@ export class PackageStore {
   }
 }
 
+/** What could not be read on the way is told as the reason why the whole was not done. */
+async function instead<T>(notDone: string, task: () => Promise<T>): Promise<T> {
+  try {
+    return await task();
+  } catch (error) {
+    throw error instanceof HostError ? new HostError(error.code, `${notDone}. ${error.message}`, error) : error;
+  }
+}
+
 function sound(what: string, { text, problem }: { readonly text: string; readonly problem: string | null }): string {
   if (problem === null) return text;
   throw new HostError(
     'unreadable',
-    `${NOT_MADE}. ${what} cannot be read: ${problem} Take its file from a copy of the sites folder, or move it out of there; then export again.`,
+    `${what} cannot be read: ${problem} Take its file from a copy of the sites folder, or move it out of there; then export again.`,
   );
 }
 

@@ -1,0 +1,465 @@
+/** Packages of a site with its visits, photos and records: made in one sites folder, brought into another. */
+import { readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { unzipSync, zipSync, type Zippable } from 'fflate';
+import { describe, expect, test } from 'vitest';
+import type { Host, HostFailure } from '../../src-core/host';
+import { readListing, writeListing } from '../../src-core/package/listing';
+import { closeAction, newFollowUp, readFollowUp, writeFollowUp } from '../../src-core/visit/follow-up';
+import { finishBay, note } from '../../src-core/visit/edits';
+import { readVisit } from '../../src-core/visit/read-visit';
+import type { Visit } from '../../src-core/visit/visit';
+import { sha256 } from '../../src-main/checked-site';
+import { readPackage } from '../../src-main/package-file';
+import { bodyOf, drawn } from '../storage/make';
+import { book, fill, packageOf, PHOTO, recordOf, save, seen, send } from './make-package';
+import { startMachine, temporaryFolder } from './machine';
+
+const newHost = async (): Promise<Host> => (await startMachine(temporaryFolder())).machine.page();
+
+async function machineWith(): Promise<{ host: Host; sites: string }> {
+  const { machine, sites } = await startMachine(temporaryFolder());
+  const host = machine.page();
+  await fill(host);
+  return { host, sites };
+}
+
+const failure = async (call: Promise<unknown>): Promise<HostFailure> => {
+  try {
+    await call;
+  } catch (error) {
+    const { code, message } = error as HostFailure;
+    return { code, message };
+  }
+  throw new Error('was expected to be refused');
+};
+
+const visitsOf = async (host: Host, siteId = 's'): Promise<readonly Visit[]> =>
+  (await host.listVisits(siteId)).map(({ text }) => {
+    const reading = readVisit(JSON.parse(text));
+    if (!reading.ok) throw new Error(reading.problems[0]?.message);
+    return reading.document;
+  });
+
+/** Everything that a site holds, as the page sees it. */
+async function everything(host: Host, id: string) {
+  const followUp = await host.readFollowUp(id);
+  const visits = await host.listVisits(id);
+  const photos = await Promise.all(visits.length > 0 ? [host.readPhoto(id, 'p1.jpg')] : []);
+  const { records, altered } = await host.listRecords(id);
+  const contents = await Promise.all(records.map(({ number }) => host.readRecord(id, number)));
+  return {
+    followUp: followUp?.text,
+    visits: visits.map(({ text }) => text),
+    photos,
+    hashes: records.map(({ hash }) => hash),
+    altered,
+    contents,
+  };
+}
+
+/** The package with its parts changed and its listing made right again, as a forger would. */
+function forged(file: Uint8Array, change: (parts: Record<string, Uint8Array>) => void): Uint8Array {
+  const { 'listing.json': listingBytes = new Uint8Array(), ...parts } = unzipSync(file);
+  const reading = readListing(new TextDecoder().decode(listingBytes), sha256);
+  if (!reading.ok) throw new Error('the listing cannot be read');
+  change(parts);
+  const listed = Object.entries(parts).map(([name, bytes]) => ({ name, bytes: bytes.length, sha256: sha256(bytes) }));
+  return zipped({ 'listing.json': text(writeListing({ ...reading.listing, parts: listed }, sha256)), ...parts });
+}
+
+const zipped = (parts: Zippable, level: 0 | 9 = 0): Uint8Array => zipSync(parts, { level });
+const text = (content: string): Uint8Array => new TextEncoder().encode(content);
+const flipped = (bytes: Uint8Array, at: number, bit = 1): Uint8Array => bytes.map((byte, i) => (i === at ? byte ^ bit : byte));
+
+describe('from one sites folder to another', () => {
+  test('a visit unfinished on one machine is resumed on another, with its photo, and comes back', async () => {
+    const office = await newHost();
+    await fill(office);
+    const laptop = await newHost();
+    expect((await send(laptop, await packageOf(office))).here).toBeNull();
+    const { id } = await laptop.takePackage({ as: 'copy' });
+    expect(id).toBe('s');
+    expect(await everything(laptop, 's')).toEqual(await everything(office, 's'));
+
+    const [unfinished] = await laptop.listVisits('s');
+    const [before] = await visitsOf(laptop);
+    if (before === undefined || unfinished === undefined) throw new Error('the visit did not arrive');
+    expect(before.bays.map(({ finished }) => finished)).toEqual([false, false]);
+    const resumed = finishBay(note(before, 'bay1', 'resumed on the laptop'), 'bay1', { person: 'L. Laptop', date: '2026-06-03' });
+    await save(laptop, resumed, unfinished.revision);
+    await laptop.appendRecord(recordOf('by the laptop'));
+    await save(laptop, seen({ id: 'v2', name: 'Second round' }));
+
+    const look = await send(office, await packageOf(laptop));
+    expect(look.here).toMatchObject({ visitsDiffer: ['Week 23, aisle 4'], problem: null });
+    expect(look.here?.steps.join('\n')).toMatch(/1 visit is added\.[^]*in another state[^]*1 record is put behind the 2 that are here/);
+    await office.takePackage({ as: 'join', ifVisitDiffers: 'take-theirs' });
+    expect(await everything(office, 's')).toEqual(await everything(laptop, 's'));
+    const records = await office.listRecords('s');
+    expect([records.records.length, records.altered, records.others]).toEqual([3, null, []]);
+    expect(await office.readRecord('s', 3)).toBe(recordOf('by the laptop').contents);
+    // The chain goes on here from what came from there.
+    expect((await office.appendRecord(recordOf('at the office'))).number).toBe(4);
+    expect((await office.listRecords('s')).altered).toBeNull();
+  });
+
+  test('frozen records verify on the other machine, and an edit there is noticed and named as ever', async () => {
+    const { host } = await machineWith();
+    const top = temporaryFolder();
+    const { machine, sites } = await startMachine(top);
+    const other = machine.page();
+    await send(other, await packageOf(host));
+    await other.takePackage({ as: 'copy' });
+    expect(await other.listRecords('s')).toMatchObject({ altered: null });
+    const path = join(sites, 'beside', 's', 'records', '000002.json');
+    writeFileSync(path, flipped(readFileSync(path), 5));
+    expect(await other.listRecords('s')).toMatchObject({ altered: 2, message: expect.stringContaining('Record 2') as string });
+    // Such records are handed to nobody unnoticed.
+    expect(await failure(other.makePackage('s', true))).toMatchObject({
+      code: 'altered',
+      message: expect.stringContaining('Record 2') as string,
+    });
+  });
+
+  test('a copy beside the site that is here has everything under its own id', async () => {
+    const { host } = await machineWith();
+    await send(host, await packageOf(host));
+    const { id } = await host.takePackage({ as: 'copy' });
+    expect(id).not.toBe('s');
+    const [visit] = await visitsOf(host, id);
+    expect([visit?.siteId, visit?.id]).toEqual([id, 'v1']);
+    expect((await host.readFollowUp(id))?.problem).toBeNull();
+    expect((await everything(host, id)).hashes).toEqual((await everything(host, 's')).hashes);
+    expect((await host.listSites()).map(({ problem }) => problem)).toEqual([null, null]);
+  });
+
+  test('what is still kept beside a removed site is not mixed with a package of it', async () => {
+    const { host } = await machineWith();
+    const file = await packageOf(host);
+    await host.removeSite('s', (await host.readSite('s')).revision);
+    await send(host, file);
+    expect((await host.takePackage({ as: 'copy' })).id).not.toBe('s');
+    expect(await visitsOf(host)).toHaveLength(1);
+  });
+
+  test('photos can be left out, and that is counted', async () => {
+    const { host } = await machineWith();
+    expect(await host.makePackage('s', false)).toMatchObject({ photos: 0, photosMissing: 1 });
+    const other = await newHost();
+    expect(await send(other, await packageOf(host, 's', false))).toMatchObject({ photos: 0, photosMissing: 1 });
+    await other.takePackage({ as: 'copy' });
+    expect(await visitsOf(other)).toHaveLength(1);
+  });
+
+  test('what could not be read elsewhere is not exported, and is named', async () => {
+    const { host, sites } = await machineWith();
+    writeFileSync(join(sites, 'beside', 's', 'visits', 'v1.json'), '{"version":1');
+    expect(await failure(host.makePackage('s', true))).toMatchObject({
+      code: 'unreadable',
+      message: expect.stringContaining('Visit v1') as string,
+    });
+  });
+});
+
+describe('into the site that is here', () => {
+  test('a visit in another state is kept beside the one here, once', async () => {
+    const { host } = await machineWith();
+    const other = await newHost();
+    await fill(other);
+    const [visit] = await other.listVisits('s');
+    await save(other, note(seen(), 'bay2', 'elsewhere'), visit?.revision ?? null);
+    const file = await packageOf(other);
+    for (let times = 0; times < 2; times++) {
+      await send(host, file);
+      await host.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' });
+      expect((await visitsOf(host)).map(({ name }) => name).toSorted()).toEqual(['Week 23, aisle 4', 'Week 23, aisle 4 (brought in)']);
+    }
+  });
+
+  test('one whose place is taken is put aside as it was', async () => {
+    const { host, sites } = await machineWith();
+    const other = await newHost();
+    await fill(other);
+    const before = readFileSync(join(sites, 'beside', 's', 'visits', 'v1.json'));
+    await save(other, note(seen(), 'bay2', 'elsewhere'), (await other.listVisits('s'))[0]?.revision ?? null);
+    await send(host, await packageOf(other));
+    await host.takePackage({ as: 'join', ifVisitDiffers: 'take-theirs' });
+    expect((await visitsOf(host))[0]?.bays[1]?.notes).toBe('elsewhere');
+    const [aside] = readdirSync(join(sites, 'beside', 's', 'put-aside'));
+    expect(readFileSync(join(sites, 'beside', 's', 'put-aside', aside ?? '')).equals(before)).toBe(true);
+  });
+
+  test('a photo never overwrites another of the same name', async () => {
+    const { host } = await machineWith();
+    const other = await newHost();
+    const theirs = Buffer.concat([PHOTO, Buffer.from('another picture')]);
+    await fill(other, theirs);
+    await send(host, await packageOf(other));
+    await host.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' });
+    expect(await host.readPhoto('s', 'p1.jpg')).toBe(PHOTO.toString('base64'));
+    const brought = (await visitsOf(host)).find(({ id }) => id !== 'v1');
+    const file = brought?.bays[0]?.photos[0]?.file ?? '';
+    expect(file).not.toBe('p1.jpg');
+    expect(await host.readPhoto('s', file)).toBe(theirs.toString('base64'));
+  });
+
+  test('a follow-up that says otherwise loses nothing: both are on the disk, and what differs is told', async () => {
+    const { host, sites } = await machineWith();
+    const closing = { actionId: 'a', date: '2026-06-02', how: 'replaced' };
+    const revision = (await host.readFollowUp('s'))?.revision ?? null;
+    await host.saveFollowUp({
+      siteId: 's',
+      body: writeFollowUp(closeAction(book, { ...closing, person: 'Ours' })),
+      baseRevision: revision,
+    });
+    const other = await newHost();
+    await other.saveSite({ id: 's', body: bodyOf('s', 1), baseRevision: null });
+    const theirs = closeAction(closeAction(newFollowUp('s'), { ...closing, person: 'Theirs' }), {
+      ...closing,
+      actionId: 'b',
+      person: 'Theirs',
+    });
+    await other.saveFollowUp({ siteId: 's', body: writeFollowUp(theirs), baseRevision: null });
+    const look = await send(host, await packageOf(other));
+    expect(look.here?.steps.join('\n')).toContain('here by Ours and there by Theirs');
+    await host.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' });
+    const joined = readFollowUp(JSON.parse((await host.readFollowUp('s'))?.text ?? ''));
+    if (!joined.ok) throw new Error('the follow-up cannot be read');
+    expect(joined.document.closings.map(({ actionId, person }) => [actionId, person])).toEqual([
+      ['a', 'Ours'],
+      ['b', 'Theirs'],
+    ]);
+    expect(joined.document.reductions).toHaveLength(1);
+    const [aside] = readdirSync(join(sites, 'beside', 's', 'put-aside'));
+    expect(readFileSync(join(sites, 'beside', 's', 'put-aside', aside ?? ''), 'utf8')).toBe(writeFollowUp(theirs));
+  });
+
+  test('records made both here and there: theirs are kept as a list of their own that is verified by itself', async () => {
+    const { host, sites } = await machineWith();
+    const other = await newHost();
+    await send(other, await packageOf(host));
+    await other.takePackage({ as: 'copy' });
+    await host.appendRecord(recordOf('here'));
+    await other.appendRecord(recordOf('there'));
+    const look = await send(host, await packageOf(other));
+    expect(look.here?.steps.join('\n')).toContain('both here and there since record 2');
+    await host.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' });
+
+    const { records, altered, others } = await host.listRecords('s');
+    expect([records.map(({ title }) => title), altered]).toEqual([['Check 1', 'Check 2', 'Check here'], null]);
+    const [apart] = others;
+    expect([others.length, apart?.altered, apart?.records.map(({ title }) => title)]).toEqual([
+      1,
+      null,
+      ['Check 1', 'Check 2', 'Check there'],
+    ]);
+    const chain = apart?.chain ?? '';
+    expect(await host.readRecord('s', 3, chain)).toBe(recordOf('there').contents);
+    expect(await host.readRecord('s', 3)).toBe(recordOf('here').contents);
+
+    // It goes on there, and comes again: that list is continued, ours is not touched.
+    await other.appendRecord(recordOf('there again'));
+    await send(host, await packageOf(other));
+    await host.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' });
+    const later = await host.listRecords('s');
+    expect([later.records.length, later.others.length, later.others[0]?.records.length, later.others[0]?.altered]).toEqual([3, 1, 4, null]);
+
+    // Both lists travel on, and to whoever made one of them the other comes as a list apart.
+    await send(other, await packageOf(host));
+    await other.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' });
+    const there = await other.listRecords('s');
+    expect([there.records.length, there.others.map((one) => [one.records.at(-1)?.title, one.altered])]).toEqual([
+      4,
+      [['Check here', null]],
+    ]);
+
+    const path = join(sites, 'beside', 's', 'records-of', chain, '000003.json');
+    writeFileSync(path, flipped(readFileSync(path), 3));
+    const altogether = await host.listRecords('s');
+    expect([altogether.altered, altogether.others[0]?.altered]).toEqual([null, 3]);
+  });
+
+  test('records here that are not whole take none from elsewhere; it can be brought in apart', async () => {
+    const { host, sites } = await machineWith();
+    const file = await packageOf(host);
+    writeFileSync(join(sites, 'beside', 's', 'records', '000001.json'), 'altered');
+    const look = await send(host, file);
+    expect(look.here?.problem).toMatch(/Record 1 had its contents altered[^]*as a site of its own/);
+    expect((await failure(host.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' }))).code).toBe('altered');
+    expect((await host.takePackage({ as: 'copy' })).id).not.toBe('s');
+  });
+
+  test('racks and goods that differ are told, and those here stay', async () => {
+    const { host } = await machineWith();
+    const other = await newHost();
+    await other.saveSite({ id: 's', body: bodyOf('s', 7), baseRevision: null });
+    expect((await send(host, await packageOf(other))).here?.steps.join('\n')).toContain('those in the package differ');
+    const { revision } = await host.readSite('s');
+    await host.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' });
+    expect((await host.readSite('s')).revision).toBe(revision);
+  });
+});
+
+describe('damage', () => {
+  test('one changed byte is noticed and its part named, whichever it is', async () => {
+    const { host } = await machineWith();
+    const file = await packageOf(host);
+    const parts = unzipSync(file);
+    const expected: Readonly<Record<string, string>> = {
+      'site.tallybeam.json': 'the site: checksum differs',
+      'follow-up.json': 'the follow-up: checksum differs',
+      'visits/v1.json': 'visit v1: checksum differs',
+      'photos/p1.jpg': 'photo p1.jpg: checksum differs',
+      'records/000002.json': 'record 2: checksum differs',
+      'records/chain.jsonl': 'the list of records: checksum differs',
+    };
+    for (const [name, words] of Object.entries(expected)) {
+      const part = parts[name] ?? new Uint8Array();
+      const at = file.indexOf(Buffer.from(part)) + (part.length >> 1);
+      expect(await failure(send(host, flipped(file, at))), name).toMatchObject({
+        code: 'altered',
+        message: expect.stringContaining(words) as string,
+      });
+    }
+  });
+
+  test('a record that was altered is named, even where the listing was made right again', async () => {
+    const { host } = await machineWith();
+    const file = await packageOf(host);
+    const edit = (name: string) => (parts: Record<string, Uint8Array>) => {
+      const part = parts[name] ?? new Uint8Array();
+      parts[name] = flipped(part, part.length - 6);
+    };
+    for (const [name, words] of [
+      ['records/000002.json', /record 2: Record 2 had its contents altered/],
+      ['records/chain.jsonl', /record 2: Record 2 was altered after it was written/],
+    ] as const)
+      expect((await failure(send(host, forged(file, edit(name))))).message, name).toMatch(words);
+    const without = forged(file, (parts) => delete parts['records/000001.json']);
+    expect((await failure(send(host, without))).message).toMatch(/record 1: Record 1 has lost its contents/);
+  });
+
+  test.each([
+    ['a visit of another site', 'visits/v1.json', '"siteId":"s"', '"siteId":"t"', /visit v1: it says/],
+    ['a visit that is not right', 'visits/v1.json', '"weekly"', '"monthly"', /visit v1: kind:/],
+    ['a key that stands twice', 'visits/v1.json', '"name":', '"name":"other","name":', /visit v1: name: The key "name" stands twice/],
+    ['a follow-up that is not right', 'follow-up.json', '"visitDays":7', '"visitDays":-7', /the follow-up: rhythm\.visitDays/],
+    ['a site that is not right', 'site.tallybeam.json', 'Test depot', 'Best depot', /the site: .*Does not match/],
+  ])('%s is refused, though the listing agrees', async (_, name, from, to, words) => {
+    const { host } = await machineWith();
+    const file = forged(await packageOf(host), (parts) => {
+      parts[name] = text(new TextDecoder().decode(parts[name]).replace(from, to));
+    });
+    expect((await failure(send(host, file))).message).toMatch(words);
+  });
+
+  test('500 random changes of one byte are refused with a message, or change nothing of what is read', async () => {
+    const { host } = await machineWith();
+    const file = await packageOf(host);
+    const expected = await send(host, file);
+    const random = drawn(4711);
+    let refused = 0;
+    const harmless: number[] = [];
+    for (let n = 0; n < 500; n++) {
+      const at = Math.floor(random() * file.length);
+      const spoilt = flipped(file, at, 1 << Math.floor(random() * 8));
+      try {
+        expect(await send(host, spoilt)).toEqual(expected);
+        expect(readPackage(spoilt)).toEqual(readPackage(file));
+        harmless.push(at);
+      } catch (error) {
+        const { code, message } = error as HostFailure;
+        expect(['altered', 'newer-version'], message).toContain(code);
+        expect(message).toMatch(/^The package was not brought in[^]*\.$/);
+        refused++;
+      }
+    }
+    expect(refused + harmless.length).toBe(500);
+    expect(refused).toBeGreaterThan(400);
+    expect(await everything(host, 's')).toMatchObject({ altered: null });
+    expect(await host.listSites()).toHaveLength(1);
+  });
+
+  test('a package that breaks off anywhere is refused', async () => {
+    const { host } = await machineWith();
+    const file = await packageOf(host);
+    for (let size = 0; size < file.length; size += 97)
+      expect((await failure(send(host, file.subarray(0, size)))).code, `${size} bytes`).toBe('altered');
+  });
+});
+
+describe('what a package may not hold', () => {
+  const hostile = async (change: (parts: Record<string, Uint8Array>) => Zippable, level: 0 | 9 = 0) => {
+    const { host, sites } = await machineWith();
+    const before = readdirSync(sites).toSorted();
+    const answer = await failure(send(host, zipped(change(unzipSync(await packageOf(host))), level)));
+    expect(readdirSync(sites).toSorted()).toEqual(before);
+    return answer;
+  };
+
+  test.each([
+    '../evil.json',
+    '/etc/cron.d/evil',
+    'visits/../../evil.json',
+    'visits\\evil.json',
+    'photos/evil.html',
+    'beside/s/x',
+    '__proto__x',
+  ])('a part named %j', async (name) => {
+    expect((await hostile((parts) => ({ ...parts, [name]: text('evil') }))).message).toContain('holds something that no package holds');
+  });
+
+  test('a part that the listing does not name', async () => {
+    expect((await hostile((parts) => ({ ...parts, 'visits/more.json': text('{}') }))).message).toContain(
+      'visit more: is not in the listing',
+    );
+  });
+
+  test('compressed parts, however large they would become', async () => {
+    const zeros = new Uint8Array(50 * 1024 * 1024);
+    expect((await hostile((parts) => ({ ...parts, 'photos/bomb.jpg': zeros }), 9)).message).toContain('packed anew by another program');
+  });
+
+  test('no listing', async () => {
+    expect((await hostile(({ 'listing.json': _, ...parts }) => parts)).message).toContain('has no listing');
+  });
+
+  test('names that no system of the other users could keep', async () => {
+    const { host } = await machineWith();
+    const file = forged(await packageOf(host), (parts) => (parts['photos/con.jpg'] = PHOTO));
+    expect((await failure(send(host, file))).message).toContain('photo con.jpg: its id names no file on some systems');
+  });
+
+  test('sizes that claim more than the file, or hide something between the parts', async () => {
+    const { host } = await machineWith();
+    const file = await packageOf(host);
+    const directory = file.lastIndexOf(Buffer.from([0x50, 0x4b, 1, 2]));
+    const larger = Buffer.from(file);
+    larger.writeUInt32LE(0x7fffffff, directory + 20);
+    larger.writeUInt32LE(0x7fffffff, directory + 24);
+    expect((await failure(send(host, larger))).message).toContain('larger than the whole');
+    expect((await failure(send(host, Buffer.concat([Buffer.from('hidden'), file])))).code).toBe('altered');
+    expect((await failure(send(host, Buffer.concat([file, Buffer.from('hidden')])))).code).toBe('altered');
+  });
+
+  test('what is no picture, under the name of one', async () => {
+    const { host } = await machineWith();
+    const file = forged(await packageOf(host), (parts) => (parts['photos/p2.png'] = text('<script>')));
+    expect((await failure(send(host, file))).message).toContain('photo p2.png: it is not the kind of picture');
+  });
+});
+
+test('what was sent is gone after it was dropped, and for the page that is loaded next', async () => {
+  const { host } = await machineWith();
+  await send(host, await packageOf(host));
+  await host.dropPackage();
+  expect((await failure(host.takePackage({ as: 'copy' }))).message).toContain('bring the file in again');
+});
+
+test('a site that was removed between looking and bringing in is told', async () => {
+  const { host, sites } = await machineWith();
+  await send(host, await packageOf(host));
+  rmSync(join(sites, 's.tallybeam.json'));
+  expect((await failure(host.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' }))).message).toContain('as a site of its own');
+});
