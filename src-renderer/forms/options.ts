@@ -1,6 +1,7 @@
 /** Choices that forms offer, in the trade's words. */
 import { LOADED_BY, LOADED_BY_WORDS, type LoadedBy } from '../../src-core/checks/clearance-rules';
 import type {
+  BeamDamage,
   BearingShape,
   Damage,
   Deck,
@@ -95,6 +96,13 @@ export const DAMAGE_MEMBERS: readonly Option<Damage['member']>[] = [
   { value: 'upright-rear', name: 'rear upright' },
   { value: 'bracing', name: 'bracing' },
   { value: 'base-plate', name: 'base plate' },
+];
+
+export const BEAM_PARTS: readonly (Option<string> & Pick<BeamDamage, 'beam' | 'member'>)[] = [
+  { value: 'front beam', name: 'front beam', beam: 'front', member: 'beam' },
+  { value: 'rear beam', name: 'rear beam', beam: 'rear', member: 'beam' },
+  { value: 'front connector', name: 'connector of the front beam', beam: 'front', member: 'connector' },
+  { value: 'rear connector', name: 'connector of the rear beam', beam: 'rear', member: 'connector' },
 ];
 
 export const RULE_SETS: readonly Option<Rules['set']>[] = [
