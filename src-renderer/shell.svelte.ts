@@ -6,10 +6,11 @@ import { newSite } from '../src-core/site/new-site';
 import type { Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
 import type { WorkerLike } from './audit-link';
-import { LIBRARIES } from './forms/library-items';
+import { LIBRARIES, type LibraryKind } from './forms/library-items';
 import { failureOf } from './host';
 import { newId } from './ids';
 import { OpenSite } from './open-site.svelte';
+import type { Refusal } from './refusal';
 import { readBody, readSiteFile, type FileReading } from './site-text';
 
 export type Screen = 'rack' | 'run' | 'layout' | 'libraries' | 'rules' | 'visits' | 'paper' | 'records' | 'history' | 'help';
@@ -18,6 +19,7 @@ export type Dialog =
   | { readonly kind: 'commands' | 'find' | 'move-to' | 'new-run' | 'new-site' | 'preferences' | 'stale' | 'leave' | 'fill-run' }
   | { readonly kind: 'add-bays' | 'keep-template' | 'paste-level' }
   | { readonly kind: 'recovered'; readonly recovered: RecoveredEdits; readonly site: Site | null; readonly problem: string | null }
+  | { readonly kind: 'new-entry'; readonly of: LibraryKind; readonly then: (id: string) => Refusal }
   | { readonly kind: 'remove-site' | 'mend-site'; readonly entry: SiteEntry }
   | { readonly kind: 'altered'; readonly name: string; readonly text: string }
   | { readonly kind: 'problems'; readonly name: string; readonly problems: readonly string[] };
@@ -178,7 +180,7 @@ export class Shell {
       };
       return;
     }
-    if (this.open.saved === 'saved') void this.closeSite();
+    if (this.open.saved === 'saved' && this.open.unfinished.length === 0) void this.closeSite();
     else this.dialog = { kind: 'leave' };
   };
 
