@@ -6,6 +6,7 @@ import { createContext } from 'svelte';
 import { SvelteMap } from 'svelte/reactivity';
 import type { FrameAudit, LevelAudit, RunAudit } from '../src-core/audit/types';
 import type { Host } from '../src-core/host';
+import { everyId } from '../src-core/site/lookup';
 import type { Id, Level, Placement, Site } from '../src-core/site/site';
 import { formatQuantity, type Reading } from '../src-core/units/format';
 import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
@@ -29,6 +30,21 @@ export interface Task {
   readonly id: Id;
   /** `kind:id:field`, whole; null where the form alone is wanted. */
   readonly field: string | null;
+}
+
+/** Text typed into a field, and the units and locale it was typed in. */
+export interface Draft {
+  readonly text: string;
+  readonly reading: Reading;
+  /** What the field is called. */
+  readonly label: string;
+}
+
+/** What is filled in by half and counts for nothing yet: a row of a table, a survey, new goods. */
+export interface Half {
+  /** What it is called: "Span 3". */
+  readonly label: string;
+  readonly typed: object;
 }
 
 export interface OpenSiteOptions {
@@ -73,7 +89,9 @@ export class OpenSite {
   /** ISO date of today. */
   readonly today: () => string;
   /** Text typed into fields that could not be taken over yet, by field, so that it outlives the form. */
-  readonly drafts = new SvelteMap<string, string>();
+  readonly drafts = new SvelteMap<string, Draft>();
+  /** What is half filled in, by its field, so that it outlives its form as well. */
+  readonly halves = new SvelteMap<string, Half>();
 
   #history = $state.raw<UndoHistory<Site>>() as UndoHistory<Site>;
   /** A change that is shown and checked but not made yet, while something is dragged or carried. */
@@ -390,6 +408,23 @@ export class OpenSite {
 
   closeTask = (): void => {
     this.task = null;
+  };
+
+  /** What was typed and not taken over, or filled in by half, by name; what it was typed for still stands. */
+  get unfinished(): readonly string[] {
+    const standing = new Set(everyId(this.site));
+    const here = (key: string) => {
+      const [, id] = key.split(':');
+      return id === undefined || standing.has(id);
+    };
+    const labels = [...this.halves, ...this.drafts].flatMap(([key, { label }]) => (here(key) ? [label] : []));
+    return [...new Set(labels)];
+  }
+
+  /** Forgets what was typed in a field and in the rows under it. */
+  dropTyped = (field: string): void => {
+    for (const kept of [this.halves, this.drafts])
+      for (const key of [...kept.keys()]) if (key === field || key.startsWith(`${field}.`)) kept.delete(key);
   };
 
   // ------------------------------------------------------------ disk

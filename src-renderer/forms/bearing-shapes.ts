@@ -1,6 +1,15 @@
 /** A first state of each bearing shape when it is chosen, keeping what the goods already say. */
 import type { BearingShape, DepthShape, Slope } from '../../src-core/site/site';
 
+/** Shown under a shape whose numbers nobody has changed. */
+export const PROPOSED = 'These numbers are only proposed. Change them to how it really stands.';
+/** A share of a mass that is not known would be taken for a mass of zero. */
+export const NEEDS_MASS = 'Type the mass of the goods first: it is what these numbers start from.';
+
+/** Whether a shape with numbers is still as it was proposed when it was chosen. */
+export const isProposed = (shape: BearingShape | DepthShape, fresh: BearingShape | DepthShape): boolean =>
+  shape.kind !== 'even' && JSON.stringify(shape) === JSON.stringify(fresh);
+
 export function freshBearing(kind: BearingShape['kind'], widthMm: number, goodsKg: number | null): BearingShape {
   switch (kind) {
     case 'even':

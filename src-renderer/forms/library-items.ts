@@ -5,6 +5,9 @@ import type { BayTemplate, BeamType, Floor, FrameType, Id, LoadNotice, Pallet, S
 import { newId } from '../ids';
 import type { OpenSite } from '../open-site.svelte';
 import { FIRST_BAY } from '../rack-edits';
+import type { Refusal, Refused } from '../refusal';
+import type { Shell } from '../shell.svelte';
+import { NEEDED_SIZES } from './needed-sizes';
 import { NO_SOURCE } from './options';
 
 export type LibraryKind = keyof LibraryItem;
@@ -38,7 +41,10 @@ export function libraryOf(kind: LibraryKind) {
 export const itemsOf = <K extends LibraryKind>(site: Site, kind: K): readonly LibraryItem[K][] =>
   site[libraryOf(kind).list] as readonly unknown[] as readonly LibraryItem[K][];
 
-/** Every number not known, so that nothing passes before it has been entered. */
+/**
+ * Every number not known, so that nothing passes before it has been entered. The sizes that an entry
+ * cannot be without are for drawing only until they are typed: see needed-sizes.ts.
+ */
 const FRESH: { readonly [K in LibraryKind]: (id: Id, name: string) => LibraryItem[K] } = {
   unitLoad: (id, name) => ({
     id,
@@ -140,11 +146,27 @@ export function freeName(site: Site, kind: LibraryKind): string {
   for (let number = taken.size + 1; ; number++) if (!taken.has(`${base} ${number}`)) return `${base} ${number}`;
 }
 
-/** Adds a fresh entry, and what else hangs on it, as one edit. */
-export function addLibraryItem(open: OpenSite, kind: LibraryKind, also: (site: Site, id: Id) => Site = (site) => site): Id {
-  const id = newId();
-  const name = freeName(open.site, kind);
-  open.edit(`Add ${name}`, (site) => also(addEntry(site, libraryOf(kind).list, freshItem(kind, id, name)), id));
-  open.say(`${name} added.`);
-  return id;
+/** Asks first for the sizes that a new entry cannot be without; `then` puts it to use, and its form opens. */
+export function newLibraryItem(
+  { shell, open }: { shell: Shell; open: OpenSite },
+  kind: LibraryKind,
+  then: (id: Id) => Refusal = () => null,
+): void {
+  if (NEEDED_SIZES[kind].length > 0) return shell.ask({ kind: 'new-entry', of: kind, then });
+  const id = addLibraryItem(open, kind);
+  if (!then(id)) open.openTask(kind, id);
+}
+
+/** Adds a fresh entry of which nothing is known. */
+export function addLibraryItem(open: OpenSite, kind: LibraryKind): Id {
+  const item = freshItem(kind, newId(), freeName(open.site, kind));
+  addEntryNow(open, kind, item);
+  return item.id;
+}
+
+/** @returns why it was refused, as a sentence; null if it was added */
+export function addEntryNow<K extends LibraryKind>(open: OpenSite, kind: K, item: LibraryItem[K]): Refused | null {
+  const refused = open.edit(`Add ${item.name}`, (site) => addEntry(site, libraryOf(kind).list, item));
+  if (refused === null) open.say(`${item.name} added.`);
+  return refused;
 }
