@@ -4,7 +4,7 @@ import { openDemo } from './program';
 import { checked, choice, command, goods, goToBay, goToLevel, selectGoods, type } from './steps';
 
 const BEARINGS = ['even over its width', 'stepped, in columns', 'sloped', 'profile of the pile', 'on bearers', 'on feet'];
-const LIBRARIES = ['Unit loads', 'Pallets', 'Load notices', 'Beam types', 'Frame types', 'Floors'];
+const LIBRARIES = ['Unit loads', 'Pallets', 'Load notices', 'Beam types', 'Frame types', 'Floors', 'Bay templates'];
 /** Commands that go somewhere but are no screens of their own. */
 const NO_SCREENS = /^(Find a bay|Next bay|Previous bay|Level above|Level below|Back to where)/;
 
@@ -140,9 +140,36 @@ export async function walkDialogs(page: Page, visit: Visit): Promise<void> {
     await page.keyboard.press('Escape');
     await dialog.waitFor({ state: 'detached' });
   }
+  await walkLevelsAndTemplates(page, visit);
   await goods(page, 'a4-l1-g1').press('M');
   await page.getByRole('button', { name: 'Halverwick depot (demo)' }).click();
   await page.getByRole('dialog').waitFor();
   await visit('question before leaving');
   await page.getByRole('dialog').getByRole('button', { name: 'Close' }).click();
+}
+
+/** A copied level to paste, and a bay that is kept as a template and laid out by: the library shows it afterwards. */
+async function walkLevelsAndTemplates(page: Page, visit: Visit): Promise<void> {
+  const dialog = page.getByRole('dialog');
+  const putAway = async () => {
+    await page.keyboard.press('Escape');
+    await dialog.waitFor({ state: 'detached' });
+  };
+  await page.getByRole('button', { name: 'Copy level' }).click();
+  await page.getByRole('button', { name: 'Paste level…' }).click();
+  await choice(dialog, 'To').selectOption({ label: 'bays that are ticked here' });
+  await dialog.getByRole('checkbox', { name: 'A1' }).check();
+  await visit('dialog: paste a level', 'dialog');
+  await putAway();
+  await page.keyboard.press('Control+Shift+S');
+  await dialog.waitFor();
+  await visit('dialog: keep a bay as a template', 'dialog');
+  await page.keyboard.press('Enter');
+  await dialog.waitFor({ state: 'detached' });
+  for (const name of ['New run of bays', 'Add several bays']) {
+    await command(page, name);
+    await dialog.waitFor();
+    await visit(`dialog: ${name}, by a template`, 'dialog');
+    await putAway();
+  }
 }
