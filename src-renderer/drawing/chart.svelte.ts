@@ -3,22 +3,10 @@
  * change, destroyed when it goes. The plot fills the canvas between two insets, so that pixels on it
  * and on the drawing above are the same x.
  */
-import {
-  Chart,
-  Filler,
-  LinearScale,
-  LineController,
-  LineElement,
-  PointElement,
-  type ChartConfiguration,
-  type ChartDataset,
-} from 'chart.js';
-import { untrack } from 'svelte';
 import type { Attachment } from 'svelte/attachments';
+import type * as LineChart from './line-chart';
 import type { Point } from './outline';
-import { pageInks, type Inks } from './theme.svelte';
-
-Chart.register(LineController, LineElement, PointElement, LinearScale, Filler);
+import { pageInks } from './theme.svelte';
 
 export type CurveLook = 'front' | 'rear' | 'limit' | 'exceeded limit' | 'ghost';
 
@@ -40,65 +28,25 @@ export interface Plot {
   readonly inset: number;
 }
 
-/** Dash patterns tell the beams apart without colour. */
-const DASHES: Record<CurveLook, number[]> = { front: [], rear: [9, 4], limit: [3, 3], 'exceeded limit': [3, 3], ghost: [2, 4] };
-
-const LINE_WIDTH: Record<CurveLook, number> = { front: 1.75, rear: 1.75, limit: 1.25, 'exceeded limit': 1.5, ghost: 1 };
-
-/** The axis is drawn once for all diagrams; unseen figures would be measured all the same. */
-const NO_TICKS = { display: false, count: 2, sampleSize: 1 };
-
-function lineColour(look: CurveLook, inks: Inks): string {
-  if (look === 'limit' || look === 'ghost') return inks.soft;
-  return look === 'exceeded limit' ? inks.over : inks.load;
-}
-
-const datasetOf = (curve: Curve, inks: Inks): ChartDataset<'line', { x: number; y: number }[]> => ({
-  // chart.js keeps notes on the arrays it is given, so it gets its own.
-  data: curve.points.map(({ x, y }) => ({ x, y })),
-  borderColor: lineColour(curve.look, inks),
-  borderWidth: LINE_WIDTH[curve.look],
-  borderDash: DASHES[curve.look],
-  borderJoinStyle: 'round',
-  pointRadius: 0,
-  pointHitRadius: 0,
-  tension: 0,
-  fill: curve.filled ? 'origin' : false,
-  backgroundColor: inks.loadFill,
-});
-
-function configOf(plot: Plot, inks: Inks): ChartConfiguration<'line', { x: number; y: number }[]> {
-  return {
-    type: 'line',
-    data: { datasets: plot.curves.map((curve) => datasetOf(curve, inks)) },
-    options: {
-      animation: false,
-      parsing: false,
-      normalized: true,
-      responsive: true,
-      maintainAspectRatio: false,
-      events: [],
-      layout: { autoPadding: false, padding: { left: plot.inset, right: plot.inset, top: 0, bottom: 0 } },
-      plugins: { legend: { display: false }, tooltip: { enabled: false } },
-      scales: {
-        x: { type: 'linear', display: false, min: 0, max: plot.span, ticks: NO_TICKS },
-        y: { type: 'linear', display: false, min: plot.least, max: plot.most, reverse: plot.downwards, ticks: NO_TICKS },
-      },
-    },
-  };
-}
+/** Null until it is read, which is begun as soon as a diagram may be wanted. */
+let lineChart: typeof LineChart | null = null;
+const reading = import('./line-chart').then(
+  (read) => (lineChart = read),
+  // Without its curve a diagram still has its figures and its table.
+  () => null,
+);
 
 /** `<canvas {@attach chartOf(() => plot)}>`; the function is read again whenever what it reads changes. */
 export function chartOf(plot: () => Plot): Attachment<HTMLCanvasElement> {
   return (canvas) => {
-    const first = untrack(() => configOf(plot(), pageInks()));
-    const chart = new Chart(canvas, first);
+    let ready = $state.raw(lineChart);
+    let chart: LineChart.Drawn | null = null;
+    void reading.then((read) => (ready = read));
     $effect(() => {
-      const { data, options } = configOf(plot(), pageInks());
-      chart.data = data;
-      if (options) chart.options = options;
-      chart.update('none');
+      const [now, inks] = [plot(), pageInks()];
+      if (chart === null) chart = ready?.drawnOn(canvas, now, inks) ?? null;
+      else chart.draw(now, inks);
     });
-    return () => chart.destroy();
+    return () => chart?.destroy();
   };
 }
