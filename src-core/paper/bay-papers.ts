@@ -59,7 +59,7 @@ export function baySheet(input: PaperInput, bayId: Id, actions: readonly OpenAct
   });
 }
 
-/** What is open at the bay, before any verdict is read: a beam that was found damaged is in no check of loads. */
+/** What is open at the bay, before any verdict is read: locks, notices and the like are in no check of loads. */
 function openOfBay({ site }: PaperInput, bayId: Id, actions: readonly OpenAction[]): readonly Block[] {
   const open = stillOpen(actions).filter(({ bayIds }) => bayIds.includes(bayId));
   return open.length === 0 ? [] : actionBlocks(site, open);

@@ -108,6 +108,8 @@ function damageCell(run: Run, index: number, rules: ResolvedRules, today: string
   const classes = run.frames
     .slice(index, index + 2)
     .flatMap(({ damages }) => damages.map((damage) => classOfDamage(damage, rules, today).class));
+  // Any damage of a beam is red, as its check has it.
+  if (run.bays[index]?.levels.some(({ beamDamages }) => beamDamages.length > 0)) classes.push('red');
   const worst = WORST.find((one) => classes.includes(one));
   return worst === undefined ? NONE : { damage: worst };
 }

@@ -6,7 +6,7 @@ import { tmpdir } from 'node:os';
 import { join, resolve } from 'node:path';
 import { afterAll, expect, test, vi } from 'vitest';
 import { writeSiteFile } from '../../src-core/site/envelope';
-import type { Site } from '../../src-core/site/site';
+import type { Level, Site } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
 import { CHECKS } from '../../src-core/checks/finding';
 import { goods, level, rack, stand, type Rack } from '../core/audit/rack';
@@ -98,6 +98,31 @@ test('close ends with 0, over with 1, and several files with the worst', async (
   expect(both.out).toContain('but it bends each beam as');
   expect(both.out).toContain('(0.996)');
   expect((await check(over, 'nowhere.json', close)).exit).toBe(2);
+});
+
+test('a bay whose beam was found damaged, or bent for good, is over and ends with 1', async () => {
+  const asked = { leftOut: levelsOnly.filter(({ check: name }) => name !== 'damage' && name !== 'beam-sag') };
+  const found = (part: Partial<Level>) =>
+    siteFile(
+      site({
+        levels: [level([stand('a', 75), stand('a', 950)], { id: 'low', ...part })],
+        notice: { levelKg: [3000], unitLoadKg: 1000 },
+        rules: asked,
+      }),
+    );
+  expect((await check(found({}))).exit).toBe(0);
+  const dented = await check(
+    found({ beamDamages: [{ id: 'dent', beam: 'front', member: 'beam', torn: true, note: '', found: '2026-05-20' }] }),
+  );
+  expect(dented.exit).toBe(1);
+  expect(dented.out).toMatch(/^A A1 +bay .* Over$/m);
+  expect(dented.out).toContain('The front beam of level 1 of bay A1 has a dent');
+  // 2 700 mm: 20 % of span/200 is 2.7 mm (facts F-01 and F-88).
+  const set = (unloadedMm: number) => found({ sags: [{ beam: 'rear', loadedMm: 5, unloadedMm, sidewaysMm: 0, found: '2026-05-20' }] });
+  expect((await check(set(2.7))).exit).toBe(0);
+  const bent = await check(set(2.8));
+  expect(bent.exit).toBe(1);
+  expect(bent.out).toContain('take both beams out');
 });
 
 test('as JSON: the same verdicts, utilisations at full precision, all cautions', async () => {
