@@ -1,5 +1,4 @@
 /**
- * npm run bench
  * The level check (front and rear beam, twelve results each) against the bare pass over its pieces, 1,001
  * stations and 40 beam elements with a dense solver, all in one run on the same levels. Medians of processor time; read the ratios.
  */
@@ -130,12 +129,18 @@ function median(values: readonly number[]): number {
 
 const pinned = (span: number): Beam => ({ span, rigidity: 1, left: { kind: 'pinned' }, right: { kind: 'pinned' } });
 
-console.log('µs a level (two beams), medians; × = times the level check');
-console.log(
-  'unit loads   level check   bare pass      1,001 stations    40 elements, dense    solveBeam     worst differences from solveBeam',
-);
-let sink = 0;
-for (const count of [3, 12, 40]) {
+/** What one number of unit loads gave, as times of the level check. */
+interface Ratios {
+  readonly count: number;
+  readonly bare: number;
+  readonly stations: number;
+  readonly dense: number;
+  readonly general: number;
+  readonly exact: number;
+}
+
+function ratiosOf(count: number): Ratios {
+  let sink = 0;
   const { levels, placed } = levelsOf(count);
   const scratch = new Float64Array(scratchFor(count));
   const out = new Float64Array(2 * RESULT.size);
@@ -205,18 +210,33 @@ for (const count of [3, 12, 40]) {
       for (const load of [level.front, level.rear]) sink += equivalentLoads(solveBeam(pinned(level.span), load), 1).bending;
     },
   ]) as [number, number, number, number, number, number];
-  const ratio = (time: number): string => `${time.toFixed(2)} (${(time / check).toFixed(time < check * 10 ? 2 : 0)}×)`;
+  if (!Number.isFinite(sink)) throw new Error('a result is not a number');
   console.log(
     [
-      String(count).padEnd(10),
-      check.toFixed(3).padEnd(11),
-      middle.toFixed(3).padEnd(17),
-      `${bare.toFixed(3)} (${(check / bare).toFixed(1)} to 1)`.padEnd(12),
-      ratio(spread).padEnd(15),
-      ratio(dense).padEnd(19),
-      ratio(general).padEnd(11),
+      String(count).padEnd(12),
+      `${(middle / check).toFixed(2)}`.padEnd(16),
+      `${(bare / check).toFixed(2)}`.padEnd(11),
+      `${(spread / check).toFixed(0)}`.padEnd(16),
+      `${(dense / check).toFixed(0)}`.padEnd(21),
+      `${(general / check).toFixed(1)}`.padEnd(11),
       `${exact.toExponential(1)}; stations ${byStations.toExponential(1)}, elements ${byElements.toExponential(1)}`,
-    ].join('   '),
+    ].join(' '),
   );
+  return { count, bare: check / bare, stations: spread / check, dense: dense / check, general: general / check, exact };
 }
-if (!Number.isFinite(sink)) throw new Error('a result is not a number');
+
+/** @returns the claims, each as a line with its goal */
+export function levelBench(): readonly string[] {
+  console.log('Level check: front and rear beam, twelve results each. Times of it that each other way takes, on the same levels');
+  console.log(
+    'unit loads   all in middle   bare pass   1,001 stations   40 elements, dense   solveBeam   worst differences from solveBeam',
+  );
+  const all = [3, 12, 40].map(ratiosOf);
+  const row = (pick: (one: Ratios) => number, digits = 0) => all.map((one) => pick(one).toFixed(digits)).join(' / ');
+  return [
+    `Level check against 1,001 stations, 3 / 12 / 40 unit loads: ${row(({ stations }) => stations)} times as fast (goal 100 / 80 / 40)`,
+    `Level check against 40 elements with a dense solver: ${row(({ dense }) => dense)} times as fast (goal 5,000)`,
+    `Level check against the bare pass over its pieces: ${row(({ bare }) => bare, 1)} times its work (goal at most 6)`,
+    `Level check against the program’s general solver: differs by at most ${Math.max(...all.map(({ exact }) => exact)).toExponential(1)} (goal 1e-12)`,
+  ];
+}

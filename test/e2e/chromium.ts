@@ -17,7 +17,8 @@ const INSTALLED = [
   'C:\\Program Files\\Google\\Chrome\\Application\\chrome.exe',
 ];
 
-function installed(): string | null {
+/** @returns null where none is found; nothing is fetched */
+export function installedChromium(): string | null {
   const named = process.env['CHROMIUM_PATH'];
   if (named !== undefined) {
     if (!existsSync(named)) throw new Error(`CHROMIUM_PATH names ${named}, where there is no file`);
@@ -38,17 +39,17 @@ function run(command: string, args: readonly string[]): boolean {
 
 /** @throws Error that names the command to run where no Chromium can be found or fetched */
 export function chromiumPath(): string {
-  const found = installed();
+  const found = installedChromium();
   if (found !== null) return found;
   if (process.platform === 'linux' && process.getuid?.() === 0 && existsSync('/usr/bin/apt-get')) {
     if (run('apt-get', ['update', '-q']) && run('apt-get', ['install', '-y', '-q', 'chromium'])) {
-      const debian = installed();
+      const debian = installedChromium();
       if (debian !== null) return debian;
     }
   }
   const cli = join(dirname(createRequire(import.meta.url).resolve('playwright-core/package.json')), 'cli.js');
   if (run(process.execPath, [cli, 'install', 'chromium'])) {
-    const playwright = installed();
+    const playwright = installedChromium();
     if (playwright !== null) return playwright;
   }
   throw new Error(
