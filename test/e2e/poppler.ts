@@ -50,18 +50,58 @@ export function pdfFacts(path: string): PdfFacts {
 /** Text of each page in the order in which it was set. */
 export const pdfPages = (path: string): readonly string[] => run('pdftotext', '-raw', path, '-').split('\f').slice(0, -1);
 
+/** A word as it is set on its page: its box in points, from the page's top left corner. */
+export interface PdfWord {
+  readonly text: string;
+  readonly left: number;
+  readonly top: number;
+  readonly right: number;
+  readonly bottom: number;
+}
+
+export interface PdfSheet {
+  readonly width: number;
+  readonly height: number;
+  readonly words: readonly PdfWord[];
+}
+
+const PAGE = /<page width="([\d.]+)" height="([\d.]+)">([\s\S]*?)<\/page>/g;
+const WORD = /<word xMin="(-?[\d.]+)" yMin="(-?[\d.]+)" xMax="(-?[\d.]+)" yMax="(-?[\d.]+)">([^<]*)<\/word>/g;
+
+/** Every word with its place, page by page. */
+export const pdfSheets = (path: string): readonly PdfSheet[] =>
+  Array.from(run('pdftotext', '-bbox', path, '-').matchAll(PAGE), ([, width, height, words = '']) => ({
+    width: Number(width),
+    height: Number(height),
+    words: Array.from(words.matchAll(WORD), ([, left, top, right, bottom, text = '']) => ({
+      text,
+      left: Number(left),
+      top: Number(top),
+      right: Number(right),
+      bottom: Number(bottom),
+    })),
+  }));
+
 /** The document's structure as assistive technology reads it. */
 export const pdfStructure = (path: string): string => run('pdfinfo', '-struct', path);
 
-/** Pictures made of pixels: width, height and resolution of each. */
-export function pdfImages(path: string): readonly { readonly width: number; readonly height: number; readonly perInch: number }[] {
+export interface PdfImage {
+  /** 1 for the first. */
+  readonly page: number;
+  readonly width: number;
+  readonly height: number;
+  readonly perInch: number;
+}
+
+/** Pictures made of pixels: page, width, height and resolution of each. */
+export function pdfImages(path: string): readonly PdfImage[] {
   return run('pdfimages', '-list', path)
     .split('\n')
     .slice(2)
     .filter((line) => line.trim() !== '')
     .map((line) => {
       const parts = line.trim().split(/\s+/);
-      return { width: Number(parts[3]), height: Number(parts[4]), perInch: Number(parts[12]) };
+      return { page: Number(parts[0]), width: Number(parts[3]), height: Number(parts[4]), perInch: Number(parts[12]) };
     });
 }
 
