@@ -113,6 +113,32 @@ function departs({ goods, clearEntry, rules }: FullComplementInput, made: number
 
 const ROUNDING = 1e-12;
 
+/**
+ * Masses of one more unit load with which a level's others are near equal, and none is above its part of
+ * the rating while another is lighter; what else the rule asks for is not looked at.
+ * @param others kg, one less than the level is made for
+ * @param percent greatest difference of one from their mean, of the mean
+ * @returns kg; null where no mass makes them so
+ * @example others of 800 and 800 kg within 5 %, rated 2 500 kg → 741.5 to 833.3 kg: 0.95 · 1 600 / 2.05 and 2 500 / 3
+ */
+export function fullComplementRange(
+  others: readonly number[],
+  ratedKg: number,
+  percent: number,
+): { readonly fromKg: number; readonly toKg: number } | null {
+  const number = others.length + 1;
+  const part = percent / 100;
+  const sum = others.reduce((total, massKg) => total + massKg, 0);
+  let from = number > 1 ? ((1 - part) * sum) / (number - 1 + part) : 0;
+  let to = Math.min(ratedKg / number, number - 1 > part ? ((1 + part) * sum) / (number - 1 - part) : Infinity);
+  for (const massKg of others) {
+    if (massKg > (ratedKg / number) * (1 + ROUNDING)) return null;
+    from = Math.max(from, (number * massKg) / (1 + part) - sum);
+    to = Math.min(to, (number * massKg) / (1 - part) - sum);
+  }
+  return from <= to && to > 0 ? { fromKg: Math.max(0, from), toKg: to } : null;
+}
+
 function worked(
   { goods, number, rated }: FullComplementInput,
   heaviest: ComplementGoods,
