@@ -1,0 +1,114 @@
+/** What is found at a beam makes its bay over, on the screen of the rack as in the visit, until it is put right. */
+import type { Locator, Page } from 'playwright-core';
+import { afterAll, expect, test } from 'vitest';
+import { closeBrowser, openDemo } from './program';
+import { checked, choice, command, eventually, field, goToBay, goToLevel, plain, type, withProgram } from './steps';
+
+afterAll(closeBrowser);
+
+const verdict = async (page: Page): Promise<string> => {
+  await checked(page);
+  return plain(
+    await page
+      .locator('h1, h2')
+      .filter({ hasText: /^Bay A1/ })
+      .first()
+      .locator('xpath=..')
+      .innerText(),
+  );
+};
+const findings = async (page: Page): Promise<string> => plain(await page.locator('section[aria-label="Findings"]').innerText());
+const openActions = (page: Page) => page.getByRole('region', { name: 'Open at this bay' });
+
+/** Puts the focus there and presses Enter, as who has no mouse does. */
+async function enter(one: Locator): Promise<void> {
+  await one.focus();
+  await one.press('Enter');
+}
+
+test('a visit that finds a dented beam makes the bay over, and replacing the beam brings it back', { timeout: 180_000 }, () =>
+  withProgram(async ({ page }) => {
+    await openDemo(page);
+    await goToBay(page, 'A1');
+    await eventually(() => verdict(page)).toContain('Within');
+
+    await command(page, 'Visits');
+    await choice(page, 'Bays').selectOption({ label: 'bay A1 only' });
+    await type(field(page, 'Visited by'), 'R. Walker');
+    await page.getByRole('button', { name: 'Begin the visit' }).click();
+    await page.getByRole('heading', { name: 'Bay A1', exact: true }).waitFor();
+    await page.getByRole('button', { name: 'Record damage' }).click();
+    await choice(page, 'Damaged part').selectOption({ label: 'Beam, level 1, front' });
+    await page.getByRole('button', { name: 'Finish this bay and go on' }).click();
+    await page.getByRole('button', { name: 'Sign and keep as a record' }).waitFor();
+
+    await goToBay(page, 'A1');
+    await eventually(() => verdict(page)).toContain('Over');
+    expect(await findings(page)).toContain('The front beam of level 1 of bay A1 has a dent');
+    // Told once beside the verdict, not by the visit and by the site.
+    expect(await openActions(page).getByRole('listitem').count()).toBe(1);
+
+    await command(page, 'Visits');
+    await page.getByRole('button', { name: '← All visits' }).click();
+    await page
+      .getByRole('button', { name: /^Done… The front beam of level 1/ })
+      .first()
+      .click();
+    await type(field(page, 'Done by'), 'F. Fitter');
+    await type(field(page, 'How'), 'Beam replaced, order 4711');
+    await page.getByRole('button', { name: 'Beam replaced: take the damage off the level' }).click();
+    await goToBay(page, 'A1');
+    await eventually(() => verdict(page)).toContain('Within');
+    expect(await openActions(page).count()).toBe(0);
+    expect(await page.getByRole('button', { name: 'Undo', exact: true }).getAttribute('title')).toBe('Undo: Damaged beam replaced');
+  }),
+);
+
+test('damage and sag are entered, corrected, undone and taken off in the form of the level, by keyboard', { timeout: 180_000 }, () =>
+  withProgram(async ({ page }) => {
+    await openDemo(page);
+    await goToBay(page, 'A1');
+    await goToLevel(page, 2);
+    await command(page, 'Level: height, beams, locks');
+    const record = page.getByRole('button', { name: 'Record damage of a beam' });
+    await enter(record);
+    await eventually(() => verdict(page)).toContain('Over');
+    const part = choice(page, 'Damaged part');
+    await part.focus();
+    await part.press('ArrowDown');
+    await eventually(() => findings(page)).toContain('The rear beam of level 2 of bay A1 has a dent');
+    await type(field(page, 'Note'), 'truck tine');
+    const found = page.getByLabel('Found on');
+    await found.fill('');
+    await found.press('Enter');
+    await eventually(() => findings(page)).toContain('(truck tine)');
+    await eventually(() => findings(page)).toContain('The day on which it was found is not known.');
+    expect(await page.getByRole('button', { name: 'Undo', exact: true }).getAttribute('title')).toBe(
+      'Undo: Change damage of level 2 of bay A1',
+    );
+    await enter(page.getByRole('button', { name: 'Replaced or repaired: take it off' }));
+    await eventually(() => verdict(page)).toContain('Within');
+    expect(await record.evaluate((one) => one === document.activeElement)).toBe(true);
+
+    const front = page.getByRole('group', { name: 'Front beam' });
+    await type(field(front, 'Loaded'), '5');
+    await eventually(() => verdict(page)).toContain('Not assessable');
+    await type(field(front, 'Unloaded, permanent set down'), '0');
+    await type(field(front, 'Unloaded, permanent set sideways'), '0');
+    await eventually(() => verdict(page)).toContain('Within');
+    // 2 700 mm: 13.5 mm allowed, 20 % of it 2.7 mm (facts F-01 and F-88).
+    await type(field(front, 'Unloaded, permanent set down'), '2.8');
+    await eventually(() => verdict(page)).toContain('Over');
+    expect(await findings(page)).toContain('take both beams out');
+    expect(await field(front, 'Loaded').getAttribute('data-field')).toBe('level:a1-l2:sags.front.loadedMm');
+    await enter(page.getByRole('button', { name: 'Undo', exact: true }));
+    await eventually(() => verdict(page)).toContain('Within');
+    await enter(page.getByRole('button', { name: 'Redo', exact: true }));
+    await eventually(() => verdict(page)).toContain('Over');
+    await enter(front.getByRole('button', { name: 'Replaced: take the reading off' }));
+    await eventually(() => verdict(page)).toContain('Within');
+    // What cannot be is refused where it was typed.
+    await type(field(front, 'Loaded'), '-1');
+    await front.getByText(/Loaded must be/).waitFor();
+  }),
+);
