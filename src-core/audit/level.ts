@@ -17,6 +17,7 @@ import { reduce } from '../statics/reduction';
 import { beamConditionFindings } from './beam-condition';
 import { asked, type BayWork, type LevelWork, type SiteContext, type StandingLoad } from './context';
 import { frameTypesMissing } from './level-work';
+import { looseGoods } from './loose-goods';
 import { runnersFinding } from './runners';
 import { sourceWords } from './source-words';
 import type { LevelAudit, LevelEffects } from './types';
@@ -308,6 +309,7 @@ function pairInput(
             const stiffFront = solve(loads.front);
             return { front: stiffFront, rear: alike ? stiffFront : solve(loads.rear) };
           }),
+    loose: looseGoods(context, bay, work, effects, span, fixity),
     rated,
     rules: context.rules,
   };

@@ -8,6 +8,7 @@ import { compareVerdicts, say, verdictOf, type CheckName, type Finding, type Tex
 import { compared, finding, notAssessable, utilisationOf } from './make-finding';
 import { alike, evenBendingFactor, evenDeflectionFactor, nameOf, worseBeam, type Effect, type PairInput, type WorseBeam } from './pair';
 import { opening } from './phrase';
+import { worstCase } from './worst-case';
 
 interface EffectWords {
   readonly check: CheckName;
@@ -48,20 +49,22 @@ function byEvenLoad(
 ): Finding {
   const { rated, rules, place } = input;
   const worse = worseBeam(input, effect);
-  if (rated.kg === null) return unrated(input, words, worse, counts);
+  if (rated.kg === null) return unrated(input, effect, words, worse, counts);
   const result = compared(massOf(worse.kg), massOf(rated.kg), rules.value.closeAbove);
   const range = stifferEnds(input, effect, result.utilisation, result.verdict, evenFactor);
+  const worst = worstCase({ pair: input, effect, ...result, allowedKg: rated.kg, parts: 1, counts, worked: words.worked });
   return finding({
     check: words.check,
     place: { ...place, beam: worse.side },
     ...result,
-    verdict: range.changes ? 'close' : result.verdict,
+    verdict: range.changes || worst.changes ? 'close' : result.verdict,
     counts,
-    says: () => sentence(input, words, worse, result.verdict),
-    worked: () => words.worked(input, worse),
+    says: () => say`${sentence(input, words, worse, result.verdict)}${worst.why()}`,
+    worked: () => [...words.worked(input, worse), ...worst.worked()],
     notes: () => [
       ...where(input, worse, effect),
       ...otherBeam(input, worse),
+      ...worst.notes(),
       ...range.notes(),
       ...rated.notes,
       ...sprungNote(input),
@@ -82,29 +85,36 @@ export function beamEndShear(input: PairInput, end: { readonly kg: number | null
   if (end.kg !== null) {
     const endKg = end.kg;
     const onEnd = massOf(massWeighing(Math.max(reactionLeft, reactionRight)));
+    const result = compared(onEnd, massOf(endKg), rules.value.closeAbove);
+    const worked = (pair: PairInput, beam: WorseBeam) => endValueSteps(pair, beam, { kg: endKg, from: end.from() });
+    // The maker's value is for one beam end, which carries a quarter of the pair's even load.
+    const worst = worstCase({ pair: input, effect: 'endShear', ...result, allowedKg: endKg, parts: 4, counts: true, worked });
     return finding({
       check: 'beam-end-shear',
       place,
-      ...compared(onEnd, massOf(endKg), rules.value.closeAbove),
+      ...result,
+      verdict: worst.changes ? 'close' : result.verdict,
       says: () =>
-        say`${level} puts ${onEnd} on the ${place.end} end of ${nameOf(input, worse.side)}. Its maker states ${massOf(endKg)} for one end.`,
-      worked: () => endValueSteps(input, worse, { kg: endKg, from: end.from() }),
-      notes: () => otherBeam(input, worse),
+        say`${level} puts ${onEnd} on the ${place.end} end of ${nameOf(input, worse.side)}. Its maker states ${massOf(endKg)} for one end.${worst.why()}`,
+      worked: () => [...worked(input, worse), ...worst.worked()],
+      notes: () => [...otherBeam(input, worse), ...worst.notes()],
     });
   }
-  if (rated.kg === null) return unrated(input, END_SHEAR, worse, counts);
+  if (rated.kg === null) return unrated(input, 'endShear', END_SHEAR, worse, counts);
   const result = compared(massOf(worse.kg), massOf(rated.kg), rules.value.closeAbove);
+  const worst = worstCase({ pair: input, effect: 'endShear', ...result, allowedKg: rated.kg, parts: 1, counts, worked: endShearSteps });
   return finding({
     check: 'beam-end-shear',
     place,
     ...result,
+    verdict: worst.changes ? 'close' : result.verdict,
     counts,
     says: () =>
       result.verdict === 'over'
         ? say`${sentence(input, END_SHEAR, worse, result.verdict)} That is beyond what the notice proves for a beam end: ask the maker for the value of one end, or move goods away from it.`
-        : sentence(input, END_SHEAR, worse, result.verdict),
-    worked: () => endShearSteps(input, worse),
-    notes: () => [...otherBeam(input, worse), ...rated.notes, ...notCounted(counts)],
+        : say`${sentence(input, END_SHEAR, worse, result.verdict)}${worst.why()}`,
+    worked: () => [...endShearSteps(input, worse), ...worst.worked()],
+    notes: () => [...otherBeam(input, worse), ...worst.notes(), ...rated.notes, ...notCounted(counts)],
   });
 }
 
@@ -117,13 +127,15 @@ function sentence(input: PairInput, words: EffectWords, worse: WorseBeam, verdic
   return say`${level} carries ${massOf(totalKg)}${joined} ${words.does(nameOf(input, worse.side), even)}.${allows}`;
 }
 
-function unrated(input: PairInput, words: EffectWords, worse: WorseBeam, counts: boolean): Finding {
+function unrated(input: PairInput, effect: Effect, words: EffectWords, worse: WorseBeam, counts: boolean): Finding {
+  const stated = { verdict: 'not-assessable', utilisation: null, allowedKg: null } as const;
+  const worst = worstCase({ pair: input, effect, ...stated, parts: 1, counts, worked: words.worked });
   return notAssessable(words.check, { ...input.place, beam: worse.side }, input.rated.missing, {
     counts,
     demand: massOf(worse.kg),
     says: () => say`${sentence(input, words, worse, 'not-assessable')} What the pair may carry is not known.`,
-    worked: () => words.worked(input, worse),
-    notes: () => otherBeam(input, worse),
+    worked: () => [...words.worked(input, worse), ...worst.worked()],
+    notes: () => [...otherBeam(input, worse), ...worst.notes()],
   });
 }
 

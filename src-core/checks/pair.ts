@@ -8,6 +8,7 @@ import type { BeamLoad } from '../statics/load';
 import { massWeighing } from '../units/quantity';
 import type { BeamSide, Place } from './finding';
 import type { LevelRating } from './level-rating';
+import type { LoosePair } from './loose-pair';
 import type { ResolvedRules } from './rule-sets';
 
 /** Evenly spread masses on the pair, kg, one for each effect on one beam and its own load. */
@@ -49,6 +50,8 @@ export interface PairInput {
   readonly fixityFrom: string;
   /** The same beams with the likely fixity of their ends; null where the real one is known. */
   readonly stiffer: (() => { readonly front: EvenMasses; readonly rear: EvenMasses }) | null;
+  /** The same goods off their marks and heavier; null where neither may be. */
+  readonly loose: LoosePair | null;
   readonly rated: LevelRating;
   readonly rules: ResolvedRules;
 }

@@ -20,7 +20,7 @@ export interface PairLoads {
 }
 
 /** Turns a load left for right within its width. */
-const mirrored = (load: BeamLoad, width: number): BeamLoad => ({
+export const mirrored = (load: BeamLoad, width: number): BeamLoad => ({
   lines: load.lines.map(({ from, to, wFrom, wTo }) => ({ from: width - to, to: width - from, wFrom: wTo, wTo: wFrom })),
   points: load.points.map(({ at, force }) => ({ at: width - at, force })),
 });
