@@ -3,7 +3,7 @@
  * arguments, one plain answer. What comes from the page is checked here before the host sees it.
  */
 import type { Host, HostErrorCode, HostFailure, Preferences } from './host';
-import { IF_VISIT_DIFFERS } from './package/join';
+import { IF_VISIT_DIFFERS } from './package/package';
 import { isId } from './site/fields';
 
 export type HostMethod = keyof Host;

@@ -4,7 +4,7 @@
  *
  * The page knows sites by id, never by path. Every method may reject with a `HostError`.
  */
-import type { IfVisitDiffers } from './package/join';
+import type { IfVisitDiffers } from './package/package';
 import type { FrozenRecord, RecordDraft } from './visit/records';
 
 /** One site in the list. `problem` is a sentence if its file cannot be read. */

@@ -1,7 +1,7 @@
 /** The one package that a page has made or is sending: carried in pieces, so that neither carrier needs it in one message. */
 import type { MadePackage, PackageLook, TakenPackage, TakePackage } from '../src-core/host';
 import { PACKAGE_PIECE } from '../src-core/host-wire';
-import { PACKAGE_BYTES } from '../src-core/package/listing';
+import { PACKAGE_BYTES } from '../src-core/package/package';
 import { contentsOf, type PackageContents } from './package-contents';
 import { readPackage } from './package-file';
 import type { PackageStore } from './package-store';

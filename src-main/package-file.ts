@@ -11,7 +11,8 @@
  * the file's, and every part must have the size and checksum that the listing gives it.
  */
 import { unzipSync, zipSync, type Zippable } from 'fflate';
-import { LISTING_BYTES, MOST_PARTS, PACKAGE_BYTES, readListing, writeListing, type Listing } from '../src-core/package/listing';
+import { readListing, writeListing, type Listing } from '../src-core/package/listing';
+import { LISTING_BYTES, MOST_PARTS, PACKAGE_BYTES } from '../src-core/package/package';
 import { LISTING_NAME, partNamed, partWords } from '../src-core/package/parts';
 import { sentences, sha256 } from './checked-site';
 import { HostError } from './trouble';

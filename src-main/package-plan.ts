@@ -1,6 +1,7 @@
 /** What bringing a package in puts where, and what that means in words. Nothing is written here. */
 import { joinChains, type ChainStep } from '../src-core/package/chains';
-import { joinFollowUps, joinVisits, withPhotoNames, type IfVisitDiffers } from '../src-core/package/join';
+import { joinFollowUps, joinVisits, withPhotoNames } from '../src-core/package/join';
+import type { IfVisitDiffers } from '../src-core/package/package';
 import { readFollowUp, writeFollowUp } from '../src-core/visit/follow-up';
 import { readVisit, writeVisit } from '../src-core/visit/read-visit';
 import type { BesideStore } from './beside-store';

@@ -90,6 +90,7 @@ export const COMMANDS: readonly Command[] = [
     open.openTask('site', open.site.id);
   }),
   command('export', 'Site', 'Save a copy as a file…', [], always, ({ shell }) => void shell.exportFile()),
+  command('export-package', 'Site', 'Export with visits and records…', [], always, ({ shell }) => void shell.packages.export()),
   command('leave', 'Site', 'All sites', [], always, ({ shell }) => shell.leave()),
 
   // ------------------------------------------------------------ edit

@@ -18,6 +18,7 @@ import { readVisit, writeVisit } from '../src-core/visit/read-visit';
 import type { FrozenRecord, RecordKind } from '../src-core/visit/records';
 import { todayList, type TodayItem } from '../src-core/visit/rounds';
 import type { Visit } from '../src-core/visit/visit';
+import { base64Of } from './base64';
 import { sha256Of } from './checksum';
 import { failureOf } from './host';
 import type { OpenSite } from './open-site.svelte';
@@ -174,7 +175,7 @@ export class Rounds {
   /** @returns the name under which the photo is kept; null where it is not, and then why is said */
   addPhoto = async (photoId: Id, file: Blob): Promise<string | null> => {
     try {
-      const kept = await this.host.addPhoto({ siteId: this.open.id, photoId, base64: await base64Of(file) });
+      const kept = await this.host.addPhoto({ siteId: this.open.id, photoId, base64: base64Of(new Uint8Array(await file.arrayBuffer())) });
       this.failure = null;
       return kept.file;
     } catch (error) {
@@ -285,12 +286,5 @@ function madeAgain(book: FollowUp, change: (book: FollowUp) => FollowUp): Follow
 
 /** Hash of the site's canonical text, the same wherever it is made. */
 export const checksumOf = async (site: Site): Promise<string> => sha256Of(writeSite(site));
-
-async function base64Of(file: Blob): Promise<string> {
-  const bytes = new Uint8Array(await file.arrayBuffer());
-  let binary = '';
-  for (let at = 0; at < bytes.length; at += 0x8000) binary += String.fromCharCode(...bytes.subarray(at, at + 0x8000));
-  return btoa(binary);
-}
 
 export const [useRounds, setRounds] = createContext<Rounds>();

@@ -1,7 +1,8 @@
 /** The program round the open site: list of sites, which screen and dialog are up, preferences. */
 import { createContext } from 'svelte';
-import type { About, Generation, Host, HostFailure, Preferences, RecoveredEdits, SiteEntry } from '../src-core/host';
+import type { About, Generation, Host, HostFailure, PackageLook, Preferences, RecoveredEdits, SiteEntry } from '../src-core/host';
 import type { PaperKind } from '../src-core/paper/paper';
+import { SITE_FILE_BYTES } from '../src-core/site/envelope';
 import { newSite } from '../src-core/site/new-site';
 import type { Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
@@ -9,7 +10,9 @@ import type { WorkerLike } from './audit-link';
 import { LIBRARIES, type LibraryKind } from './forms/library-items';
 import { failureOf } from './host';
 import { newId } from './ids';
+import { fileNameOf, offerFile } from './offer-file';
 import { OpenSite } from './open-site.svelte';
+import { isPackage, Packages, UNSAVED_BESIDE } from './packages.svelte';
 import type { Refusal } from './refusal';
 import { readBody, readSiteFile, type FileReading } from './site-text';
 
@@ -22,6 +25,8 @@ export type Dialog =
   | { readonly kind: 'new-entry'; readonly of: LibraryKind; readonly then: (id: string) => Refusal }
   | { readonly kind: 'remove-site' | 'mend-site'; readonly entry: SiteEntry }
   | { readonly kind: 'altered'; readonly name: string; readonly text: string }
+  | { readonly kind: 'package'; readonly look: PackageLook }
+  | { readonly kind: 'working' | 'without-photos' }
   | { readonly kind: 'problems'; readonly name: string; readonly problems: readonly string[] };
 
 export class Shell {
@@ -37,6 +42,9 @@ export class Shell {
   /** What last went wrong outside an open site, said until it is put away. */
   trouble = $state.raw<HostFailure | null>(null);
   busy = $state(false);
+  readonly packages: Packages;
+  /** What was done last outside an open site, for whoever cannot see the list change. */
+  said = $state('');
   /** Whether a visit or its follow-up waits to be put on the disk. */
   unsavedBeside: () => boolean = () => false;
 
@@ -45,24 +53,25 @@ export class Shell {
 
   constructor(host: Host, makeWorker: (() => WorkerLike) | null, today?: () => string) {
     this.host = host;
+    this.packages = new Packages(this);
     this.#makeWorker = makeWorker;
     this.#today = today;
   }
 
   start = (): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       this.preferences = await this.host.readPreferences();
       this.about = await this.host.about();
       this.sites = await this.host.listSites();
     });
 
   refresh = (): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       this.sites = await this.host.listSites();
     });
 
   openSite = (id: string): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       const onDisk = await this.host.readSite(id);
       const reading = readSiteFile(onDisk.text);
       if (!reading.ok) {
@@ -79,7 +88,7 @@ export class Shell {
     });
 
   newSite = (name: string): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       const site = newSite(newId(), name.trim());
       const saved = await this.host.saveSite({ id: site.id, body: writeSite(site), baseRevision: null });
       this.#take(site, site.id, saved.revision, saved.savedAt);
@@ -87,14 +96,18 @@ export class Shell {
     });
 
   openDemo = (): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       const id = await this.host.addDemoSite();
       this.sites = await this.host.listSites();
       await this.openSite(id);
     });
 
+  /** A site file, or a package of a site with its visits and records: told by what is in it. */
   importFile = (file: File): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
+      if (await isPackage(file)) return this.packages.bringIn(file);
+      // More than twice the largest site file is not even read.
+      if (file.size > 2 * SITE_FILE_BYTES) throw tooLarge(file.name);
       const text = await file.text();
       const reading = readSiteFile(text);
       if (!reading.ok) {
@@ -111,7 +124,7 @@ export class Shell {
     });
 
   /** Takes a file that does not match its checksum, because the user says it was edited by hand. */
-  importUnchecked = (text: string): Promise<void> => this.#attempt(() => this.#takeIn(text, true));
+  importUnchecked = (text: string): Promise<void> => this.attempt(() => this.#takeIn(text, true));
 
   async #takeIn(text: string, unchecked: boolean): Promise<void> {
     const id = await this.host.importSite(text, unchecked);
@@ -121,14 +134,14 @@ export class Shell {
 
   /** Puts a site aside as it was listed; one that changed since is not. */
   removeSite = (entry: SiteEntry): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       if (entry.revision !== null) await this.host.removeSite(entry.id, entry.revision);
       this.sites = await this.host.listSites();
     });
 
   /** Puts an earlier state in the place of a file that cannot be read. */
   restoreUnreadable = (entry: SiteEntry, generationId: string): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       const reading = readSiteFile(await this.host.readGeneration(entry.id, generationId));
       if (!reading.ok) {
         this.#showProblems(`The earlier state of ${entry.name}`, reading);
@@ -161,7 +174,7 @@ export class Shell {
   };
 
   leaveOut = (): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       const { open } = this;
       this.dialog = null;
       if (open === null) return;
@@ -174,10 +187,7 @@ export class Shell {
     if (this.open === null) return;
     if (this.unsavedBeside()) {
       this.show('visits');
-      this.trouble = {
-        code: 'failed',
-        message: 'A visit or its follow-up is not on the disk yet. Wait until it is saved, or sort out why it is not.',
-      };
+      this.trouble = UNSAVED_BESIDE;
       return;
     }
     if (this.open.saved === 'saved' && this.open.unfinished.length === 0) void this.closeSite();
@@ -200,7 +210,7 @@ export class Shell {
     const open = this.open;
     if (open === null) return;
     await open.saving.settled();
-    await this.#attempt(() => this.host.clearJournal(open.id));
+    await this.attempt(() => this.host.clearJournal(open.id));
     open.close();
     this.open = null;
     this.dialog = null;
@@ -220,7 +230,7 @@ export class Shell {
   saveOver = async (): Promise<void> => {
     const open = this.open;
     if (open === null) return;
-    await this.#attempt(async () => {
+    await this.attempt(async () => {
       const { revision } = await this.host.readSite(open.id);
       open.saving.revision = revision;
       this.dialog = null;
@@ -229,7 +239,7 @@ export class Shell {
   };
 
   saveCopy = (): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       const open = this.open;
       if (open === null) return;
       const copy: Site = { ...open.site, id: newId(), name: `${open.site.name} (copy)` };
@@ -247,25 +257,22 @@ export class Shell {
 
   /** Hands the site's file, as it lies on disk after saving, to the browser's own save dialog. */
   exportFile = (): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       const open = this.open;
       if (open === null || (open.saved !== 'saved' && !(await open.save()))) return;
       const { text } = await this.host.readSite(open.id);
-      const address = URL.createObjectURL(new Blob([text], { type: 'application/json' }));
-      const link = Object.assign(document.createElement('a'), { href: address, download: `${fileNameOf(open.site.name)}.tallybeam.json` });
-      link.click();
-      setTimeout(() => URL.revokeObjectURL(address), 10_000);
+      offerFile(new Blob([text], { type: 'application/json' }), `${fileNameOf(open.site.name)}.tallybeam.json`);
     });
 
   chooseFolder = (): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       if (this.host.chooseSitesFolder === null) return;
       this.about = await this.host.chooseSitesFolder();
       this.sites = await this.host.listSites();
     });
 
   savePreferences = (change: Partial<Preferences>): Promise<void> =>
-    this.#attempt(async () => {
+    this.attempt(async () => {
       this.preferences = await this.host.savePreferences(change);
       if (change.locale !== undefined && this.open !== null) this.open.locale = change.locale;
     });
@@ -324,7 +331,8 @@ export class Shell {
     this.preferences = await this.host.savePreferences({ recentSiteIds: recent });
   }
 
-  async #attempt(task: () => Promise<void>): Promise<void> {
+  /** Does what may fail; why it failed is told. */
+  async attempt(task: () => Promise<void>): Promise<void> {
     this.busy = true;
     this.trouble = null;
     try {
@@ -337,6 +345,9 @@ export class Shell {
   }
 }
 
-const fileNameOf = (name: string): string => name.replace(/[^\p{L}\p{N}]+/gu, '-').replace(/^-|-$/g, '') || 'site';
+const tooLarge = (name: string): HostFailure => ({
+  code: 'too-large',
+  message: `${name} is larger than any site file, and no package of one. Choose a file that Tallybeam exported.`,
+});
 
 export const [useShell, setShell] = createContext<Shell>();

@@ -6,10 +6,7 @@ import { closingOf, type FollowUp } from '../visit/follow-up';
 import type { Id } from '../site/site';
 import { LIMITS } from '../site/limits';
 import type { Visit } from '../visit/visit';
-
-/** Where a visit is here and in the package and the two differ. */
-export const IF_VISIT_DIFFERS = ['keep-both', 'take-theirs'] as const;
-export type IfVisitDiffers = (typeof IF_VISIT_DIFFERS)[number];
+import type { IfVisitDiffers } from './package';
 
 export type VisitStep =
   | { readonly kind: 'here'; readonly visit: Visit }

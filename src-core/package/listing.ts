@@ -9,18 +9,12 @@ import { LIMITS } from '../site/limits';
 import { list, record } from '../site/records';
 import { aName } from '../site/schema-goods';
 import { namedId, readDocument, writeDocument, type DocumentKind } from '../visit/read-document';
+import { MOST_PARTS, PACKAGE_BYTES } from './package';
 import { partNamed } from './parts';
 
 /** Version of the package's form; a newer one is refused by its number. */
 export const PACKAGE_VERSION = 1;
 const FORMAT = 'tallybeam-package';
-
-/** Largest package, bytes: some hundred photos as a telephone takes them. */
-export const PACKAGE_BYTES = 512 * 1024 * 1024;
-/** Most parts; a ZIP of the plain kind counts them in 16 bits. */
-export const MOST_PARTS = 60_000;
-/** More than the listing of as many parts takes. */
-export const LISTING_BYTES = 16 * 1024 * 1024;
 
 export interface ListedPart {
   readonly name: string;
