@@ -59,6 +59,7 @@ export const weighed = ({
   massKg: grossKg,
   from,
   missing,
+  percent: load.massUncertaintyPercent,
 });
 
 export const outline = (one: StandingLoad): Outline => ({

@@ -187,7 +187,11 @@ const sprungNote = (input: PairInput): readonly Text[] =>
   input.fixity > 0 ? [say`The stiffness of the connectors is known (fixity ${ratioOf(input.fixity)}) and is used for both loads.`] : [];
 
 const notCounted = (counts: boolean): readonly Text[] =>
-  counts ? [] : [say`For information: this level is judged as a designed full complement, by its total and its unit loads.`];
+  counts
+    ? []
+    : [
+        say`For information: this level is judged as a designed full complement, by its total and its unit loads. Ordinary put-away is part of that loading, so the worst case does not count against it.`,
+      ];
 
 /** Where the beam bends most: a place, or a stretch where the moment is level. */
 function where(input: PairInput, { side, beam }: WorseBeam, effect: Effect): readonly Text[] {

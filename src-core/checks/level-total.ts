@@ -1,10 +1,11 @@
 /** Is the mass on a level within the pair's rating, each beam within its half. */
 import { massOf, ratioOf } from '../units/quantity';
 import { say, type Finding, type Missing, type Place, type Text, type WorkedStep, type WorkedValue } from './finding';
+import { mayBeHeavier } from './heavier';
 import type { LevelRating } from './level-rating';
 import { compared, distinctMissing, finding, notAssessable } from './make-finding';
 import { inside, opening } from './phrase';
-import { utilisationStep, type Stated, type Weighed } from './unit-load';
+import { heaviestOf, utilisationStep, type Stated, type Weighed } from './unit-load';
 
 export interface LevelTotalInput {
   readonly place: Place;
@@ -54,16 +55,21 @@ export function levelTotal(input: LevelTotalInput): Finding {
   const even = goods.every(({ frontShare }) => frontShare === 0.5);
   const worse = even ? known : Math.max(front, 2 * known - front);
   const beam = front >= known ? 'front' : 'rear';
+  const result = compared(massOf(worse), allowed, closeAbove);
+  const most = sum(goods.map(heaviestOf));
+  const mostFront = 2 * sum(goods.map((one) => heaviestOf(one) * (one.frontShare ?? 0)));
+  const heavier = mayBeHeavier(result, massOf(even ? most : Math.max(mostFront, 2 * most - mostFront)), closeAbove);
   return finding({
     check: 'level-total',
     place: even ? place : { ...place, beam },
-    ...compared(massOf(worse), allowed, closeAbove),
+    ...result,
+    verdict: heavier.verdict,
     says: () =>
       even
-        ? say`${level} carries ${massOf(known)}. ${limit()}`
-        : say`${level} carries ${massOf(known)}, of which ${massOf(worse / 2)} on the ${beam} beam: as much as ${massOf(worse)} shared alike. ${limit()}`,
+        ? say`${level} carries ${massOf(known)}. ${limit()}${heavier.why()}`
+        : say`${level} carries ${massOf(known)}, of which ${massOf(worse / 2)} on the ${beam} beam: as much as ${massOf(worse)} shared alike. ${limit()}${heavier.why()}`,
     worked: () => worked(input, ratedKg, even ? null : beam, known, worse),
-    notes: () => [...rated.notes, deckNote],
+    notes: () => [...heavier.notes(), ...rated.notes, deckNote],
   });
 }
 

@@ -1,6 +1,7 @@
 /** Is each unit load within the notice's unit load limit, and are there no more of them than it is made for. */
 import { countOf, massOf, ratioOf } from '../units/quantity';
-import { say, type Finding, type Missing, type Place, type WorkedStep } from './finding';
+import { compareVerdicts, say, type Finding, type Missing, type Place, type WorkedStep } from './finding';
+import { mayBeHeavier } from './heavier';
 import { compared, distinctMissing, finding, notAssessable } from './make-finding';
 
 /** A unit load on a level, pallet included. */
@@ -13,7 +14,12 @@ export interface Weighed {
   readonly from: string;
   /** What to enter where the mass is not known. */
   readonly missing: readonly Missing[];
+  /** The mass may be this many per cent more than stated; none where it is not given. */
+  readonly percent?: number;
 }
+
+/** kg, as heavy as it may be; 0 where it is not known. */
+export const heaviestOf = ({ massKg, percent = 0 }: Pick<Weighed, 'massKg' | 'percent'>): number => (massKg ?? 0) * (1 + percent / 100);
 
 /** A number that a load notice states, or what to enter where it does not. */
 export interface Stated {
@@ -48,13 +54,21 @@ export function unitLoad({ place, goods, limit, closeAbove }: UnitLoadInput): re
     }
     const judged = judge(one, one.massKg, limit, limitKg, closeAbove, at);
     if (judged.verdict === 'over') found.push(judged);
-    if (heaviest === null || (judged.utilisation ?? 0) > (heaviest.utilisation ?? 0)) heaviest = judged;
+    if (heaviest === null || outweighs(judged, heaviest)) heaviest = judged;
   }
   return found.length > 0 || heaviest === null ? found : [heaviest];
 }
 
+/** One that may be too heavy comes before one that is heavier as stated. */
+function outweighs(one: Finding, other: Finding): boolean {
+  const worse = compareVerdicts(one.verdict, other.verdict);
+  return worse > 0 || (worse === 0 && (one.utilisation ?? 0) > (other.utilisation ?? 0));
+}
+
 function judge(goods: Weighed, massKg: number, limit: Stated, limitKg: number, closeAbove: number, place: Place): Finding {
-  const result = compared(massOf(massKg), massOf(limitKg), closeAbove);
+  const stated = compared(massOf(massKg), massOf(limitKg), closeAbove);
+  const heavier = mayBeHeavier(stated, massOf(heaviestOf(goods)), closeAbove);
+  const result = { ...stated, verdict: heavier.verdict };
   return finding({
     check: 'unit-load',
     place,
@@ -62,7 +76,10 @@ function judge(goods: Weighed, massKg: number, limit: Stated, limitKg: number, c
     says: () =>
       result.verdict === 'over'
         ? say`${goods.name} weighs ${massOf(massKg)} with its pallet. The notice allows unit loads of ${massOf(limitKg)}.`
-        : say`The heaviest unit load, ${goods.name}, weighs ${massOf(massKg)} of the ${massOf(limitKg)} allowed.`,
+        : result.verdict !== stated.verdict
+          ? say`${goods.name} weighs ${massOf(massKg)} of the ${massOf(limitKg)} allowed.${heavier.why()}`
+          : say`The heaviest unit load, ${goods.name}, weighs ${massOf(massKg)} of the ${massOf(limitKg)} allowed.`,
+    notes: heavier.notes,
     worked: () => [
       utilisationStep(
         { symbol: 'm', is: `mass of ${goods.name}`, quantity: massOf(massKg), from: goods.from },

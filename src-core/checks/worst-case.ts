@@ -9,7 +9,7 @@ import { say, type Text, type Verdict, type WorkedStep } from './finding';
 import type { LoosePair, WorstEffect } from './loose-pair';
 import { utilisationOf } from './make-finding';
 import { alike, type Effect, type PairInput, type WorseBeam } from './pair';
-import { ruleQuantity, ruleValue, sourceOf } from './rule-sets';
+import { ruleValue, sourceOf } from './rule-sets';
 import { put } from './worked-values';
 
 export interface WorstCaseInput {
@@ -52,13 +52,12 @@ export function worstCase(input: WorstCaseInput): WorstCase {
     why: () =>
       changes ? say` That is ${ratioOf(utilisation ?? 0)} of it; with ${how()} it would be ${ratioOf(used())}, so it is close.` : say``,
     notes: () => {
-      const { kg, arrangement } = loose.worst(effect);
-      const counted = say`${massOf(kg / parts)}${allowedKg === null ? say`` : say` (utilisation ${ratioOf(used())})`}`;
+      const { kg, arrangement, end } = loose.worst(effect);
+      const counts = parts === 4 ? say`put ${massOf(kg / parts)} on the ${end ?? ''} end` : say`count as ${massOf(kg)}`;
+      const compared = allowedKg === null ? say`` : say` (utilisation ${ratioOf(used())})`;
+      const origin = loose.tolerance > 0 ? say` Placement tolerance: ${sourceOf(pair.rules, 'placementTolerance')}.` : say``;
       return [
-        say`Worst case: with ${how()} it would count as ${counted}.`,
-        ...(loose.tolerance > 0
-          ? [say`Placement tolerance ${ruleQuantity(pair.rules, 'placementTolerance')}: ${sourceOf(pair.rules, 'placementTolerance')}.`]
-          : []),
+        say`Worst case: with ${how()} it would ${counts}${compared}.${origin}`,
         ...(loose.tolerance > 0 && loose.beamDistance === null
           ? [say`The distance of the beams is not known, so the worst case is by the tolerance along them alone.`]
           : []),
@@ -74,53 +73,55 @@ const ROUNDING = 1e-12;
 /** Shifts below this are said as none, mm. */
 const STILL = 0.05;
 
-/** "every load 50 mm nearer the middle, 50 mm nearer the front beam and 2 % heavier". */
+/** "its loads 50 mm nearer the middle, 50 mm nearer the front beam and 2 % heavier". */
 function arrangementWords(pair: PairInput, loose: LoosePair, worst: WorstEffect): Text {
   const { goods, tolerance, beamDistance } = loose;
   const heaviest = Math.max(0, ...goods.map(({ percent }) => percent));
-  const parts: Text[] = [...alongWords(loose, worst)];
-  if (tolerance > 0 && beamDistance !== null)
-    parts.push(say`${lengthOf(tolerance)} nearer ${alike(pair) ? 'one of the beams' : `the ${worst.side} beam`}`);
-  if (heaviest > 0)
-    parts.push(say`${goods.every(({ percent }) => percent === heaviest) ? '' : 'up to '}${quantity('percent', heaviest)} heavier`);
-  const who = goods.length === 1 ? 'its load' : 'its loads';
-  if (parts.length === 0) return say`${who} as stated`;
-  return parts.reduce<Text>(
-    (all, part, i) => (i === 0 ? say`${all} ${part}` : i < parts.length - 1 ? say`${all}, ${part}` : say`${all} and ${part}`),
-    say`${who}`,
-  );
+  const across =
+    tolerance > 0 && beamDistance !== null
+      ? [say`${lengthOf(tolerance)} nearer ${alike(pair) ? 'one beam' : `the ${worst.side} beam`}`]
+      : [];
+  const upTo = goods.every(({ percent }) => percent === heaviest) ? '' : 'up to ';
+  const heavier = heaviest > 0 ? [say`${upTo}${quantity('percent', heaviest)} heavier`] : [];
+  const one = goods.length === 1;
+  const who = one ? 'the load' : 'its loads';
+  const { all, each } = alongWords(loose, worst);
+  if (each.length > 0) {
+    const rest = [...across, ...heavier];
+    const moved = say`${who}, from left to right, ${andJoined(each)}`;
+    return rest.length === 0 ? moved : say`${moved}, all ${andJoined(rest)}`;
+  }
+  const parts = [...all, ...across, ...heavier];
+  return parts.length === 0 ? say`${who} as stated` : say`${who} ${andJoined(parts)}`;
 }
+
+const andJoined = (parts: readonly Text[]): Text =>
+  parts.reduce<Text>((all, part, i) => (i === 0 ? part : i < parts.length - 1 ? say`${all}, ${part}` : say`${all} and ${part}`), say``);
 
 /** Beyond this many the shifts are not named one by one. */
 const NAMED = 4;
 
-function alongWords({ goods, span, tolerance }: LoosePair, { arrangement: { shifts, at } }: WorstEffect): readonly Text[] {
-  if (tolerance === 0) return [];
+/** What all unit loads do alike, or what each does. */
+function alongWords(
+  { goods, span, tolerance }: LoosePair,
+  { arrangement: { shifts, at } }: WorstEffect,
+): { readonly all: readonly Text[]; readonly each: readonly Text[] } {
+  const alikeAll = (...all: readonly Text[]) => ({ all, each: [] });
   const moves = goods
-    .map(({ at: stated, width }, i) => ({ stated, middle: stated + width / 2, shift: shifts[i] as number }))
-    .sort((a, b) => a.stated - b.stated);
-  if (moves.every(({ shift }) => Math.abs(shift) < STILL)) return [say`where they stand`];
-  const first = (moves[0] as (typeof moves)[number]).shift;
+    .map(({ at: stated, width }, i) => ({ middle: stated + width / 2, shift: shifts[i] as number }))
+    .sort((a, b) => a.middle - b.middle);
+  const first = moves[0]?.shift ?? 0;
+  if (moves.every(({ shift }) => Math.abs(shift) < STILL)) return alikeAll();
   const inwards = moves.every(({ middle, shift }) => Math.abs(span / 2 - middle - shift) < Math.abs(span / 2 - middle));
   if (inwards && moves.every(({ shift }) => Math.abs(Math.abs(shift) - Math.abs(first)) < STILL))
-    return [say`${lengthOf(Math.abs(first))} nearer the middle`];
-  if (moves.every(({ shift }) => Math.abs(shift - first) < STILL)) return [oneMove(first)];
-  if (moves.length > NAMED) return [say`up to ${lengthOf(tolerance)} nearer the place ${lengthOf(at)} from the left support`];
-  return [
-    moves.reduce<Text>(
-      (all, { shift }, i) =>
-        i === 0
-          ? say`from left to right ${oneMove(shift)}`
-          : i < moves.length - 1
-            ? say`${all}, ${oneMove(shift)}`
-            : say`${all} and ${oneMove(shift)},`,
-      say``,
-    ),
-  ];
+    return alikeAll(say`${lengthOf(Math.abs(first))} nearer the middle`);
+  if (moves.every(({ shift }) => Math.abs(shift - first) < STILL)) return alikeAll(oneMove(first));
+  if (moves.length > NAMED) return alikeAll(say`up to ${lengthOf(tolerance)} nearer a place ${lengthOf(at)} from the left support`);
+  return { all: [], each: moves.map(({ shift }) => oneMove(shift)) };
 }
 
 const oneMove = (shift: number): Text =>
-  Math.abs(shift) < STILL ? say`where it stands` : say`${lengthOf(Math.abs(shift))} to the ${shift > 0 ? 'right' : 'left'}`;
+  Math.abs(shift) < STILL ? say`not moved` : say`${lengthOf(Math.abs(shift))} to the ${shift > 0 ? 'right' : 'left'}`;
 
 /** The same calculation for the arrangement, each line marked, after what makes it of the stated case. */
 function workedWorst({ pair, effect, worked }: WorstCaseInput, loose: LoosePair): readonly WorkedStep[] {
