@@ -9,7 +9,7 @@ import type { Id, Site } from '../src-core/site/site';
 import { writeSite } from '../src-core/site/write';
 import type { FromWorker, ToWorker } from './audit-protocol';
 import { lightRun } from './light-audit';
-import { applyAuditChange, changeOf, runsTouched } from './site-change';
+import { applyAuditChange, changeOf, inOne, runsTouched, type AuditChange } from './site-change';
 
 /** The part of a `Worker` that is used. */
 export interface WorkerLike {
@@ -51,6 +51,8 @@ export class AuditLink {
   #touchedAt = new Map<Id, number>();
   /** Findings as the worker last sent them, which its next change builds on. */
   #received = new Map<Id, RunAudit>();
+  /** Parts of one run's findings that have come so far; the worker sends them one after another. */
+  #parts: AuditChange[] = [];
   #worker: WorkerLike | null;
 
   constructor(
@@ -114,17 +116,27 @@ export class AuditLink {
       if (asked === undefined) return;
       // A site that cannot be written says why here, where the save can tell it.
       if (message.body === null) writeHere(asked);
-      else asked.resolve(message.body);
+      // In a turn of its own: taking in a large site's text and sending it on are long enough apart.
+      else setTimeout(asked.resolve, 0, message.body);
     } else if (message.kind === 'done') {
       if (message.version === this.#version) this.listener.done();
     } else if (message.kind === 'trouble') {
       if (this.#upToDate(message.runId, message.version)) this.listener.trouble(message.runId, message.message);
     } else {
-      const { runId } = message.change.run;
-      const audit = applyAuditChange(this.#received.get(runId), message.change);
-      this.#received.set(runId, audit);
-      if (!message.change.more && this.#upToDate(runId, message.version)) this.listener.audited(audit);
+      this.#parts.push(message.change);
+      if (!message.change.more) this.#whole(message.version);
     }
+  }
+
+  /** All parts of a run's findings are here. */
+  #whole(version: number): void {
+    const [first, ...others] = this.#parts;
+    this.#parts = [];
+    if (first === undefined) return;
+    const { runId } = first.run;
+    const audit = applyAuditChange(this.#received.get(runId), inOne([first, ...others]));
+    this.#received.set(runId, audit);
+    if (this.#upToDate(runId, version)) this.listener.audited(audit);
   }
 
   /** Findings of a run that has been edited since are out of date; newer ones are on their way. */

@@ -107,6 +107,14 @@ export function inParts(change: AuditChange, most: number): readonly AuditChange
   return Array.from({ length: count }, (_, i) => ({ ...change, bays: part(bays, i), frames: part(frames, i), more: i < count - 1 }));
 }
 
+/** Parts of one change, as `inParts` made them, as one again. */
+export const inOne = (parts: readonly [AuditChange, ...AuditChange[]]): AuditChange => ({
+  ...parts[0],
+  bays: { ...parts[0].bays, changed: parts.flatMap(({ bays }) => bays.changed) },
+  frames: { ...parts[0].frames, changed: parts.flatMap(({ frames }) => frames.changed) },
+  more: false,
+});
+
 export const applyAuditChange = (before: RunAudit | undefined, { run, bays, frames }: AuditChange): RunAudit => ({
   ...run,
   bays: applyList(before?.bays ?? [], bays, bayIdOf),
