@@ -139,7 +139,7 @@ const beamName = (site: Site, level: Level): Text => [site.beamTypes.find(({ id 
 function levelTable({ input: { site }, bay, audit }: BayAt): Block {
   return table(
     `Beam levels of bay ${bay.name}, from the top down`,
-    ['Level', '#Height', 'Beams', 'Locks', '#Goods', '#Rated pair', '#Used', 'Verdict'],
+    ['Level', '#Height', 'Beams', 'Locks', '#Goods', '#Rating of the pair', '#Used', 'Verdict'],
     bay.levels
       .map((level, index) => {
         const found = audit.levels[index];
@@ -178,7 +178,7 @@ function goodsTable({ input: { site }, bay }: BayAt): Block {
   );
   return rows.length === 0
     ? paragraph(['No goods stand in this bay.'])
-    : table('Goods, from the left upright’s face', ['Where', 'Goods', '#From left', '#Width', '#Goods’ mass', '#Pallet'], rows);
+    : table('Goods, from the left upright’s face', ['Where', 'Goods', '#From left', '#Width', '#Goods’ mass', '#Pallet’s mass'], rows);
 }
 
 function frameBlocks({ run, frames }: BayAt): readonly Block[] {

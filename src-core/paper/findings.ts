@@ -157,7 +157,7 @@ export function findingsInFull(names: BayNames, findings: readonly Finding[]): r
 
 const notKnown = ({ input, how }: Finding['missing'][number]): Text => say`Not known: ${input}. ${how}`;
 
-/** The worked calculation of a finding, with its sentence and notes. */
+/** The worked calculation of a finding, after its sentence and notes: behind it they would stand alone on the next page. */
 function workedBlocks(names: BayNames, one: Finding): readonly Block[] {
   return [
     subheading(`${CHECK_WORDS[one.check].name}: ${placeTitle(names, one.place)}`),
@@ -169,8 +169,7 @@ function workedBlocks(names: BayNames, one: Finding): readonly Block[] {
       ],
     },
     paragraph(one.says),
+    ...list([...one.notes, ...one.missing.map(notKnown)]),
     { kind: 'worked', steps: one.worked },
-    ...list(one.notes),
-    ...list(one.missing.map(notKnown)),
   ];
 }
