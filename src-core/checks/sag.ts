@@ -108,10 +108,15 @@ export function judgeSag(input: SagInput): SagJudgement {
     outOfUse: limited.outOfUse,
     decides: tooHeavy ? against(massOf(implied.pinned.evenKg), massOf(input.rated.kg)) : worst,
     missing,
-    says: [...limitSays(input, limited), ...impliedSays(input, implied, atLeastKg), ...loadSays(input, implied, byLoad), ...dayRead(input)],
+    says: [
+      ...limitSays(input, limited),
+      ...loadSays(input, implied, byLoad),
+      ...whatToDo(limited.outOfUse, isOver(loaded) || byLoad === 'over'),
+      ...dayRead(input),
+    ],
     worked: [...limitSteps(input, limited), ...impliedSteps(input, found)],
     notes: [
-      say`Limits: ${limitOrigins(input)}.`,
+      ...impliedSays(input, implied, atLeastKg),
       ...(implied || atLeastKg !== null
         ? [
             say`A pinned beam reads the load too low, because connectors stiffen the beam. A small sag proves nothing: it is never a licence to add load.`,
@@ -121,6 +126,7 @@ export function judgeSag(input: SagInput): SagJudgement {
       ...(elasticMm !== null && implied === null && atLeastKg === null
         ? [say`Neither the beam’s section nor a rating is known, so the sag tells nothing of the load.`]
         : []),
+      say`Limits: ${limitOrigins(input)}.`,
     ],
   };
 }
@@ -145,17 +151,28 @@ interface Limited extends Found {
   readonly elastic: number | null;
 }
 
-function limitSays({ beam, loadedMm, unloadedMm, sidewaysMm }: SagInput, judged: Limited): readonly Text[] {
-  const { loaded, set, sideways, elastic } = judged;
+function limitSays(
+  { beam, loadedMm, unloadedMm, sidewaysMm }: SagInput,
+  { loaded, set, sideways, elastic, limitMm }: Limited,
+): readonly Text[] {
+  const sentences: ((it: string) => Text)[] = [
+    ...(unloadedMm === null || set === null ? [] : [(it: string) => setSays(it, 'down', unloadedMm, set)]),
+    ...(sidewaysMm === null || sideways === null ? [] : [(it: string) => setSays(it, 'sideways', sidewaysMm, sideways)]),
+    ...(loadedMm === null || loaded === null
+      ? []
+      : [(it: string) => say`Loaded, ${it} sags ${lengthOf(loadedMm)}; ${lengthOf(limitMm)} is allowed.`]),
+  ];
   return [
-    ...(unloadedMm === null || set === null ? [] : [setSays(beam, 'down', unloadedMm, set)]),
-    ...(sidewaysMm === null || sideways === null ? [] : [setSays(beam, 'sideways', sidewaysMm, sideways)]),
-    ...(loadedMm === null ? [] : [loadedSays(beam, loadedMm, judged.limitMm, isOver(loaded))]),
+    ...sentences.map((sentence, i) => sentence(i === 0 ? beam : 'it')),
     ...(elastic !== null && elastic < 0
       ? [say`Unloaded it was read ${lengthOf(-elastic)} lower than loaded, which cannot be. Measure both again, from the same line.`]
       : []),
-    ...(judged.outOfUse ? [say`Unload the level, and take both beams out.`] : []),
   ];
+}
+
+function whatToDo(outOfUse: boolean, overloaded: boolean): readonly Text[] {
+  if (outOfUse) return [say`Unload the level, and take both beams out.`];
+  return overloaded ? [say`Unload the level: it is overloaded, or what is known of it is wrong.`] : [];
 }
 
 const dayRead = ({ found }: SagInput): readonly Text[] =>
@@ -215,7 +232,7 @@ function loadSays({ rated }: SagInput, implied: SagJudgement['implied'], byLoad:
   if (implied === null || rated === null || byLoad === 'within') return [];
   return byLoad === 'over'
     ? [
-        say`Even with pinned beam ends it stands for ${massOf(implied.pinned.evenKg)} evenly spread on the pair, more than the ${massOf(rated.kg)} that it is rated for. Unload the level.`,
+        say`Even with pinned beam ends it stands for ${massOf(implied.pinned.evenKg)} evenly spread on the pair, more than the ${massOf(rated.kg)} that it is rated for.`,
       ]
     : [
         say`With stiffer beam ends it would stand for ${massOf(implied.stiffer.evenKg)} evenly spread on the pair, more than the ${massOf(rated.kg)} that it is rated for.`,
@@ -225,11 +242,6 @@ function loadSays({ rated }: SagInput, implied: SagJudgement['implied'], byLoad:
 function setSays(beam: string, way: string, mm: number, set: AgainstLimit): Text {
   const found = say`Unloaded, ${beam} stays bent ${way} by ${lengthOf(mm)}, ${set.measured} of the allowed sag`;
   return isOver(set) ? say`${found}; more than ${set.limit} takes it out of use.` : say`${found}; up to ${set.limit} is tolerated.`;
-}
-
-function loadedSays(beam: string, mm: number, limitMm: number, over: boolean): Text {
-  const found = say`Loaded, ${beam} sags ${lengthOf(mm)}; ${lengthOf(limitMm)} is allowed.`;
-  return over ? say`${found} Unload the level: it is overloaded, or what is known of it is wrong.` : found;
 }
 
 function impliedSays(input: SagInput, implied: SagJudgement['implied'], atLeastKg: number | null): readonly Text[] {

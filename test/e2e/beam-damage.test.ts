@@ -91,16 +91,16 @@ test('damage and sag are entered, corrected, undone and taken off in the form of
     expect(await record.evaluate((one) => one === document.activeElement)).toBe(true);
 
     const front = page.getByRole('group', { name: 'Front beam' });
-    await type(field(front, 'Loaded'), '5');
+    await type(field(front, 'Sag, loaded'), '5');
     await eventually(() => verdict(page)).toContain('Not assessable');
-    await type(field(front, 'Unloaded, permanent set down'), '0');
-    await type(field(front, 'Unloaded, permanent set sideways'), '0');
+    await type(field(front, 'Set, down'), '0');
+    await type(field(front, 'Set, sideways'), '0');
     await eventually(() => verdict(page)).toContain('Within');
     // 2 700 mm: 13.5 mm allowed, 20 % of it 2.7 mm (facts F-01 and F-88).
-    await type(field(front, 'Unloaded, permanent set down'), '2.8');
+    await type(field(front, 'Set, down'), '2.8');
     await eventually(() => verdict(page)).toContain('Over');
     expect(await findings(page)).toContain('take both beams out');
-    expect(await field(front, 'Loaded').getAttribute('data-field')).toBe('level:a1-l2:sags.front.loadedMm');
+    expect(await field(front, 'Sag, loaded').getAttribute('data-field')).toBe('level:a1-l2:sags.front.loadedMm');
     await enter(page.getByRole('button', { name: 'Undo', exact: true }));
     await eventually(() => verdict(page)).toContain('Within');
     await enter(page.getByRole('button', { name: 'Redo', exact: true }));
@@ -108,7 +108,7 @@ test('damage and sag are entered, corrected, undone and taken off in the form of
     await enter(front.getByRole('button', { name: 'Replaced: take the reading off' }));
     await eventually(() => verdict(page)).toContain('Within');
     // What cannot be is refused where it was typed.
-    await type(field(front, 'Loaded'), '-1');
-    await front.getByText(/Loaded must be/).waitFor();
+    await type(field(front, 'Sag, loaded'), '-1');
+    await front.getByText(/Sag, loaded must be/).waitFor();
   }),
 );

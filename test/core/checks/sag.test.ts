@@ -38,7 +38,7 @@ test('S10: 17 mm is over the 13.5 mm allowed, and a set of 29.6 % takes the beam
   expect(plain(found.says[0] ?? [])).toBe(
     'Unloaded, the front beam of level 1 stays bent down by 4 mm, 29.6296 % of the allowed sag; more than 20 % takes it out of use.',
   );
-  expect(found.says.map(plain).join(' ')).toContain('1860 kg is declared; the sag stands for 1945.9');
+  expect(found.notes.map(plain).join(' ')).toContain('1860 kg is declared; the sag stands for 1945.9');
   expect(found.notes.map(plain).join(' ')).toContain('never a licence to add load');
   expectSteps('S10', found.worked);
 });
@@ -109,7 +109,7 @@ test('without section data the rating gives a lower bound, and says that it prov
   const found = judgeSag({ ...s10, section: null, loadedMm: 10, unloadedMm: 1, rated: { kg: 2500, from: 'load notice' } });
   expect(found.atLeastKg).toBeCloseTo(1666.67, 2);
   expect(found.implied).toBeNull();
-  expect(found.says.map(plain).join(' ')).toContain('proves no pass');
+  expect(found.notes.map(plain).join(' ')).toContain('proves no pass');
   expectSteps('by rating', found.worked);
 });
 
@@ -125,7 +125,7 @@ test('a load implied beyond the rating is over, or close where only stiffer ends
   const over = judgeSag({ ...light, rated: { kg: 1500, from: 'notice' } });
   expect(over).toMatchObject({ verdict: 'over', outOfUse: false, decides: { limit: { value: 1500, kind: 'mass' } } });
   expect(over.decides?.measured.value).toBeCloseTo(1549, 0);
-  expect(over.says.map(plain).join(' ')).toContain('Unload the level.');
+  expect(over.says.map(plain).join(' ')).toContain('Unload the level: it is overloaded');
   expect(judgeSag({ ...light, rated: { kg: 2000, from: 'notice' } }).verdict).toBe('close');
 });
 
@@ -133,7 +133,7 @@ test('implied and declared load that disagree by more than a fifth are said, not
   // The declared load sags 12.43 mm with pinned ends: an elastic sag of 9 mm is 0.72 of it.
   const found = judgeSag({ ...s10, loadedMm: 10, unloadedMm: 1 });
   expect(found.verdict).toBe('within');
-  expect(found.says.map(plain).join(' ')).toContain('Weigh the goods.');
+  expect(found.notes.map(plain).join(' ')).toContain('Weigh the goods.');
   // 10.2 mm is 0.82 with pinned ends and 1.2 of the 8.4 mm at the likely fixity.
   expect(
     judgeSag({ ...s10, loadedMm: 11.1, unloadedMm: 1 })
@@ -145,6 +145,6 @@ test('implied and declared load that disagree by more than a fifth are said, not
 test('without a declared load the sag still stands for an even load', () => {
   const found = judgeSag({ ...s10, declared: null, loadedMm: 10, unloadedMm: 1 });
   expect(found.implied?.pinned.declared).toBeNull();
-  expect(found.says.map(plain).join(' ')).toContain('evenly spread on the pair with pinned beam ends');
+  expect(found.notes.map(plain).join(' ')).toContain('evenly spread on the pair with pinned beam ends');
   expectSteps('no declared load', found.worked);
 });
