@@ -46,9 +46,10 @@ export class PackageDesk {
 
   async look(): Promise<PackageLook> {
     if (this.#contents === null) {
-      this.#contents = contentsOf(readPackage(new Uint8Array(Buffer.concat(this.#pieces))));
-      // Its parts are kept now; the file itself may be large.
+      const file = new Uint8Array(Buffer.concat(this.#pieces));
+      // It may be large, and its parts are copies: what is not needed any more goes at once.
       this.#pieces = [];
+      this.#contents = contentsOf(readPackage(file));
     }
     return this.#store().look(this.#contents);
   }

@@ -7,7 +7,7 @@ import type { Host, HostFailure } from '../../src-core/host';
 import { readListing, writeListing } from '../../src-core/package/listing';
 import { closeAction, newFollowUp, readFollowUp, writeFollowUp } from '../../src-core/visit/follow-up';
 import { finishBay, note } from '../../src-core/visit/edits';
-import { readVisit } from '../../src-core/visit/read-visit';
+import { readVisit, writeVisit } from '../../src-core/visit/read-visit';
 import type { Visit } from '../../src-core/visit/visit';
 import { sha256 } from '../../src-main/checked-site';
 import { readPackage } from '../../src-main/package-file';
@@ -447,6 +447,51 @@ describe('what a package may not hold', () => {
     const { host } = await machineWith();
     const file = forged(await packageOf(host), (parts) => (parts['photos/p2.png'] = text('<script>')));
     expect((await failure(send(host, file))).message).toContain('photo p2.png: it is not the kind of picture');
+  });
+});
+
+describe('two programs on one folder', () => {
+  test('records that both keep at once are all in one chain', async () => {
+    const top = temporaryFolder();
+    const one = (await startMachine(top)).machine.page();
+    const other = (await startMachine(top)).machine.page();
+    await fill(one);
+    await Promise.all([1, 2, 3, 4].flatMap((n) => [one.appendRecord(recordOf(`a${n}`)), other.appendRecord(recordOf(`b${n}`))]));
+    const { records, altered } = await one.listRecords('s');
+    expect([records.length, altered]).toEqual([10, null]);
+  });
+
+  test('a package brought in while the other keeps records loses none of either, or says so and changes nothing', async () => {
+    const source = await newHost();
+    await fill(source);
+    await source.appendRecord(recordOf('brought in'));
+    await save(source, seen({ id: 'v9', name: 'Brought in' }));
+    const file = await packageOf(source);
+    for (let round = 0; round < 15; round++) {
+      const top = temporaryFolder();
+      const one = (await startMachine(top)).machine.page();
+      const other = (await startMachine(top)).machine.page();
+      await fill(one);
+      await send(one, file);
+      const taking = one.takePackage({ as: 'join', ifVisitDiffers: 'keep-both' }).then(
+        () => true,
+        (error: HostFailure) => {
+          expect(error.code).toBe('stale');
+          return false;
+        },
+      );
+      const [taken, kept] = await Promise.all([
+        taking,
+        other.appendRecord(recordOf(`kept ${round}`)),
+        other.saveVisit({ siteId: 's', visitId: 'v8', body: writeVisit(seen({ id: 'v8' })), baseRevision: null }),
+      ]);
+      const { records, others, altered } = await one.listRecords('s');
+      const titles = [...records, ...others.flatMap((list) => list.records)].map(({ title }) => title);
+      expect([altered, ...others.map((list) => list.altered)].every((fault) => fault === null)).toBe(true);
+      expect(titles).toContain(kept.title);
+      const ids = (await one.listVisits('s')).map(({ id }) => id);
+      expect([titles.includes('Check brought in'), ids.includes('v9'), ids.includes('v8')]).toEqual([taken, taken, true]);
+    }
   });
 });
 

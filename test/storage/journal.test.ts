@@ -111,6 +111,8 @@ describe('after a crash', () => {
       // Another opening in this very process, as another page of one server is.
       otherPage: true,
     });
+    // The same page, which reads its site again.
+    expect(await journal.recovered('s', 'saved')).toMatchObject({ body: 'two', otherPage: false });
     expect(await journalIn(folder).recovered('other', 'saved')).toBeNull();
   });
 
