@@ -1,7 +1,7 @@
 /** The room left at a place as a person would say it. Figures are rounded to the safe side. */
 import type { RoomLeft } from '../audit/room-left';
 import type { FreeStretch } from '../audit/free-room';
-import type { Finding } from '../checks/finding';
+import type { CheckName, Finding } from '../checks/finding';
 import { inside, listed, opening } from '../checks/phrase';
 import { findFrame, findLevel } from '../site/lookup';
 import type { Site } from '../site/site';
@@ -104,10 +104,8 @@ function noRoom(room: Exclude<RoomLeft, { kind: 'room' }>, { palletKg }: RoomAsk
     case 'none':
       if (room.already) return [say`${nothing}: something is over already. ${room.because.says}`];
       return [say`${nothing}${palletKg > 0 ? say`, not even the empty pallet of ${massOf(palletKg)}` : ''}. ${room.because.says}`];
-    case 'no-fit': {
-      const [first, ...more] = room.because;
-      return [say`This does not fit here, whatever it weighs. ${first?.says ?? ''}`, ...more.map(({ says }) => says)];
-    }
+    case 'no-fit':
+      return [say`This does not fit here, whatever it weighs. ${room.because[0]?.says ?? ''}`];
     case 'not-assessable':
       return [say`How much more may stand here is not assessable. Not known: ${unknown(room.missing.map(({ input }) => input))}.`];
     case 'unlimited':
@@ -121,9 +119,20 @@ function unknown(inputs: readonly string[]): string {
 }
 const MOST_NAMED = 3;
 
-/** "beam bending", "upright frame A1|A2", "clearance above the goods of level 1". */
+/** What would be used up; other checks go by their names. */
+const STOPS: Readonly<Partial<Record<CheckName, string>>> = {
+  'unit-load': 'the unit load limit',
+  'level-total': 'the level’s rating',
+  'beam-end-shear': 'the load on a beam end',
+  'section-deflection': 'the beams’ sag',
+  'pallet-bearing': 'the load under its pallets’ runners',
+  'deck-panel': 'a deck panel',
+  'bay-total': 'the rated bay load',
+};
+
+/** "beam bending", "upright frame A1|A2", "leg load at frame A1|A2", "clearance above the goods of level 1". */
 export function stopOf({ check, place }: Finding, site: Site): string {
-  const name = inside(CHECK_WORDS[check].name);
+  const name = STOPS[check] ?? inside(CHECK_WORDS[check].name);
   if (check === 'clearance-above' && place.levelId !== undefined)
     return `${name} the goods of level ${findLevel(site, place.levelId).levelIndex + 1}`;
   if (place.frameId === undefined) return name;

@@ -103,7 +103,7 @@ test('frames and the goods of the level below are named as what stops it', () =>
   expect(at('frame-storey', { frameId: frame?.id })).toBe('upright frame A-F1');
   expect(at('leg-load', { frameId: frame?.id })).toBe('leg load at frame A-F1');
   expect(at('clearance-above', { levelId: 'level' })).toBe('clearance above the goods of level 1');
-  expect(at('bay-total', { bayId: 'bay' })).toBe('bay total');
+  expect(at('bay-total', { bayId: 'bay' })).toBe('the rated bay load');
 });
 
 test('the widest free stretch is named by where it lies, less its clearances for the load on it', () => {
