@@ -169,17 +169,26 @@ async function notPossible(page: Page, says: string): Promise<void> {
 test('goods that reach off the beam are not possible, at either end', () =>
   withUnsaved(async (page) => {
     const at = field(page, 'From the left upright');
-    await type(at, '2000');
-    await notPossible(page, 'Soap powder in cartons reaches 100 mm past the right end of level 3. Move it to the left.');
     await type(at, '-40');
     await notPossible(page, 'Soap powder in cartons reaches 40 mm past the left end of level 3. Move it to the right.');
+    await selectGoods(page, 'a4-l3-g2');
+    await type(at, '2000');
+    await notPossible(page, 'Soap powder in cartons reaches 100 mm past the right end of level 3. Move it to the left.');
     expect(await page.locator('section[aria-label="Level 3"]').innerText()).toContain('goods on this level cannot stand');
   }));
 
-test('goods that stand in each other are not possible', () =>
+test('a place in other goods is refused with the millimetres in the way; goods made wider than their place are not possible', () =>
   withUnsaved(async (page) => {
-    await type(field(page, 'From the left upright'), '1500');
-    await notPossible(page, 'Soap powder in cartons and Soap powder in cartons stand in each other by 475 mm. Move one of them.');
+    const at = field(page, 'From the left upright');
+    await refused(
+      at,
+      '1500',
+      'Soap powder in cartons would stand 475 mm in Soap powder in cartons on bay A4, level 3. Nothing was moved. Choose a free place, or have neighbours pushed apart.',
+    );
+    await at.press('Escape');
+    await page.getByRole('button', { name: 'Edit these goods…' }).click();
+    await type(field(page, 'Width along the beam'), '1800');
+    await notPossible(page, 'Soap powder in cartons and Soap powder in cartons stand in each other by 50 mm. Move one of them.');
   }));
 
 test('goods whose centre of mass lies beyond a beam would tip and are not possible', () =>

@@ -82,6 +82,9 @@ test('goods of each bearing shape are previewed as they are typed and stand on t
       await choice(page, 'Goods$').selectOption({ label: 'new goods…' });
       const form = page.locator('form.add');
       await type(field(form, 'Name'), `Goods ${shape}`);
+      await type(field(form, 'Width along the beam'), '800');
+      await type(field(form, 'Depth'), '1200');
+      await type(field(form, 'Height with pallet'), '1200');
       await eventually(() => preview(page)).toContain('Shape only: the mass is not known yet.');
       await type(field(form, 'Mass without pallet'), '400');
       await choice(form, 'Stands on the beams').selectOption({ label: shape });

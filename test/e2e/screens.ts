@@ -64,6 +64,13 @@ export async function walkBay(page: Page, visit: Visit): Promise<void> {
 
   await page.getByRole('button', { name: 'Add goods…' }).click();
   await choice(page, 'Goods$').selectOption({ label: 'new goods…' });
+  await visit('goods to add, nothing typed', SIDE);
+  for (const [label, text] of [
+    ['Width along the beam', '800'],
+    ['Depth', '1200'],
+    ['Height with pallet', '1200'],
+  ] as const)
+    await type(page.getByRole('textbox', { name: new RegExp(`^${label}`) }).first(), text);
   for (const bearing of BEARINGS) {
     await choice(page, 'Stands on the beams').selectOption({ label: bearing });
     await visit(`goods to add, ${bearing}`, bearing === BEARINGS[0] ? undefined : SIDE);
