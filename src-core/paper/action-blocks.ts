@@ -8,13 +8,15 @@ import { ACTION_WORDS } from '../words/visit-words';
 import { counted } from './context';
 import { dayCell, heading, kgCell, NONE, paragraph, table, unbroken, type Block, type Cell } from './paper';
 
-export function actionBlocks(site: Site, actions: readonly OpenAction[]): readonly Block[] {
+/** @param first what stands first: who empties the rack needs the locations, everybody else what was found */
+export function actionBlocks(site: Site, actions: readonly OpenAction[], first: 'actions' | 'locations' = 'actions'): readonly Block[] {
   const open = stillOpen(actions);
   const closed = actions.filter((one) => one.closed !== null);
+  const found = open.length === 0 ? [paragraph(['Nothing is open.'])] : [openTable(open)];
+  const locations = locationBlocks(site, open);
   return [
     heading('What to do'),
-    ...(open.length === 0 ? [paragraph(['Nothing is open.'])] : [openTable(open)]),
-    ...locationBlocks(site, open),
+    ...(first === 'locations' ? [...locations, ...found] : [...found, ...locations]),
     ...(closed.length === 0
       ? []
       : [
@@ -58,7 +60,7 @@ const reductionWords = ({ reductions }: OpenAction): Text =>
   );
 
 /** Every level to empty, with what stands there and by which actions. Nothing where none is to be emptied. */
-export function locationBlocks(site: Site, open: readonly OpenAction[]): readonly Block[] {
+function locationBlocks(site: Site, open: readonly OpenAction[]): readonly Block[] {
   const locations = offLoadList(site, open);
   if (locations.length === 0) return [];
   return [

@@ -28,7 +28,7 @@ export function offLoadSheet(input: PaperInput, actions: readonly OpenAction[]):
       paragraph([
         'Both bays of a damaged frame are emptied, and those tied to it from behind. Bar each level from reloading until whoever signs below has released it.',
       ]),
-      ...actionBlocks(site, actions),
+      ...actionBlocks(site, actions, 'locations'),
       ...closingBlocks(input, bays),
       {
         kind: 'sign-off',

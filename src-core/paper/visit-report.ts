@@ -104,7 +104,7 @@ function opening(input: PaperInput, visit: Visit, seen: readonly Seen[], rules: 
     ...(open > 0
       ? [
           paragraph(
-            say`This visit is not finished: ${counted(open, 'bay')} will still be looked at. What is missing here is not in order because of it.`,
+            say`This visit is not finished: ${counted(open, 'bay')} will still be looked at. That nothing is said of them here does not mean that they are in order.`,
           ),
         ]
       : []),

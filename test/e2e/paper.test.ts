@@ -195,6 +195,16 @@ describe.each([1, 200])('%i bays', (bays) => {
     const { page } = program;
     const structure = pdfStructure(await printed(page, 'visit-report', 'A4', 'kilograms and millimetres'));
     for (const kind of ['H1', 'H2', 'Table', 'TR', 'TH', 'TD', 'L', 'LI']) expect(structure).toMatch(new RegExp(`^\\s*${kind}\\b`, 'm'));
+    for (const heads of ['Column', 'Row']) expect(structure).toContain(`/Scope /${heads}`);
+  });
+
+  test('a drawing is told in words, and the language is named', async () => {
+    const { page } = program;
+    const path = await printed(page, 'bay-sheet', 'A4', 'kilograms and millimetres');
+    expect(pdfStructure(path)).toMatch(/^\s*Figure\b/m);
+    const bytes = await readFile(path, 'latin1');
+    expect(bytes).toContain('/Alt (Front view of bay A1 to scale');
+    expect(bytes).toContain('/Lang (en)');
   });
 });
 

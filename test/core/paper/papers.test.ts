@@ -8,7 +8,7 @@ import { offLoadSheet } from '../../../src-core/paper/off-load-sheet';
 import { table, type Paper } from '../../../src-core/paper/paper';
 import { siteRegister } from '../../../src-core/paper/site-register';
 import { visitReport } from '../../../src-core/paper/visit-report';
-import { addEntry, changeRule, editEntry, editFrame, editRun, leaveOut, moveLevel } from '../../../src-core/site/edits';
+import { addEntry, changeRule, editEntry, editFrame, editLevel, editRun, leaveOut, moveLevel } from '../../../src-core/site/edits';
 import type { Floor, Site } from '../../../src-core/site/site';
 import { actionsOf } from '../../../src-core/visit/actions';
 import { carryIntoSite } from '../../../src-core/visit/carry';
@@ -146,6 +146,8 @@ test('the off-load list numbers its actions and says what an engineer allows', (
   book = closeAction(book, { actionId: 'damage:bend-diagonal', date: S10_DAY, person: 'F. Fitter', how: 'Diagonal replaced' });
   const sheet = offLoadSheet(s10, actionsFor(s10, [s10Visit()], book));
   expect(wordsOf(sheet)).toContain('To unload at once: 2 levels');
+  // Whoever empties the rack reads first where.
+  expect(sheet.blocks.find(({ kind }) => kind === 'table')).toMatchObject({ caption: 'Locations to unload or not to reload' });
   expect(rowsOf(sheet, 'Open actions, the most urgent first')[0]).toContain(
     'Reduced load by E. Ngineer, until 20 June 2026: 400 kg a pair',
   );
@@ -237,6 +239,7 @@ test('every paper carries site, checksum, program, rule set, span, rating source
       paper.kind,
     ).toHaveLength(1);
     expect(paper.blocks.at(-1)?.kind, paper.kind).toBe('sign-off');
+    expect(wordsOf(paper), paper.kind).toContain('“Close” begins: above 0.8 used');
     expect(rowsOf(paper, 'Checks left out by this site')).toEqual(['Heavy goods low | pickers’ reach']);
     expect(rowsOf(paper, 'Rules changed by this site')).toEqual([expect.stringContaining('house rule')]);
     // Plain data: a record keeps it as it is.
@@ -275,6 +278,27 @@ test('many ratings are counted in the foot and listed in the paper', () => {
   expect(paper.foot.ratings.length).toBeLessThanOrEqual(260);
   expect(paper.foot.ratings).toMatch(/ and \d+ more, listed in this paper$/);
   expect(rowsOf(paper, 'Where the ratings come from')).toHaveLength(14);
+});
+
+test('a rating whose source is longer than the foot is cut there, and stands whole in the paper', () => {
+  const detail = 'letter of the maker with its annexes, '.repeat(20).trim();
+  const site = editEntry(siteOf(), 'frameTypes', 'frame', { source: { kind: 'maker', detail, person: '', date: '' } });
+  const sheet = baySheet(inputOf(site), 'A-bay-2', []);
+  expect(sheet.foot.ratings.length).toBeLessThanOrEqual(260 + 150);
+  expect(sheet.foot.ratings).toContain('…');
+  expect(rowsOf(sheet, 'Where the ratings come from').join('\n')).toContain(detail);
+});
+
+test('a worked calculation tells what was compared without one in a table, and draws no level on which nothing stands', () => {
+  const site = siteOf();
+  const first = site.runs[0]?.bays[1]?.levels[0]?.id ?? '';
+  const input = inputOf(editLevel(site, first, { placements: [] }));
+  const paper = workedCalculation(input, 'A-bay-2', first);
+  expect(paper.blocks.some(({ kind }) => kind === 'drawing')).toBe(false);
+  const level = input.audit.runs[0]?.bays[1]?.levels[0];
+  const compared = level?.findings.filter(({ worked }) => worked.length === 0) ?? [];
+  expect(compared.length).toBeGreaterThan(0);
+  expect(rowsOf(paper, 'Compared without a calculation')).toHaveLength(compared.length);
 });
 
 test('a row that does not fit its table is the author’s mistake', () => {
