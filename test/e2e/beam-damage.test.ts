@@ -64,6 +64,31 @@ test('a visit that finds a dented beam makes the bay over, and replacing the bea
   }),
 );
 
+test('a bay that is taken up again takes back what it wrongly put into the site', { timeout: 180_000 }, () =>
+  withProgram(async ({ page }) => {
+    await openDemo(page);
+    await command(page, 'Visits');
+    await choice(page, 'Bays').selectOption({ label: 'bay A1 only' });
+    await type(field(page, 'Visited by'), 'R. Walker');
+    await page.getByRole('button', { name: 'Begin the visit' }).click();
+    await page.getByText('Sag of beams').click();
+    const unloaded = field(page, 'Unloaded sag of level 3, rear beam');
+    await type(unloaded, '1000000');
+    await page.getByText(/Unloaded sag of level 3, rear beam must be at most/).waitFor();
+    await type(unloaded, '9');
+    await page.getByRole('button', { name: 'Finish this bay and go on' }).click();
+    await goToBay(page, 'A1');
+    await eventually(() => verdict(page)).toContain('Over');
+
+    await command(page, 'Visits');
+    await page.getByRole('button', { name: 'Take this bay up again' }).click();
+    await type(unloaded, '');
+    await page.getByRole('button', { name: 'Finish this bay and go on' }).click();
+    await goToBay(page, 'A1');
+    await eventually(() => verdict(page)).toContain('Within');
+  }),
+);
+
 test('damage and sag are entered, corrected, undone and taken off in the form of the level, by keyboard', { timeout: 180_000 }, () =>
   withProgram(async ({ page }) => {
     await openDemo(page);
