@@ -11,7 +11,7 @@ import { LIBRARIES, type LibraryKind } from './forms/library-items';
 import { failureOf } from './host';
 import { newId } from './ids';
 import { fileNameOf, offerFile } from './offer-file';
-import { OpenSite } from './open-site.svelte';
+import type { OpenSite } from './open-site.svelte';
 import { isPackage, Packages, UNSAVED_BESIDE } from './packages.svelte';
 import type { Refusal } from './refusal';
 import { readBody, readSiteFile, type FileReading } from './site-text';
@@ -78,7 +78,7 @@ export class Shell {
         this.#showProblems(this.sites?.find((entry) => entry.id === id)?.name ?? id, reading);
         return;
       }
-      this.#take(reading.site, id, onDisk.revision, onDisk.savedAt);
+      await this.#take(reading.site, id, onDisk.revision, onDisk.savedAt);
       if (onDisk.recovered !== null) {
         const body = readBody(onDisk.recovered.body);
         const problem = body.ok ? null : body.problems.join(' ');
@@ -91,7 +91,7 @@ export class Shell {
     this.attempt(async () => {
       const site = newSite(newId(), name.trim());
       const saved = await this.host.saveSite({ id: site.id, body: writeSite(site), baseRevision: null });
-      this.#take(site, site.id, saved.revision, saved.savedAt);
+      await this.#take(site, site.id, saved.revision, saved.savedAt);
       await this.#remember(site.id);
     });
 
@@ -247,7 +247,7 @@ export class Shell {
       await open.saving.settled();
       await this.host.clearJournal(open.id);
       this.dialog = null;
-      this.#take(copy, copy.id, saved.revision, saved.savedAt);
+      await this.#take(copy, copy.id, saved.revision, saved.savedAt);
     });
 
   generations = (): Promise<readonly Generation[]> => (this.open === null ? Promise.resolve([]) : this.host.listGenerations(this.open.id));
@@ -295,7 +295,9 @@ export class Shell {
     this.dialog = null;
   };
 
-  #take(site: Site, id: string, revision: string, savedAt: string): void {
+  async #take(site: Site, id: string, revision: string, savedAt: string): Promise<void> {
+    // With the checks it is most of the program, and the list of sites does not wait for it.
+    const { OpenSite } = await import('./open-site.svelte');
     this.open?.close();
     this.dialog = null;
     this.screen = 'rack';

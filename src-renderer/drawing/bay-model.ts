@@ -4,7 +4,7 @@
  */
 import { TOUCH } from '../../src-core/checks/placement';
 import type { Bay, Id, Level, Placement, Run, UnitLoad } from '../../src-core/site/site';
-import type { Libraries } from './libraries';
+import type { DrawnUnitLoad, Libraries } from './libraries';
 import { outlineOf, type Outline } from './outline';
 import { overlaps, type Standing } from './snap';
 import type { Weighed } from './weigh';
@@ -66,6 +66,15 @@ type Stand = Standing & Pick<GoodsDrawn, 'rear' | 'front'>;
 /** Whether goods stand in one another, along the bay and across the rack; one behind the other they do not. */
 const standIn = (a: Stand, b: Stand): boolean => overlaps(a, b) && Math.min(a.front, b.front) - Math.max(a.rear, b.rear) > TOUCH;
 
+/** The same goods stand in many places: their outline is found once for each way round. */
+const outlines = new WeakMap<DrawnUnitLoad, { plain?: Outline; mirrored?: Outline }>();
+
+function outlineFor(drawn: DrawnUnitLoad, mirrored: boolean): Outline {
+  const known = outlines.get(drawn) ?? {};
+  outlines.set(drawn, known);
+  return (known[mirrored ? 'mirrored' : 'plain'] ??= outlineOf(drawn.unitLoad, drawn.pallet, mirrored));
+}
+
 function goodsDrawn(placements: readonly Placement[], entry: number, { unitLoads }: Libraries): readonly GoodsDrawn[] {
   const standing = placements.map((placement) => {
     const drawn = unitLoads.get(placement.unitLoadId);
@@ -76,7 +85,7 @@ function goodsDrawn(placements: readonly Placement[], entry: number, { unitLoads
   return standing.flatMap((one, i): GoodsDrawn[] => {
     const { placement, drawn, at, width, rear, front } = one;
     if (drawn === undefined) return [];
-    const { unitLoad, pallet, grossKg, pieces } = drawn;
+    const { unitLoad, grossKg, pieces } = drawn;
     const offTheEnd = at < -TOUCH || at + width > entry + TOUCH;
     const overlapping = standing.some((other, j) => i !== j && standIn(one, other));
     return [
@@ -88,7 +97,7 @@ function goodsDrawn(placements: readonly Placement[], entry: number, { unitLoads
         mirrored: placement.mirrored,
         rear,
         front,
-        outline: outlineOf(unitLoad, pallet, placement.mirrored),
+        outline: outlineFor(drawn, placement.mirrored),
         weighed: { grossKg, pieces },
         trouble: overlapping ? 'overlap' : offTheEnd ? 'off the end' : null,
       },

@@ -41,7 +41,10 @@ const USUAL = 1400;
 
 /** A part of the page that scrolls sideways, attached with `{@attach sight.watch}`. */
 export class InSight {
-  #width = $state(USUAL);
+  /** px across, as it was last laid out. */
+  width = $state(USUAL);
+  /** px that are scrolled out at the left. */
+  left = 0;
   /** In steps of half a width, so that scrolling draws anew only now and then. */
   #step = $state(0);
 
@@ -52,8 +55,9 @@ export class InSight {
 
   readonly watch: Attachment<HTMLElement> = (element) => {
     const look = () => {
-      this.#width = Math.max(1, element.clientWidth);
-      this.#step = Math.floor((2 * element.scrollLeft) / this.#width);
+      this.left = element.scrollLeft;
+      this.width = Math.max(1, element.clientWidth);
+      this.#step = Math.floor((2 * this.left) / this.width);
     };
     const size = new ResizeObserver(look);
     size.observe(element);
@@ -66,7 +70,7 @@ export class InSight {
 
   /** Indices to be drawn of the things with these edges, and `always` wherever they stand. */
   drawn(edges: readonly number[], always: readonly number[] = []): readonly number[] {
-    const half = this.#width / 2;
+    const half = this.width / 2;
     return between(edges, (this.#step - 2) * half, (this.#step + 5) * half, always);
   }
 }
