@@ -1,6 +1,7 @@
 /** How much more a place takes, worked out in slices while the page is idle. */
 import { EVEN_LOAD, widestFree, withEvenLoad } from '../src-core/audit/free-room';
 import { roomLeftInSteps } from '../src-core/audit/room-left';
+import { isMet } from '../src-core/audit/trial-load';
 import type { Id, Site, UnitLoad } from '../src-core/site/site';
 import type { Text } from '../src-core/units/text';
 import { roomForEven, roomForGoods, roomForPlaced, type RoomAsked } from '../src-core/words/room-words';
@@ -56,9 +57,13 @@ function* forGoods(
   const stand = standOf(site, bayId, levelId);
   if (stand === null) return () => [];
   const stocked = site.unitLoads.some(({ id }) => id === unitLoad.id) ? site : { ...site, unitLoads: [...site.unitLoads, unitLoad] };
+  const putOnto = (onto: Site, id: Id): Site => {
+    const now = standOf(onto, bayId, levelId) ?? stand;
+    return putOn(onto, now, { id, unitLoadId: unitLoad.id, atMm: null, mirrored: false, towardsFrontMm: 0 }, putting);
+  };
   let trial: Site;
   try {
-    trial = putOn(stocked, stand, { id: TRIAL, unitLoadId: unitLoad.id, atMm: null, mirrored: false, towardsFrontMm: 0 }, putting);
+    trial = putOnto(stocked, TRIAL);
   } catch (error) {
     // No place is free: the sentence says how much is missing, and where there is room.
     if (!(error instanceof RangeError)) throw error;
@@ -69,8 +74,27 @@ function* forGoods(
   if (room.kind === 'unlimited' && levelId === null) return () => [];
   const at = placementPlace(trial, TRIAL)?.placement.atMm ?? 0;
   const asked = askedOf(trial, unitLoad);
-  return (units) => roomForGoods(room, at, { ...asked, units });
+  const count = room.kind === 'room' && asked.ownKg !== null ? yield* howMany(trial, putOnto, today) : 0;
+  return (units) => roomForGoods(room, at, count, { ...asked, units });
 }
+
+/** One is put on already; others follow it until one finds no place or would not be met. */
+function* howMany(trial: Site, putOnto: (site: Site, id: Id) => Site, today: string): Generator<undefined, number> {
+  let site = trial;
+  for (let count = 0; ; count += 1) {
+    if (!isMet(site, idOf(count), today) || count === MOST_COUNTED) return count;
+    yield;
+    try {
+      site = putOnto(site, idOf(count + 1));
+    } catch (error) {
+      if (!(error instanceof RangeError)) throw error;
+      return count + 1;
+    }
+  }
+}
+/** More than stand on any pallet level. */
+const MOST_COUNTED = 12;
+const idOf = (index: number): Id => (index === 0 ? TRIAL : `${TRIAL}-${index}`);
 
 function askedOf(site: Site, unitLoad: UnitLoad): Omit<RoomAsked, 'units'> {
   const pallet = site.pallets.find(({ id }) => id === unitLoad.palletId) ?? null;

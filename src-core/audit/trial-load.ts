@@ -66,6 +66,13 @@ export function trialsOf(site: Site, placementId: Id, today: string): Trials {
   };
 }
 
+/**
+ * Whether everything about a unit load is met as it stands, with the mass it has.
+ * @throws RangeError if the site has no such placement
+ */
+export const isMet = (site: Site, placementId: Id, today: string): boolean =>
+  failing(findingsAt(site, findPlacement(site, placementId), today).findings).length === 0;
+
 /** A trial's own unit load is named by fields as the one whose shape it has. */
 const renamed =
   (unitLoadId: Id) =>

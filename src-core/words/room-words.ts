@@ -3,9 +3,10 @@ import type { RoomLeft } from '../audit/room-left';
 import type { FreeStretch } from '../audit/free-room';
 import type { CheckName, Finding } from '../checks/finding';
 import { inside, listed, opening } from '../checks/phrase';
+import { resolveRules } from '../checks/rule-sets';
 import { findFrame, findLevel } from '../site/lookup';
 import type { Site } from '../site/site';
-import { KG_PER_POUND, lengthOf, massOf, type Quantity, type UnitSystem } from '../units/quantity';
+import { KG_PER_POUND, lengthOf, massOf, quantity, type Quantity, type UnitSystem } from '../units/quantity';
 import { say, type Text } from '../units/text';
 import { CHECK_WORDS } from './check-names';
 
@@ -19,16 +20,26 @@ export interface RoomAsked {
   readonly palletKg: number;
 }
 
-/** For goods that may be put at a place, mm from the left upright's face. */
-export function roomForGoods(room: RoomLeft, atMm: number, asked: RoomAsked): readonly Text[] {
+/**
+ * For goods that may be put at a place, mm from the left upright's face.
+ * @param count how many of them, with their own mass, find a place one after another with everything met
+ */
+export function roomForGoods(room: RoomLeft, atMm: number, count: number, asked: RoomAsked): readonly Text[] {
   if (room.kind !== 'room') return noRoom(room, asked, 'Nothing may be added here');
   const most = atMost(room.mostKg, asked.units);
   const pallet = asked.palletKg > 0 ? ', pallet included' : '';
   return [
     say`Room for up to ${most} of this shape at ${lengthOf(atMm)}${pallet}; ${stopOf(room.stop, asked.site)} stops it.`,
-    ...ownMass(room, asked),
+    ...ownMass(room, count, asked),
     ...complement(room, asked),
+    closeFrom(asked),
   ];
+}
+
+/** Up to the rating is within; what is near it has a word of its own. */
+function closeFrom({ site }: RoomAsked): Text {
+  const percent = quantity('percent', 100 * resolveRules(site.rules).value.closeAbove);
+  return say`Above ${percent} of a rating it counts as close.`;
 }
 
 /** For goods that stand at their place. */
@@ -43,7 +54,7 @@ export function roomForPlaced(room: RoomLeft, asked: RoomAsked): readonly Text[]
       say`Over by ${atLeast(ownKg - most.value, units)} here: at most ${most} of this shape; ${stop} stops it.`,
       ...complement(room, asked),
     ];
-  return [say`Up to ${most} of this shape may stand here; ${stop} stops it.`, ...complement(room, asked)];
+  return [say`Up to ${most} of this shape may stand here; ${stop} stops it.`, ...complement(room, asked), closeFrom(asked)];
 }
 
 /** For a free stretch of a level and a plain even load on all of it. */
@@ -51,7 +62,10 @@ export function roomForEven(room: RoomLeft, free: FreeStretch, asked: RoomAsked)
   const stretch = say`Free: ${lengthOf(free.gap.to - free.gap.from)} ${FREE_AT[free.at]}`;
   if (room.kind !== 'room') return [say`${stretch}.`, ...noRoom(room, asked, 'Nothing may be added there')];
   const { units, site } = asked;
-  return [say`${stretch}; up to ${atMost(room.mostKg, units)} evenly spread there. ${opening(stopOf(room.stop, site))} stops it.`];
+  return [
+    say`${stretch}; up to ${atMost(room.mostKg, units)} evenly spread there. ${opening(stopOf(room.stop, site))} stops it.`,
+    closeFrom(asked),
+  ];
 }
 
 const FREE_AT: Readonly<Record<FreeStretch['at'], string>> = {
@@ -79,11 +93,13 @@ export function atLeast(kg: number, units: UnitSystem): Quantity {
 }
 
 /** What the goods that are meant make of it. */
-function ownMass(room: RoomLeft & { kind: 'room' }, { ownKg, units }: RoomAsked): readonly Text[] {
+function ownMass(room: RoomLeft & { kind: 'room' }, count: number, { ownKg, units }: RoomAsked): readonly Text[] {
   if (ownKg === null) return [];
   const most = atMost(room.mostKg, units).value;
   if (ownKg > room.mostKg * ROUNDED) return [say`These goods weigh ${massOf(ownKg)}, ${atLeast(ownKg - most, units)} too much.`];
-  return between(room, ownKg) ? [say`These goods weigh ${massOf(ownKg)}, which would not do.`] : [];
+  if (between(room, ownKg)) return [say`These goods weigh ${massOf(ownKg)}, which would not do.`];
+  if (count > 1) return [say`Of these goods, ${massOf(ownKg)} each, ${count} may be put here.`];
+  return count === 1 ? [say`These goods weigh ${massOf(ownKg)} and may be put here.`] : [];
 }
 
 const between = ({ notBetween }: RoomLeft & { kind: 'room' }, kg: number): boolean =>

@@ -38,20 +38,30 @@ test('goods that find no place are told how many millimetres are missing', () =>
 test('goods that find a place are told what they may weigh at it, and nothing is put on', () => {
   const narrow = { ...unitLoad('flour'), id: 'narrow', widthMm: 400, palletId: null };
   const answer = said({ of: 'goods', unitLoad: narrow, ...lower }, site);
-  expect(answer).toMatch(/^Room for up to \d+ kg of this shape at 1 025 mm; .+ stops it\.$/);
+  expect(answer).toMatch(/^Room for up to \d+ kg of this shape at 1 025 mm; .+ stops it\. /);
   expect(site.unitLoads.some(({ id }) => id === 'narrow')).toBe(false);
+});
+
+test('goods are counted as often as they find a place and everything is met', () => {
+  // Free with gaps of 75 mm are 500 mm between flour and reel, for two of 150 mm, and 150 mm beside the right upright
+  const thin = { ...unitLoad('crate'), id: 'thin', widthMm: 150, goodsKg: 20 };
+  const pushed = { of: 'goods', unitLoad: thin, bayId: 'A1', levelId: 'A1-lower', putting } as const;
+  // The notice is made for three unit loads a level, of which two stand there
+  expect(said(pushed, site)).toContain('These goods weigh 20 kg and may be put here.');
+  const many = { ...site, notices: site.notices.map((one) => ({ ...one, unitLoadsPerLevel: 9 })) };
+  expect(said(pushed, many)).toContain('Of these goods, 20 kg each, 3 may be put here.');
 });
 
 test('goods that stand there are told what they may weigh where they are', () => {
   const placementId = site.runs[0]?.bays[0]?.levels[0]?.placements[0]?.id ?? '';
   // The notice allows unit loads of 900 kg, and panels of 600 kg come before it
-  expect(said({ of: 'placed', placementId }, site)).toMatch(/^Up to \d+ kg of this shape may stand here; .+ stops it\.$/);
+  expect(said({ of: 'placed', placementId }, site)).toMatch(/^Up to \d+ kg of this shape may stand here; .+ stops it\. /);
   expect(said({ of: 'placed', placementId: 'gone' }, site)).toBe('');
 });
 
 test('a level with no goods in mind tells its free stretch', () => {
   expect(said({ of: 'even', levelId: 'A1-lower' }, site)).toMatch(
-    /^Free: 650 mm between the goods; up to \d+ kg evenly spread there\. .+ stops it\.$/,
+    /^Free: 650 mm between the goods; up to \d+ kg evenly spread there\. .+ stops it\. /,
   );
 });
 

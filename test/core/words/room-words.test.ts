@@ -36,14 +36,16 @@ const roomOf = (mostKg: number, more: Partial<RoomLeft & { kind: 'room' }> = {})
 });
 
 test('room for goods is said with its mass, its place and what stops it, in both unit systems', () => {
-  expect(words(roomForGoods(roomOf(640), 1900, asked('metric')), METRIC)).toBe(
-    'Room for up to 640 kg of this shape at 1 900 mm; beam bending stops it.',
+  expect(words(roomForGoods(roomOf(640), 1900, 0, asked('metric')), METRIC)).toBe(
+    'Room for up to 640 kg of this shape at 1 900 mm; beam bending stops it. Above 90 % of a rating it counts as close.',
   );
   // 640 kg / 0.45359237 = 1 410.96 lb and 1 900 mm / 25.4 = 74.8 in, exact factors
-  expect(words(roomForGoods(roomOf(640), 1900, asked('us')), US)).toBe(
-    'Room for up to 1,410 lb of this shape at 74.8 in; beam bending stops it.',
+  expect(words(roomForGoods(roomOf(640), 1900, 0, asked('us')), US)).toBe(
+    'Room for up to 1,410 lb of this shape at 74.8 in; beam bending stops it. Above 90 % of a rating it counts as close.',
   );
-  expect(words(roomForGoods(roomOf(640), 1900, asked('metric', { palletKg: 25 })), METRIC)).toContain('at 1 900 mm, pallet included; beam');
+  expect(words(roomForGoods(roomOf(640), 1900, 0, asked('metric', { palletKg: 25 })), METRIC)).toContain(
+    'at 1 900 mm, pallet included; beam',
+  );
 });
 
 test('figures are rounded to the safe side, but what is whole stays whole', () => {
@@ -59,39 +61,46 @@ test('goods that are too heavy are told by how much, so that both figures add up
   expect(words(roomForPlaced(roomOf(480.7), asked('metric', { ownKg: 600 })), METRIC)).toBe(
     'Over by 120 kg here: at most 480 kg of this shape; beam bending stops it.',
   );
-  expect(words(roomForGoods(roomOf(480.7), 75, asked('metric', { ownKg: 600 })), METRIC)).toContain(
+  expect(words(roomForGoods(roomOf(480.7), 75, 0, asked('metric', { ownKg: 600 })), METRIC)).toContain(
     'These goods weigh 600 kg, 120 kg too much.',
   );
   expect(words(roomForPlaced(roomOf(600), asked('metric', { ownKg: 600 })), METRIC)).toBe(
-    'Up to 600 kg of this shape may stand here; beam bending stops it.',
+    'Up to 600 kg of this shape may stand here; beam bending stops it. Above 90 % of a rating it counts as close.',
   );
   expect(words(roomForPlaced(roomOf(600), asked('metric')), METRIC)).toContain('At most 600 kg of this shape');
 });
 
+test('goods that are met are counted as often as they find a place', () => {
+  const said = (count: number) => words(roomForGoods(roomOf(640), 75, count, asked('metric', { ownKg: 385 })), METRIC);
+  expect(said(1)).toContain('These goods weigh 385 kg and may be put here.');
+  expect(said(3)).toContain('Of these goods, 385 kg each, 3 may be put here.');
+  expect(said(0)).not.toContain('may be put');
+});
+
 test('a full complement is named with the masses that would be neither', () => {
   const room = roomOf(833.3, { asComplement: true, notBetween: { aboveKg: 745.6, belowKg: 769.2 } });
-  const said = words(roomForGoods(room, 1825, asked('metric', { ownKg: 760 })), METRIC);
+  const said = words(roomForGoods(room, 1825, 1, asked('metric', { ownKg: 760 })), METRIC);
   expect(said).toContain('Above 745 kg and below 770 kg it would be neither that nor within by the even loads.');
   expect(said).toContain('These goods weigh 760 kg, which would not do.');
-  expect(words(roomForGoods(room, 1825, asked('metric', { ownKg: 800 })), METRIC)).not.toContain('would not do');
+  expect(words(roomForGoods(room, 1825, 1, asked('metric', { ownKg: 800 })), METRIC)).not.toContain('would not do');
 });
 
 test('where there is no room the finding that says why is repeated', () => {
   const none = { kind: 'none', already: true, because: stop } as const;
-  expect(words(roomForGoods(none, 0, asked('metric')), METRIC)).toBe('Nothing may be added here: something is over already. Too much.');
-  expect(words(roomForGoods({ ...none, already: false }, 0, asked('metric', { palletKg: 25 })), METRIC)).toBe(
+  expect(words(roomForGoods(none, 0, 0, asked('metric')), METRIC)).toBe('Nothing may be added here: something is over already. Too much.');
+  expect(words(roomForGoods({ ...none, already: false }, 0, 0, asked('metric', { palletKg: 25 })), METRIC)).toBe(
     'Nothing may be added here, not even the empty pallet of 25 kg. Too much.',
   );
   expect(words(roomForPlaced({ kind: 'no-fit', because: [stop] }, asked('metric')), METRIC)).toContain(
     'does not fit here, whatever it weighs. Too',
   );
-  expect(words(roomForGoods({ kind: 'unlimited' }, 0, asked('metric')), METRIC)).toContain('left out');
+  expect(words(roomForGoods({ kind: 'unlimited' }, 0, 0, asked('metric')), METRIC)).toContain('left out');
 });
 
 test('what is not known is named, the first three of many', () => {
   const missing = ['a', 'b', 'c', 'd', 'e'].map((input) => ({ input, how: '', field: input }));
   const said = (count: number) =>
-    words(roomForGoods({ kind: 'not-assessable', missing: missing.slice(0, count), because: [] }, 0, asked('metric')), METRIC);
+    words(roomForGoods({ kind: 'not-assessable', missing: missing.slice(0, count), because: [] }, 0, 0, asked('metric')), METRIC);
   expect(said(2)).toContain('not assessable. Not known: a and b.');
   expect(said(5)).toContain('Not known: a, b, c and 2 more.');
 });
@@ -112,7 +121,7 @@ test('the widest free stretch is named by where it lies, less its clearances for
   expect(free).toEqual({ gap: { from: 875, to: 2700 }, usable: { from: 950, to: 2625 }, at: 'right' });
   if (free === null) return;
   expect(words(roomForEven(roomOf(720.5), free, asked('metric')), METRIC)).toBe(
-    'Free: 1 825 mm at the right; up to 720 kg evenly spread there. Beam bending stops it.',
+    'Free: 1 825 mm at the right; up to 720 kg evenly spread there. Beam bending stops it. Above 90 % of a rating it counts as close.',
   );
   const even = withEvenLoad(site, 'level', free.usable);
   expect(even.runs[0]?.bays[0]?.levels[0]?.placements).toHaveLength(2);
