@@ -74,8 +74,8 @@ export function readPackage(file: Uint8Array): OpenedPackage {
 
 /** @param problems each names its part: "visit …: checksum differs" */
 export function damaged(problems: readonly string[]): HostError {
-  const lines = problems.slice(0, 20);
-  if (problems.length > lines.length) lines.push(`and ${problems.length - lines.length} more`);
+  const lines = problems.slice(0, 20).map((problem) => `– ${problem}`);
+  if (problems.length > lines.length) lines.push(`– and ${problems.length - lines.length} more`);
   return new HostError('altered', `${NOT_TAKEN}, because it was changed or damaged:\n${lines.join('\n')}\n${TAKE_ANOTHER}`);
 }
 

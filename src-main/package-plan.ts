@@ -14,6 +14,8 @@ import { HostError } from './trouble';
 export interface Plan {
   readonly placings: readonly Placing[];
   readonly says: readonly string[];
+  /** What becomes of visits that are here in another state, by the choice that was made. */
+  readonly saysOfChoice: readonly string[];
   /** Names of the visits that are here in another state. */
   readonly visitsDiffer: readonly string[];
 }
@@ -42,6 +44,7 @@ export async function planOf(contents: PackageContents, siteId: string, choice: 
 class PlanMaker implements Plan {
   readonly placings: Placing[] = [];
   readonly says: string[] = [];
+  readonly saysOfChoice: string[] = [];
   readonly visitsDiffer: string[] = [];
   readonly #siteId: string;
   readonly #places: Places;
@@ -83,7 +86,7 @@ class PlanMaker implements Plan {
       if (step.kind === 'beside') {
         this.#put(to, encode(writeVisit(visit)), null);
         this.visitsDiffer.push(theirs.find(({ id }) => id === step.of)?.name ?? visit.name);
-        this.says.push(`A visit is here in another state: both are kept, the one from the package as “${visit.name}”.`);
+        this.saysOfChoice.push(`A visit is here in another state: both are kept, the one from the package as “${visit.name}”.`);
       }
       if (step.kind === 'replace') {
         const here = kept.find(({ id }) => id === visit.id);
@@ -92,7 +95,7 @@ class PlanMaker implements Plan {
         await this.#putAside(`visit-${visit.id}`, before);
         this.#put(to, encode(writeVisit(visit)), here.revision);
         this.visitsDiffer.push(visit.name);
-        this.says.push(`“${visit.name}” takes the place of its state here, which is put aside.`);
+        this.saysOfChoice.push(`“${visit.name}” takes the place of its state here, which is put aside.`);
       }
     }
     const count = (kind: string) => steps.filter((step) => step.kind === kind).length;

@@ -116,7 +116,7 @@ export class PackageStore {
     return this.#inTurn(id, async () => {
       const plan: Plan = await instead(NOT_TAKEN, () => planOf(contents, id, choice, this.#options));
       await incoming.place(more(plan.placings), (task) => beside.locked(id, task));
-      return { id, done: [...says, ...plan.says] };
+      return { id, done: [...says, ...plan.says, ...plan.saysOfChoice] };
     });
   }
 

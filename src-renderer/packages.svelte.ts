@@ -59,8 +59,11 @@ export class Packages {
       shell.sites = await this.#host.listSites();
       await shell.openSite(id);
       if (shell.open === null) return;
-      if (shell.dialog === null) shell.show('visits');
       shell.open.say(['Brought in.', ...done].join(' '));
+      // Unsaved changes that were found come first: they are asked about.
+      if (shell.dialog !== null) return;
+      shell.show('visits');
+      shell.dialog = { kind: 'package-done', done };
     });
 
   /** The package is not wanted. */

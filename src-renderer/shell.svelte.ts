@@ -1,5 +1,6 @@
 /** The program round the open site: list of sites, which screen and dialog are up, preferences. */
 import { createContext } from 'svelte';
+import { MACHINE_LOCALE } from '../src-core/host';
 import type { About, Generation, Host, HostFailure, PackageLook, Preferences, RecoveredEdits, SiteEntry } from '../src-core/host';
 import type { PaperKind } from '../src-core/paper/paper';
 import { SITE_FILE_BYTES } from '../src-core/site/envelope';
@@ -10,6 +11,7 @@ import type { WorkerLike } from './audit-link';
 import { LIBRARIES, type LibraryKind } from './forms/library-items';
 import { failureOf } from './host';
 import { newId } from './ids';
+import { machineLocale, withLocale } from './machine-locale';
 import { fileNameOf, offerFile } from './offer-file';
 import type { OpenSite } from './open-site.svelte';
 import { isPackage, Packages, UNSAVED_BESIDE } from './packages.svelte';
@@ -26,6 +28,7 @@ export type Dialog =
   | { readonly kind: 'remove-site' | 'mend-site'; readonly entry: SiteEntry }
   | { readonly kind: 'altered'; readonly name: string; readonly text: string }
   | { readonly kind: 'package'; readonly look: PackageLook }
+  | { readonly kind: 'package-done'; readonly done: readonly string[] }
   | { readonly kind: 'working' | 'without-photos' }
   | { readonly kind: 'problems'; readonly name: string; readonly problems: readonly string[] };
 
@@ -38,7 +41,11 @@ export class Shell {
   paperKind = $state<PaperKind>('bay-sheet');
   sites = $state.raw<readonly SiteEntry[] | null>(null);
   about = $state.raw<About | null>(null);
+  /** With the locale that numbers are written by, chosen or the machine's. */
   preferences = $state.raw<Preferences | null>(null);
+  /** Whether numbers are written as the machine's user writes them. */
+  asMachine = $state(true);
+  locale = $derived(this.preferences?.locale ?? machineLocale());
   /** What last went wrong outside an open site, said until it is put away. */
   trouble = $state.raw<HostFailure | null>(null);
   busy = $state(false);
@@ -60,7 +67,7 @@ export class Shell {
 
   start = (): Promise<void> =>
     this.attempt(async () => {
-      this.preferences = await this.host.readPreferences();
+      this.#prefer(await this.host.readPreferences());
       this.about = await this.host.about();
       this.sites = await this.host.listSites();
     });
@@ -273,8 +280,8 @@ export class Shell {
 
   savePreferences = (change: Partial<Preferences>): Promise<void> =>
     this.attempt(async () => {
-      this.preferences = await this.host.savePreferences(change);
-      if (change.locale !== undefined && this.open !== null) this.open.locale = change.locale;
+      this.#prefer(await this.host.savePreferences(change));
+      if (this.open !== null) this.open.locale = this.locale;
     });
 
   show = (screen: Screen): void => {
@@ -307,7 +314,7 @@ export class Shell {
       site,
       revision,
       savedAt,
-      locale: this.preferences?.locale ?? 'en-GB',
+      locale: this.locale,
       makeWorker: this.#makeWorker,
       onTask: ({ kind }) => this.#bringUp(kind),
       ...(this.#today === undefined ? {} : { today: this.#today }),
@@ -328,9 +335,14 @@ export class Shell {
     this.dialog = { kind: 'problems', name, problems: reading.problems };
   }
 
+  #prefer(preferences: Preferences): void {
+    this.asMachine = preferences.locale === MACHINE_LOCALE;
+    this.preferences = withLocale(preferences);
+  }
+
   async #remember(id: string): Promise<void> {
     const recent = [id, ...(this.preferences?.recentSiteIds ?? []).filter((one) => one !== id)].slice(0, 12);
-    this.preferences = await this.host.savePreferences({ recentSiteIds: recent });
+    this.#prefer(await this.host.savePreferences({ recentSiteIds: recent }));
   }
 
   /** Does what may fail; why it failed is told. */

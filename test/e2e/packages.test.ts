@@ -68,6 +68,15 @@ async function openSite(page: Page): Promise<void> {
   await page.locator('[data-bay]').first().waitFor();
 }
 
+/** What was done is said, and put away by its button. */
+async function done(page: Page): Promise<string> {
+  const dialog = page.getByRole('dialog', { name: 'Brought in' });
+  const words = plain(await dialog.innerText());
+  await dialog.getByRole('button', { name: 'Go on' }).press('Enter');
+  await page.getByRole('heading', { name: 'Visits' }).waitFor();
+  return words;
+}
+
 async function notesOf(folder: string): Promise<readonly string[]> {
   const reading = readVisit(JSON.parse(await readFile(join(folder, 'beside/site/visits/v1.json'), 'utf8')));
   return reading.ok ? reading.document.bays.map(({ notes }) => notes) : [];
@@ -101,7 +110,7 @@ test('a round that was begun at the office is resumed on the laptop and comes ba
   await withProgram(
     async ({ page }) => {
       await bringIn(page, begun, 'as-it-came.json');
-      await page.getByRole('heading', { name: 'Visits' }).waitFor();
+      expect(await done(page)).toContain('2 records are added.');
       await eventually(() => said(page).textContent()).toContain('Brought in. Test depot is brought in as a site of its own.');
       await page.getByText('2 of 2 bays left').waitFor();
       await page.getByRole('button', { name: 'Week 18' }).click();
@@ -128,7 +137,7 @@ test('a round that was begun at the office is resumed on the laptop and comes ba
       const at = spoilt.indexOf('Seen on the laptop');
       spoilt[at] = (spoilt[at] ?? 0) ^ 1;
       await bringIn(page, spoilt);
-      await eventually(() => page.getByRole('alert').textContent()).toContain('visit v1: checksum differs');
+      await eventually(() => page.getByRole('alert').textContent()).toContain('– visit v1: checksum differs\nNothing of it was taken.');
 
       await bringIn(page, walked);
       const dialog = page.getByRole('dialog', { name: 'Test depot is here already' });
@@ -145,7 +154,7 @@ test('a round that was begun at the office is resumed on the laptop and comes ba
       expect(await dialog.getByRole('radio', { name: /^Take the one from the file/ }).isChecked()).toBe(true);
       await page.keyboard.press('Tab');
       await page.keyboard.press('Enter');
-      await page.getByRole('heading', { name: 'Visits' }).waitFor();
+      expect(await done(page)).toContain('2 records are here already, verified and the same.');
       await eventually(() => said(page).textContent()).toContain('“Week 18” takes the place of its state here, which is put aside.');
       expect(await notesOf(atOffice)).toEqual(['Seen on the laptop', '']);
       expect((await siteFiles()).size).toBe(1);
@@ -174,7 +183,7 @@ test('records made both here and there stand as two lists, each verified', { tim
   await withProgram(
     async ({ page }) => {
       await bringIn(page, file);
-      await page.getByRole('heading', { name: 'Visits' }).waitFor();
+      await done(page);
       await append(there, 'there');
       file = await saved(page, () => command(page, 'Export with visits and records'));
     },
@@ -190,7 +199,7 @@ test('records made both here and there stand as two lists, each verified', { tim
       expect(await dialog.innerText()).toContain('Records were made both here and there since record 2');
       expect(await page.evaluate(() => document.documentElement.scrollWidth <= window.innerWidth)).toBe(true);
       await dialog.getByRole('button', { name: 'Bring visits and records in' }).click();
-      await page.getByRole('heading', { name: 'Visits' }).waitFor();
+      await done(page);
       await page.setViewportSize({ width: 1440, height: 900 });
       await command(page, 'Records');
       await page.getByText('All 3 are as they were written.').waitFor();

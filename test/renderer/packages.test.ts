@@ -31,6 +31,7 @@ describe('bringing in', () => {
     expect(host.taken).toEqual({ as: 'copy' });
     expect([shell.open?.id, shell.screen]).toEqual(['taken', 'visits']);
     expect(shell.open?.said).toBe('Brought in. 1 visit is added.');
+    expect(shell.dialog).toEqual({ kind: 'package-done', done: ['1 visit is added.'] });
   });
 
   test('a site file is one under any name', async () => {
@@ -46,7 +47,7 @@ describe('bringing in', () => {
     expect(host.taken).toBeNull();
     await shell.packages.take({ as: 'join', ifVisitDiffers: 'take-theirs' });
     expect(host.taken).toEqual({ as: 'join', ifVisitDiffers: 'take-theirs' });
-    expect(shell.dialog).toBeNull();
+    expect(shell.dialog?.kind).toBe('package-done');
   });
 
   test('one that is not wanted is dropped', async () => {
