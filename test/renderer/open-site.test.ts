@@ -114,6 +114,7 @@ const EDITS: readonly ((open: OpenSite, a: number, b: number) => void)[] = [
   // Templates: kept, changed, laid out by.
   (open, a, b) => void (open.bay && keepTemplate(open, open.bay, `Template ${b}`, a % 2 === 0 ? 'with goods' : 'without goods')),
   (open, _, b) => {
+    if (open.bay && open.site.bayTemplates.length === 0) keepTemplate(open, open.bay, 'First', 'with goods');
     const id = open.site.bayTemplates.at(-1)?.id;
     if (id !== undefined) open.edit('Change template', (site) => editEntry(site, 'bayTemplates', id, { clearEntryMm: 1000 + b }));
   },
