@@ -169,12 +169,16 @@ export interface TakenPackage {
   readonly done: readonly string[];
 }
 
+/** Stands for "as the machine's user writes": the language that is none, as BCP 47 has it. */
+export const MACHINE_LOCALE = 'und';
+
 export interface Preferences {
   readonly theme: 'system' | 'light' | 'dark';
   /** Text scale in per cent. */
   readonly textScale: number;
   readonly recentSiteIds: readonly string[];
   readonly person: string;
+  /** How numbers and dates are written, such as "de-DE", or MACHINE_LOCALE. */
   readonly locale: string;
 }
 

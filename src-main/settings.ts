@@ -6,7 +6,7 @@
  */
 import { existsSync, mkdirSync, readFileSync, renameSync } from 'node:fs';
 import { join } from 'node:path';
-import type { Preferences } from '../src-core/host';
+import { MACHINE_LOCALE, type Preferences } from '../src-core/host';
 import { argumentFault, isPreference } from '../src-core/host-wire';
 import { stampOf } from './file-names';
 import { HostError, troubleOf } from './trouble';
@@ -20,7 +20,7 @@ export type OpenSettingsFile = (folder: string, name: string) => SettingsFile;
 
 const NAME = 'settings';
 
-const DEFAULT_PREFERENCES: Preferences = { theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: 'en-GB' };
+const DEFAULT_PREFERENCES: Preferences = { theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: MACHINE_LOCALE };
 const KEYS = Object.keys(DEFAULT_PREFERENCES) as readonly (keyof Preferences)[];
 
 export class Settings {

@@ -181,7 +181,7 @@ export function hostContract(name: string, inWindow: boolean, carry: () => Promi
 
     test('keeps preferences, and those of them that cannot be are refused', async () => {
       const { host, nextPage } = await carry();
-      expect(await host.readPreferences()).toEqual({ theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: 'en-GB' });
+      expect(await host.readPreferences()).toEqual({ theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: 'und' });
       const change = { theme: 'dark', textScale: 150, person: 'A. Planner', recentSiteIds: ['s'], locale: 'de-DE' } as const;
       expect(await host.savePreferences(change)).toEqual(change);
       expect(await (await nextPage()).readPreferences()).toEqual(change);

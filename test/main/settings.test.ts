@@ -25,7 +25,7 @@ test.each(['{"theme":"da', '', 'null', '[]', '"dark"', '\0\0\0'])(
     const folder = temporaryFolder();
     writeFileSync(join(folder, 'settings.json'), text);
     const settings = settingsIn(folder);
-    expect(settings.preferences()).toEqual({ theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: 'en-GB' });
+    expect(settings.preferences()).toEqual({ theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: 'und' });
     expect(settings.notices).toEqual([
       `The settings file was invalid. It was set aside as settings-set-aside-20261201T080000000Z.json in ${folder}, and the preferences are at their defaults.`,
     ]);
@@ -57,7 +57,7 @@ test('a preference of the wrong kind in the file is at its default, the others a
     textScale: 100,
     recentSiteIds: [],
     person: 'A. Planner',
-    locale: 'en-GB',
+    locale: 'und',
   });
   expect(settingsIn(folder).notices).toEqual([]);
 });

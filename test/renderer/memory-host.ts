@@ -28,7 +28,7 @@ export class MemoryHost implements Host {
   readonly listRecords = this.#beside.listRecords;
   readonly readRecord = this.#beside.readRecord;
   readonly appendRecord = this.#beside.appendRecord;
-  #preferences: Preferences = { theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: 'en-GB' };
+  #preferences: Preferences = { theme: 'system', textScale: 100, recentSiteIds: [], person: '', locale: 'und' };
 
   async #call(name: string): Promise<void> {
     this.calls.push(name);
