@@ -2,7 +2,7 @@
 
 /** The longest word of the trade stays whole; what is longer is a name or a number run together. After a hyphen a line breaks anyway. */
 const LONG = /([^\s\-–]{19,})/u;
-const PART = /.{1,12}/gu;
+const PART = /.{1,8}/gu;
 
 /** The text in parts between which a line may break; one part where every word is short enough. */
 export const parts = (text: string): readonly string[] =>

@@ -106,4 +106,4 @@ export function pdfImages(path: string): readonly PdfImage[] {
 }
 
 /** Without spaces and line ends, which a reader puts where the lines of a cell happen to break. */
-export const squeezed = (text: string): string => text.replace(/[\s\u00a0\u2009\u202f\u00ad]+/g, '');
+export const squeezed = (text: string): string => text.replace(/[\s\u00a0\u2009\u200b\u202f\u00ad]+/g, '');
