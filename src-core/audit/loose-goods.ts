@@ -9,8 +9,8 @@ import type { LevelEffects } from './types';
  * @param span between the supports, mm
  */
 export function looseGoods(
-  { rules }: SiteContext,
-  { bay }: BayWork,
+  { rules }: Pick<SiteContext, 'rules'>,
+  { bay }: Pick<BayWork, 'bay'>,
   { goods, offset, beamDistance }: LevelWork,
   { rigidity, end }: LevelEffects,
   span: number,

@@ -36,6 +36,10 @@ export function limitWords(limit: Limit, diagram: Diagram, reading: Reading, sag
   return diagram.measured ? `${name} ${formatQuantity(valueOf(diagram.name, limit.value), reading)}` : name;
 }
 
+/** "worst case 534 kg·m at 1 358 mm": of placement and mass, the dotted curve. */
+export const worstCaseWords = (diagram: Diagram, worst: Peak, reading: Reading): string =>
+  `worst case ${peakFigure(diagram, worst, reading)} ${placeWords(worst, diagram.plot.span, reading)}`;
+
 /** One sentence with the governing value and how it stands to its limits. */
 export function diagramSentence(diagram: Diagram, reading: Reading, sagDivisor: number | null): string {
   const title = DIAGRAM_TITLES[diagram.name];
@@ -54,6 +58,7 @@ export function diagramSentence(diagram: Diagram, reading: Reading, sagDivisor: 
     (limit) =>
       `${limit.exceeded ? 'beyond' : 'within'} ${limitWords(limit, diagram, reading, sagDivisor)}${limit.judged ? '' : ', for information'}`,
   );
+  const shaken = diagram.worstCase === null ? '' : `; ${worstCaseWords(diagram, diagram.worstCase, reading)}`;
   const against = limits.length > 0 ? `; ${limits.join('; ')}` : '';
-  return `${title} of ${of}: greatest ${peakFigure(diagram, worst, reading)} ${placeWords(worst, diagram.plot.span, reading)}${against}.`;
+  return `${title} of ${of}: greatest ${peakFigure(diagram, worst, reading)} ${placeWords(worst, diagram.plot.span, reading)}${against}${shaken}.`;
 }

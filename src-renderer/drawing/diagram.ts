@@ -41,6 +41,8 @@ export interface Diagram {
   readonly plot: Omit<Plot, 'inset'>;
   readonly peaks: readonly Peak[];
   readonly limits: readonly Limit[];
+  /** The greatest value in the worst case of placement and mass; null where it is not drawn. */
+  readonly worstCase: Peak | null;
   /** False where only the shape is known: deflection without the beam's EI. */
   readonly measured: boolean;
 }
@@ -134,6 +136,8 @@ export interface DiagramWishes {
   readonly judged: ReadonlySet<DiagramName>;
   /** Deflection limit of the rule set, mm; null = not shown. */
   readonly sagLimit: number | null;
+  /** A beam in the worst case of placement and mass, drawn with the bending; none = not drawn. */
+  readonly worstCase?: BeamShown | null;
 }
 
 function limitsOf(name: DiagramName, wishes: DiagramWishes, peaks: readonly Peak[]): readonly Limit[] {
@@ -181,8 +185,11 @@ export function diagramOf(name: DiagramName, wishes: DiagramWishes): Diagram {
     points,
     filled: beam.beam !== 'rear' || lines.length === 1,
   }));
+  const shaken = name === 'bending' ? (wishes.worstCase ?? null) : null;
+  const shakenPoints = shaken === null ? [] : curvePoints(shaken, name);
   // Drawn from the last to the first: fills lie under every line.
   const curves = [
+    ...(shaken === null ? [] : [{ look: 'ghost', points: shakenPoints, filled: false } as const]),
     ...limits.flatMap((limit) => limitCurves(name, limit, span)),
     ...beamCurves.toSorted((a, b) => Number(a.filled) - Number(b.filled)),
   ];
@@ -200,6 +207,7 @@ export function diagramOf(name: DiagramName, wishes: DiagramWishes): Diagram {
     },
     peaks,
     limits,
+    worstCase: shaken && peakOf(shaken, name, shakenPoints),
     measured: name !== 'deflection' || wishes.effects.rigidityKnown,
   };
 }

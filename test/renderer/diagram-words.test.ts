@@ -13,6 +13,7 @@ const bending = (change: Partial<Diagram>, peak: Partial<Peak> = {}): Diagram =>
   // 405 kg·m in the core's kg·mm
   peaks: [{ beam: 'front', value: 405_000, from: 1350, to: 1350, ...peak }],
   limits: [{ kind: 'even load', value: 337_500, exceeded: true, judged: true }],
+  worstCase: null,
   measured: true,
   ...change,
 });
@@ -26,6 +27,13 @@ test('a diagram says its greatest value, its place and how it stands to its limi
 test('a limit that the verdict is not made by is told as information', () => {
   const limits = [{ kind: 'even load', value: 337_500, exceeded: true, judged: false }] as const;
   expect(plain(diagramSentence(bending({ limits }), reading, 200))).toContain('beyond rated even load 338 kg·m, for information');
+});
+
+test('the worst case of placement and mass stands behind what is stated', () => {
+  const worstCase = { beam: 'front', value: 450_000, from: 1300, to: 1300 } as const;
+  expect(plain(diagramSentence(bending({ worstCase }), reading, 200))).toBe(
+    'Bending of the front beam: greatest 405 kg·m at 1 350 mm; beyond rated even load 338 kg·m; worst case 450 kg·m at 1 300 mm.',
+  );
 });
 
 test('without the beam’s section deflection is told as a ratio, never in millimetres', () => {

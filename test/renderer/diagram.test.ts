@@ -2,6 +2,10 @@ import { describe, expect, test } from 'vitest';
 import type { LevelEffects } from '../../src-core/audit/types';
 import { solveBeam } from '../../src-core/statics/beam';
 import { STANDARD_GRAVITY as g } from '../../src-core/units/quantity';
+import { resolveRules } from '../../src-core/checks/rule-sets';
+import { levelWorkOf } from '../../src-renderer/drawing/level-work';
+import { worstBending } from '../../src-renderer/drawing/worst-bending';
+import { goods, level, rack, stand } from '../core/audit/rack';
 import { alike, beamsShown, diagramOf, worstPeak, type BeamView } from '../../src-renderer/drawing/diagram';
 
 const span = 2700;
@@ -142,4 +146,38 @@ test('a full complement beyond the rated even load is told so, but not marked as
   const bending = diagramOf('bending', asked);
   expect(bending.limits[0]).toMatchObject({ exceeded: true, judged: false });
   expect(bending.plot.curves.map((curve) => curve.look)).not.toContain('exceeded limit');
+});
+
+test('the worst case is drawn with the bending alone, and its peak is told apart', () => {
+  const effects = effectsOf(1000, 1000);
+  const worstCase = { beam: 'pair', answer: effectsOf(1100, 1100).whole } as const;
+  const bending = diagramOf('bending', { ...wishes(effects, 'pair'), worstCase });
+  expect(bending.plot.curves.map(({ look }) => look)).toEqual(['ghost', 'limit', 'front']);
+  expect(bending.worstCase?.value).toBeCloseTo((2200 * span) / 8, 6);
+  expect(worstPeak(bending)?.value).toBeCloseTo((2000 * span) / 8, 6);
+  expect(bending.plot.most).toBeGreaterThan((2200 * span) / 8);
+  expect(diagramOf('shear', { ...wishes(effects, 'pair'), worstCase }).worstCase).toBeNull();
+});
+
+describe('the beams in the worst case of a level', () => {
+  // 800 kg in the middle, 800 wide: M = W/2·(L/4 − b/8) on one beam as stated; with the share 1/2 + 50/1 050 and 2 % more in the worst case.
+  const site = rack({ unitLoads: [goods('a', { massUncertaintyPercent: 2 })], levels: [level([stand('a', 950)])] });
+  const run = site.runs[0] ?? expect.fail();
+  const bay = run.bays[0] ?? expect.fail();
+  const work = levelWorkOf(site, run, bay, bay.levels[0] ?? expect.fail()) ?? expect.fail();
+  const rules = resolveRules(site.rules);
+  const whole = 800 * g * 1.02 * (2700 / 4 - 800 / 8);
+
+  test('one beam takes all of the tolerance across, both together none of it', () => {
+    expect(worstBending(rules, bay, work, 'front')?.answer.sagging.moment).toBeCloseTo(whole * (0.5 + 50 / 1050), 3);
+    expect(worstBending(rules, bay, work, 'rear')?.answer.sagging.moment).toBeCloseTo(whole * (0.5 + 50 / 1050), 3);
+    expect(worstBending(rules, bay, work, 'pair')?.answer.sagging.moment).toBeCloseTo(whole, 3);
+  });
+
+  test('is not drawn where nothing may be otherwise than stated', () => {
+    const sure = resolveRules({ ...site.rules, changed: [{ key: 'placementTolerance', value: 0, reason: '' }] });
+    const known = rack({ unitLoads: [goods('a')], levels: [level([stand('a', 950)])] });
+    const same = levelWorkOf(known, run, bay, bay.levels[0] ?? expect.fail()) ?? expect.fail();
+    expect(worstBending(sure, bay, same, 'pair')).toBeNull();
+  });
 });
