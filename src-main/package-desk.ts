@@ -7,11 +7,15 @@ import { readPackage } from './package-file';
 import type { PackageStore } from './package-store';
 import { HostError } from './trouble';
 
+/** How long a package is kept that nobody asks for: a page may be gone without a word, ms. */
+const KEPT = 15 * 60_000;
+
 export class PackageDesk {
   readonly #store: () => PackageStore;
   #made: Uint8Array | null = null;
   #pieces: Uint8Array[] = [];
   #contents: PackageContents | null = null;
+  #timer: NodeJS.Timeout | null = null;
 
   /** @param store that of the folder in use */
   constructor(store: () => PackageStore) {
@@ -22,11 +26,13 @@ export class PackageDesk {
     this.drop();
     const { bytes, told } = await this.#store().make(siteId, withPhotos);
     this.#made = bytes;
+    this.#keepAWhile();
     return told;
   }
 
   async read(from: number): Promise<string> {
     if (this.#made === null) throw gone('export it again');
+    this.#keepAWhile();
     return Buffer.from(this.#made.subarray(from, from + PACKAGE_PIECE)).toString('base64');
   }
 
@@ -42,6 +48,7 @@ export class PackageDesk {
       );
     this.#contents = null;
     this.#pieces.push(piece);
+    this.#keepAWhile();
   }
 
   async look(): Promise<PackageLook> {
@@ -51,6 +58,7 @@ export class PackageDesk {
       this.#pieces = [];
       this.#contents = contentsOf(readPackage(file));
     }
+    this.#keepAWhile();
     return this.#store().look(this.#contents);
   }
 
@@ -61,7 +69,14 @@ export class PackageDesk {
     return taken;
   }
 
+  #keepAWhile(): void {
+    this.#timer?.refresh();
+    this.#timer ??= setTimeout(() => this.drop(), KEPT).unref();
+  }
+
   drop(): void {
+    if (this.#timer !== null) clearTimeout(this.#timer);
+    this.#timer = null;
     this.#made = null;
     this.#pieces = [];
     this.#contents = null;

@@ -15,6 +15,8 @@ export interface Progress {
   readonly doing: string;
   /** From 0 to 1; null while it cannot be told. */
   readonly share: number | null;
+  /** False once it is done whole or not at all. */
+  readonly canStop: boolean;
 }
 
 /** What a package begins with: a ZIP's mark. No site file does. */
@@ -55,7 +57,12 @@ export class Packages {
     this.#shell.attempt(async () => {
       const shell = this.#shell;
       shell.dialog = null;
-      const { id, done } = await this.#host.takePackage(how);
+      const taken = await this.#whileShown(() => {
+        this.#tell('Putting everything in its place', null, false);
+        return this.#host.takePackage(how);
+      });
+      if (taken === null) return;
+      const { id, done } = taken;
       shell.sites = await this.#host.listSites();
       await shell.openSite(id);
       if (shell.open === null) return;
@@ -127,9 +134,9 @@ export class Packages {
     return { made, file: new Blob(pieces, { type: 'application/zip' }) };
   }
 
-  #tell(doing: string, share: number | null): void {
-    if (this.#givenUp) throw GIVEN_UP;
-    this.progress = { doing, share };
+  #tell(doing: string, share: number | null, canStop = true): void {
+    if (this.#givenUp && canStop) throw GIVEN_UP;
+    this.progress = { doing, share, canStop };
   }
 
   /** @returns null where it was given up */

@@ -1,7 +1,8 @@
 /**
  * The listing of a package: whose site it is, who made it and when, and every part with its size and
  * checksum. The listing carries its own checksum, with its own 64 digits taken as zeros, so that every
- * changed byte of a package that matters is noticed and its part named.
+ * changed byte of a package that matters is noticed and its part named. It proves that nothing was changed
+ * by accident or in passing; it does not prove who made the package.
  */
 import { choice, number, report, text, type Problem, type Reader } from '../site/fields';
 import type { Hash } from '../site/envelope';

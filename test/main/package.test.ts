@@ -10,10 +10,15 @@ import { finishBay, note } from '../../src-core/visit/edits';
 import { readVisit, writeVisit } from '../../src-core/visit/read-visit';
 import type { Visit } from '../../src-core/visit/visit';
 import { sha256 } from '../../src-main/checked-site';
-import { readPackage } from '../../src-main/package-file';
+import { readPackage, writePackage } from '../../src-main/package-file';
 import { bodyOf, drawn } from '../storage/make';
 import { book, fill, packageOf, PHOTO, recordOf, save, seen, send } from './make-package';
 import { startMachine, temporaryFolder } from './machine';
+
+const GOLDEN_HASHES = [
+  '22ab1ab0d34ddc4e272f7219c1bc648e394e6e6d335f7a090fcff9a1000fa579',
+  '3d96509de2ef90d54c424f0df94507443958c0116840e6b432770425cd2ac314',
+];
 
 const newHost = async (): Promise<Host> => (await startMachine(temporaryFolder())).machine.page();
 
@@ -448,6 +453,37 @@ describe('what a package may not hold', () => {
     const file = forged(await packageOf(host), (parts) => (parts['photos/p2.png'] = text('<script>')));
     expect((await failure(send(host, file))).message).toContain('photo p2.png: it is not the kind of picture');
   });
+});
+
+test('what would not fit into one package is told before it is put together', () => {
+  // The same photo many times: nothing of that size is made.
+  const photo = new Uint8Array(20 * 1024 * 1024);
+  const parts = new Map(Array.from({ length: 26 }, (_, i) => [`photos/p${i}.jpg`, photo]));
+  expect(() => writePackage(parts, { program: '0.1.0', madeAt: '2026-12-01T08:00:00.000Z', siteId: 's', siteName: 'Depot' })).toThrow(
+    /at most 512 MiB, and this would be 520 MiB\. Export it without the photos/,
+  );
+});
+
+test('a package of version 1 is taken for ever', async () => {
+  const host = await newHost();
+  const look = await send(host, readFileSync(join(import.meta.dirname, '../fixtures/package-v1.tallybeam.zip')));
+  expect(look).toEqual({
+    siteName: 'Test depot',
+    madeAt: '2026-12-01T08:00:00.000Z',
+    visits: 1,
+    photos: 1,
+    photosMissing: 0,
+    records: 2,
+    here: null,
+  });
+  const { id } = await host.takePackage({ as: 'copy' });
+  const { photos, hashes, altered, contents } = await everything(host, id);
+  expect(photos).toEqual([PHOTO.toString('base64')]);
+  expect([altered, contents]).toEqual([null, [recordOf(1).contents, recordOf(2).contents]]);
+  // The hashes are on paper that was handed out: they never change.
+  expect(hashes).toEqual(GOLDEN_HASHES);
+  const [visit] = await visitsOf(host, id);
+  expect([visit?.name, visit?.bays.length, visit?.bays[0]?.photos[0]?.note]).toEqual(['Week 23, aisle 4', 2, 'left upright']);
 });
 
 describe('two programs on one folder', () => {

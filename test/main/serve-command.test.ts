@@ -85,7 +85,10 @@ test('killed in the middle of editing and started again, it offers the edits', a
   child.kill('SIGKILL');
   await once(child, 'exit');
   const site = await call(await run(['--sites', sites]).address(), 'readSite', 's');
-  expect(site).toMatchObject({ revision, recovered: { body: bodyOf('s', 3), edits: ['Edit 2', 'Edit 3'], baseRevision: revision } });
+  expect(site).toMatchObject({
+    revision,
+    recovered: { body: bodyOf('s', 3), edits: ['Edit 2', 'Edit 3'], baseRevision: revision, otherPage: false },
+  });
 });
 
 test('without a folder named, the sites are in the user’s own', async () => {

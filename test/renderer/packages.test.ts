@@ -70,7 +70,7 @@ describe('bringing in', () => {
     host.waiting.set('sendPackage', new Promise((resolve) => (goOn = resolve)));
     const importing = shell.importFile(packageFile());
     await vi.waitFor(() => expect(shell.dialog?.kind).toBe('working'));
-    expect(shell.packages.progress).toEqual({ doing: 'Reading the file', share: 0 });
+    expect(shell.packages.progress).toEqual({ doing: 'Reading the file', share: 0, canStop: true });
     shell.packages.giveUp();
     goOn();
     await importing;
