@@ -1,8 +1,12 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
+import { EVEN_LOAD, widestFree, withEvenLoad } from '../../../src-core/audit/free-room';
 import { roomLeft, roomLeftInSteps } from '../../../src-core/audit/room-left';
+import { CHECKS, type CheckName } from '../../../src-core/checks/finding';
 import type { BearingShape, DepthShape } from '../../../src-core/goods/shapes';
 import type { Bay, Deck, Floor, Level, Placement, Run, Site, Source, UnitLoad } from '../../../src-core/site/site';
+import { roomForEven, roomForPlaced } from '../../../src-core/words/room-words';
+import { arbitrarySite } from '../../make-random';
 import { goods, level, pallet, rack, stand } from './rack';
 import { passes, weighing } from './weighing';
 
@@ -271,4 +275,48 @@ test('an answer takes a few audits: half of them no more than eight, none more t
   counts.sort((a, b) => a - b);
   expect(counts[Math.floor(counts.length / 2)]).toBeLessThanOrEqual(8);
   expect(counts.at(-1)).toBeLessThanOrEqual(30);
+}, 120_000);
+
+const OF_MASS: readonly CheckName[] = [
+  'level-total',
+  'beam-bending',
+  'beam-end-shear',
+  'beam-deflection',
+  'full-complement',
+  'frame-storey',
+  'unit-load',
+];
+
+test('on any site that a file may hold the answer is whole, said in words, and soon there', () => {
+  const kinds = new Set<string>();
+  fc.assert(
+    fc.property(arbitrarySite(), fc.constantFrom(null, ...OF_MASS), (whole, only) => {
+      // Random sites always break some rule of room and order; with only one check of mass they come further.
+      const leftOut = CHECKS.filter((check) => check !== only).map((check) => ({ check, reason: 'a test' }));
+      const site = only === null ? whole : { ...whole, rules: { ...whole.rules, leftOut } };
+      for (const { placements, id: levelId } of site.runs.flatMap(({ bays }) => bays.flatMap(({ levels }) => levels))) {
+        for (const { id } of placements) {
+          const steps = roomLeftInSteps(site, id, TODAY);
+          let count = 0;
+          let step = steps.next();
+          for (; step.done !== true; step = steps.next()) count += 1;
+          const found = step.value;
+          kinds.add(found.kind);
+          expect(count).toBeLessThanOrEqual(120);
+          if (found.kind === 'room') expect(found.mostKg > 0 && Number.isFinite(found.mostKg)).toBe(true);
+          if (found.kind === 'not-assessable') expect(found.missing.length).toBeGreaterThan(0);
+          const said = roomForPlaced(found, { site, units: 'metric', ownKg: null, palletKg: 0 });
+          expect(said.every((text) => text.length > 0)).toBe(true);
+        }
+        const free = widestFree(site, levelId);
+        if (free === null) continue;
+        const even = withEvenLoad(site, levelId, free.usable);
+        expect(
+          roomForEven(roomLeft(even, EVEN_LOAD, TODAY), free, { site: even, units: 'us', ownKg: null, palletKg: 0 }).length,
+        ).toBeGreaterThan(0);
+      }
+    }),
+    { numRuns: 150, endOnFailure: true },
+  );
+  expect([...kinds]).toEqual(expect.arrayContaining(['no-fit', 'none', 'not-assessable', 'unlimited']));
 }, 120_000);
