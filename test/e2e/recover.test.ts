@@ -148,6 +148,27 @@ test('recovered edits that are left out stay out', async () => {
   await page.context().close();
 });
 
+test('changes that another page has not saved are told as that page’s, and stay its own', async () => {
+  await withProgram(async ({ page: first, serving, sitesFolder, siteFiles }) => {
+    await openDemo(first);
+    await goToBay(first, 'A4');
+    await selectGoods(first, PALLET);
+    await goods(first, PALLET).press('ArrowRight');
+    await eventually(async () => (await readdir(join(sitesFolder, 'journal')).catch(() => [])).length).toBe(1);
+    const second = await first.context().newPage();
+    second.setDefaultTimeout(30_000);
+    await second.goto(serving.address);
+    await second.getByRole('button', { name: NAME, exact: true }).click();
+    const question = second.getByRole('dialog', { name: 'Another page has changes that are not saved' });
+    expect(await question.innerText()).toContain('If that page is still open, go on there');
+    await second.keyboard.press('Escape');
+    await question.waitFor({ state: 'detached' });
+    await save(first);
+    const [saved = ''] = (await siteFiles()).values();
+    expect(placementIn(siteIn(saved), PALLET)).toMatchObject({ atMm: 85 });
+  });
+});
+
 interface AnyPart {
   readonly [key: string]: unknown;
 }
