@@ -4,7 +4,7 @@
  * takes a few milliseconds because only what an edit touched is done again.
  */
 import { SvelteMap } from 'svelte/reactivity';
-import { auditBay, auditFrame, auditRun } from '../src-core/audit/audit';
+import { auditBay, auditFrame } from '../src-core/audit/audit';
 import { createAuditCache } from '../src-core/audit/cache';
 import type { BayAudit, FrameAudit, RunAudit } from '../src-core/audit/types';
 import { worstVerdict } from '../src-core/checks/finding';
@@ -90,17 +90,6 @@ export class Findings {
     }
     const verdict = worstVerdict([...bays, ...light.findings.filter(({ counts }) => counts)].map((one) => one.verdict));
     return { ...light, verdict, bays, frames };
-  }
-
-  /** A run with every calculation. */
-  wholeRun(site: Site, runId: Id | null): RunAudit | null {
-    if (runId === null) return null;
-    try {
-      return auditRun(site, runId, this.today(), this.#cache);
-    } catch {
-      // The worker met the same trouble and tells it.
-      return null;
-    }
   }
 
   /** A bay of the run with every calculation; null where its audit breaks down. */

@@ -125,8 +125,6 @@ export class OpenSite {
   levelAudit = $derived<LevelAudit | null>(this.bayAudit?.levels.find((level) => level.levelId === this.selection.levelId) ?? null);
   /** The chosen run: the chosen bay and its frames with every calculation, the others with their verdicts and sentences. */
   runAudit = $derived.by(() => this.findings.run(this.selection.runId, this.#near));
-  /** The chosen run with every calculation. Only read where a whole run is looked at: it is made when it is first read. */
-  wholeRunAudit = $derived.by(() => this.findings.wholeRun(this.site, this.selection.runId));
 
   constructor(options: OpenSiteOptions) {
     this.id = options.id;
@@ -448,7 +446,7 @@ export class OpenSite {
   }
 }
 
-export const [useOpenSite, setOpenSite, hasOpenSite] = createContext<OpenSite>();
+export const [useOpenSite, setOpenSite] = createContext<OpenSite>();
 
 function todayHere(): string {
   const now = new Date();
