@@ -5,6 +5,7 @@
 import type { BayAudit, FrameAudit, LevelAudit, RunAudit } from '../src-core/audit/types';
 import type { Finding } from '../src-core/checks/finding';
 
+/** Bays and frames only: with an entry for every finding of a large site, clearing memory took longer than checking. */
 const lightened = new WeakMap<object, object>();
 
 /** The same light part for the same part, so that what did not change is still told by identity. */
@@ -17,34 +18,44 @@ function once<T extends object>(part: T, make: (part: T) => T): T {
 }
 
 /** Part by part: a copy of all would write the calculation only to drop it, and that is most of the work. */
-const lightFinding = (finding: Finding): Finding =>
-  once(finding, ({ check, place, verdict, utilisation, demand, allowed, says, missing, notes, counts }) => ({
-    ...{ check, place, verdict, utilisation, demand, allowed, says, missing, notes, counts },
-    worked: [],
-  }));
+const lightFinding = ({ check, place, verdict, utilisation, demand, allowed, says, missing, notes, counts }: Finding): Finding => ({
+  ...{ check, place, verdict, utilisation, demand, allowed, says, missing, notes, counts },
+  worked: [],
+});
 
-const lightFindings = (findings: readonly Finding[]): readonly Finding[] => findings.map(lightFinding);
+/** Makes each finding light once, as the governing one stands among the others as well. */
+function lightener(): (finding: Finding) => Finding {
+  const made = new Map<Finding, Finding>();
+  return (finding) => {
+    const known = made.get(finding) ?? lightFinding(finding);
+    made.set(finding, known);
+    return known;
+  };
+}
 
-const lightGoverning = (governing: Finding | null): Finding | null => governing && lightFinding(governing);
-
-const lightLevel = (level: LevelAudit): LevelAudit =>
-  once(level, () => ({
-    ...level,
-    governing: lightGoverning(level.governing),
-    effects: null,
-    findings: lightFindings(level.findings),
-  }));
+const lightLevel = (level: LevelAudit, light: (finding: Finding) => Finding): LevelAudit => ({
+  ...level,
+  governing: level.governing && light(level.governing),
+  effects: null,
+  findings: level.findings.map(light),
+});
 
 export const lightBay = (bay: BayAudit): BayAudit =>
-  once(bay, () => ({
-    ...bay,
-    governing: lightGoverning(bay.governing),
-    levels: bay.levels.map(lightLevel),
-    findings: lightFindings(bay.findings),
-  }));
+  once(bay, () => {
+    const light = lightener();
+    return {
+      ...bay,
+      governing: bay.governing && light(bay.governing),
+      levels: bay.levels.map((level) => lightLevel(level, light)),
+      findings: bay.findings.map(light),
+    };
+  });
 
 const lightFrame = (frame: FrameAudit): FrameAudit =>
-  once(frame, () => ({ ...frame, governing: lightGoverning(frame.governing), findings: lightFindings(frame.findings) }));
+  once(frame, () => {
+    const light = lightener();
+    return { ...frame, governing: frame.governing && light(frame.governing), findings: frame.findings.map(light) };
+  });
 
 /** The run's own findings are few and keep their calculations. */
 export const lightRun = (run: RunAudit): RunAudit => ({ ...run, bays: run.bays.map(lightBay), frames: run.frames.map(lightFrame) });
