@@ -1,7 +1,8 @@
 /** What is found at a beam makes its bay over, on the screen of the rack as in the visit, until it is put right. */
 import type { Locator, Page } from 'playwright-core';
 import { afterAll, expect, test } from 'vitest';
-import { closeBrowser, openDemo } from './program';
+import { lostText } from './lost-text';
+import { axeFindings, closeBrowser, openDemo } from './program';
 import { checked, choice, command, eventually, field, goToBay, goToLevel, plain, type, withProgram } from './steps';
 
 afterAll(closeBrowser);
@@ -118,6 +119,11 @@ test('damage and sag are entered, corrected, undone and taken off in the form of
     const front = page.getByRole('group', { name: 'Front beam' });
     await type(field(front, 'Sag, loaded'), '5');
     await eventually(() => verdict(page)).toContain('Not assessable');
+    await enter(record);
+    await eventually(() => verdict(page)).toContain('Over');
+    expect(await axeFindings(page, [], 'aside')).toEqual([]);
+    expect(await lostText(page)).toEqual([]);
+    await enter(page.getByRole('button', { name: 'Replaced or repaired: take it off' }));
     await type(field(front, 'Set, down'), '0');
     await type(field(front, 'Set, sideways'), '0');
     await eventually(() => verdict(page)).toContain('Within');
