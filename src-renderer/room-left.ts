@@ -4,7 +4,7 @@ import { roomLeftInSteps } from '../src-core/audit/room-left';
 import { isMet } from '../src-core/audit/trial-load';
 import type { Id, Site, UnitLoad } from '../src-core/site/site';
 import type { Text } from '../src-core/units/text';
-import { roomForEven, roomForGoods, roomForPlaced, type RoomAsked } from '../src-core/words/room-words';
+import { NOTHING_FREE, roomForEven, roomForGoods, roomForPlaced, type RoomAsked } from '../src-core/words/room-words';
 import { weigh } from './drawing/weigh';
 import { putOn, standOf, type PuttingOn } from './finding-room';
 import { placementPlace } from './places';
@@ -40,7 +40,7 @@ export function* roomSaid(
     }
     case 'even': {
       const free = widestFree(site, question.levelId);
-      if (free === null) return () => [];
+      if (free === null) return () => [NOTHING_FREE];
       const trial = withEvenLoad(site, question.levelId, free.usable);
       const room = yield* roomLeftInSteps(trial, EVEN_LOAD, today);
       return (units) => roomForEven(room, free, { site: trial, units, ownKg: null, palletKg: 0 });

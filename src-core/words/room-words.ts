@@ -54,8 +54,12 @@ export function roomForPlaced(room: RoomLeft, asked: RoomAsked): readonly Text[]
       say`Over by ${atLeast(ownKg - most.value, units)} here: at most ${most} of this shape; ${stop} stops it.`,
       ...complement(room, asked),
     ];
-  return [say`Up to ${most} of this shape may stand here; ${stop} stops it.`, ...complement(room, asked), closeFrom(asked)];
+  const unfit = between(room, ownKg) ? [wouldNotDo(ownKg)] : [];
+  return [say`Up to ${most} of this shape may stand here; ${stop} stops it.`, ...unfit, ...complement(room, asked), closeFrom(asked)];
 }
+
+/** For a level whose goods leave no more than their clearances. */
+export const NOTHING_FREE: Text = say`Nothing is free along this level.`;
 
 /** For a free stretch of a level and a plain even load on all of it. */
 export function roomForEven(room: RoomLeft, free: FreeStretch, asked: RoomAsked): readonly Text[] {
@@ -97,10 +101,12 @@ function ownMass(room: RoomLeft & { kind: 'room' }, count: number, { ownKg, unit
   if (ownKg === null) return [];
   const most = atMost(room.mostKg, units).value;
   if (ownKg > room.mostKg * ROUNDED) return [say`These goods weigh ${massOf(ownKg)}, ${atLeast(ownKg - most, units)} too much.`];
-  if (between(room, ownKg)) return [say`These goods weigh ${massOf(ownKg)}, which would not do.`];
+  if (between(room, ownKg)) return [wouldNotDo(ownKg)];
   if (count > 1) return [say`Of these goods, ${massOf(ownKg)} each, ${count} may be put here.`];
   return count === 1 ? [say`These goods weigh ${massOf(ownKg)} and may be put here.`] : [];
 }
+
+const wouldNotDo = (ownKg: number): Text => say`These goods weigh ${massOf(ownKg)}, which would not do.`;
 
 const between = ({ notBetween }: RoomLeft & { kind: 'room' }, kg: number): boolean =>
   notBetween !== null && kg > notBetween.aboveKg * ROUNDED && kg * ROUNDED < notBetween.belowKg;

@@ -65,6 +65,11 @@ test('a level with no goods in mind tells its free stretch', () => {
   );
 });
 
+test('a level that is full says that nothing is free along it', () => {
+  const wide = { ...site, unitLoads: site.unitLoads.map((one) => ({ ...one, widthMm: one.id === 'flour' ? 1400 : 1000 })) };
+  expect(said({ of: 'even', levelId: 'A1-lower' }, wide)).toBe('Nothing is free along this level.');
+});
+
 test('work rests first, goes on in slices, and is dropped when it is out of date', () => {
   vi.useFakeTimers();
   let steps = 0;

@@ -83,6 +83,7 @@ test('a full complement is named with the masses that would be neither', () => {
   expect(said).toContain('Above 745 kg and below 770 kg it would be neither that nor within by the even loads.');
   expect(said).toContain('These goods weigh 760 kg, which would not do.');
   expect(words(roomForGoods(room, 1825, 1, asked('metric', { ownKg: 800 })), METRIC)).not.toContain('would not do');
+  expect(words(roomForPlaced(room, asked('metric', { ownKg: 760 })), METRIC)).toContain('These goods weigh 760 kg, which would not do.');
 });
 
 test('where there is no room the finding that says why is repeated', () => {
