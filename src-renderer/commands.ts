@@ -150,7 +150,7 @@ export const COMMANDS: readonly Command[] = [
   ),
   command('put-down', 'Goods', 'Put down here', ['Enter', 'Space'], carrying, ({ open }) => open.putDown()),
   command('put-back', 'Goods', 'Put back', ['Escape'], carrying, ({ open }) => open.putBack()),
-  command('move-to', 'Goods', 'Move to…', ['Mod+M'], hasOne, ({ shell }) => shell.ask({ kind: 'move-to' })),
+  command('move-to', 'Goods', 'Move to…', ['Mod+M'], hasGoods, ({ shell }) => shell.ask({ kind: 'move-to' })),
   ...NUDGES.flatMap(([prefix, mm]) => [
     command(`left-${mm}`, 'Goods', `Move left by ${mm} mm`, [`${prefix}ArrowLeft`], movable, ({ open }) => nudge(open, -mm)),
     command(`right-${mm}`, 'Goods', `Move right by ${mm} mm`, [`${prefix}ArrowRight`], movable, ({ open }) => nudge(open, mm)),

@@ -47,6 +47,12 @@ export interface Half {
   readonly typed: object;
 }
 
+/** One unit load and where it goes. */
+export interface Move {
+  readonly placementId: Id;
+  readonly target: Target;
+}
+
 export interface OpenSiteOptions {
   readonly host: Host;
   readonly id: string;
@@ -96,7 +102,7 @@ export class OpenSite {
   #history = $state.raw<UndoHistory<Site>>() as UndoHistory<Site>;
   /** A change that is shown and checked but not made yet, while something is dragged or carried. */
   #trial = $state.raw<Site | null>(null);
-  #tried: Target | null = null;
+  #tried: readonly Move[] | null = null;
   #wanted = $state.raw<Selection>(NOTHING);
   /** Where one was before, for going back. */
   #trail = $state.raw<readonly Selection[]>([]);
@@ -310,7 +316,7 @@ export class OpenSite {
   };
 
   /** Several at once, as one step of undo. */
-  moveAll = (moves: readonly { readonly placementId: Id; readonly target: Target }[], merge?: string): Refused | null => {
+  moveAll = (moves: readonly Move[], merge?: string): Refused | null => {
     const placementIds = moves.map(({ placementId }) => placementId);
     const all = (site: Site) => moves.reduce((next, { placementId, target }) => moved(next, placementId, target), site);
     const refused = this.editGoods(`Move ${moves.length} unit loads`, (site) => this.roomFor(all(site), placementIds), merge ?? null);
@@ -333,12 +339,19 @@ export class OpenSite {
   };
 
   /** Shows and checks a move without making it; `keepTrial` makes it, `dropTrial` takes it back. */
-  tryMove = (placementId: Id, target: Target): void => {
-    if (placementPlace(this.#history.value, placementId) === null) return;
-    const there = moved(this.#history.value, placementId, target);
-    this.#tried = target;
+  tryMove = (placementId: Id, target: Target): void => this.tryMoves([{ placementId, target }]);
+
+  /** The same for several that go together. */
+  tryMoves = (moves: readonly Move[]): void => {
+    const before = this.#history.value;
+    if (moves.some(({ placementId }) => placementPlace(before, placementId) === null)) return;
+    const there = moves.reduce((site, { placementId, target }) => moved(site, placementId, target), before);
+    this.#tried = moves;
     try {
-      this.#trial = this.roomFor(there, [placementId]);
+      this.#trial = this.roomFor(
+        there,
+        moves.map(({ placementId }) => placementId),
+      );
     } catch (error) {
       // Shown where it is held; putting it down there says why it cannot stay.
       if (!(error instanceof RangeError)) throw error;
@@ -347,15 +360,18 @@ export class OpenSite {
   };
 
   /** Makes the move that was tried, exactly as `move` would have. */
-  keepTrial = (placementId: Id): void => {
-    if (this.#trial !== null && this.#tried !== null) this.move(placementId, this.#tried);
+  keepTrial = (): void => {
+    const [first, ...others] = this.#tried ?? [];
+    if (this.#trial === null || first === undefined) return;
+    if (others.length === 0) this.move(first.placementId, first.target);
+    else if (this.moveAll([first, ...others]) === null) this.sayDone(`${others.length + 1} unit loads moved.`);
   };
 
   /** Puts down what is carried where it was tried, or where it stood. */
   putDown = (): void => {
     if (this.carried === null) return;
     if (this.#trial === null) this.putBack();
-    else this.keepTrial(this.carried);
+    else this.keepTrial();
   };
 
   dropTrial = (): void => {
@@ -410,13 +426,13 @@ export class OpenSite {
 
   /** What was typed and not taken over, or filled in by half, by name; what it was typed for still stands. */
   get unfinished(): readonly string[] {
-    const standing = new Set(everyId(this.site));
+    const standing = everyId(this.site);
     const here = (key: string) => {
       const [, id] = key.split(':');
-      return id === undefined || standing.has(id);
+      return id === undefined || standing.includes(id);
     };
     const labels = [...this.halves, ...this.drafts].flatMap(([key, { label }]) => (here(key) ? [label] : []));
-    return [...new Set(labels)];
+    return labels.filter((label, i) => labels.indexOf(label) === i);
   }
 
   /** Forgets what was typed in a field and in the rows under it. */

@@ -21,19 +21,21 @@ export interface Carrying {
   /** Gaps asked for at a level, by its height. */
   readonly gapsAt: (height: number) => Gaps;
   readonly placementId: Id;
+  /** Others that are moved along with it, and so are no neighbours. */
+  readonly along?: readonly Id[];
   readonly width: number;
   /** Its outline across the rack, which it keeps. */
   readonly rear: number;
   readonly front: number;
 }
 
-const openingOf = ({ bay, gapsAt, placementId, width, rear, front }: Carrying, level: LevelDrawn): Opening => ({
+const openingOf = ({ bay, gapsAt, placementId, along = [], width, rear, front }: Carrying, level: LevelDrawn): Opening => ({
   entry: bay.entry,
   gaps: gapsAt(level.height),
   width,
   // What stands wholly in front of or behind it is no neighbour along the level.
   others: level.goods
-    .filter((goods) => goods.placementId !== placementId && goods.rear < front && goods.front > rear)
+    .filter((goods) => goods.placementId !== placementId && !along.includes(goods.placementId) && goods.rear < front && goods.front > rear)
     .map((goods) => ({ at: goods.at, width: goods.unitLoad.widthMm })),
 });
 

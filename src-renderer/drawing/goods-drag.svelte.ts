@@ -3,7 +3,8 @@
  * drawing and verdict show it; letting go keeps it, Escape or a lost pointer takes it back.
  */
 import type { Id } from '../../src-core/site/site';
-import type { OpenSite, Target } from '../open-site.svelte';
+import type { Move, OpenSite, Target } from '../open-site.svelte';
+import { placementPlace, type PlacementPlace } from '../places';
 import type { BayDrawn } from './bay-model';
 import { dropAt, type Carrying, type Drop } from './drop';
 
@@ -32,6 +33,9 @@ export class GoodsDrag {
   dragging = $state<Id | null>(null);
   /** Where it stands while it is dragged or carried, for the tag beside it. */
   drop = $state.raw<Drop | null>(null);
+  /** Selected goods of the same level that go along, and where all of them stood. */
+  along = $state.raw<readonly Id[]>([]);
+  #stood: readonly PlacementPlace[] = [];
   #press: Press | null = null;
   #justDragged = false;
 
@@ -74,7 +78,7 @@ export class GoodsDrag {
     this.#end();
     if (dragging === null) return;
     this.#justDragged = true;
-    this.open.keepTrial(dragging);
+    this.open.keepTrial();
   };
 
   cancel = (): void => {
@@ -94,13 +98,21 @@ export class GoodsDrag {
     this.dragging = press.placementId;
     // The surface, not the goods: they may be drawn anew on another level while the pointer is down.
     surface.element.setPointerCapture(press.pointerId);
-    this.open.select({ placementIds: [press.placementId] });
+    const { selection, site } = this.open;
+    const own = placementPlace(site, press.placementId);
+    const chosen = selection.placementIds.includes(press.placementId) ? selection.placementIds : [press.placementId];
+    const places = chosen.flatMap((id) => placementPlace(site, id) ?? []);
+    // Goods of other levels keep their places: it would not be seen where they go.
+    this.#stood = places.filter(({ bay, level }) => bay.id === own?.bay.id && level?.id === own.level?.id);
+    this.along = this.#stood.map(({ placement }) => placement.id).filter((id) => id !== press.placementId);
+    this.open.select({ placementIds: [press.placementId, ...this.along] });
   }
 
   #end(): void {
     this.#press = null;
     this.dragging = null;
     this.drop = null;
+    this.along = [];
   }
 
   #try(placementId: Id, surface: DragSurface, px: number, py: number, freely: boolean): void {
@@ -111,8 +123,24 @@ export class GoodsDrag {
     const elsewhere = this.drop?.level.levelId !== drop.level.levelId;
     this.drop = drop;
     if (same) return;
-    this.open.tryMove(placementId, targetOfDrop(carrying.bay, drop));
+    this.open.tryMoves(this.#moves(placementId, carrying.bay, drop));
     // Diagrams and findings follow to the level over which it is held.
-    if (elsewhere) this.open.select({ placementIds: [placementId] });
+    if (elsewhere) this.open.select({ placementIds: [placementId, ...this.along] });
+  }
+
+  /** What goes along keeps its distance, and the whole group stays between the uprights where it fits. */
+  #moves(placementId: Id, bay: BayDrawn, drop: Drop): readonly Move[] {
+    const target = targetOfDrop(bay, drop);
+    const own = this.#stood.find(({ placement }) => placement.id === placementId);
+    if (own === undefined || this.along.length === 0) return [{ placementId, target }];
+    const group = this.#stood;
+    const left = Math.min(...group.map(({ placement }) => placement.atMm));
+    const right = Math.max(...group.map(({ placement, unitLoad }) => placement.atMm + unitLoad.widthMm));
+    const wanted = target.atMm - own.placement.atMm;
+    const by = Math.max(-left, Math.min(bay.entry - right, wanted));
+    return group.map(({ placement: { id, atMm, towardsFrontMm } }) => ({
+      placementId: id,
+      target: { ...target, atMm: atMm + by, towardsFrontMm },
+    }));
   }
 }

@@ -247,7 +247,7 @@ test('the same target by trying, keys, putting down and the one command gives th
     (open, target) => {
       open.tryMove('p2', { ...target, atMm: target.atMm + 333 });
       open.tryMove('p2', target);
-      open.keepTrial('p2');
+      open.keepTrial();
     },
     (open, target) => {
       open.pickUp('p2');

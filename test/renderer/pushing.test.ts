@@ -40,7 +40,7 @@ const MOVES: Readonly<Record<string, (open: OpenSite) => unknown>> = {
   'the move command': (open) => open.move('p1', { levelId: levelId(open, 0), atMm: 500 }),
   'a drag': (open) => {
     open.tryMove('p1', { levelId: levelId(open, 0), atMm: 500 });
-    open.keepTrial('p1');
+    open.keepTrial();
   },
   keys: (open) => {
     open.select({ placementIds: ['p1'] });
@@ -108,7 +108,7 @@ test('a move tried, then put down, ends as the move itself', async () => {
   const tried = await openSite(true);
   tried.tryMove('p2', { levelId: levelId(tried, 0), atMm: 20 });
   expect(places(tried)).toEqual(wanted);
-  tried.keepTrial('p2');
+  tried.keepTrial();
   expect(places(tried)).toEqual(wanted);
 });
 
@@ -223,4 +223,22 @@ test('several go to another level and to another bay together, in one step of un
   open.undo();
   open.undo();
   expect(open.site).toBe(before);
+});
+
+test('several dragged together end as several moved together, and are refused together', async () => {
+  const open = await openSite(false);
+  const up = (atMm: number, placementId: string) => ({ placementId, target: { levelId: levelId(open, 1), atMm } });
+  open.tryMoves([up(175, 'p1'), up(1050, 'p2')]);
+  expect(places(open, 1)).toEqual({ p1: 175, p2: 1050 });
+  expect(open.canUndo).toBe(false);
+  open.keepTrial();
+  expect(places(open, 1)).toEqual({ p1: 175, p2: 1050 });
+  expect(open.steps).toBe(1);
+  expect(open.selection.placementIds).toEqual(['p1', 'p2']);
+  open.undo();
+  const before = open.site;
+  open.tryMoves([up(175, 'p1'), up(900, 'p2')]);
+  open.keepTrial();
+  expect(open.site).toBe(before);
+  expect(open.refusedMove).toMatch(/would stand 75\smm in Crate/);
 });
