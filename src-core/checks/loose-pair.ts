@@ -86,7 +86,8 @@ export function loosePair(input: LoosePairInput): LoosePair {
         ...SIDES.map((side) => {
           const { even } = stated[side];
           const rise = goods.reduce((most, one, i) => Math.max(most, riseOf(one, side, shares[side][i] as number)), 1);
-          return rise * (even[effect] + ((STEEPEST[effect] * tolerance) / span) * even.total);
+          // Goods that put nothing on this beam as stated have no part in what is known of it.
+          return rise === Infinity ? Infinity : rise * (even[effect] + ((STEEPEST[effect] * tolerance) / span) * even.total);
         }),
       );
     },
