@@ -38,7 +38,7 @@ export function limitWords(limit: Limit, diagram: Diagram, reading: Reading, sag
 
 /** "worst case 534 kg·m at 1 358 mm": of placement and mass, the dotted curve. */
 export const worstCaseWords = (diagram: Diagram, worst: Peak, reading: Reading): string =>
-  `worst case ${peakFigure(diagram, worst, reading)} ${placeWords(worst, diagram.plot.span, reading)}`;
+  `worst case ${worst.beam === 'pair' ? '' : `${worst.beam} `}${peakFigure(diagram, worst, reading)} ${placeWords(worst, diagram.plot.span, reading)}`;
 
 /** One sentence with the governing value and how it stands to its limits. */
 export function diagramSentence(diagram: Diagram, reading: Reading, sagDivisor: number | null): string {

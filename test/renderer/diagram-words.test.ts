@@ -32,7 +32,7 @@ test('a limit that the verdict is not made by is told as information', () => {
 test('the worst case of placement and mass stands behind what is stated', () => {
   const worstCase = { beam: 'front', value: 450_000, from: 1300, to: 1300 } as const;
   expect(plain(diagramSentence(bending({ worstCase }), reading, 200))).toBe(
-    'Bending of the front beam: greatest 405 kg·m at 1 350 mm; beyond rated even load 338 kg·m; worst case 450 kg·m at 1 300 mm.',
+    'Bending of the front beam: greatest 405 kg·m at 1 350 mm; beyond rated even load 338 kg·m; worst case front 450 kg·m at 1 300 mm.',
   );
 });
 
