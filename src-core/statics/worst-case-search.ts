@@ -33,7 +33,9 @@ interface InfluenceLine {
 
 const MOST_ROUNDS = 60;
 /** A round that raises the effect by less than this part of it is the last. */
-const SETTLED = 1e-14;
+const SETTLED = 1e-13;
+/** mm; at its greatest an effect is off by the square of such a step beside the span. */
+const PLACE_PRECISION = 1e-5;
 /** With held ends a line bends both ways, so that a unit load's best place is looked for in this many parts. */
 const PARTS = 16;
 
@@ -141,7 +143,7 @@ function bestPlace(beam: LooseBeam, one: LooseLoad, line: InfluenceLine, parts: 
 function crossing(of: (x: number) => number, low: number, high: number, atLow: number, atHigh: number): number {
   let kept = 0;
   for (let step = 0; step < 80; step++) {
-    if (high - low <= 1e-9) break;
+    if (high - low <= PLACE_PRECISION) break;
     const x = step < 40 ? low + ((high - low) * atLow) / (atLow - atHigh) : low + (high - low) / 2;
     const value = of(x);
     if (value === 0) return x;
