@@ -6,10 +6,11 @@ export type NewId = () => Id;
 export const copyOfGoods = (goods: readonly TemplateGoods[], newId: NewId): readonly Placement[] =>
   goods.map((placement) => ({ ...placement, id: newId() }));
 
-/** A level of the same make. Damage and sag of the one say nothing of the other. */
+/** A level of the same make. Locks, damage and sag that were seen at the one say nothing of the other. */
 export const copyOfLevel = (level: Level, newId: NewId): Level => ({
   ...level,
   id: newId(),
+  locks: 'unknown',
   beamDamages: [],
   sags: [],
   placements: copyOfGoods(level.placements, newId),

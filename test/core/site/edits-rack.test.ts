@@ -114,6 +114,20 @@ test('a duplicate has ids of its own and stands to the right; the new frame brin
   expect(findRun(after, 'a').frames[2]).toMatchObject({ name: 'F new', heightMm: 5001, damages: [], plumb: null, anchored: 'unknown' });
 });
 
+test('whatever is copied, what was seen at the rack is not taken along', () => {
+  const seen = editLevel(site, 'a1-l1', {
+    locks: 'yes',
+    beamDamages: [{ id: 'dent', beam: 'front', member: 'beam', torn: false, note: '', found: '' }],
+  });
+  const copies = [
+    duplicateBay(seen, 'a1', { name: 'A1b', frameName: 'F new', newId }).runs[0]?.bays[1]?.levels[0],
+    findBay(duplicateLevel(seen, 'a1-l1', 6000, newId), 'a1').bay.levels.at(-1),
+    findBay(pasteLevel(seen, 'b1', findLevel(seen, 'a1-l1').level, newId), 'b1').bay.levels[0],
+    findBay(fillBays(seen, 'a1', ['b2'], 'levels and goods', newId), 'b2').bay.levels[0],
+  ];
+  expect(copies.map((level) => [level?.locks, level?.beamDamages, level?.placements.length])).toEqual(copies.map(() => ['unknown', [], 1]));
+});
+
 test('levels stand in order of height, whatever the order in which they came', () => {
   expect(heights(sound(addLevel(site, 'a1', makeLevel([], { id: 'n', heightMm: 2200 }))))).toEqual([1500, 2200, 3000]);
   const moved = sound(moveLevel(site, 'a1-l1', 4000));
