@@ -10,6 +10,8 @@ import { dropAt, type Carrying, type Drop } from './drop';
 
 /** A press that moves less than this is a click, px. */
 const SLACK = 4;
+/** A bay in the strip comes up when goods are held over it this long, ms. */
+const DWELL = 300;
 
 export interface DragSurface {
   readonly element: HTMLElement;
@@ -36,6 +38,7 @@ export class GoodsDrag {
   /** Selected goods of the same level that go along, and where all of them stood. */
   along = $state.raw<readonly Id[]>([]);
   #stood: readonly PlacementPlace[] = [];
+  #held: { readonly bayId: Id; readonly timer: ReturnType<typeof setTimeout> } | null = null;
   #press: Press | null = null;
   #justDragged = false;
 
@@ -65,6 +68,7 @@ export class GoodsDrag {
     if (press !== null && event.pointerId === press.pointerId) {
       if (this.dragging === null && Math.hypot(x - press.x, y - press.y) < SLACK) return;
       if (this.dragging === null) this.#begin(press, surface);
+      if (this.#overBay(event)) return;
       this.#try(press.placementId, surface, x - press.grab, y, event.altKey);
     } else if (this.open.carried !== null) {
       const carrying = surface.carrying(this.open.carried);
@@ -78,13 +82,15 @@ export class GoodsDrag {
     this.#end();
     if (dragging === null) return;
     this.#justDragged = true;
-    this.open.keepTrial();
+    // Let go over the strip it has no place in the bay yet.
+    if (bayUnder(event) === null) this.open.keepTrial();
+    else this.#takeBack();
   };
 
   cancel = (): void => {
     if (this.dragging === null) return;
     this.#end();
-    this.open.dropTrial();
+    this.#takeBack();
   };
 
   /** True for the click that ends a drag, which is no click of its own. */
@@ -93,6 +99,23 @@ export class GoodsDrag {
     this.#justDragged = false;
     return swallow;
   };
+
+  /** Held over a bay in the strip for a moment, that bay comes up to put the goods down in; crossing others brings none up. */
+  #overBay(event: PointerEvent): boolean {
+    const bayId = bayUnder(event);
+    if (bayId !== this.#held?.bayId) {
+      clearTimeout(this.#held?.timer);
+      const comeUp = () => this.dragging !== null && this.open.select({ bayId });
+      this.#held = bayId === null ? null : { bayId, timer: setTimeout(comeUp, DWELL) };
+    }
+    return bayId !== null;
+  }
+
+  /** As it was before the drag, whichever bay came up meanwhile. */
+  #takeBack(): void {
+    this.open.dropTrial();
+    this.open.select({ placementIds: this.#stood.map(({ placement }) => placement.id) });
+  }
 
   #begin(press: Press, surface: DragSurface): void {
     this.dragging = press.placementId;
@@ -109,6 +132,8 @@ export class GoodsDrag {
   }
 
   #end(): void {
+    clearTimeout(this.#held?.timer);
+    this.#held = null;
     this.#press = null;
     this.dragging = null;
     this.drop = null;
@@ -144,3 +169,6 @@ export class GoodsDrag {
     }));
   }
 }
+
+const bayUnder = ({ clientX, clientY }: PointerEvent): Id | null =>
+  document.elementFromPoint(clientX, clientY)?.closest<HTMLElement>('[data-bay]')?.dataset['bay'] ?? null;

@@ -121,6 +121,64 @@ test('a pallet moved by drag, by keys, by clicks and by the menu leaves the same
   expect((JSON.parse(dragged.after) as FileOfSite).site).toEqual(before);
 });
 
+/** Both pallets of level 3 in bay A4 to the same places on level 3 of the bay A5 beside it, which is empty. */
+const PAIR = ['a4-l3-g1', 'a4-l3-g2'] as const;
+
+async function selectPair(page: Page): Promise<void> {
+  await goToBay(page, 'A4');
+  await goToLevel(page, 3);
+  await selectGoods(page, PAIR[0]);
+  await goods(page, PAIR[1]).click({ modifiers: ['Shift'] });
+  await page.getByRole('heading', { name: '2 unit loads' }).waitFor();
+}
+
+const PAIR_MOVES: Readonly<Record<string, (page: Page) => Promise<void>>> = {
+  keys: async (page) => {
+    await goods(page, PAIR[1]).press('Shift+PageDown');
+  },
+  menu: async (page) => {
+    await page.getByRole('button', { name: 'Move to…' }).click();
+    const dialog = page.getByRole('dialog', { name: 'Move 2 unit loads to' });
+    const bays = await dialog.getByLabel('Bay').locator('option').allInnerTexts();
+    await dialog.getByLabel('Bay').selectOption({ label: bays.find((name) => name.endsWith('A5')) ?? '' });
+    await dialog.getByRole('button', { name: 'Move', exact: true }).click();
+  },
+  drag: async (page) => {
+    const box = await goods(page, PAIR[0]).boundingBox();
+    const tab = await page.getByRole('tab', { name: /^Bay A5/ }).boundingBox();
+    if (!box || !tab) throw new Error('pallet or bay is not in sight');
+    const [x, y] = [box.x + box.width / 2, box.y + box.height / 2];
+    await page.mouse.move(x, y);
+    await page.mouse.down();
+    await page.mouse.move(x + 20, y, { steps: 3 });
+    // Held over the bay in the strip, it comes up.
+    await page.mouse.move(tab.x + tab.width / 2, tab.y + tab.height / 2, { steps: 5 });
+    await page.getByRole('heading', { name: 'Bay A5' }).waitFor();
+    const level = await page.locator('[data-level="3"]').boundingBox();
+    if (!level) throw new Error('the level is not in sight');
+    await page.mouse.move(x, level.y + level.height - 20, { steps: 6 });
+    await page.mouse.up();
+  },
+};
+
+test('two pallets moved to the bay beside by drag, by keys and by the menu leave the same file, byte for byte', async () => {
+  const texts: string[] = [];
+  for (const move of Object.values(PAIR_MOVES)) {
+    await withProgram(async ({ page, siteFiles }) => {
+      await openDemo(page);
+      await checked(page);
+      await selectPair(page);
+      await move(page);
+      await page.getByRole('heading', { name: 'Bay A5' }).waitFor();
+      await eventually(() => goods(page, PAIR[1]).getAttribute('aria-label')).toMatch(/1\s825\smm from the left upright/);
+      await save(page);
+      texts.push(await onlyFile(siteFiles()));
+    });
+  }
+  expect(texts).toHaveLength(3);
+  expect(new Set(texts).size).toBe(1);
+});
+
 test('a move taken back and saved leaves the file as it was', () =>
   withProgram(async ({ page, siteFiles }) => {
     await openDemo(page);
