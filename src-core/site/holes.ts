@@ -50,9 +50,3 @@ export function holesBeside(height: number, pitch: number): readonly [below: num
   if (Math.abs(height - Math.round(height / pitch) * pitch) <= AT_HOLE) return null;
   return [nextHole(height, pitch, -1), nextHole(height, pitch, 1)];
 }
-
-/** The hole nearest to a height. */
-export function nearestHole(height: number, pitch: number): number {
-  positive(pitch);
-  return atHole(Math.round(height / pitch), pitch);
-}
