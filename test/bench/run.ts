@@ -1,14 +1,16 @@
 /**
- * npm run bench [-- level | edit | page [FOLDER of another built page]]
+ * npm run bench [-- level | worst | edit | page [FOLDER of another built page]]
  * All parts or the named one, then one line for each claim. Ratios within one run; where time is named, it
  * is the processor's, which other programs on the machine do not lengthen.
  */
 import { editBench } from './edit.bench';
 import { levelBench } from './level.bench';
 import { pageBench } from './page.bench';
+import { worstCaseBench } from './worst-case.bench';
 
 const PARTS = {
   level: () => Promise.resolve(levelBench()),
+  worst: () => Promise.resolve(worstCaseBench()),
   edit: editBench,
   page: () => pageBench(process.argv[3] ?? null),
 } as const;
