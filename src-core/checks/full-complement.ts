@@ -78,7 +78,7 @@ export function fullComplement(input: FullComplementInput): FullComplement {
         say`For information, the equivalent even loads: ${massOf(even.bending)} by bending, ${massOf(even.endShear)} by end shear, ${massOf(even.deflection)} by deflection; the greatest is ${ratioOf(greatest(even) / even.total)} times the total.`,
         ...(greatest(even) > ratedKg ? [say`By them the level has no spare.`] : []),
         say`Near equal is within ${ruleQuantity(rules, 'fullComplementMass')} (${sourceOf(rules, 'fullComplementMass')}), evenly spaced within ${ruleQuantity(rules, 'fullComplementSpacing')} (${sourceOf(rules, 'fullComplementSpacing')}).`,
-        say`It stops applying as soon as a unit load is missing, moved or heavier.`,
+        say`It stops applying as soon as a unit load is missing, moved or heavier. Put-away within the placement tolerance is part of that loading and does not count against it; how much heavier its goods may be counts in the level’s total.`,
       ],
     }),
   };
