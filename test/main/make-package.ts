@@ -1,10 +1,11 @@
 /** A site with a visit, a photo, a follow-up and records, and packages of it, through the host as a page does it. */
-import type { AppendRecord, Host, PackageLook } from '../../src-core/host';
+import type { AppendRecord, Host, HostFailure, PackageLook } from '../../src-core/host';
 import { recordReduction, newFollowUp, writeFollowUp } from '../../src-core/visit/follow-up';
 import { writeVisit } from '../../src-core/visit/read-visit';
 import type { Visit } from '../../src-core/visit/visit';
 import { bodyOf } from '../storage/make';
 import { round } from '../core/visit/make-visit';
+import { startMachine, temporaryFolder } from './machine';
 
 export const PHOTO = Buffer.from([0xff, 0xd8, 0xff, 0xe0, 1, 2, 3, 4]);
 
@@ -77,3 +78,24 @@ export async function send(host: Host, file: Uint8Array): Promise<PackageLook> {
     await host.sendPackage(from, Buffer.from(file.subarray(from, from + PIECE)).toString('base64'));
   return host.lookAtPackage();
 }
+
+/** A machine on a folder of its own, with the site. */
+export async function machineWith(): Promise<{ host: Host; sites: string }> {
+  const { machine, sites } = await startMachine(temporaryFolder());
+  const host = machine.page();
+  await fill(host);
+  return { host, sites };
+}
+
+export const failure = async (call: Promise<unknown>): Promise<HostFailure> => {
+  try {
+    await call;
+  } catch (error) {
+    const { code, message } = error as HostFailure;
+    return { code, message };
+  }
+  throw new Error('was expected to be refused');
+};
+
+/** One bit of one byte changed. */
+export const flipped = (bytes: Uint8Array, at: number, bit = 1): Uint8Array => bytes.map((byte, i) => (i === at ? byte ^ bit : byte));
