@@ -48,7 +48,7 @@ export function planFacts(plan: BayPlan, site: Site, reading: Reading): readonly
       ? 'no beam levels'
       : `${countOf(levels.length, 'level')} at ${listed(levels.map((level) => length(level.heightMm)))}`,
     notice === undefined ? 'no load notice' : `rated by ${notice}`,
-    `frames ${frame ?? 'of unknown type'}, ${length(plan.frameHeightMm)} high`,
+    `${frame ?? 'frames of unknown type'}, ${length(plan.frameHeightMm)} high`,
     goods === 0 ? 'no goods' : countOf(goods, 'unit load'),
   ];
 }
