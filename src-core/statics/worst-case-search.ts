@@ -167,48 +167,43 @@ const NODE = Math.sqrt(0.6) / 2;
 
 /** What the line takes of a unit load whose left edge is at `place`, or how fast that rises as it goes right. */
 function taken(span: number, { load }: LooseLoad, place: number, line: InfluenceLine, slope: boolean): number {
-  const { section } = line;
-  const read = slope ? slopeAt : valueAt;
+  const { section, left, right } = line;
   let sum = 0;
-  const part = (from: number, to: number, wFrom: number, wTo: number): void => {
-    const h = to - from;
-    if (!(h > 0)) return;
-    const middle = from + h / 2;
-    const onLeft = middle < section;
-    const w = (wFrom + wTo) / 2;
-    const lean = (wTo - wFrom) * NODE;
-    sum +=
-      (h / 18) *
-      (5 * (w - lean) * read(line, onLeft, middle - h * NODE, span) +
-        8 * w * read(line, onLeft, middle, span) +
-        5 * (w + lean) * read(line, onLeft, middle + h * NODE, span));
-  };
   for (const { from, to, wFrom, wTo } of load.lines) {
     const a = place + from;
     const b = place + to;
-    if (section <= a || section >= b) part(a, b, wFrom, wTo);
+    if (section >= b) sum += ofPart(left, 0, 1, slope, a, b, wFrom, wTo);
+    else if (section <= a) sum += ofPart(right, span, -1, slope, a, b, wFrom, wTo);
     else {
       const w = wFrom + ((wTo - wFrom) * (section - a)) / (b - a);
-      part(a, section, wFrom, w);
-      part(section, b, w, wTo);
+      sum += ofPart(left, 0, 1, slope, a, section, wFrom, w) + ofPart(right, span, -1, slope, section, b, w, wTo);
     }
   }
-  for (const { at, force } of load.points) sum += force * read(line, place + at < section, place + at, span);
+  for (const { at, force } of load.points) {
+    const x = place + at;
+    sum += force * (x < section ? ofLine(left, x, 1, slope) : ofLine(right, span - x, -1, slope));
+  }
   return sum;
 }
 
-function valueAt({ left, right }: InfluenceLine, onLeft: boolean, x: number, span: number): number {
-  const [c1, c2, c3] = onLeft ? left : right;
-  const d = onLeft ? x : span - x;
-  return d * (c1 + d * (c2 + d * c3));
+/** A straight piece of load from a to b; distances are `way`·(x − origin), with `way` 1 or −1. */
+function ofPart(line: Cubic, origin: number, way: 1 | -1, slope: boolean, a: number, b: number, wFrom: number, wTo: number): number {
+  const h = b - a;
+  const w = (wFrom + wTo) / 2;
+  const lean = (wTo - wFrom) * NODE;
+  const middle = way * (a + h / 2 - origin);
+  const step = way * h * NODE;
+  return (
+    (h / 18) *
+    (5 * (w - lean) * ofLine(line, middle - step, way, slope) +
+      8 * w * ofLine(line, middle, way, slope) +
+      5 * (w + lean) * ofLine(line, middle + step, way, slope))
+  );
 }
 
-function slopeAt({ left, right }: InfluenceLine, onLeft: boolean, x: number, span: number): number {
-  const [c1, c2, c3] = onLeft ? left : right;
-  const d = onLeft ? x : span - x;
-  const rise = c1 + d * (2 * c2 + d * 3 * c3);
-  return onLeft ? rise : -rise;
-}
+/** The line at the distance d from its support, or its slope to the right. */
+const ofLine = ([c1, c2, c3]: Cubic, d: number, way: 1 | -1, slope: boolean): number =>
+  slope ? way * (c1 + d * (2 * c2 + d * 3 * c3)) : d * (c1 + d * (c2 + d * c3));
 
 /** Moment at the section under 1 N: the triangle of the pinned beam, less what the end moments take. */
 function momentLine({ span, rigidity, left, right }: Beam): (section: number) => InfluenceLine {

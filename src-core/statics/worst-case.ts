@@ -6,7 +6,6 @@
  * Units and signs as in beam.ts. Source: influence lines, any text on structural analysis.
  */
 import { solveBeam, type Beam } from './beam';
-import { reduce } from './reduction';
 import { arrangedLoad, checkLoose, leastPlace, mostPlace, type LooseBeam, type LooseLoad } from './worst-case-loads';
 import { greatestMomentApart } from './worst-case-moment';
 import { rowOf, type Row } from './worst-case-row';
@@ -62,12 +61,23 @@ export function worstMoment(beam: LooseBeam, loads: readonly LooseLoad[]): Worst
 export function worstReaction(beam: LooseBeam, loads: readonly LooseLoad[], end: 'left' | 'right'): WorstReaction {
   checkLoose(beam, loads);
   const row = rowOf(beam, loads);
+  const at = end === 'left' ? 0 : beam.span;
+  const places = row === null ? [] : end === 'left' ? row.least : row.most;
   const shifts =
     row === null
       ? loads.map((one) => (end === 'left' ? leastPlace(beam, one) : mostPlace(beam, one)) - one.at)
-      : shiftsOf(row, end === 'left' ? row.least : row.most, loads);
-  const at = end === 'left' ? 0 : beam.span;
-  return { force: reactionUnder(beam, loads, shifts, end), end, shifts, at, apart: true, how: 'exact' };
+      : shiftsOf(row, places, loads);
+  const found = (force: number): WorstReaction => ({ force, end, shifts, at, apart: true, how: 'exact' });
+  if (row === null || !isPinned(beam)) {
+    const { reactionLeft, reactionRight } = solveBeam(beam, arrangedLoad(loads, shifts, beam.span));
+    return found(end === 'left' ? reactionLeft : reactionRight);
+  }
+  let turning = 0;
+  for (let i = 0; i < places.length; i++) {
+    const x = (places[i] as number) + (row.ahead[i] as number) + (row.centre[i] as number);
+    turning += (row.weight[i] as number) * (end === 'left' ? beam.span - x : x);
+  }
+  return found(turning / beam.span);
 }
 
 /**
@@ -82,21 +92,6 @@ export function worstSag(beam: LooseBeam, loads: readonly LooseLoad[]): WorstSag
 }
 
 const isPinned = ({ left, right }: Beam): boolean => left.kind === 'pinned' && right.kind === 'pinned';
-
-function reactionUnder(beam: LooseBeam, loads: readonly LooseLoad[], shifts: readonly number[], end: 'left' | 'right'): number {
-  const { span } = beam;
-  if (!isPinned(beam)) {
-    const { reactionLeft, reactionRight } = solveBeam(beam, arrangedLoad(loads, shifts, span));
-    return end === 'left' ? reactionLeft : reactionRight;
-  }
-  let force = 0;
-  loads.forEach(({ load, at, factor }, i) => {
-    const { resultant, centroid } = reduce(load);
-    const x = at + (shifts[i] as number) + (centroid ?? 0);
-    force += (resultant * factor * (end === 'left' ? span - x : x)) / span;
-  });
-  return force;
-}
 
 /** Places in a row are kept as those of the unit loads pushed together; back to shifts in the given order. */
 function shiftsOf(row: Row, places: readonly number[], loads: readonly LooseLoad[]): readonly number[] {
