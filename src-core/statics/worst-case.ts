@@ -57,7 +57,10 @@ export function worstMoment(beam: LooseBeam, loads: readonly LooseLoad[]): Worst
   return { moment: value, ...arrangementOf(loads, found) };
 }
 
-/** The greatest reaction: every unit load as far towards that support as it may stand. */
+/**
+ * The greatest reaction: every unit load as far towards that support as it may stand. With held ends both
+ * must be alike: then too the reaction's influence line falls all the way from its support.
+ */
 export function worstReaction(beam: LooseBeam, loads: readonly LooseLoad[], end: 'left' | 'right'): WorstReaction {
   checkLoose(beam, loads);
   const row = rowOf(beam, loads);
@@ -81,9 +84,9 @@ export function worstReaction(beam: LooseBeam, loads: readonly LooseLoad[], end:
 }
 
 /**
- * The greatest deflection, by the influence line of the deflection at a section; the section and the arrangement are bettered in turn until neither betters the other. The bound
- * between neighbours is left out; `apart` says whether that mattered.
- * Accuracy: about 1e-12 of itself.
+ * The greatest deflection, by the influence line of the deflection at a section; the section and the
+ * arrangement are bettered in turn until neither betters the other. The bound between neighbours is left
+ * out; `apart` says whether that mattered. Accuracy: about 1e-12 of itself.
  */
 export function worstSag(beam: LooseBeam, loads: readonly LooseLoad[]): WorstSag {
   checkLoose(beam, loads);
