@@ -4,7 +4,7 @@
  * and on the drawing above are the same x.
  */
 import type { Attachment } from 'svelte/attachments';
-import type * as LineChart from './line-chart';
+import type { Drawn, drawnOn } from './line-chart';
 import type { Point } from './outline';
 import { pageInks } from './theme.svelte';
 
@@ -29,9 +29,9 @@ export interface Plot {
 }
 
 /** Null until it is read, which is begun as soon as a diagram may be wanted. */
-let lineChart: typeof LineChart | null = null;
+let drawOn: typeof drawnOn | null = null;
 const reading = import('./line-chart').then(
-  (read) => (lineChart = read),
+  ({ drawnOn }) => (drawOn = drawnOn),
   // Without its curve a diagram still has its figures and its table.
   () => null,
 );
@@ -39,12 +39,12 @@ const reading = import('./line-chart').then(
 /** `<canvas {@attach chartOf(() => plot)}>`; the function is read again whenever what it reads changes. */
 export function chartOf(plot: () => Plot): Attachment<HTMLCanvasElement> {
   return (canvas) => {
-    let ready = $state.raw(lineChart);
-    let chart: LineChart.Drawn | null = null;
+    let ready = $state.raw(drawOn);
+    let chart: Drawn | null = null;
     void reading.then((read) => (ready = read));
     $effect(() => {
       const [now, inks] = [plot(), pageInks()];
-      if (chart === null) chart = ready?.drawnOn(canvas, now, inks) ?? null;
+      if (chart === null) chart = ready?.(canvas, now, inks) ?? null;
       else chart.draw(now, inks);
     });
     return () => chart?.destroy();
