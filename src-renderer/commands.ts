@@ -202,7 +202,7 @@ export const COMMANDS: readonly Command[] = [
   ),
   command('fill-run', 'Rack', 'Give other bays this bay’s goods or levels…', [], hasBay, ({ shell }) => shell.ask({ kind: 'fill-run' })),
   command('bay-form', 'Rack', 'Bay: clear entry and notice', [], hasBay, ({ open }) => open.openTask('bay', open.bay?.id ?? '')),
-  command('level-form', 'Rack', 'Level: height, beams, locks and deck', [], hasLevel, ({ open }) =>
+  command('level-form', 'Rack', 'Level: height, beams, damage, locks and deck', [], hasLevel, ({ open }) =>
     open.openTask('level', open.level?.id ?? ''),
   ),
   command('left-frame', 'Rack', 'Frame left of this bay', [], hasBay, ({ open }) => openFrame(open, 0)),

@@ -221,7 +221,7 @@ test('from an empty list to a bay that is within, by entering what the page asks
 
     // A deck with its own rating comes under the goods, and is checked.
     await hands.click(page.locator('[data-level="1"] .figures'));
-    await hands.click(page.getByRole('button', { name: 'Level: height, beams, locks, deck…' }));
+    await hands.click(page.getByRole('button', { name: 'Level: height, beams, damage, deck…' }));
     const form = page.locator('[data-form]');
     await hands.choose(choice(form, 'Deck'), 'mesh deck');
     await hands.type(field(form, 'Panels side by side'), '3');

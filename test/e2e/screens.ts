@@ -83,7 +83,7 @@ export async function walkBay(page: Page, visit: Visit): Promise<void> {
   await page.getByRole('button', { name: 'Frames…' }).click();
   await page.getByRole('button', { name: 'Record damage' }).first().click();
   await visit('frames form', SIDE);
-  await page.getByRole('button', { name: 'Level: height, beams, locks, deck…' }).click();
+  await page.getByRole('button', { name: 'Level: height, beams, damage, deck…' }).click();
   await choice(page, 'Deck').selectOption({ label: 'mesh deck' });
   await checked(page);
   await visit('level form', SIDE);
