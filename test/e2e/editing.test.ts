@@ -194,5 +194,7 @@ test('a finding opens to its formula, the numbers put in with where each is from
       expect((await step.locator('.source').innerText()).trim()).not.toBe('');
       for (const row of await step.locator('tbody tr').all()) expect(plain(await row.locator('td').last().innerText())).toMatch(/\S, \S/);
     }
-    expect(plain(await steps.last().innerText())).toMatch(/1\.34/);
+    // The stated case, and after it the worst within the tolerances.
+    const results = (await steps.allInnerTexts()).map(plain);
+    expect(results.filter((text) => /= 1\.34\b/.test(text))).toHaveLength(1);
   }));
