@@ -62,34 +62,37 @@ export interface LoosePair extends LoosePairInput {
   readonly beams: (worst: WorstEffect) => { readonly front: LoadedBeam; readonly rear: LoadedBeam };
 }
 
-const SIDES = ['front', 'rear'] as const;
-
 export function loosePair(input: LoosePairInput): LoosePair {
   const { goods, span, rigidity, end, fixity, tolerance } = input;
   const beam: LooseBeam = { span, rigidity, left: end, right: end, from: input.from, to: input.to, tolerance };
-  const shares = { front: goods.map((one) => shareOf(input, one, 'front')), rear: goods.map((one) => shareOf(input, one, 'rear')) };
+  // Most levels are asked for the bound alone.
+  let sharesOf: Readonly<Record<BeamSide, readonly number[]>> | null = null;
+  const shares = (side: BeamSide): readonly number[] =>
+    (sharesOf ??= { front: goods.map((one) => shareOf(input, one, 'front')), rear: goods.map((one) => shareOf(input, one, 'rear')) })[side];
   const loads = (side: BeamSide): readonly LooseLoad[] =>
-    goods.map(({ load, width, at, percent }, i) => ({ load, width, at, factor: (shares[side][i] as number) * (1 + percent / 100) }));
+    goods.map(({ load, width, at, percent }, i) => ({ load, width, at, factor: (shares(side)[i] as number) * (1 + percent / 100) }));
   const alike = goods.every(({ frontShare }) => frontShare === 0.5);
   const on = (effect: Effect, side: BeamSide): WorstEffect => {
     const arrangement = arrange(effect, beam, loads(side));
     const kg = evenMass(effect, arrangement.amount, span, rigidity, fixity);
-    return { side, kg, arrangement, end: arrangement.end, shares: shares[side] };
+    return { side, kg, arrangement, end: arrangement.end, shares: shares(side) };
   };
+  const rise = (side: BeamSide): number => {
+    let most = 1;
+    for (const one of goods) most = Math.max(most, riseOf(one, side, shareOf(input, one, side)));
+    return most;
+  };
+  let rises: Readonly<Record<BeamSide, number>> | null = null;
   const known = new Map<Effect, WorstEffect>();
   return {
     ...input,
     most: (effect, stated) => {
       // Held ends bend the influence lines, and the bound below with them.
       if (fixity > 0) return Infinity;
-      return Math.max(
-        ...SIDES.map((side) => {
-          const { even } = stated[side];
-          const rise = goods.reduce((most, one, i) => Math.max(most, riseOf(one, side, shares[side][i] as number)), 1);
-          // Goods that put nothing on this beam as stated have no part in what is known of it.
-          return rise === Infinity ? Infinity : rise * (even[effect] + ((STEEPEST[effect] * tolerance) / span) * even.total);
-        }),
-      );
+      rises ??= { front: rise('front'), rear: alike ? 1 : rise('rear') };
+      const steepest = (STEEPEST[effect] * tolerance) / span;
+      const front = boundOf(rises.front, stated.front.even[effect] + steepest * stated.front.even.total);
+      return alike ? front : Math.max(front, boundOf(rises.rear, stated.rear.even[effect] + steepest * stated.rear.even.total));
     },
     worst: (effect) => {
       const found = known.get(effect) ?? worse(on(effect, 'front'), alike ? null : on(effect, 'rear'));
@@ -99,7 +102,7 @@ export function loosePair(input: LoosePairInput): LoosePair {
     beams: ({ side, arrangement }) => {
       const solved = (which: BeamSide): LoadedBeam => {
         const factors = loads(side).map((one, i) => {
-          const own = shares[side][i] as number;
+          const own = shares(side)[i] as number;
           return which === side ? one : { ...one, factor: (1 - own) * (1 + (goods[i] as LooseGoods).percent / 100) };
         });
         const load = arrangedLoad(factors, arrangement.shifts, span);
@@ -117,6 +120,9 @@ export function loosePair(input: LoosePairInput): LoosePair {
  * steepest end slope of a pinned beam under a point load.
  */
 const STEEPEST: Readonly<Record<Effect, number>> = { bending: 8, endShear: 2, deflection: 384 / 45 / Math.sqrt(3) };
+
+/** Goods that put nothing on a beam as stated have no part in what is known of it: then there is no bound. */
+const boundOf = (rise: number, kg: number): number => (rise === Infinity ? Infinity : rise * kg);
 
 function shareOf({ tolerance, beamDistance }: LoosePairInput, { frontShare }: LooseGoods, side: BeamSide): number {
   const stated = side === 'front' ? frontShare : 1 - frontShare;
