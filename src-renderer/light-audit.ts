@@ -17,11 +17,15 @@ function once<T extends object>(part: T, make: (part: T) => T): T {
   return made;
 }
 
-/** Part by part: a copy of all would write the calculation only to drop it, and that is most of the work. */
-const lightFinding = ({ check, place, verdict, utilisation, demand, allowed, says, missing, notes, counts }: Finding): Finding => ({
-  ...{ check, place, verdict, utilisation, demand, allowed, says, missing, notes, counts },
-  worked: [],
-});
+/**
+ * Part by part: a copy of all would write the calculation only to drop it, and that is most of the work.
+ * The notes of levels work out every worst case, and the chosen level is audited whole where it is shown.
+ */
+function lightFinding(finding: Finding): Finding {
+  const { check, place, verdict, utilisation, demand, allowed, says, missing, counts } = finding;
+  const notes = place.levelId === undefined ? finding.notes : [];
+  return { check, place, verdict, utilisation, demand, allowed, says, missing, counts, notes, worked: [] };
+}
 
 /** Makes each finding light once, as the governing one stands among the others as well. */
 function lightener(): (finding: Finding) => Finding {
