@@ -47,3 +47,9 @@ export function partsOf({ run, bay, index }: BayPlace): readonly Part[] {
 
 export const partKey = (damage: SeenDamage): string =>
   damage.on === 'frame' ? `${damage.frameId} ${damage.member}` : `${damage.levelId} ${damage.beam} ${damage.member}`;
+
+/** Under which the half-typed plumb reading of a frame is kept, for the visit and bay that it is typed in. */
+export const halfPlumb = (frameId: string, of: string): string => `plumb:${frameId}:${of}`;
+
+/** The part of that key that names the visit and its bay. */
+export const bayOfVisit = (visitId: string, bayId: string): string => `${visitId}:${bayId}`;
