@@ -98,6 +98,7 @@ test('edits that were not saved when the program was killed are offered back, an
   const page = await windowAt(address);
   await page.getByRole('button', { name: NAME, exact: true }).click();
   const offer = page.getByRole('dialog', { name: 'Changes from before were not saved' });
+  await offer.waitFor();
   // Edits made within half a second share one line.
   const listed = (await offer.locator('li').allInnerTexts()).join('; ');
   expect(listed).toMatch(/^Move Soap powder in cartons; Turn Soap powder in cartons left for right/);

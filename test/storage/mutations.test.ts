@@ -5,12 +5,13 @@
 import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { expect, test } from 'vitest';
+import { SITE_FILE_VERSION } from '../../src-core/site/envelope';
 import { isRecord } from '../../src-core/site/fields';
 import { writeSite } from '../../src-core/site/write';
 import { checkBytes, checkImport, sha256 } from '../../src-main/checked-site';
 import { drawn } from './make';
 
-const original = readFileSync(join(import.meta.dirname, '../fixtures/site-v1.tallybeam.json'));
+const original = readFileSync(join(import.meta.dirname, `../fixtures/site-v${SITE_FILE_VERSION}.tallybeam.json`));
 const text = original.toString('utf8');
 const draw = drawn(4);
 const below = (most: number) => Math.floor(draw() * most);
