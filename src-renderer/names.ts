@@ -17,3 +17,12 @@ export function nextRunName(taken: ReadonlySet<string>): string {
     if (!taken.has(name)) return name;
   }
 }
+
+/** "A6|A3": a frame is called after the bays at its sides; unlike every other frame of its run. */
+export function frameNameBetween(left: string, right: string, taken: ReadonlySet<string>): string {
+  const name = `${left}|${right}`;
+  for (let number = 1; ; number++) {
+    const next = number === 1 ? name : `${name} (${number})`;
+    if (!taken.has(next)) return next;
+  }
+}

@@ -22,12 +22,13 @@ import {
   swapLevels,
 } from '../src-core/site/edits';
 import { holesOf, nextHole } from '../src-core/site/holes';
+import { findRun } from '../src-core/site/lookup';
 import { bayByPlan, evenPlan, frameByPlan, planOfBay, runByPlan, type BayPlan } from '../src-core/site/new-site';
 import type { Bay, Frame, Id, Level, LoadNotice, Run, Site } from '../src-core/site/site';
 import { formatQuantity } from '../src-core/units/format';
 import { lengthOf } from '../src-core/units/quantity';
 import { newId } from './ids';
-import { nextName, nextRunName } from './names';
+import { frameNameBetween, nextName, nextRunName } from './names';
 import { afterBay, afterLevel, afterRun } from './neighbours';
 import type { OpenSite } from './open-site.svelte';
 import { bayPlace } from './places';
@@ -67,6 +68,15 @@ export function layOutRun(
 export const goodsInPlan = ({ levels, onFloor }: BayPlan): number =>
   levels.reduce((sum, level) => sum + level.placements.length, onFloor.length);
 
+/**
+ * Name of the frame that comes with a bay, on its right: after both bays at its sides, and at the end
+ * of a run after the bay that would be next there.
+ */
+function newFrameName({ bays, frames }: Run, bayName: string, index: number): string {
+  const right = bays[index]?.name ?? nextName(bayName, new Set(bays.map(({ name }) => name)));
+  return frameNameBetween(bayName, right, new Set(frames.map(({ name }) => name)));
+}
+
 const bayNames = (site: Site): ReadonlySet<string> => new Set(site.runs.flatMap((run) => run.bays.map((bay) => bay.name)));
 
 /** For the first bay of a run: everything that nobody has stated is not known. */
@@ -95,8 +105,12 @@ export function addBays(open: OpenSite, run: Run, plan: BayPlan, { after, count 
   const [first] = bays;
   if (first === undefined) return null;
   const what = count === 1 ? `bay ${first.name}` : countOf(count, 'bay');
+  // From right to left, so that every bay finds its neighbour there.
   const refused = open.edit(`Add ${what}`, (site) =>
-    bays.reduce((next, bay, i) => addBay(next, run.id, bay, frameByPlan(plan, `${bay.name}|`, newId), after + 1 + i), site),
+    bays.toReversed().reduce((next, bay) => {
+      const frameName = newFrameName(findRun(next, run.id), bay.name, after + 1);
+      return addBay(next, run.id, bay, frameByPlan(plan, frameName, newId), after + 1);
+    }, site),
   );
   if (refused !== null) return refused;
   open.select({ bayId: first.id });
@@ -125,7 +139,9 @@ export function duplicateBayHere(open: OpenSite): void {
 
 export function copyBay(open: OpenSite, run: Run, bay: Bay): void {
   const name = nextName(bay.name, bayNames(open.site));
-  const refused = open.edit(`Duplicate bay ${bay.name}`, (site) => duplicateBay(site, bay.id, { name, frameName: `${name}|`, newId }));
+  const refused = open.edit(`Duplicate bay ${bay.name}`, (site) =>
+    duplicateBay(site, bay.id, { name, frameName: newFrameName(run, name, run.bays.indexOf(bay) + 1), newId }),
+  );
   if (refused !== null) return;
   open.select({ bayId: open.site.runs.find(({ id }) => id === run.id)?.bays[run.bays.indexOf(bay) + 1]?.id ?? null });
   open.say(`Bay ${bay.name} duplicated as bay ${name}.`);

@@ -1,6 +1,7 @@
 /** Bay templates: kept from a bay, laid out by, told in words. */
 import { afterEach, expect, test } from 'vitest';
 import { editEntry, editFrame, editLevel } from '../../src-core/site/edits';
+import { planOfBay } from '../../src-core/site/new-site';
 import type { Bay, BayTemplate, Run } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
 import { firstTemplate, goodsWords, keepTemplate, planFacts, templateNameFor } from '../../src-renderer/bay-templates';
@@ -87,7 +88,7 @@ test('bays by a template go in to the right of the chosen one as one step, with 
   const before = writeSite(open.site);
   expect(addBays(open, runOf(open), template(open), { after: 0, count: 2 })).toBeNull();
   expect(names(runOf(open))).toBe('A1 A4 A5 A2 A3');
-  expect(runOf(open).frames).toHaveLength(6);
+  expect(runOf(open).frames.map(({ name }) => name)).toEqual(['A0|A1', 'A1|A2', 'A4|A5', 'A5|A2', 'A2|A3', 'A3|A4']);
   expect(open.said).toBe('2 bays, A4 to A5, added to run A.');
   expect(open.bay?.name).toBe('A4');
   expect(open.undoName).toBe('Add 2 bays');
@@ -111,9 +112,16 @@ test('a duplicate of a bay stands to its right with its goods and is chosen', ()
   const open = openSite();
   copyBay(open, runOf(open), bayOf(open));
   expect(names(runOf(open))).toBe('A1 A4 A2 A3');
+  expect(runOf(open).frames.map(({ name }) => name)).toEqual(['A0|A1', 'A1|A2', 'A4|A2', 'A2|A3', 'A3|A4']);
   expect(open.bay).toBe(bayOf(open, 1));
   expect(open.bay?.levels[0]?.placements).toHaveLength(2);
   expect(open.said).toBe('Bay A1 duplicated as bay A4.');
+});
+
+test('a bay at the end of its run closes with a frame named after the one that would be next', () => {
+  const open = openSite();
+  addBays(open, runOf(open), planOfBay(open.site, bayOf(open).id, 'without goods'), { after: 2, count: 2 });
+  expect(runOf(open).frames.map(({ name }) => name)).toEqual(['A0|A1', 'A1|A2', 'A2|A3', 'A3|A4', 'A4|A5', 'A5|A6']);
 });
 
 test('changing a template touches no bay that was laid out by it, and what it uses names it', () => {

@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest';
 import { editBay, editEntry, movePlacement, removeBay, removePlacement } from '../../src-core/site/edits';
 import { findIn } from '../../src-renderer/find';
-import { nextName, nextRunName } from '../../src-renderer/names';
+import { frameNameBetween, nextName, nextRunName } from '../../src-renderer/names';
 import { countOf, sayBytes, sayTime } from '../../src-renderer/say';
 import { differences } from '../../src-renderer/site-differences';
 import { usedBy } from '../../src-renderer/used-by';
@@ -15,6 +15,11 @@ test.each([
   ['A9', [], 'A10'],
 ])('after %s, with %j taken, comes %s', (name, taken, next) => {
   expect(nextName(name, new Set(taken))).toBe(next);
+});
+
+test('a frame is called after both bays at its sides, and never like another of its run', () => {
+  expect(frameNameBetween('A6', 'A3', new Set(['A2|A3']))).toBe('A6|A3');
+  expect(frameNameBetween('A6', 'A3', new Set(['A6|A3', 'A6|A3 (2)']))).toBe('A6|A3 (3)');
 });
 
 test('runs are lettered, and the first free letter is taken', () => {
