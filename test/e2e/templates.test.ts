@@ -57,12 +57,13 @@ test('a bay is kept, changed in the library and laid out by; bays that were laid
     await checked(page);
 
     await command(page, 'Bay templates');
+    await page.getByRole('button', { name: 'Flour bay', exact: true }).click();
     const entry = page.getByRole('region', { name: 'Flour bay' });
     expect(plain(await entry.innerText())).toMatch(/\d × .+ at 75 mm/);
     await type(field(entry, 'Clear entry'), '2200');
     await says(page).toMatch(/^Flour bay: clear entry changed\. Bays that were laid out by it stay as they are\./);
     const site = await saved(program);
-    expect(site.bayTemplates).toMatchObject([{ name: 'Flour bay', clearEntryMm: 2200 }]);
+    expect(site.bayTemplates).toMatchObject([{ name: 'Three pallet levels' }, { name: 'Flour bay', clearEntryMm: 2200 }]);
     expect(site.runs.at(-1)?.bays.map((bay) => [bay.name, bay.clearEntryMm])).toEqual([
       ['F1', 2700],
       ['F2', 2700],
@@ -74,7 +75,10 @@ test('a bay is kept, changed in the library and laid out by; bays that were laid
       await page.getByRole('button', { name: 'Undo', exact: true }).click();
     }
     const before = await saved(program);
-    expect([before.bayTemplates, before.runs.map((run) => run.name)]).toEqual([[], ['A', 'B', 'C']]);
+    expect([before.bayTemplates, before.runs].map((named) => named.map(({ name }) => name))).toEqual([
+      ['Three pallet levels'],
+      ['A', 'B', 'C'],
+    ]);
   }));
 
 test('what a template alone uses cannot be deleted, and the template is named', () =>
