@@ -183,3 +183,19 @@ export function rack({ unitLoads, levels, pallets = [], notice = {}, beam = {}, 
     ],
   };
 }
+
+export const SECTION = { secondMomentMm4: 927_016, sectionModulusMm3: 15_450, elasticModulusNPerMm2: 210_000, designStressNPerMm2: 235 };
+
+/** Two unlike unit loads on pallets, one off the middle, on a level with everything known. */
+export const KNOWN: Rack = {
+  pallets: [pallet('p')],
+  unitLoads: [
+    goods('a', { goodsKg: 500, palletId: 'p' }),
+    goods('b', { goodsKg: 300, palletId: 'p', across: { kind: 'sloped', rearOverFront: 0.5 } }),
+  ],
+  levels: [
+    level([stand('a', 100), stand('b', 1200, { towardsFrontMm: 40, mirrored: true })], { deck: { kind: 'support-bars', massKg: 12 } }),
+  ],
+  notice: { levelKg: [2500], unitLoadKg: 900, unitLoadsPerLevel: 3 },
+  beam: { ...SECTION, ratings: [{ spanMm: 2700, pairKg: 2400 }] },
+};

@@ -3,29 +3,17 @@
  * checked there by a script): the parts that concern the beams of a level, to every printed digit.
  */
 import { expect, test } from 'vitest';
-import { auditRun } from '../../../src-core/audit/audit';
 import type { LevelAudit } from '../../../src-core/audit/types';
-import type { CheckName, Finding } from '../../../src-core/checks/finding';
+import type { CheckName } from '../../../src-core/checks/finding';
 import { STANDARD_GRAVITY } from '../../../src-core/units/quantity';
 import { plain } from '../plain';
 import { expectWorked } from '../worked';
-import { goods, level, rack, stand, type Rack } from './rack';
-
-const audit = (change: Rack): LevelAudit => {
-  const found = auditRun(rack(change), 'run', '2026-06-01').bays[0]?.levels[0];
-  if (found === undefined) throw new Error('no level audited');
-  return found;
-};
-
-function of(audited: LevelAudit, check: CheckName): Finding {
-  const found = audited.findings.find((one) => one.check === check);
-  if (found === undefined) throw new Error(`${check} not made`);
-  return found;
-}
+import { auditedLevel, findingOf } from './audited';
+import { goods, level, stand, type Rack } from './rack';
 
 /** Even mass and utilisation of a check, as they are printed. */
 const printed = (audited: LevelAudit, check: CheckName, digits = 1): string => {
-  const { demand, utilisation } = of(audited, check);
+  const { demand, utilisation } = findingOf(audited, check);
   return `${demand?.value.toFixed(digits)} (${utilisation?.toFixed(3)})`;
 };
 
@@ -37,7 +25,7 @@ const three = (unitLoad: ReturnType<typeof goods>): Rack => ({
 });
 
 test('S1: three pallets of 800 kg on 2 500 kg', () => {
-  const found = audit(three(goods('a')));
+  const found = auditedLevel(three(goods('a')));
   expect(printed(found, 'level-total', 0)).toBe('2400 (0.960)');
   expect(printed(found, 'beam-bending')).toBe('2488.9 (0.996)');
   expect(printed(found, 'beam-end-shear', 0)).toBe('2400 (0.960)');
@@ -46,17 +34,17 @@ test('S1: three pallets of 800 kg on 2 500 kg', () => {
   expect(kg(found.effects?.front.sagging.moment) / 1000).toBeCloseTo(840, 9);
   expect(found.effects?.front.sagging.from).toBeCloseTo(1350, 9);
   expect(found.effects?.front.centroid).toBeCloseTo(1350, 9);
-  expect(of(found, 'unit-load').verdict).toBe('close');
+  expect(findingOf(found, 'unit-load').verdict).toBe('close');
 });
 
 test('S1: judged as a designed full complement: close, with no alarm by bending, and its factor 1.037 noted', () => {
-  const found = audit(three(goods('a')));
+  const found = auditedLevel(three(goods('a')));
   expect(found.verdict).toBe('close');
-  const complement = of(found, 'full-complement');
+  const complement = findingOf(found, 'full-complement');
   expect(complement.counts).toBe(true);
   expect(complement.utilisation).toBeCloseTo(0.96, 12);
   expect(complement.notes.map(plain).join(' ')).toContain('1.03704 times the total');
-  for (const check of ['beam-bending', 'beam-end-shear', 'beam-deflection'] as const) expect(of(found, check).counts).toBe(false);
+  for (const check of ['beam-bending', 'beam-end-shear', 'beam-deflection'] as const) expect(findingOf(found, check).counts).toBe(false);
 });
 
 test.each([
@@ -64,7 +52,7 @@ test.each([
   ['⅓ each', [1 / 3, 1 / 3, 1 / 3], '826.7', '2449.4 (0.980)'],
 ])('S1: on three runners, %s', (_, shares, moment, bending) => {
   const feet = [50, 400, 750].map((xMm, i) => ({ xMm, share: shares[i] ?? 0 }));
-  const found = audit(three(goods('a', { bearing: { kind: 'feet', feet } })));
+  const found = auditedLevel(three(goods('a', { bearing: { kind: 'feet', feet } })));
   expect((kg(found.effects?.front.sagging.moment) / 1000).toFixed(1)).toBe(moment);
   expect(printed(found, 'beam-bending')).toBe(bending);
   // "Do not raise an alarm for 1.007": the full complement is judged by its total.
@@ -72,7 +60,7 @@ test.each([
 });
 
 const machine = (atMm: number, change: Partial<ReturnType<typeof goods>> = {}, beam: Rack['beam'] = {}): LevelAudit =>
-  audit({
+  auditedLevel({
     unitLoads: [goods('m', { name: 'Machine', widthMm: 1000, goodsKg: 1600, ...change })],
     levels: [level([stand('m', atMm)])],
     notice: { levelKg: [2000], unitLoadKg: 2000 },
@@ -87,7 +75,7 @@ test('S2: one machine of 1 600 kg at mid-span: 0.80 by total, 1.304 by bending',
   expect(printed(found, 'beam-end-shear', 0)).toBe('1600 (0.800)');
   expect(found.verdict).toBe('over');
   expect(found.governing?.check).toBe('beam-bending');
-  expect(plain(of(found, 'beam-bending').says)).toBe(
+  expect(plain(findingOf(found, 'beam-bending').says)).toBe(
     'Level 1 carries 1600 kg, but it bends each beam as 2607.41 kg evenly spread on the pair would. The notice allows 2000 kg.',
   );
 });
@@ -107,7 +95,7 @@ test('S2: moved hard left it passes by bending and is beyond what the notice pro
   expect(printed(found, 'beam-bending')).toBe('1748.1 (0.874)');
   expect(printed(found, 'beam-deflection')).toBe('1482.2 (0.741)');
   expect(printed(found, 'beam-end-shear')).toBe('2518.5 (1.259)');
-  const end = of(found, 'beam-end-shear');
+  const end = findingOf(found, 'beam-end-shear');
   expect(end.place).toMatchObject({ end: 'left' });
   expect(plain(end.says)).toContain('beyond what the notice proves');
   expect(found.governing?.check).toBe('beam-end-shear');
@@ -120,7 +108,7 @@ test.each([
 ])('S2: with connectors of %d kN·m/rad', (stiffness, fixity, bending) => {
   const section = { secondMomentMm4: 195e9 / 210_000, elasticModulusNPerMm2: 210_000, connectorNmmPerRad: stiffness * 1e6 };
   const found = machine(850, {}, section);
-  const bent = of(found, 'beam-bending');
+  const bent = findingOf(found, 'beam-bending');
   expect(bent.demand?.value.toFixed(0)).toBe(bending);
   expect(bent.notes.map(plain).join(' ')).toContain('stiffness of the connectors is known');
   const used = bent.worked.flatMap(({ values }) => values).find(({ symbol }) => symbol === 'f');
@@ -129,7 +117,7 @@ test.each([
 });
 
 test('S6: a pile sloping from 250 to 650 kg/m', () => {
-  const found = audit({
+  const found = auditedLevel({
     unitLoads: [
       goods('s', {
         widthMm: 2400,
@@ -151,12 +139,12 @@ test('S6: a pile sloping from 250 to 650 kg/m', () => {
   expect(printed(found, 'beam-bending')).toBe('1085.9 (0.905)');
   expect(printed(found, 'beam-deflection')).toBe('1080.4 (0.900)');
   expect(printed(found, 'beam-end-shear')).toBe('1240.0 (1.033)');
-  expect(of(found, 'beam-end-shear').place.end).toBe('right');
+  expect(findingOf(found, 'beam-end-shear').place.end).toBe('right');
   expect(found.verdict).toBe('over');
 });
 
 test('S6: the same weight in three steps of 300, 600 and 450 kg/m', () => {
-  const found = audit({
+  const found = auditedLevel({
     unitLoads: [
       goods('s', {
         widthMm: 2400,
@@ -184,14 +172,14 @@ test('S7: archive boxes and a motor on a shelf of 1.80 m: the beams are fine', (
   // The boxes as two rows, front and rear of the motor, so that nothing stands in anything else.
   const row = goods('row', { widthMm: 1800, depthMm: 150, goodsKg: 60 });
   const motor = goods('motor', { widthMm: 300, depthMm: 300, goodsKg: 130 });
-  const found = audit({
+  const found = auditedLevel({
     unitLoads: [row, motor],
     levels: [level([stand('row', 0, { towardsFrontMm: 225 }), stand('row', 0, { towardsFrontMm: -225 }), stand('motor', 750)])],
     notice: { levelKg: [400], unitLoadKg: 150, unitLoadsPerLevel: 9 },
     frame: { depthMm: 600 },
     bay: { clearEntryMm: 1800 },
   });
-  expect(of(found, 'placement').verdict).toBe('within');
+  expect(findingOf(found, 'placement').verdict).toBe('within');
   expect(printed(found, 'level-total', 0)).toBe('250 (0.625)');
   expect(printed(found, 'beam-bending')).toBe('358.3 (0.896)');
   expect(printed(found, 'beam-deflection')).toBe('325.2 (0.813)');
@@ -200,16 +188,16 @@ test('S7: archive boxes and a motor on a shelf of 1.80 m: the beams are fine', (
 const MEASURED = { secondMomentMm4: 927_016, elasticModulusNPerMm2: 210_000 };
 
 test('S10: a bay without a notice is not assessable, and says what it does to its beams all the same', () => {
-  const found = audit({ ...three(goods('a', { goodsKg: 620 })), notice: null, beam: MEASURED });
+  const found = auditedLevel({ ...three(goods('a', { goodsKg: 620 })), notice: null, beam: MEASURED });
   expect(found.verdict).toBe('not-assessable');
   expect(found.totalKg).toBe(1860);
   expect(found.ratedKg).toBeNull();
-  const bent = of(found, 'beam-deflection');
+  const bent = findingOf(found, 'beam-deflection');
   expect(bent.demand?.value.toFixed(1)).toBe('1924.9');
   expect(bent.verdict).toBe('not-assessable');
   expect(bent.missing.map(({ field }) => field)).toEqual(['beamType:beam:ratings']);
-  expect(of(found, 'section-deflection').demand?.value.toFixed(2)).toBe('12.43');
-  expect(of(found, 'section-deflection').allowed?.value).toBe(13.5);
+  expect(findingOf(found, 'section-deflection').demand?.value.toFixed(2)).toBe('12.43');
+  expect(findingOf(found, 'section-deflection').allowed?.value).toBe(13.5);
 });
 
 test.each([
@@ -217,11 +205,11 @@ test.each([
   [50, '9.86'],
   [100, '8.35'],
 ])('S10: with connectors of %d kN·m/rad', (stiffness, sag) => {
-  const found = audit({
+  const found = auditedLevel({
     ...three(goods('a', { goodsKg: 620 })),
     notice: null,
     beam: { ...MEASURED, connectorNmmPerRad: stiffness * 1e6 },
   });
-  expect(of(found, 'section-deflection').demand?.value.toFixed(2)).toBe(sag);
-  expectWorked(of(found, 'section-deflection'));
+  expect(findingOf(found, 'section-deflection').demand?.value.toFixed(2)).toBe(sag);
+  expectWorked(findingOf(found, 'section-deflection'));
 });
