@@ -7,6 +7,7 @@ import { opening } from '../checks/phrase';
 import type { Bay, BeamDamage, BeamSag, Level, Run } from '../site/site';
 import type { Action, ActionInput } from './actions';
 import { sagKey, type Since } from './bay-actions';
+import { stillThere } from './frame-actions';
 import { judgeSagOfLevel } from './sag-of-level';
 
 interface LevelAt {
@@ -29,7 +30,7 @@ export function beamActions(input: ActionInput, sagsSince: ReadonlyMap<string, S
         return [
           ...level.beamDamages.map((damage) => ofDamage(input, at, damage)),
           ...level.sags.flatMap((reading) => ofSag(input, at, reading, sagsSince)),
-        ];
+        ].map((action) => stillThere(input.followUp, action));
       }),
     ),
   );

@@ -4,7 +4,7 @@ import { carrySags, damagesBefore, sameFind, withBeamDamages, withFrameDamages, 
 import { differences } from './differences';
 import { bayOf, finishBay, markCarried } from './edits';
 import { closingOf, type FollowUp } from './follow-up';
-import type { BayVisit, Seen, SeenDamage, Visit } from './visit';
+import type { BayVisit, SagReading, Seen, SeenDamage, Visit } from './visit';
 
 /**
  * Damages and plumb readings as they were measured, sag readings of beams, locks and anchors as they were
@@ -47,13 +47,10 @@ export function finishInto(
   after = finishBay(after, bayId, by);
   const seen = bayOf(after, bayId);
   const own = new Set(was?.damages.map(({ id }) => id));
-  // Whoever replaces the beams of a level takes the readings of both off.
-  const replaced = ({ levelId, beam }: BayVisit['sags'][number]) =>
-    followUp.closings.some(({ actionId }) => actionId.startsWith(`sag:${levelId}:`)) && !hasReading(site, levelId, beam);
   const carrying: BayVisit = {
     ...seen,
     damages: seen.damages.filter((damage) => !settled(damage)),
-    sags: seen.sags.filter((reading) => !(replaced(reading) && was?.sags.some((one) => sameFind(one, reading)))),
+    sags: seen.sags.flatMap((reading) => stillRead(site, followUp, reading, was?.sags.find(ofBeam(reading)))),
   };
   return {
     site: carried(site, carrying),
@@ -67,10 +64,26 @@ const swapDamage = (visit: Visit, bayId: Id, oldId: Id, damage: SeenDamage): Vis
   return { ...visit, bays: visit.bays.map((bay) => (bay.bayId === bayId ? { ...bay, damages: others } : bay)) };
 };
 
-const hasReading = (site: Site, levelId: Id, beam: 'front' | 'rear'): boolean =>
-  site.runs.some(({ bays }) =>
-    bays.some(({ levels }) => levels.some(({ id, sags }) => id === levelId && sags.some((one) => one.beam === beam))),
-  );
+const ofBeam =
+  ({ levelId, beam }: SagReading) =>
+  (one: SagReading): boolean =>
+    one.levelId === levelId && one.beam === beam;
+
+/**
+ * The reading without what was put right since it was carried as `was`: whoever replaces the beams of a level
+ * takes the readings of both off, and a level that was unloaded sags no longer as it was read.
+ */
+function stillRead(site: Site, { closings }: FollowUp, reading: SagReading, was: SagReading | undefined): readonly SagReading[] {
+  const { levelId, beam, unloadedMm, sidewaysMm } = reading;
+  const closed = (start: string) => closings.some(({ actionId }) => actionId.startsWith(start));
+  const level = site.runs.flatMap(({ bays }) => bays.flatMap(({ levels }) => levels)).find(({ id }) => id === levelId);
+  const held = level?.sags.find((one) => one.beam === beam);
+  if (was === undefined || !closed(`sag:${levelId}:`)) return [reading];
+  if (held === undefined) return sameFind(was, reading) ? [] : [reading];
+  const relieved = closed(`sag:${levelId}:${beam}@`) && held.loadedMm === null && reading.loadedMm === was.loadedMm;
+  if (!relieved) return [reading];
+  return unloadedMm === null && sidewaysMm === null ? [] : [{ ...reading, loadedMm: null }];
+}
 
 function carried(site: Site, seen: BayVisit): Site {
   const finds: Finds = { damages: seen.damages, was: seen.carried, places: placesOf(site) };

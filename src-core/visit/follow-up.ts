@@ -2,12 +2,14 @@
  * What becomes of findings after the visit: who closed what and how, what an engineer allows in the
  * meantime, and in which rhythm the bays are visited. Kept beside the site in a file of its own.
  */
+import { say, type Text } from '../checks/finding';
 import { date, number, text } from '../site/fields';
 import { ownId } from '../site/ids';
 import { LIMITS } from '../site/limits';
 import { list, record } from '../site/records';
 import { aName, someText } from '../site/schema-goods';
 import type { Id } from '../site/site';
+import { dateWords } from '../units/dates';
 import { namedId, readDocument, writeDocument, type DocumentKind, type DocumentReading } from './read-document';
 
 export interface FollowUp {
@@ -64,6 +66,21 @@ export function closeAction(book: FollowUp, closing: Closing): FollowUp {
 
 export const closingOf = (book: FollowUp, actionId: string): Closing | null =>
   book.closings.find((one) => one.actionId === actionId) ?? null;
+
+/**
+ * A finding that the site itself has, under the id of its action. What stands there is open, whatever was
+ * said of it before: where it was closed and stands again, or still, it is a new action, and says so.
+ * @param id of the action when it was never closed
+ */
+export function standing({ closings }: FollowUp, id: string): { readonly id: string; readonly says: readonly Text[] } {
+  const before = closings.filter(({ actionId }) => actionId === id || actionId.startsWith(`${id}@`));
+  const last = before.at(-1);
+  if (last === undefined) return { id, says: [] };
+  return {
+    id: `${id}@${before.length + 1}`,
+    says: [say`${last.person} said on ${dateWords(last.date)} that this was done (${last.how}), and it stands in the site all the same.`],
+  };
+}
 
 /** @throws RangeError if it does not say what is allowed, by whom and until when */
 export function recordReduction(book: FollowUp, reduction: Reduction): FollowUp {

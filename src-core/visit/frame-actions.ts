@@ -1,4 +1,5 @@
 /** What damaged and leaning frames ask for: the bays on both sides, and those tied to them from behind. */
+import { joined } from '../checks/beam-sag';
 import { countsAsTied } from '../checks/damage';
 import { classOfDamage, MEMBER_WORDS, type DamageJudged } from '../checks/damage-class';
 import { say, type Text } from '../checks/finding';
@@ -8,6 +9,7 @@ import { baysBehind } from '../site/behind';
 import type { Bay, Damage, Frame, Id, Run, Site } from '../site/site';
 import { dateWords } from '../units/dates';
 import type { Action, ActionInput, LevelRef } from './actions';
+import { standing, type FollowUp } from './follow-up';
 
 interface FrameAt {
   readonly site: Site;
@@ -16,14 +18,14 @@ interface FrameAt {
   readonly index: number;
 }
 
-export function damageActions({ site, audit, today }: ActionInput): readonly Action[] {
+export function damageActions({ site, audit, followUp, today }: ActionInput): readonly Action[] {
   const rules = resolveRules(site.rules);
   return site.runs.flatMap((run) => {
     const found = audit.runs.find(({ runId }) => runId === run.id);
     return run.frames.flatMap((frame, index) => {
       const at = { site, run, frame, index };
       const leans = found?.frames[index]?.findings.some(({ check, verdict }) => check === 'plumb' && verdict === 'over') ?? false;
-      return [...ofDamages(at, rules, today), ...(leans ? [ofPlumb(at)] : [])];
+      return [...ofDamages(at, rules, today), ...(leans ? [ofPlumb(at)] : [])].map((action) => stillThere(followUp, action));
     });
   });
 }
@@ -99,6 +101,12 @@ function ofDamage(at: FrameAt, damage: Damage, judged: DamageJudged): Action {
         due: null,
       };
   }
+}
+
+/** Two ambers go by themselves with one of the two, and are never closed. */
+export function stillThere(book: FollowUp, action: Action): Action {
+  const { id, says } = standing(book, action.id);
+  return says.length === 0 ? action : { ...action, id, says: joined([action.says, ...says]) };
 }
 
 const ofPlumb = (at: FrameAt): Action => ({

@@ -1,19 +1,24 @@
-/** What leaves the site when an action is done: the damage that was repaired, the readings of beams that were replaced. */
-import type { Id, Level, Site } from '../site/site';
+/** What an action that is done changes in the site: the damage that was repaired, readings that hold no longer, locks and anchors. */
+import type { Bay, Frame, Id, Level, Site } from '../site/site';
 import type { Action } from './actions';
 
 /** What closing an action takes off the rack, in words for whoever closes it; null where it takes nothing. */
-export type TakesOff = 'damage' | 'beam-damage' | 'readings' | 'loaded-reading' | null;
+export type TakesOff = 'damage' | 'beam-damage' | 'readings' | 'loaded-reading' | 'plumb-reading' | 'locks' | 'anchors' | null;
 
 export function takesOff({ id, kind }: Pick<Action, 'id' | 'kind'>): TakesOff {
   const [what] = id.split(':');
-  if (what === 'damage' || what === 'beam-damage') return what;
+  if (what === 'damage' || what === 'beam-damage' || what === 'anchors') return what;
+  if (what === 'plumb') return kind === 're-plumb' ? 'plumb-reading' : null;
+  if (what === 'lock' || what === 'locks') return 'locks';
   if (what !== 'sag') return null;
   return kind === 'out-of-use' ? 'readings' : 'loaded-reading';
 }
 
-/** The site after an action was done. Places that it no longer has are left out. */
-export function afterClosing(site: Site, action: Pick<Action, 'id' | 'kind'>): Site {
+/**
+ * The site after an action was done. Places that it no longer has are left out.
+ * @param open actions that are open besides: a lock or an anchor that another one still misses stays missing
+ */
+export function afterClosing(site: Site, action: Pick<Action, 'id' | 'kind'>, open: readonly Pick<Action, 'id'>[] = []): Site {
   const of = takesOff(action);
   const [, about = '', beam = ''] = action.id.split(/[:@]/);
   switch (of) {
@@ -24,6 +29,12 @@ export function afterClosing(site: Site, action: Pick<Action, 'id' | 'kind'>): S
       return changedLevel(site, about, (level) => ({ ...level, sags: [] }));
     case 'loaded-reading':
       return changedLevel(site, about, (level) => withoutLoaded(level, beam));
+    case 'plumb-reading':
+      return changedFrames(site, new Set([about]), (frame) => ({ ...frame, plumb: null }));
+    case 'locks':
+      return locked(site, action, open);
+    case 'anchors':
+      return anchored(site, about, new Set(open.filter(({ id }) => id !== action.id).map(({ id }) => id.split('@')[0] ?? '')));
     case null:
       return site;
   }
@@ -62,5 +73,50 @@ const changedLevel = (site: Site, levelId: Id, change: (level: Level) => Level):
     if (bay === undefined) return run;
     const levels = bay.levels.map((level) => (level.id === levelId ? change(level) : level));
     return { ...run, bays: run.bays.map((one) => (one === bay ? { ...bay, levels } : one)) };
+  }),
+});
+
+/** Levels are locked again where nothing else that is open misses a lock of theirs. */
+function locked(site: Site, action: Pick<Action, 'id'>, open: readonly Pick<Action, 'id'>[]): Site {
+  const about = ({ id }: Pick<Action, 'id'>) => id.split(/[:@]/).slice(0, 2).join(':');
+  const others = new Set(open.filter(({ id }) => id !== action.id).map(about));
+  const own = about(action);
+  return changedBays(site, (bay) => {
+    if (others.has(`locks:${bay.id}`)) return bay;
+    const levels = bay.levels.map((level): Level => {
+      const isIt = own === `lock:${level.id}` || own === `locks:${bay.id}`;
+      return isIt && level.locks === 'no' && !others.has(`lock:${level.id}`) ? { ...level, locks: 'yes' } : level;
+    });
+    return levels.every((level, i) => level === bay.levels[i]) ? bay : { ...bay, levels };
+  });
+}
+
+/** The bay's two frames are anchored again where nothing that is open says otherwise of the bay beside it. */
+function anchored(site: Site, bayId: Id, others: ReadonlySet<string>): Site {
+  const frames = new Set(
+    site.runs.flatMap(({ bays, frames }) => {
+      const index = bays.findIndex(({ id }) => id === bayId);
+      if (index < 0) return [];
+      const free = (beside: Bay | undefined) => beside === undefined || !others.has(`anchors:${beside.id}`);
+      return [...(free(bays[index - 1]) ? [frames[index]?.id] : []), ...(free(bays[index + 1]) ? [frames[index + 1]?.id] : [])];
+    }),
+  );
+  return changedFrames(site, frames, (frame) => (frame.anchored === 'no' ? { ...frame, anchored: 'yes' } : frame));
+}
+
+const changedFrames = (site: Site, ids: ReadonlySet<Id | undefined>, change: (frame: Frame) => Frame): Site => ({
+  ...site,
+  runs: site.runs.map((run) =>
+    run.frames.some(({ id }) => ids.has(id))
+      ? { ...run, frames: run.frames.map((frame) => (ids.has(frame.id) ? change(frame) : frame)) }
+      : run,
+  ),
+});
+
+const changedBays = (site: Site, change: (bay: Bay) => Bay): Site => ({
+  ...site,
+  runs: site.runs.map((run) => {
+    const bays = run.bays.map(change);
+    return bays.every((bay, i) => bay === run.bays[i]) ? run : { ...run, bays };
   }),
 });

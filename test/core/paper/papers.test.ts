@@ -143,7 +143,8 @@ test('the off-load list numbers its actions and says what an engineer allows', (
     recordedBy: '',
     recordedOn: S10_DAY,
   });
-  book = closeAction(book, { actionId: 'damage:bend-diagonal', date: S10_DAY, person: 'F. Fitter', how: 'Diagonal replaced' });
+  const notice = actionsFor(s10, [s10Visit()]).find(({ kind }) => kind === 'notice');
+  book = closeAction(book, { actionId: notice?.id ?? '', date: S10_DAY, person: 'F. Fitter', how: 'Notice put up' });
   const sheet = offLoadSheet(s10, actionsFor(s10, [s10Visit()], book));
   expect(wordsOf(sheet)).toContain('To unload at once: 2 levels');
   // Whoever empties the rack reads first where.
@@ -151,7 +152,7 @@ test('the off-load list numbers its actions and says what an engineer allows', (
   expect(rowsOf(sheet, 'Open actions, the most urgent first')[0]).toContain(
     'Reduced load by E. Ngineer, until 20 June 2026: 400 kg a pair',
   );
-  expect(rowsOf(sheet, 'Done')).toEqual([expect.stringContaining('F. Fitter | 2 June 2026 | Diagonal replaced')]);
+  expect(rowsOf(sheet, 'Done')).toEqual([expect.stringContaining('F. Fitter | 2 June 2026 | Notice put up')]);
 });
 
 test('the register has a row for each of 200 bays, with rating source, damage and due days', () => {

@@ -148,7 +148,8 @@ test('“unload” goes before “do not reload”, and closed actions ask for n
     person: 'F. Fitter',
     how: 'Upright replaced',
   });
-  expect(offLoadList(site, actions(site, [visit], '2026-06-03', book)).map(({ bayName, level }) => `${bayName} ${level}`)).toEqual([
+  const mended = repaired(site, 'd1');
+  expect(offLoadList(mended, actions(mended, [visit], '2026-06-03', book)).map(({ bayName, level }) => `${bayName} ${level}`)).toEqual([
     'A2 1',
   ]);
 });

@@ -14,6 +14,7 @@ import {
   writeFollowUp,
   type FollowUp,
 } from '../../../src-core/visit/follow-up';
+import { repaired } from '../../../src-core/visit/repair';
 import { duesOf, todayList } from '../../../src-core/visit/rounds';
 import { startVisit, type Visit, type VisitKind } from '../../../src-core/visit/visit';
 import { siteOf } from './make-run';
@@ -95,7 +96,7 @@ test('closed actions are not on the list', () => {
   const visits = [visitOf('yearly', '2026-06-02', [1, 2, 3])];
   expect(today(site, visits, '2026-06-03')).toHaveLength(1);
   const closed = closeAction(book, { actionId: 'damage:d1', date: '2026-06-03', person: 'F. Fitter', how: 'Upright replaced' });
-  expect(today(site, visits, '2026-06-03', closed)).toEqual([]);
+  expect(today(repaired(site, 'd1'), visits, '2026-06-03', closed)).toEqual([]);
 });
 
 test('the follow-up comes back from its file as it was, and faults are told with their place', () => {
