@@ -4,7 +4,7 @@
 export function sayTime(iso: string, locale: string, now = new Date(), exactly = false): string {
   const time = new Date(iso);
   if (Number.isNaN(time.getTime())) return 'at an unknown time';
-  const clock = time.toLocaleTimeString(locale, { hour: '2-digit', minute: '2-digit', ...(exactly ? { second: '2-digit' } : {}) });
+  const clock = time.toLocaleTimeString(locale, { hour: 'numeric', minute: '2-digit', ...(exactly ? { second: '2-digit' } : {}) });
   if (time.toDateString() === now.toDateString()) return `today ${clock}`;
   return `${time.toLocaleDateString(locale, { day: 'numeric', month: 'short', year: 'numeric' })} ${clock}`;
 }

@@ -121,10 +121,11 @@ function complement({ asComplement, notBetween }: RoomLeft & { kind: 'room' }, {
       ];
 }
 
-function noRoom(room: Exclude<RoomLeft, { kind: 'room' }>, { palletKg }: RoomAsked, nothing: string): readonly Text[] {
+function noRoom(room: Exclude<RoomLeft, { kind: 'room' }>, { palletKg, site }: RoomAsked, nothing: string): readonly Text[] {
   switch (room.kind) {
     case 'none':
-      if (room.already) return [say`${nothing}: something is over already. ${room.because.says}`];
+      // The finding stands beside it with its figures.
+      if (room.already) return [say`${nothing}: ${stopOf(room.because, site)} is over already.`];
       return [say`${nothing}${palletKg > 0 ? say`, not even the empty pallet of ${massOf(palletKg)}` : ''}. ${room.because.says}`];
     case 'no-fit':
       return [say`This does not fit here, whatever it weighs. ${room.because[0]?.says ?? ''}`];

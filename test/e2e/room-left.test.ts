@@ -56,7 +56,7 @@ test('goods that are over are told how much must come off', () =>
     await openDemo(page);
     await goToBay(page, 'A2');
     await goToLevel(page, 2);
-    await eventually(() => room(page)).toContain('Nothing may be added there: something is over already.');
+    await eventually(() => room(page)).toContain('Nothing may be added there: beam bending is over already.');
     await selectGoods(page, 'a2-l2-g1');
     await eventually(() => room(page)).toMatch(/^Over by [\d ]+ kg here: at most [\d ]+ kg of this shape; beam bending stops it\.$/);
     const text = await room(page);

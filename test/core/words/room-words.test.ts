@@ -86,9 +86,9 @@ test('a full complement is named with the masses that would be neither', () => {
   expect(words(roomForPlaced(room, asked('metric', { ownKg: 760 })), METRIC)).toContain('These goods weigh 760 kg, which would not do.');
 });
 
-test('where there is no room the finding that says why is repeated', () => {
+test('where there is no room it is said why', () => {
   const none = { kind: 'none', already: true, because: stop } as const;
-  expect(words(roomForGoods(none, 0, 0, asked('metric')), METRIC)).toBe('Nothing may be added here: something is over already. Too much.');
+  expect(words(roomForGoods(none, 0, 0, asked('metric')), METRIC)).toBe('Nothing may be added here: beam bending is over already.');
   expect(words(roomForGoods({ ...none, already: false }, 0, 0, asked('metric', { palletKg: 25 })), METRIC)).toBe(
     'Nothing may be added here, not even the empty pallet of 25 kg. Too much.',
   );
