@@ -1,25 +1,15 @@
 /** Bay templates: kept from a bay, laid out by, told in words. */
-import { afterEach, expect, test } from 'vitest';
+import { expect, test } from 'vitest';
 import { editEntry, editFrame, editLevel } from '../../src-core/site/edits';
 import { planOfBay } from '../../src-core/site/new-site';
 import type { Bay, BayTemplate, Run } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
 import { firstTemplate, goodsWords, keepTemplate, planFacts, templateNameFor } from '../../src-renderer/bay-templates';
 import { addLibraryItem } from '../../src-renderer/forms/library-items';
-import { OpenSite } from '../../src-renderer/open-site.svelte';
+import type { OpenSite } from '../../src-renderer/open-site.svelte';
 import { addBayAfter, addBays, copyBay, layOutRun, shiftBay, shiftRun } from '../../src-renderer/rack-edits';
 import { usedBy } from '../../src-renderer/used-by';
-import { MemoryHost } from './memory-host';
-import { smallSite } from './sites';
-
-let opened: OpenSite | null = null;
-afterEach(() => opened?.close());
-
-function openSite(): OpenSite {
-  const site = smallSite();
-  opened = new OpenSite({ host: new MemoryHost(), id: site.id, site, revision: null, savedAt: null, today: () => '2026-12-01' });
-  return opened;
-}
+import { openedSite } from './opened';
 
 function runOf(open: OpenSite, index = 0): Run {
   const run = open.site.runs[index];
@@ -40,7 +30,7 @@ const plain = (text: string) => text.replaceAll(/[\u00a0\u202f]/g, ' ');
 const names = (run: Run) => run.bays.map(({ name }) => name).join(' ');
 
 test('a bay is kept as a template with its goods and the frame to its right, and undo takes the template away', () => {
-  const open = openSite();
+  const open = openedSite();
   open.edit('Frame', (site) => editFrame(site, runOf(open).frames[1]?.id ?? '', { heightMm: 6300 }));
   const before = writeSite(open.site);
   expect(keepTemplate(open, bayOf(open), 'Plums', 'with goods')).toBeNull();
@@ -59,7 +49,7 @@ test('a bay is kept as a template with its goods and the frame to its right, and
 });
 
 test('the name that is proposed is one that no other template has', () => {
-  const open = openSite();
+  const open = openedSite();
   const proposed = [0, 1, 2].map(() => {
     const name = templateNameFor(open.site, bayOf(open));
     keepTemplate(open, bayOf(open), name, 'without goods');
@@ -69,7 +59,7 @@ test('the name that is proposed is one that no other template has', () => {
 });
 
 test('a run by a template has its goods in every bay, and says how many', () => {
-  const open = openSite();
+  const open = openedSite();
   keepTemplate(open, bayOf(open), 'Plums', 'with goods');
   expect(layOutRun(open, { name: 'B', bays: 4, plan: template(open), floorId: null, loadedBy: 'class-400' }, null)).toBeNull();
   expect(open.said).toBe('Run B laid out: 4 bays of 3 levels, each with 2 unit loads.');
@@ -83,7 +73,7 @@ test('a run by a template has its goods in every bay, and says how many', () => 
 });
 
 test('bays by a template go in to the right of the chosen one as one step, with names that nobody has', () => {
-  const open = openSite();
+  const open = openedSite();
   keepTemplate(open, bayOf(open), 'Plums', 'with goods');
   const before = writeSite(open.site);
   expect(addBays(open, runOf(open), template(open), { after: 0, count: 2 })).toBeNull();
@@ -97,7 +87,7 @@ test('bays by a template go in to the right of the chosen one as one step, with 
 });
 
 test('a bay added like another is empty, and what has to be seen at the rack is not known of it', () => {
-  const open = openSite();
+  const open = openedSite();
   open.edit('Locks', (site) => editLevel(site, bayOf(open).levels[0]?.id ?? '', { locks: 'yes' }));
   addBayAfter(open);
   expect(bayOf(open, 1)).toMatchObject({ name: 'A4', noticeId: 'notice', clearEntryMm: 2700 });
@@ -109,7 +99,7 @@ test('a bay added like another is empty, and what has to be seen at the rack is 
 });
 
 test('a duplicate of a bay stands to its right with its goods and is chosen', () => {
-  const open = openSite();
+  const open = openedSite();
   copyBay(open, runOf(open), bayOf(open));
   expect(names(runOf(open))).toBe('A1 A4 A2 A3');
   expect(runOf(open).frames.map(({ name }) => name)).toEqual(['A0|A1', 'A1|A2', 'A4|A2', 'A2|A3', 'A3|A4']);
@@ -119,13 +109,13 @@ test('a duplicate of a bay stands to its right with its goods and is chosen', ()
 });
 
 test('a bay at the end of its run closes with a frame named after the one that would be next', () => {
-  const open = openSite();
+  const open = openedSite();
   addBays(open, runOf(open), planOfBay(open.site, bayOf(open).id, 'without goods'), { after: 2, count: 2 });
   expect(runOf(open).frames.map(({ name }) => name)).toEqual(['A0|A1', 'A1|A2', 'A2|A3', 'A3|A4', 'A4|A5', 'A5|A6']);
 });
 
 test('changing a template touches no bay that was laid out by it, and what it uses names it', () => {
-  const open = openSite();
+  const open = openedSite();
   keepTemplate(open, bayOf(open), 'Plums', 'with goods');
   layOutRun(open, { name: 'B', bays: 2, plan: template(open), floorId: null, loadedBy: 'unknown' }, null);
   const { runs } = open.site;
@@ -140,7 +130,7 @@ test('changing a template touches no bay that was laid out by it, and what it us
 });
 
 test('goods that do not fit a template are for the audit of the bays to judge: it is stored and laid out as it stands', () => {
-  const open = openSite();
+  const open = openedSite();
   keepTemplate(open, bayOf(open), 'Plums', 'with goods');
   expect(open.edit('Narrow', (site) => editEntry(site, 'bayTemplates', template(open).id, { clearEntryMm: 1200 }))).toBeNull();
   layOutRun(open, { name: 'B', bays: 1, plan: template(open), floorId: null, loadedBy: 'unknown' }, null);
@@ -148,7 +138,7 @@ test('goods that do not fit a template are for the audit of the bays to judge: i
 });
 
 test('the template last kept or laid out by is offered first, else the newest', () => {
-  const open = openSite();
+  const open = openedSite();
   expect(firstTemplate(open)).toBeNull();
   const plain = addLibraryItem(open, 'bayTemplate');
   expect(firstTemplate(open)).toBe(plain);
@@ -162,7 +152,7 @@ test('the template last kept or laid out by is offered first, else the newest', 
 });
 
 test('a template is told in words, and its goods by what they are and where they stand', () => {
-  const open = openSite();
+  const open = openedSite();
   keepTemplate(open, bayOf(open), 'Plums', 'with goods');
   const { site, reading } = open;
   expect(planFacts(template(open), site, reading).map(plain)).toEqual([
@@ -185,7 +175,7 @@ test('a template is told in words, and its goods by what they are and where they
 });
 
 test('bays and runs say when they stand at an end, and change nothing', () => {
-  const open = openSite();
+  const open = openedSite();
   const before = open.site;
   shiftBay(open, runOf(open), bayOf(open), -1);
   expect(open.said).toBe('No bay of run A stands further left.');

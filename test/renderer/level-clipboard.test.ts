@@ -1,24 +1,14 @@
-/** A level copied whole and pasted into one bay or several. */
-import { afterEach, expect, test } from 'vitest';
+/** A level copied whole and pasted into one bay or several: bays of levels at 1500, 3000 and 4500 mm, two crates on the lowest level of the first. */
+import { expect, test } from 'vitest';
 import { editLevel, removeEntry, removePlacements } from '../../src-core/site/edits';
 import type { Bay } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
 import { copyGoods } from '../../src-renderer/goods-edits';
 import { copyLevelHere, pasteLevelHere, pasteLevelInto } from '../../src-renderer/level-clipboard';
-import { OpenSite } from '../../src-renderer/open-site.svelte';
+import type { OpenSite } from '../../src-renderer/open-site.svelte';
 import { duplicateLevelHere, fillLike, swapLevelHere } from '../../src-renderer/rack-edits';
-import { MemoryHost } from './memory-host';
+import { openedSite } from './opened';
 import { smallSite } from './sites';
-
-let opened: OpenSite | null = null;
-afterEach(() => opened?.close());
-
-/** Three bays of levels at 1500, 3000 and 4500 mm; two crates on the lowest level of the first, which is chosen. */
-function openSite(): OpenSite {
-  const site = smallSite();
-  opened = new OpenSite({ host: new MemoryHost(), id: site.id, site, revision: null, savedAt: null, today: () => '2026-12-01' });
-  return opened;
-}
 
 const bays = (open: OpenSite): readonly Bay[] => open.site.runs[0]?.bays ?? [];
 /** Height and number of unit loads of each level. */
@@ -26,7 +16,7 @@ const levels = (open: OpenSite, bay: number) => bays(open)[bay]?.levels.map((lev
 const chooseBay = (open: OpenSite, bay: number) => open.select({ bayId: bays(open)[bay]?.id ?? null });
 
 test('a level goes into another bay with its goods, takes the place of the one at its height, and comes off by one undo', () => {
-  const open = openSite();
+  const open = openedSite();
   const before = writeSite(open.site);
   copyLevelHere(open);
   expect(open.said).toBe('Level 1 of bay A1 copied with 2 unit loads. Choose another bay and paste it there.');
@@ -47,7 +37,7 @@ test('a level goes into another bay with its goods, takes the place of the one a
 });
 
 test('into several bays it is one step, and what gives way is counted with its goods and records', () => {
-  const open = openSite();
+  const open = openedSite();
   copyLevelHere(open);
   const upper = bays(open)[1]?.levels[1]?.id ?? '';
   open.edit('Sag', (site) =>
@@ -71,7 +61,7 @@ test('into several bays it is one step, and what gives way is counted with its g
 });
 
 test('where no level stands at that height none gives way', () => {
-  const open = openSite();
+  const open = openedSite();
   copyLevelHere(open);
   expect(pasteLevelInto(open, bays(open).slice(0, 1), 2200)).toBeNull();
   expect(levels(open, 0)?.map(([height]) => height)).toEqual([1500, 2200, 3000, 4500]);
@@ -79,7 +69,7 @@ test('where no level stands at that height none gives way', () => {
 });
 
 test('a level is never pasted over itself: it says so, and nothing changes', () => {
-  const open = openSite();
+  const open = openedSite();
   const before = open.site;
   copyLevelHere(open);
   pasteLevelHere(open);
@@ -92,7 +82,7 @@ test('a level is never pasted over itself: it says so, and nothing changes', () 
 });
 
 test('nothing copied, no bay chosen, and a copy whose goods left the library are each said', () => {
-  const open = openSite();
+  const open = openedSite();
   expect(pasteLevelInto(open, bays(open))).toBe('No level is copied yet. Choose a level without choosing goods, and copy it first.');
   copyLevelHere(open);
   expect(pasteLevelInto(open, [])).toBe('No bay is chosen. Choose the bays that the level goes into.');
@@ -110,7 +100,7 @@ test('nothing copied, no bay chosen, and a copy whose goods left the library are
 });
 
 test('the copy stays as it was copied, whatever becomes of the level; goods that are copied after it come first', () => {
-  const open = openSite();
+  const open = openedSite();
   copyLevelHere(open);
   open.edit('Take off', (site) => removePlacements(site, ['p1']));
   chooseBay(open, 1);
@@ -122,7 +112,7 @@ test('the copy stays as it was copied, whatever becomes of the level; goods that
 });
 
 test('a level is duplicated on top with its goods, and chosen', () => {
-  const open = openSite();
+  const open = openedSite();
   duplicateLevelHere(open);
   expect(levels(open, 0)?.at(-1)).toEqual([6000, 2]);
   expect(open.level?.heightMm).toBe(6000);
@@ -130,7 +120,7 @@ test('a level is duplicated on top with its goods, and chosen', () => {
 });
 
 test('two levels change places with their goods; the highest has none above it', () => {
-  const open = openSite();
+  const open = openedSite();
   const [low, middle] = bays(open)[0]?.levels ?? [];
   swapLevelHere(open, 1);
   expect(
@@ -153,7 +143,7 @@ test('two levels change places with their goods; the highest has none above it',
 });
 
 test('levels without goods are given to bays that are picked one by one', () => {
-  const open = openSite();
+  const open = openedSite();
   swapLevelHere(open, 1);
   fillLike(open, bays(open).slice(2), 'levels');
   expect(levels(open, 2)).toEqual(levels(open, 0)?.map(([height]) => [height, 0]));

@@ -1,25 +1,15 @@
-import { afterEach, expect, test } from 'vitest';
+/** What is chosen and has the focus after something was taken out, in the small site: three bays, crates p1 and p2 on the lowest level of the first. */
+import { expect, test } from 'vitest';
 import { removeBay } from '../../src-core/site/edits';
 import { deleteGoods } from '../../src-renderer/goods-edits';
-import { OpenSite } from '../../src-renderer/open-site.svelte';
+import type { OpenSite } from '../../src-renderer/open-site.svelte';
 import { copyRun, removeBayHere, removeLevelHere, removeRunFrom } from '../../src-renderer/rack-edits';
-import { MemoryHost } from './memory-host';
-import { smallSite } from './sites';
-
-let opened: OpenSite | null = null;
-afterEach(() => opened?.close());
-
-/** Run A of three bays of three levels; crates p1 and p2 stand on the lowest level of the first. */
-function openSite(): OpenSite {
-  const site = smallSite();
-  opened = new OpenSite({ host: new MemoryHost(), id: site.id, site, revision: null, savedAt: null, today: () => '2026-12-01' });
-  return opened;
-}
+import { openedSite } from './opened';
 
 const bays = (open: OpenSite) => open.site.runs[0]?.bays ?? [];
 
 test('after goods are taken off the next on the level is chosen, then the level; undo chooses what came back', () => {
-  const open = openSite();
+  const open = openedSite();
   open.select({ placementIds: ['p1'] });
   deleteGoods(open);
   expect(open.selection.placementIds).toEqual(['p2']);
@@ -33,7 +23,7 @@ test('after goods are taken off the next on the level is chosen, then the level;
 });
 
 test('of several taken off none is chosen again; the one left of them is, where none stands to the right', () => {
-  const open = openSite();
+  const open = openedSite();
   open.select({ placementIds: ['p2'] });
   deleteGoods(open);
   expect(open.selection.placementIds).toEqual(['p1']);
@@ -44,7 +34,7 @@ test('of several taken off none is chosen again; the one left of them is, where 
 });
 
 test('after a level is deleted the one below it is chosen, below the lowest the one above, and last the floor', () => {
-  const open = openSite();
+  const open = openedSite();
   const [lowest, middle, top] = bays(open)[0]?.levels.map(({ id }) => id) ?? [];
   open.select({ levelId: top ?? '' });
   removeLevelHere(open);
@@ -60,7 +50,7 @@ test('after a level is deleted the one below it is chosen, below the lowest the 
 });
 
 test('after a bay is deleted the one that takes its place is chosen, at the end of the run the one before it', () => {
-  const open = openSite();
+  const open = openedSite();
   const [first, second, third] = bays(open).map(({ id }) => id);
   open.select({ bayId: second ?? '' });
   removeBayHere(open);
@@ -74,7 +64,7 @@ test('after a bay is deleted the one that takes its place is chosen, at the end 
 });
 
 test('after a run is deleted the next one is chosen, and where it was the only one nothing is left to choose', () => {
-  const open = openSite();
+  const open = openedSite();
   const [a] = open.site.runs;
   if (a === undefined) throw new Error('there is no run');
   copyRun(open, a);
@@ -89,7 +79,7 @@ test('after a run is deleted the next one is chosen, and where it was the only o
 });
 
 test('what was taken out otherwise leaves the selection on what still stands', () => {
-  const open = openSite();
+  const open = openedSite();
   const second = bays(open)[1]?.id ?? '';
   open.select({ bayId: second });
   open.edit('Remove', (site) => removeBay(site, second));

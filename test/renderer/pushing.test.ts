@@ -1,31 +1,15 @@
-import { afterEach, expect, test } from 'vitest';
+import { expect, test } from 'vitest';
 import { addEntry, placeGoods } from '../../src-core/site/edits';
-import { writeSite } from '../../src-core/site/write';
 import { COMMANDS } from '../../src-renderer/commands';
 import { copyGoods, duplicateGoods, pasteGoods, putGoods } from '../../src-renderer/goods-edits';
 import { freshItem } from '../../src-renderer/forms/library-items';
 import { changeBay, changeLevel, nudge } from '../../src-renderer/goods-moves';
 import type { OpenSite } from '../../src-renderer/open-site.svelte';
-import { Shell } from '../../src-renderer/shell.svelte';
-import { writeSiteFile } from '../../src-core/site/envelope';
-import { MemoryHost } from './memory-host';
-import { smallSite } from './sites';
-
-let opened: OpenSite | null = null;
-afterEach(() => opened?.close());
+import { shellOn } from './opened';
 
 /** Two crates 800 mm wide stand at 75 and 950 mm on the lowest level of an entry of 2700 mm; trucks are not known, so gaps are 75 mm. */
 async function openSite(pushing: boolean): Promise<OpenSite> {
-  const site = smallSite();
-  const host = new MemoryHost();
-  const body = writeSiteFile(writeSite(site), { program: '0.1.0', savedAt: '2026-12-01T12:00:00.000Z' }, () => '0'.repeat(64));
-  await host.saveSite({ id: site.id, body, baseRevision: null });
-  const shell = new Shell(host, null, () => '2026-12-01');
-  await shell.start();
-  await shell.openSite(site.id);
-  const { open } = shell;
-  if (open === null) throw new Error('the site did not open');
-  opened = open;
+  const { shell, open } = await shellOn();
   if (pushing) COMMANDS.find((one) => one.id === 'push-apart')?.run({ shell, open });
   return open;
 }

@@ -1,15 +1,12 @@
 import { beforeEach, expect, test } from 'vitest';
 import { editSite } from '../../src-core/site/edits';
-import { writeSiteFile } from '../../src-core/site/envelope';
 import { newSite } from '../../src-core/site/new-site';
 import { writeSite } from '../../src-core/site/write';
 import type { OpenSite } from '../../src-renderer/open-site.svelte';
 import { Shell } from '../../src-renderer/shell.svelte';
 import { MemoryHost } from './memory-host';
+import { fileOf } from './opened';
 import { smallSite } from './sites';
-
-/** The hosts prove the checksum; the page only reads what is inside. */
-const fileOf = (body: string) => writeSiteFile(body, { program: '0.1.0', savedAt: '2026-12-01T12:00:00.000Z' }, () => '0'.repeat(64));
 
 /** A memory host that gives out whole files, as the real ones do. */
 class FileHost extends MemoryHost {
