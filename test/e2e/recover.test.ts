@@ -1,12 +1,10 @@
 /** The program is killed in the middle of editing; two windows work on one site: nothing is lost, nothing overwritten silently. */
-import { spawn, type ChildProcess } from 'node:child_process';
-import { once } from 'node:events';
 import { mkdtemp, readdir, readFile, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
-import { join, resolve } from 'node:path';
-import { createInterface } from 'node:readline';
+import { join } from 'node:path';
 import type { Page } from 'playwright-core';
 import { afterAll, afterEach, beforeEach, expect, test } from 'vitest';
+import { kill, killAll, serve } from './own-process';
 import { closeBrowser, openBrowser, openDemo } from './program';
 import { checked, command, eventually, goods, goToBay, plain, save, selectGoods, withProgram } from './steps';
 
@@ -14,34 +12,14 @@ const PALLET = 'a4-l3-g1';
 const NAME = 'Halverwick depot (demo)';
 
 let folder = '';
-const children: ChildProcess[] = [];
-
 beforeEach(async () => {
   folder = await mkdtemp(join(tmpdir(), 'tallybeam-kill-'));
 });
 afterEach(async () => {
-  for (const child of children.splice(0)) child.kill('SIGKILL');
+  killAll();
   await rm(folder, { recursive: true, force: true });
 });
 afterAll(closeBrowser);
-
-/** The program as `npm run serve` starts it, in a process of its own. */
-async function serve(): Promise<{ readonly child: ChildProcess; readonly address: string }> {
-  const program = resolve(import.meta.dirname, '../../dist/main/serve.js');
-  const child = spawn(process.execPath, [program, '--port', '0', '--sites', join(folder, 'sites'), '--quiet'], {
-    env: { ...process.env, TALLYBEAM_FOLDER: join(folder, 'own') },
-    stdio: ['ignore', 'pipe', 'inherit'],
-  });
-  children.push(child);
-  const [address] = (await once(createInterface({ input: child.stdout }), 'line')) as [string];
-  return { child, address };
-}
-
-async function kill(child: ChildProcess): Promise<void> {
-  const gone = once(child, 'exit');
-  child.kill('SIGKILL');
-  await gone;
-}
 
 /** A window of its own on the program at this address. */
 async function windowAt(address: string): Promise<Page> {
@@ -62,7 +40,7 @@ const journalText = () => textsIn('journal', '.journal');
 
 /** Opens the demo, saves one edit, makes two more that reach the journal, and kills the program while the next is made. */
 async function killedWhileEditing(): Promise<{ readonly page: Page; readonly saved: string }> {
-  const { child, address } = await serve();
+  const { child, address } = await serve(folder);
   const page = await windowAt(address);
   await openDemo(page);
   await goToBay(page, 'A4');
@@ -94,7 +72,7 @@ test('edits that were not saved when the program was killed are offered back, an
   ).toBe(true);
   await orphan.context().close();
 
-  const { address } = await serve();
+  const { address } = await serve(folder);
   const page = await windowAt(address);
   await page.getByRole('button', { name: NAME, exact: true }).click();
   const offer = page.getByRole('dialog', { name: 'Changes from before were not saved' });
@@ -134,7 +112,7 @@ test('edits that were not saved when the program was killed are offered back, an
 test('recovered edits that are left out stay out', async () => {
   const { page: orphan, saved } = await killedWhileEditing();
   await orphan.context().close();
-  const { address } = await serve();
+  const { address } = await serve(folder);
   const page = await windowAt(address);
   await page.getByRole('button', { name: NAME, exact: true }).click();
   await page.getByRole('dialog').getByRole('button', { name: 'Leave them out' }).click();

@@ -1,10 +1,7 @@
 /** A round of ten bays walked by keyboard alone; the program is killed in the middle and nothing is lost. */
-import { spawn, type ChildProcess } from 'node:child_process';
-import { once } from 'node:events';
 import { mkdtemp, readFile, readdir, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
-import { join, resolve } from 'node:path';
-import { createInterface } from 'node:readline';
+import { join } from 'node:path';
 import type { Page } from 'playwright-core';
 import { afterAll, afterEach, expect, test } from 'vitest';
 import { readVisit } from '../../src-core/visit/read-visit';
@@ -12,29 +9,17 @@ import type { Visit } from '../../src-core/visit/visit';
 import { nodeFs } from '../../src-main/fs-port';
 import { SiteStore } from '../../src-main/site-store';
 import { siteOf } from '../core/visit/make-run';
+import { kill, killAll, serve } from './own-process';
 import { closeBrowser, openBrowser } from './program';
 import { eventually } from './steps';
 
-const children: ChildProcess[] = [];
 let folder = '';
 
 afterEach(async () => {
-  for (const child of children.splice(0)) child.kill('SIGKILL');
+  killAll();
   await rm(folder, { recursive: true, force: true });
 });
 afterAll(closeBrowser);
-
-/** The program as `npm run serve` starts it, in a process of its own. */
-async function serve(): Promise<{ readonly child: ChildProcess; readonly address: string }> {
-  const program = resolve(import.meta.dirname, '../../dist/main/serve.js');
-  const child = spawn(process.execPath, [program, '--port', '0', '--sites', join(folder, 'sites'), '--quiet'], {
-    env: { ...process.env, TALLYBEAM_FOLDER: join(folder, 'own') },
-    stdio: ['ignore', 'pipe', 'inherit'],
-  });
-  children.push(child);
-  const [address] = (await once(createInterface({ input: child.stdout }), 'line')) as [string];
-  return { child, address };
-}
 
 interface Window {
   readonly page: Page;
@@ -120,7 +105,7 @@ test('ten bays by keyboard alone, the program killed in the middle: nothing is l
   await nodeFs.makeFolder(sites);
   await new SiteStore({ fs: nodeFs, folder: sites, program: '0.1.0' }).add(siteOf({ bays: 10 }));
 
-  const first = await serve();
+  const first = await serve(folder);
   const { page, strangers } = await windowAt(first.address);
   await openVisits(page, false);
   await press(page, /^Begin the visit/);
@@ -146,10 +131,10 @@ test('ten bays by keyboard alone, the program killed in the middle: nothing is l
   await tabTo(page, /^Notes/);
   await page.keyboard.type('Aisle blocked until nine');
   await eventually(async () => (await visitOnDisk()).bays[3]?.notes).toBe('Aisle blocked until nine');
-  first.child.kill('SIGKILL');
+  await kill(first.child);
   await page.context().close();
 
-  const second = await serve();
+  const second = await serve(folder);
   const after = await windowAt(second.address);
   await openVisits(after.page, true);
   await press(after.page, /^Resume/);
