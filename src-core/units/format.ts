@@ -27,7 +27,10 @@ const STATED_DECIMALS: Readonly<Record<string, number>> = { in: 3, lb: 2 };
 /** A whole inch is too coarse for a beam length or a gap, however long. */
 const LEAST_DECIMALS: Readonly<Record<string, number>> = { in: 1 };
 
-const near = (a: number, b: number): boolean => Math.abs(a - b) <= SAME * Math.abs(b);
+/** Numbers as they were stated differ by the last digits of a double only. */
+const STATED = 1e-12;
+
+const near = (a: number, b: number, same = SAME): boolean => Math.abs(a - b) <= same * Math.abs(b);
 
 /** Least and most decimals that a number is shown with. */
 function decimalsOf(value: number, kind: QuantityKind, symbol: string): readonly [least: number, most: number] {
@@ -123,17 +126,28 @@ export const formatText = (text: Text, reading: Reading): string =>
 /** The unit in which fields take a bare number of this kind; empty for a pure number. */
 export const unitName = (kind: QuantityKind, { units }: Pick<Reading, 'units'>): string => fieldUnit(kind, units).symbol;
 
+/** Decimals in a field of what was stated in millimetres or kilograms: nobody measures finer. */
+const FIELD_DECIMALS: Readonly<Record<string, number>> = { in: 3, lb: 1 };
+
 /**
  * The number alone as it stands in a field, without grouping: exactly where that takes no more than
- * six decimals, else to six significant figures. Left as it is it changes nothing: the stored value
- * stays. Typed again it is read as any other.
+ * six decimals; else a length to 0.001 in and a mass to 0.1 lb, anything else to six significant
+ * figures. Left as it is it changes nothing: the stored value stays. Typed again it is read as any other.
  */
 export function entryText(value: number, kind: QuantityKind, reading: Reading): string {
-  const { perUnit, doubt } = fieldUnit(kind, reading.units);
+  const { perUnit, doubt, symbol } = fieldUnit(kind, reading.units);
   const shown = value / perUnit;
-  const exactly = [0, 1, 2, 3, 4, 5, 6].find((decimals) => near(Number(shown.toFixed(decimals)), shown));
-  const decimals = exactly ?? Math.min(20, Math.max(0, 5 - Math.floor(Math.log10(Math.abs(shown)))));
+  const same = symbol in FIELD_DECIMALS ? STATED : SAME;
+  const exactly = [0, 1, 2, 3, 4, 5, 6].find((decimals) => near(Number(shown.toFixed(decimals)), shown, same));
+  const decimals = exactly ?? roundedDecimals(shown, symbol);
   // Three decimals of a millimetre would be taken for thousands; a fourth tells.
   const least = doubt === 'decimals' && decimals >= 3 ? 4 : 0;
   return written(shown, least, Math.max(least, decimals), reading, false);
+}
+
+/** Never so few that something is shown as nothing. */
+function roundedDecimals(shown: number, symbol: string): number {
+  const significant = (figures: number) => Math.min(20, Math.max(0, figures - 1 - Math.floor(Math.log10(Math.abs(shown)))));
+  const most = FIELD_DECIMALS[symbol];
+  return most === undefined ? significant(6) : Math.max(Math.min(most, significant(6)), significant(1));
 }

@@ -314,9 +314,13 @@ test('what a field shows is read as that value again, in every kind, unit system
       fc.constantFrom(en, us, de, deUs, fr),
       (shown, kind, reading) => {
         const entry = readEntry(entryText(shown, kind, reading), kind, reading);
-        // Six significant figures at least; exactly where six decimals hold the number.
+        // Six significant figures at least, but in inches and pounds no finer than 0.001 in and 0.1 lb
+        // and at least one figure; exactly where six decimals hold the number.
         expect(entry.ok).toBe(true);
-        if (entry.ok) expect(Math.abs(entry.value - shown)).toBeLessThanOrEqual(Math.max(Math.abs(shown) * 5.1e-6, 1e-12));
+        const finest = reading.units === 'metric' ? undefined : { length: 0.0005 * 25.4, mass: 0.05 * 0.45359237 }[kind as string];
+        const six = Math.max(Math.abs(shown) * 5.1e-6, 1e-12);
+        const bound = finest === undefined ? six : Math.max(six, Math.min(finest * 1.001, Math.abs(shown) / 2));
+        if (entry.ok) expect(Math.abs(entry.value - shown)).toBeLessThanOrEqual(bound);
       },
     ),
     { numRuns: 5000 },

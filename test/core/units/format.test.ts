@@ -124,3 +124,17 @@ test('a field shows the number without grouping', () => {
   expect(entryText(1250.5, 'mass', de)).toBe('1250,5');
   expect(entryText(12.345, 'length', en)).toBe('12.3450');
 });
+
+test('in a field inches go to 0.001 and pounds to 0.1, unless finer was stated, and something is never shown as nothing', () => {
+  const inch = 25.4;
+  const pound = 0.45359237;
+  expect(entryText(4500, 'length', us)).toBe('177.165');
+  expect(entryText(1166, 'length', us)).toBe('45.906');
+  expect(entryText(2, 'length', us)).toBe('0.079');
+  expect(entryText(0.001, 'length', us)).toBe('0.00004');
+  expect(entryText(0.0625 * inch, 'length', us)).toBe('0.0625');
+  expect(entryText(96 * inch, 'length', us)).toBe('96');
+  expect(entryText(1000, 'mass', us)).toBe('2204.6');
+  expect(entryText(0.01, 'mass', us)).toBe('0.02');
+  expect(entryText(2200.25 * pound, 'mass', us)).toBe('2200.25');
+});
