@@ -2,6 +2,8 @@
  * Every command as data: its name, its keys, when it is allowed, what it does. Keys, the menu and
  * the command list all read this one table, so that none of them can say something else.
  */
+import { formatQuantity } from '../src-core/units/format';
+import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
 import { changeBay, changeLevel, nudge } from './goods-moves';
 import { copyGoods, cutGoods, deleteGoods, duplicateGoods, mirrorGoods, pasteGoods, spaceEvenly } from './goods-edits';
 import { pressed, type KeyPress } from './keys';
@@ -75,11 +77,25 @@ const screen = (id: Screen, name: string, keys: readonly string[] = []) =>
     ({ shell }) => shell.show(id),
   );
 
-const NUDGES: readonly (readonly [prefix: string, mm: number])[] = [
-  ['', 10],
-  ['Shift+', 1],
-  ['Alt+', 100],
+/** Steps are round in the units of whoever looks: 10, 1 and 100 mm, or 0.5, 0.1 and 4 in. */
+const NUDGES: readonly (readonly [prefix: string, step: Readonly<Record<UnitSystem, number>>])[] = [
+  ['', { metric: 10, us: 12.7 }],
+  ['Shift+', { metric: 1, us: 2.54 }],
+  ['Alt+', { metric: 100, us: 101.6 }],
 ];
+
+const nudges = (prefix: string, step: Readonly<Record<UnitSystem, number>>): readonly Command[] =>
+  (['left', 'right'] as const).map((way) => {
+    const by = ({ reading }: OpenSite) => step[reading.units];
+    return command(
+      `${way}-${step.metric}`,
+      'Goods',
+      ({ open }) => `Move ${way} by ${formatQuantity(lengthOf(by(open)), open.reading)}`,
+      [`${prefix}Arrow${way === 'left' ? 'Left' : 'Right'}`],
+      movable,
+      ({ open }) => nudge(open, way === 'left' ? -by(open) : by(open)),
+    );
+  });
 
 export const COMMANDS: readonly Command[] = [
   // ------------------------------------------------------------ site
@@ -151,10 +167,7 @@ export const COMMANDS: readonly Command[] = [
   command('put-down', 'Goods', 'Put down here', ['Enter', 'Space'], carrying, ({ open }) => open.putDown()),
   command('put-back', 'Goods', 'Put back', ['Escape'], carrying, ({ open }) => open.putBack()),
   command('move-to', 'Goods', 'Move to…', ['Mod+M'], hasGoods, ({ shell }) => shell.ask({ kind: 'move-to' })),
-  ...NUDGES.flatMap(([prefix, mm]) => [
-    command(`left-${mm}`, 'Goods', `Move left by ${mm} mm`, [`${prefix}ArrowLeft`], movable, ({ open }) => nudge(open, -mm)),
-    command(`right-${mm}`, 'Goods', `Move right by ${mm} mm`, [`${prefix}ArrowRight`], movable, ({ open }) => nudge(open, mm)),
-  ]),
+  ...NUDGES.flatMap(([prefix, step]) => nudges(prefix, step)),
   command('goods-up', 'Goods', 'Move to the level above', ['ArrowUp'], movable, ({ open }) => changeLevel(open, 1)),
   command('goods-down', 'Goods', 'Move to the level below', ['ArrowDown'], movable, ({ open }) => changeLevel(open, -1)),
   command('goods-bay-left', 'Goods', 'Move to the bay on the left', ['Shift+PageUp'], movable, ({ open }) => changeBay(open, -1)),

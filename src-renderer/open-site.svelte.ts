@@ -294,7 +294,7 @@ export class OpenSite {
 
   // ------------------------------------------------------------ moving goods
 
-  /** The one command behind dragging, keys, clicks and the menu. Positions are whole millimetres. */
+  /** The one command behind dragging, keys, clicks, the menu and typed places. */
   move = (placementId: Id, target: Target, merge?: string): Refused | null => {
     this.dropTrial();
     const from = placementPlace(this.site, placementId);

@@ -8,9 +8,9 @@ import { lengthOf } from '../src-core/units/quantity';
 import { gapsAt } from './drawing/gaps';
 import { nameOfPlace, placementPlace, type PlacementPlace, type Target } from './places';
 
-/** Positions are whole millimetres. */
+/** Positions stay as they were typed, in inches as well; steps of keys and drags add no digits of their own. */
 export const moved = (site: Site, placementId: Id, target: Target): Site =>
-  movePlacement(site, placementId, { ...target, atMm: Math.round(target.atMm) });
+  movePlacement(site, placementId, { ...target, atMm: Number(target.atMm.toFixed(4)) });
 
 export interface PutDown {
   /** The site before anything was moved. */

@@ -23,10 +23,11 @@ import {
 } from '../src-core/site/edits';
 import { holesOf, nextHole } from '../src-core/site/holes';
 import { findRun } from '../src-core/site/lookup';
-import { bayByPlan, evenPlan, frameByPlan, planOfBay, runByPlan, type BayPlan } from '../src-core/site/new-site';
+import { bayByPlan, frameByPlan, planOfBay, runByPlan, type BayPlan } from '../src-core/site/new-site';
 import type { Bay, Frame, Id, Level, LoadNotice, Run, Site } from '../src-core/site/site';
 import { formatQuantity } from '../src-core/units/format';
-import { lengthOf } from '../src-core/units/quantity';
+import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
+import { firstBay, firstSizes } from './first-sizes';
 import { newId } from './ids';
 import { frameNameBetween, nextName, nextRunName } from './names';
 import { afterBay, afterLevel, afterRun } from './neighbours';
@@ -79,17 +80,6 @@ function newFrameName({ bays, frames }: Run, bayName: string, index: number): st
 
 const bayNames = (site: Site): ReadonlySet<string> => new Set(site.runs.flatMap((run) => run.bays.map((bay) => bay.name)));
 
-/** For the first bay of a run: everything that nobody has stated is not known. */
-export const FIRST_BAY: BayPlan = evenPlan({
-  clearEntryMm: 2700,
-  levels: 3,
-  firstBeamMm: 1500,
-  pitchMm: 1500,
-  noticeId: null,
-  beamTypeId: null,
-  frameTypeId: null,
-});
-
 /**
  * Puts bays by a plan into a run, to the right of the bay with this index; -1 for the left end.
  * @returns why it was refused, as a sentence; null if they were added
@@ -129,7 +119,7 @@ export function addBayAfter(open: OpenSite): void {
 /** An empty bay at the right end of the run, like its last one. */
 export function addBayTo(open: OpenSite, run: Run): void {
   const last = run.bays.at(-1);
-  const plan = last ? planOfBay(open.site, last.id, 'without goods') : FIRST_BAY;
+  const plan = last ? planOfBay(open.site, last.id, 'without goods') : firstBay(open.reading.units);
   addBays(open, run, plan, { after: run.bays.length - 1, count: 1 });
 }
 
@@ -207,7 +197,7 @@ export function addLevelOnTop(open: OpenSite): void {
   if (bay === null) return;
   const level: Level = {
     id: newId(),
-    heightMm: nextHeight(bay.levels),
+    heightMm: nextHeight(bay.levels, open.reading.units),
     beamTypeId: bay.levels.at(-1)?.beamTypeId ?? null,
     locks: 'unknown',
     deck: { kind: 'none' },
@@ -222,7 +212,7 @@ export function duplicateLevelHere(open: OpenSite): void {
   const { bay, level } = open;
   if (bay === null || level === null) return;
   putOnTop(open, bay, `Duplicate level ${bay.levels.indexOf(level) + 1} of bay ${bay.name}`, (site) =>
-    duplicateLevel(site, level.id, nextHeight(bay.levels), newId),
+    duplicateLevel(site, level.id, nextHeight(bay.levels, open.reading.units), newId),
   );
 }
 
@@ -232,10 +222,10 @@ function putOnTop(open: OpenSite, bay: Bay, what: string, put: (site: Site) => S
   open.say(`Level ${bay.levels.length + 1} added to bay ${bay.name}.`);
 }
 
-/** As far above the highest level as that is above the one below it. */
-export function nextHeight(levels: readonly Pick<Level, 'heightMm'>[]): number {
+/** As far above the highest level as that is above the one below it; a first level where new runs have theirs. */
+export function nextHeight(levels: readonly Pick<Level, 'heightMm'>[], units: UnitSystem): number {
   const top = levels.at(-1)?.heightMm ?? 0;
-  return top + (top - (levels.at(-2)?.heightMm ?? 0) || 1500);
+  return top + (top - (levels.at(-2)?.heightMm ?? 0) || firstSizes(units).pitchMm);
 }
 
 export function removeLevelHere(open: OpenSite): void {

@@ -1,11 +1,12 @@
 /** The holes of the uprights, at which beams stand. Heights in mm from the floor to the top of the beam. */
+import type { UnitSystem } from '../units/quantity';
 import type { FrameType, Run, Site } from './site';
 
 /**
- * Where the holes are not known: the commonest pitch in Europe, mm. Pitches are 50 or 75 mm, in the
- * United States 2 in, some 3 or 4 in (facts F-60; common practice, no source).
+ * Where the holes are not known, by the site's units: the commonest pitch, mm. Pitches are 50 or 75 mm,
+ * in the United States 2 in, some 3 or 4 in (facts F-60; common practice, no source).
  */
-const USUAL_PITCH = 50;
+const USUAL_PITCH: Readonly<Record<UnitSystem, number>> = { metric: 50, us: 50.8 };
 /** Nearer than this a beam stands at the hole: heights are measured to a millimetre at best. */
 const AT_HOLE = 0.5;
 /** Multiples of a pitch in inches are not exact in mm. */
@@ -20,11 +21,12 @@ export interface Holes {
 
 /** The pitch by which beams of a bay step: that of its frames, where it is known of both and the same. */
 export function holesOf(site: Site, run: Run, bayIndex: number): Holes {
+  const usual = USUAL_PITCH[site.units];
   const [left = null, right = null] = run.frames
     .slice(bayIndex, bayIndex + 2)
     .map(({ typeId }) => site.frameTypes.find((type: FrameType) => type.id === typeId)?.holePitchMm ?? null);
-  if (left === null || right === null) return { pitch: USUAL_PITCH, from: 'not known' };
-  return left === right ? { pitch: left, from: 'frames' } : { pitch: USUAL_PITCH, from: 'frames differ' };
+  if (left === null || right === null) return { pitch: usual, from: 'not known' };
+  return left === right ? { pitch: left, from: 'frames' } : { pitch: usual, from: 'frames differ' };
 }
 
 const atHole = (number: number, pitch: number): number => Number((number * pitch).toFixed(DECIMALS));

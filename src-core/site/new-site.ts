@@ -63,22 +63,27 @@ export function evenPlan(plan: {
   readonly levels: number;
   readonly firstBeamMm: number;
   readonly pitchMm: number;
+  /** Heights of frames go in such steps; 100 mm where it is left out. */
+  readonly frameStepMm?: number;
   readonly noticeId: Id | null;
   readonly beamTypeId: Id | null;
   readonly frameTypeId: Id | null;
 }): BayPlan {
-  const { clearEntryMm, noticeId, beamTypeId, frameTypeId } = plan;
+  const { clearEntryMm, noticeId, beamTypeId, frameTypeId, frameStepMm = 100 } = plan;
   const heights = Array.from({ length: plan.levels }, (_, i) => plan.firstBeamMm + i * plan.pitchMm);
   return {
     clearEntryMm,
     noticeId,
     frameTypeId,
-    // Frames reach past the topmost beam, in steps of 100 mm; their real height can be entered.
-    frameHeightMm: Math.ceil(((heights.at(-1) ?? 0) + 300) / 100) * 100,
+    // Frames reach three steps past the topmost beam or more; their real height can be entered.
+    frameHeightMm: inSteps((heights.at(-1) ?? 0) + 3 * frameStepMm, frameStepMm),
     levels: heights.map((heightMm) => ({ heightMm, beamTypeId, deck: { kind: 'none' }, placements: [] })),
     onFloor: [],
   };
 }
+
+/** The next whole step from here up; steps in inches are no whole millimetres, so that a quotient is whole but for its last digits. */
+const inSteps = (height: number, step: number): number => Number((Math.ceil(height / step - 1e-9) * step).toFixed(4));
 
 /** A bay by a plan. What has to be seen at the rack is not known. */
 export const bayByPlan = (plan: BayPlan, name: string, newId: NewId): Bay => ({

@@ -39,7 +39,7 @@ export const overlaps = (a: Standing, b: Standing): boolean => a.at < b.at + b.w
 
 /** The places where the unit load keeps its gaps, from left to right. */
 export function catchingPlaces({ entry, gaps, width, others }: Opening): readonly Place[] {
-  // Placements stand on whole millimetres: rounded so that a gap of 3 in is never taken short.
+  // Whole millimetres: rounded so that a gap of 3 in is never taken short.
   const wanted: Place[] = [
     { at: Math.ceil(gaps.upright), by: 'left upright' },
     { at: Math.floor(entry - gaps.upright - width), by: 'right upright' },

@@ -2,9 +2,10 @@
 import { addEntry } from '../../src-core/site/edits';
 import type { Library } from '../../src-core/site/lookup';
 import type { BayTemplate, BeamType, Floor, FrameType, Id, LoadNotice, Pallet, Site, UnitLoad } from '../../src-core/site/site';
+import type { UnitSystem } from '../../src-core/units/quantity';
+import { firstBay } from '../first-sizes';
 import { newId } from '../ids';
 import type { OpenSite } from '../open-site.svelte';
-import { FIRST_BAY } from '../rack-edits';
 import type { Refusal, Refused } from '../refusal';
 import type { Shell } from '../shell.svelte';
 import { NEEDED_SIZES } from './needed-sizes';
@@ -45,7 +46,7 @@ export const itemsOf = <K extends LibraryKind>(site: Site, kind: K): readonly Li
  * Every number not known, so that nothing passes before it has been entered. The sizes that an entry
  * cannot be without are for drawing only until they are typed: see needed-sizes.ts.
  */
-const FRESH: { readonly [K in LibraryKind]: (id: Id, name: string) => LibraryItem[K] } = {
+const FRESH: { readonly [K in LibraryKind]: (id: Id, name: string, units: UnitSystem) => LibraryItem[K] } = {
   unitLoad: (id, name) => ({
     id,
     name,
@@ -133,10 +134,12 @@ const FRESH: { readonly [K in LibraryKind]: (id: Id, name: string) => LibraryIte
     thicknessMm: null,
     source: NO_SOURCE,
   }),
-  bayTemplate: (id, name) => ({ id, name, ...FIRST_BAY }),
+  bayTemplate: (id, name, units) => ({ id, name, ...firstBay(units) }),
 };
 
-export const freshItem = <K extends LibraryKind>(kind: K, id: Id, name: string): LibraryItem[K] => FRESH[kind](id, name);
+/** @param units of whoever looks: a bay template starts with sizes that are round in them */
+export const freshItem = <K extends LibraryKind>(kind: K, id: Id, name: string, units: UnitSystem = 'metric'): LibraryItem[K] =>
+  FRESH[kind](id, name, units);
 
 /** A name that no other entry has: "Load notice 3". */
 export function freeName(site: Site, kind: LibraryKind): string {
@@ -159,7 +162,7 @@ export function newLibraryItem(
 
 /** Adds a fresh entry of which nothing is known. */
 export function addLibraryItem(open: OpenSite, kind: LibraryKind): Id {
-  const item = freshItem(kind, newId(), freeName(open.site, kind));
+  const item = freshItem(kind, newId(), freeName(open.site, kind), open.reading.units);
   addEntryNow(open, kind, item);
   return item.id;
 }

@@ -1,24 +1,8 @@
 import { beforeEach, expect, test } from 'vitest';
 import { COMMANDS, commandFor, GROUPS, isForDrawing, nameOf, type Command, type Surroundings } from '../../src-renderer/commands';
 import { chordName, pressed, type KeyPress } from '../../src-renderer/keys';
-import { Shell } from '../../src-renderer/shell.svelte';
-import { writeSite } from '../../src-core/site/write';
-import { writeSiteFile } from '../../src-core/site/envelope';
-import { MemoryHost } from './memory-host';
-import { EMPTY, smallSite } from './sites';
-
-const NO_HASH = () => '0'.repeat(64);
-const fileOf = (body: string) => writeSiteFile(body, { program: '0.1.0', savedAt: '2026-12-01T12:00:00.000Z' }, NO_HASH);
-
-async function surroundings(site = smallSite()): Promise<Surroundings> {
-  const host = new MemoryHost();
-  await host.saveSite({ id: site.id, body: fileOf(writeSite(site)), baseRevision: null });
-  const shell = new Shell(host, null, () => '2026-12-01');
-  await shell.start();
-  await shell.openSite(site.id);
-  if (shell.open === null) throw new Error(`the site did not open: ${shell.trouble?.message}`);
-  return { shell, open: shell.open };
-}
+import { shellOn } from './opened';
+import { EMPTY } from './sites';
 
 const press = (key: string, part: Partial<KeyPress> = {}): KeyPress => ({
   key,
@@ -34,30 +18,30 @@ const ELSEWHERE = { inField: false, inDrawing: false };
 
 let at: Surroundings;
 beforeEach(async () => {
-  at = await surroundings();
+  at = await shellOn();
 });
 
 /** Every state that the table tells apart. */
 async function states(): Promise<readonly (readonly [string, Surroundings])[]> {
-  const chosen = await surroundings();
+  const chosen = await shellOn();
   chosen.open.select({ placementIds: ['p1'] });
-  const several = await surroundings();
+  const several = await shellOn();
   several.open.select({ placementIds: ['p1', 'p2'] });
-  const carrying = await surroundings();
+  const carrying = await shellOn();
   carrying.open.select({ placementIds: ['p1'] });
   carrying.open.pickUp('p1');
-  const onFloor = await surroundings();
+  const onFloor = await shellOn();
   onFloor.open.select({ levelId: null });
-  const copied = await surroundings();
+  const copied = await shellOn();
   copied.open.copiedLevel = copied.open.level;
-  const copiedAndChosen = await surroundings();
+  const copiedAndChosen = await shellOn();
   copiedAndChosen.open.copiedLevel = copiedAndChosen.open.level;
   copiedAndChosen.open.select({ placementIds: ['p1'] });
-  const rules = await surroundings();
+  const rules = await shellOn();
   rules.shell.show('rules');
   return [
-    ['nothing chosen', await surroundings()],
-    ['empty site', await surroundings(EMPTY)],
+    ['nothing chosen', await shellOn()],
+    ['empty site', await shellOn(EMPTY)],
     ['goods chosen', chosen],
     ['several chosen', several],
     ['carrying', carrying],
@@ -210,4 +194,17 @@ test('every command that is allowed can be run in every state without a fault', 
     ran.add(id);
   }
   expect([...ids].filter((id) => !ran.has(id))).toEqual([]);
+});
+
+test('in pounds and inches the arrows nudge by round inches, said so and kept so', () => {
+  at.open.select({ placementIds: ['p1'] });
+  at.open.switchUnits();
+  const right = COMMANDS.find((one) => one.id === 'right-10');
+  if (right === undefined) throw new Error('no such command');
+  expect(nameOf(right, at)).toBe('Move right by 0.5\u00a0in');
+  const atMm = () => at.open.bay?.levels[0]?.placements.find(({ id }) => id === 'p1')?.atMm;
+  expect(atMm()).toBe(75);
+  right.run(at);
+  // 75 mm and half an inch of 25.4 mm.
+  expect(atMm()).toBe(87.7);
 });

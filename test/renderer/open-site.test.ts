@@ -12,6 +12,7 @@ import { keepTemplate } from '../../src-renderer/bay-templates';
 import { deleteGoods, duplicateGoods, mirrorGoods, putGoods, spaceEvenly } from '../../src-renderer/goods-edits';
 import { changeBay, changeLevel, nudge } from '../../src-renderer/goods-moves';
 import { copyLevelHere, pasteLevelHere, pasteLevelInto } from '../../src-renderer/level-clipboard';
+import { firstBay } from '../../src-renderer/first-sizes';
 import { OpenSite } from '../../src-renderer/open-site.svelte';
 import { placementPlace, targetOf, type Target } from '../../src-renderer/places';
 import {
@@ -22,7 +23,6 @@ import {
   duplicateBayHere,
   duplicateLevelHere,
   fillLike,
-  FIRST_BAY,
   layOutRun,
   removeBayHere,
   removeLevelHere,
@@ -130,7 +130,7 @@ const EDITS: readonly ((open: OpenSite, a: number, b: number) => void)[] = [
 ];
 
 /** The newest template, or what a first bay is laid out by. */
-const planHere = (open: OpenSite): BayPlan => open.site.bayTemplates.at(-1) ?? FIRST_BAY;
+const planHere = (open: OpenSite): BayPlan => open.site.bayTemplates.at(-1) ?? firstBay('metric');
 
 /** Beginnings of the names of steps that the random sequences are to have made, each of them at least once. */
 const STEPS = [
