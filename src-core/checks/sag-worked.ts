@@ -19,6 +19,8 @@ interface Against {
 }
 
 interface Limited extends Found {
+  /** Loaded sag that stands for a set that was not read, mm. */
+  readonly setAtMost: number | null;
   readonly loaded: Against | null;
   readonly set: Against | null;
   readonly sideways: Against | null;
@@ -30,8 +32,16 @@ const limitOf = ({ limitMm }: Found): WorkedValue => value('s_lim', 'allowed sag
 /** Allowed sag, and each reading as its part of what is allowed. */
 export function limitSteps(input: SagInput, found: Limited): readonly WorkedStep[] {
   const limit = limitOf(found);
-  const down = { way: 'down', symbol: '0', rule: 'setVertical', mm: input.unloadedMm, set: found.set } as const;
-  const sideways = { way: 'sideways', symbol: 'h', rule: 'setHorizontal', mm: input.sidewaysMm, set: found.sideways } as const;
+  const atMost = found.setAtMost !== null;
+  const down = { way: 'down', symbol: '0', rule: 'setVertical', mm: found.setAtMost ?? input.unloadedMm, atMost, set: found.set } as const;
+  const sideways = {
+    way: 'sideways',
+    symbol: 'h',
+    rule: 'setHorizontal',
+    mm: input.sidewaysMm,
+    atMost: false,
+    set: found.sideways,
+  } as const;
   return [
     {
       what: 'Allowed sag',
@@ -60,15 +70,20 @@ interface SetReading {
   readonly symbol: '0' | 'h';
   readonly rule: 'setVertical' | 'setHorizontal';
   readonly mm: number | null;
+  /** The loaded reading stands for it. */
+  readonly atMost: boolean;
   readonly set: Against | null;
 }
 
-function setSteps(input: SagInput, limit: WorkedValue, { way, symbol, rule, mm, set }: SetReading): readonly WorkedStep[] {
+function setSteps(input: SagInput, limit: WorkedValue, { way, symbol, rule, mm, atMost, set }: SetReading): readonly WorkedStep[] {
   if (mm === null || set === null) return [];
   const percent: WorkedStep = {
-    what: `Permanent set ${way}, of the allowed sag`,
+    what: `Permanent set ${way}, ${atMost ? 'at most, ' : ''}of the allowed sag`,
     formula: `100 · s_${symbol} / s_lim`,
-    values: [value(`s_${symbol}`, `set ${way}, read unloaded`, lengthOf(mm), READ), limit],
+    values: [
+      value(`s_${symbol}`, `set ${way}, ${atMost ? 'no more than the reading loaded' : 'read unloaded'}`, lengthOf(mm), READ),
+      limit,
+    ],
     result: { symbol: `p_${symbol}`, quantity: set.measured },
     source: sourceOf(input.rules, rule),
   };

@@ -91,17 +91,20 @@ export function judgeSag(input: SagInput): SagJudgement {
   const setPercent = percent(unloadedMm);
   const sidewaysPercent = percent(sidewaysMm);
   const loaded = loadedMm === null ? null : against(lengthOf(loadedMm), lengthOf(limitMm));
-  const set = setPercent === null ? null : against(percentOf(setPercent), percentOf(rules.value.setVertical));
+  const setAllowedMm = (limitMm * rules.value.setVertical) / 100;
+  const setAtMost = boundOfSet(input, setAllowedMm);
+  const setPercentOrMore = setPercent ?? percent(setAtMost);
+  const set = setPercentOrMore === null ? null : against(percentOf(setPercentOrMore), percentOf(rules.value.setVertical));
   const sideways = sidewaysPercent === null ? null : against(percentOf(sidewaysPercent), percentOf(rules.value.setHorizontal));
   const [worst = null] = [loaded, set, sideways].filter((one) => one !== null).sort((a, b) => b.ratio - a.ratio);
   const implied = elasticMm === null ? null : impliedRange(input, elasticMm);
   const atLeastKg = elasticMm === null || implied !== null || input.rated === null ? null : (input.rated.kg * elasticMm) / limitMm;
-  const missing = missingReadings(input, impossible);
+  const missing = missingReadings(input, impossible, setAtMost !== null);
   const byLimit = worst === null ? 'not-assessable' : verdictOf(worst.ratio, rules.value.closeAbove);
   const byLoad = verdictOfLoad(input, implied);
   const tooHeavy = byLoad === 'over' && byLimit !== 'over' && implied !== null && input.rated !== null;
   const found = { limitMm, elasticMm, setPercent, sidewaysPercent, implied, atLeastKg };
-  const limited = { ...found, loaded, set, sideways, outOfUse: isOver(set) || isOver(sideways), elastic };
+  const limited = { ...found, loaded, set, setAllowedMm, setAtMost, sideways, outOfUse: isOver(set) || isOver(sideways), elastic };
   return {
     ...found,
     verdict: worstVerdict([byLimit, byLoad, ...(missing.length > 0 ? (['not-assessable'] as const) : [])]),
@@ -143,6 +146,10 @@ const isOver = (one: AgainstLimit | null): boolean => one !== null && verdictOf(
 
 type Found = Pick<SagJudgement, 'limitMm' | 'elasticMm' | 'setPercent' | 'sidewaysPercent' | 'implied' | 'atLeastKg'>;
 interface Limited extends Found {
+  /** What may stay bent down, mm. */
+  readonly setAllowedMm: number;
+  /** Loaded sag that stands for a set that was not read, mm; null where it was read, or where it must be. */
+  readonly setAtMost: number | null;
   readonly loaded: AgainstLimit | null;
   readonly set: AgainstLimit | null;
   readonly sideways: AgainstLimit | null;
@@ -153,7 +160,7 @@ interface Limited extends Found {
 
 function limitSays(
   { beam, loadedMm, unloadedMm, sidewaysMm }: SagInput,
-  { loaded, set, sideways, elastic, limitMm }: Limited,
+  { loaded, set, setAllowedMm, setAtMost, sideways, elastic, limitMm }: Limited,
 ): readonly Text[] {
   const sentences: ((it: string) => Text)[] = [
     ...(unloadedMm === null || set === null ? [] : [(it: string) => setSays(it, 'down', unloadedMm, set)]),
@@ -164,6 +171,13 @@ function limitSays(
   ];
   return [
     ...sentences.map((sentence, i) => sentence(i === 0 ? beam : 'it')),
+    ...(loadedMm !== null && unloadedMm === null
+      ? [
+          setAtMost === null
+            ? say`Unloaded it was not read: empty the level and measure again at the same place. Up to ${lengthOf(setAllowedMm)} may stay bent down.`
+            : say`Unloaded it was not read and need not be: what stays bent down is no more than that, and up to ${lengthOf(setAllowedMm)} may.`,
+        ]
+      : []),
     ...(elastic !== null && elastic < 0
       ? [say`Unloaded it was read ${lengthOf(-elastic)} lower than loaded, which cannot be. Measure both again, from the same line.`]
       : []),
@@ -191,8 +205,24 @@ function limitOrigins({ rules }: SagInput): string {
 /** Beyond the rounding of the computation. */
 const above = (value: number, limit: number): boolean => value > limit * (1 + 1e-12);
 
+/**
+ * A beam that sags no further under its goods than may stay bent has no larger set: what is taken off it can
+ * only let it rise. So the loaded reading stands for the unloaded one, as long as the load that the whole of
+ * it would imply is within the rating as well.
+ * @returns mm; null where the set was read, or has to be
+ */
+function boundOfSet(input: SagInput, allowedMm: number): number | null {
+  const { loadedMm, unloadedMm } = input;
+  if (loadedMm === null || unloadedMm !== null || above(loadedMm, allowedMm)) return null;
+  return verdictOfLoad(input, impliedRange(input, loadedMm)) === 'within' ? loadedMm : null;
+}
+
 /** What was not read is not straight: 0 is a reading, an empty field is none. */
-function missingReadings({ loadedMm, unloadedMm, sidewaysMm, beam, field }: SagInput, impossible: boolean): readonly Missing[] {
+function missingReadings(
+  { loadedMm, unloadedMm, sidewaysMm, beam, field }: SagInput,
+  impossible: boolean,
+  setIsBounded: boolean,
+): readonly Missing[] {
   const missing = (what: string, how: string, key: 'loadedMm' | 'unloadedMm' | 'sidewaysMm'): Missing => ({
     input: `${what} of ${beam}`,
     how,
@@ -202,8 +232,8 @@ function missingReadings({ loadedMm, unloadedMm, sidewaysMm, beam, field }: SagI
     ...(loadedMm === null || impossible
       ? [missing('loaded sag', 'Measure it at mid-span from a line through the beam’s ends, with the goods on it.', 'loadedMm')]
       : []),
-    ...(unloadedMm === null || impossible
-      ? [missing('unloaded sag', 'Measure it again at the same place once the level is empty.', 'unloadedMm')]
+    ...((unloadedMm === null && !setIsBounded) || impossible
+      ? [missing('unloaded sag', 'Empty the level and measure again at the same place.', 'unloadedMm')]
       : []),
     ...(sidewaysMm === null
       ? [missing('sideways set', 'Measure it at mid-span with the level empty. Enter 0 where the beam is straight.', 'sidewaysMm')]

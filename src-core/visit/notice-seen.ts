@@ -12,7 +12,8 @@ import type { NoticeSeen } from './visit';
 export function noticeDiffers(notice: LoadNotice | null, bay: Bay, seen: NoticeSeen): readonly Text[] {
   const differs: Text[] = [];
   if (seen.there === 'no') differs.push(say`No load notice is fixed to bay ${bay.name}.`);
-  if (seen.matches === 'no') differs.push(say`The load notice at bay ${bay.name} cannot be read or is not this bay’s.`);
+  // A notice that is not there is neither this bay's nor another's.
+  else if (seen.matches === 'no') differs.push(say`The load notice at bay ${bay.name} cannot be read or is not this bay’s.`);
   if (seen.beams === 'no') differs.push(say`Beams of another type than the load notice’s are in bay ${bay.name}.`);
   if (notice === null) return differs;
   const { firstBeamMm, greatestGapMm, levels } = notice;

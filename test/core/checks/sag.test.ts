@@ -96,6 +96,36 @@ test('a sag that was read only loaded, or only unloaded, is not assessable unles
   expect(judgeSag({ ...s10, loadedMm: null, unloadedMm: 3 })).toMatchObject({ verdict: 'over', outOfUse: true });
 });
 
+// The set is part of the loaded sag, so it is no larger: 20 % of 13.5 mm is 2.7 mm, and close begins above 0.9 of that, 2.43 mm.
+test.each([
+  [2.43, 0, 'within'],
+  [2.44, 0, 'close'],
+  [2.7, 0, 'close'],
+  [2.701, 0, 'not-assessable'],
+  [2, null, 'not-assessable'],
+  [2, 5.401, 'over'],
+] as const)('%f mm loaded, not read unloaded, %s sideways is %s', (loadedMm, sidewaysMm, verdict) => {
+  const found = judgeSag({ ...s10, loadedMm, unloadedMm: null, sidewaysMm });
+  expect(found).toMatchObject({ verdict, elasticMm: null, setPercent: null, implied: null });
+  const down = found.missing.filter(({ field }) => field.endsWith('unloadedMm'));
+  expect(down).toHaveLength(loadedMm > 2.7 ? 1 : 0);
+  const says = found.says.map(plain).join(' ');
+  expect(says).toContain(loadedMm > 2.7 ? 'empty the level and measure again at the same place' : 'was not read and need not be');
+  expect(says).not.toContain('stays bent down by');
+  expectSteps('bound', found.worked);
+});
+
+test('a small loaded sag spares the unloaded reading only where the whole of it stands for less than the rating', () => {
+  // 2 mm stand for 2013.8 · 2/13 = 310 kg evenly spread with pinned ends, for 310/0.68 = 456 kg at a fixity of 0.4.
+  const read = { ...s10, loadedMm: 2, unloadedMm: null };
+  expect(judgeSag({ ...read, rated: { kg: 460, from: 'notice' } }).verdict).toBe('within');
+  for (const kg of [450, 300]) {
+    const found = judgeSag({ ...read, rated: { kg, from: 'notice' } });
+    expect(found.verdict).toBe('not-assessable');
+    expect(found.missing.map(({ input }) => input)).toEqual(['unloaded sag of the front beam of level 1']);
+  }
+});
+
 test('less sag loaded than unloaded is a wrong reading, not a result', () => {
   const found = judgeSag({ ...s10, loadedMm: 1, unloadedMm: 2 });
   expect(found).toMatchObject({ verdict: 'not-assessable', elasticMm: null, implied: null });

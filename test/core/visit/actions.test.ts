@@ -200,3 +200,10 @@ test('a beam out of use by its set, and one that sags too far, empty their level
   expect(actions(siteOf(), [sag(14, 1)], '2026-06-02')).toMatchObject([{ kind: 'unload', levels: [{ levelId: 'A2-level-1' }] }]);
   expect(actions(siteOf(), [sag(13, 1)], '2026-06-02')).toEqual([]);
 });
+
+test('a notice that is not there is not also unreadable', () => {
+  const seen = finish(seeNotice(visitOn('2026-06-02'), BAY, { there: 'no', matches: 'no' }));
+  const says = plain(actions(siteOf(), [seen], '2026-06-03')[0]?.says ?? []);
+  expect(says).toContain('No load notice is fixed to bay A2.');
+  expect(says).not.toContain('cannot be read');
+});
