@@ -116,8 +116,7 @@ export function deflectionSteps(input: PairInput, worse: WorseBeam): readonly Wo
 }
 
 /**
- * Slope at the left support and greatest sag, both times EI, from reactions and loads alone. Sag times
- * EI has no unit of its own among the kinds; it is given as a bare number in N·mm³.
+ * Slope at the left support and greatest sag, both times EI, from reactions and loads alone.
  */
 export function sagSteps(input: PairInput, worse: OneBeam): { readonly bent: Quantity; readonly steps: readonly WorkedStep[] } {
   const { load, answer } = worse.beam;
@@ -130,7 +129,7 @@ export function sagSteps(input: PairInput, worse: OneBeam): { readonly bent: Qua
     'rigidity',
     (reactionLeft * span ** 2) / 6 - (all.force * all.cubeArm ** 3) / (6 * span) + (sprung ? (endMomentLeft * span) / 2 : 0),
   );
-  const bent = ratioOf(deflection.sag * rigidity);
+  const bent = quantity('sagRigidity', deflection.sag * rigidity);
   const end = sprung ? [leftEnd(endMomentLeft)] : [];
   const reaction = value('R_left', 'left support reaction', forceOf(reactionLeft), 'line above');
   return {
@@ -150,7 +149,7 @@ export function sagSteps(input: PairInput, worse: OneBeam): { readonly bent: Qua
         source: 'statics: the bending line integrated twice, no sag at the right support',
       },
       {
-        what: 'Greatest sag, times EI (N·mm³)',
+        what: 'Greatest sag, times EI',
         formula: sprung ? 'T · x − R_left · x^3 / 6 + W_x · c_x^3 / 6 − M_left · x^2 / 2' : 'T · x − R_left · x^3 / 6 + W_x · c_x^3 / 6',
         values: [
           value('T', 'slope at the left support, times EI', slope, 'line above'),

@@ -29,6 +29,8 @@ export const UNIT_OF = {
   secondMoment: 'mm⁴',
   sectionModulus: 'mm³',
   rigidity: 'N·mm²',
+  /** A sag times EI. */
+  sagRigidity: 'N·mm³',
   stiffness: 'N·mm/rad',
   angle: 'rad',
   ratio: '1',

@@ -125,6 +125,12 @@ export const UNITS: Readonly<Record<QuantityKind, readonly Unit[]>> = {
     unit('kip·in²', times(kip, square(inch))),
     unit('lbf·in²', times(lbf, square(inch))),
   ],
+  sagRigidity: [
+    unit('kN·m³', times(kN, cube(m))),
+    unit('N·mm³', one),
+    unit('kip·in³', times(kip, cube(inch))),
+    unit('lbf·in³', times(lbf, cube(inch))),
+  ],
   stiffness: [
     unit('kN·m/rad', times(kN, m)),
     unit('N·m/rad', m),
@@ -159,6 +165,7 @@ export const KIND_NOUNS: Readonly<Record<QuantityKind, string>> = {
   secondMoment: 'second moment of area',
   sectionModulus: 'section modulus',
   rigidity: 'bending rigidity',
+  sagRigidity: 'sag times bending rigidity',
   stiffness: 'rotational stiffness',
   angle: 'angle',
   ratio: 'ratio',
@@ -182,6 +189,7 @@ const SHOWN: Readonly<Record<QuantityKind, readonly [metric: string, us: string]
   secondMoment: ['cm⁴', 'in⁴'],
   sectionModulus: ['cm³', 'in³'],
   rigidity: ['kN·m²', 'kip·in²'],
+  sagRigidity: ['kN·m³', 'kip·in³'],
   stiffness: ['kN·m/rad', 'kip·in/rad'],
   angle: ['°', '°'],
   ratio: ['', ''],
