@@ -1,4 +1,5 @@
 /** Bay templates: kept from a bay of the site, and said in words where one is to choose between them. */
+import { listed } from '../src-core/checks/phrase';
 import { addEntry } from '../src-core/site/edits';
 import { planOfBay, type BayPlan } from '../src-core/site/new-site';
 import type { Bay, Id, Site, TemplateGoods } from '../src-core/site/site';
@@ -74,6 +75,3 @@ export function goodsWords(goods: readonly TemplateGoods[], site: Site, reading:
     })
     .join(' · ');
 }
-
-const listed = (words: readonly string[]): string =>
-  words.length < 2 ? words.join('') : `${words.slice(0, -1).join(', ')} and ${words.at(-1) ?? ''}`;

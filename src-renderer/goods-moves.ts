@@ -1,4 +1,5 @@
 /** Moving what is selected by steps: along the level, to the level above or below, between bays. */
+import { opening } from '../src-core/checks/phrase';
 import type { Id, Level } from '../src-core/site/site';
 import { formatQuantity } from '../src-core/units/format';
 import { lengthOf } from '../src-core/units/quantity';
@@ -81,7 +82,7 @@ function tryAt(open: OpenSite, place: PlacementPlace, target: Target): void {
   // The drawing follows what is carried, into another bay as well.
   open.select({ bayId: there.bay.id, levelId: there.level?.id ?? null });
   const where = nameOfPlace(there.bay, there.level);
-  open.sayDone(`B${where.slice(1)}, ${formatQuantity(lengthOf(there.placement.atMm), open.reading)}.`);
+  open.sayDone(`${opening(where)}, ${formatQuantity(lengthOf(there.placement.atMm), open.reading)}.`);
 }
 
 /** The carried unit load, else what is selected, where each stands now. */

@@ -1,4 +1,5 @@
 /** What is different between two states of a site, in sentences, for whoever has to choose between them. */
+import { opening } from '../src-core/checks/phrase';
 import type { Bay, Id, Level, Placement, Site } from '../src-core/site/site';
 import { LIBRARIES } from './forms/library-items';
 
@@ -47,7 +48,7 @@ function compareNamed<T extends Named>(
   inside: (from: T, to: T) => readonly string[] | null = () => [],
 ): void {
   const old = new Map(before.map((one) => [one.id, one]));
-  const capital = item.charAt(0).toUpperCase() + item.slice(1);
+  const capital = opening(item);
   for (const one of after) {
     const was = old.get(one.id);
     old.delete(one.id);

@@ -30,7 +30,7 @@ export interface BeamDamageInput {
   readonly rules: ResolvedRules;
 }
 
-/** "the connector of the front beam of level 2 of bay A1". */
+/** "the front beam of level 2 of bay A1", "a connector of the front beam of level 2 of bay A1". */
 export const damagedPart = ({ beam, member }: Pick<FoundBeamDamage, 'beam' | 'member'>, level: string): string =>
   member === 'beam' ? `the ${beam} beam of ${level}` : `a connector of the ${beam} beam of ${level}`;
 

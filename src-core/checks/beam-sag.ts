@@ -1,7 +1,7 @@
 /** Does a beam sag no further than allowed, loaded and unloaded: the judgement of its reading as a finding. */
-import { say, type Finding, type Place, type Text } from './finding';
+import { say, type Finding, type Place } from './finding';
 import { finding, notAssessable } from './make-finding';
-import { listed } from './phrase';
+import { joined, listed } from './phrase';
 import { judgeSag, type SagInput } from './sag';
 
 export interface BeamSagInput {
@@ -34,6 +34,3 @@ export function beamSag({ place, sag }: BeamSagInput): Finding {
     ...texts,
   });
 }
-
-/** Sentences one after the other. */
-export const joined = (texts: readonly Text[]): Text => texts.flatMap((text, i) => (i === 0 ? [...text] : [' ', ...text]));

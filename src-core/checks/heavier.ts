@@ -2,8 +2,7 @@
  * Masses that may be more than stated: the verdict is by what is stated; where that is within and the same
  * goods as heavy as they may be are over, it is close. Source: facts M-23, common practice.
  */
-import type { Quantity } from '../units/quantity';
-import { ratioOf } from '../units/quantity';
+import { ratioOf, type Quantity } from '../units/quantity';
 import { say, verdictOf, type Text, type Verdict } from './finding';
 import { utilisationOf, type compared } from './make-finding';
 

@@ -1,4 +1,5 @@
 /** Small joints of English sentences. */
+import type { Text } from '../units/text';
 
 /** "a", "a and b", "a, b and c". */
 export const listed = (parts: readonly string[]): string =>
@@ -9,3 +10,6 @@ export const opening = (words: string): string => words.charAt(0).toUpperCase() 
 
 /** "Level 2" → "level 2", inside a sentence. */
 export const inside = (words: string): string => words.charAt(0).toLowerCase() + words.slice(1);
+
+/** Sentences one after the other. */
+export const joined = (texts: readonly Text[]): Text => texts.flatMap((text, i) => (i === 0 ? [...text] : [' ', ...text]));

@@ -9,6 +9,7 @@ import { say, type Text, type Verdict, type WorkedStep } from './finding';
 import type { LoosePair, WorstEffect } from './loose-pair';
 import { utilisationOf } from './make-finding';
 import { alike, type Effect, type PairInput, type WorseBeam } from './pair';
+import { inside } from './phrase';
 import { ruleValue, sourceOf } from './rule-sets';
 import { put } from './worked-values';
 
@@ -53,11 +54,11 @@ export function worstCase(input: WorstCaseInput): WorstCase {
       changes ? say` That is ${ratioOf(utilisation ?? 0)} of it; with ${how()} it would be ${ratioOf(used())}, so it is close.` : say``,
     notes: () => {
       const { kg, arrangement, end } = loose.worst(effect);
-      const counts = parts === 4 ? say`put ${massOf(kg / parts)} on the ${end ?? ''} end` : say`count as ${massOf(kg)}`;
+      const comes = parts === 4 ? say`put ${massOf(kg / parts)} on the ${end ?? ''} end` : say`count as ${massOf(kg)}`;
       const compared = allowedKg === null ? say`` : say` (utilisation ${ratioOf(used())})`;
       const origin = loose.tolerance > 0 ? say` Placement tolerance: ${sourceOf(pair.rules, 'placementTolerance')}.` : say``;
       return [
-        say`Worst case: with ${how()} it would ${counts}${compared}.${origin}`,
+        say`Worst case: with ${how()} it would ${comes}${compared}.${origin}`,
         ...(loose.tolerance > 0 && loose.beamDistance === null
           ? [say`The distance of the beams is not known, so the worst case is by the tolerance along them alone.`]
           : []),
@@ -149,7 +150,7 @@ function workedWorst({ pair, effect, worked }: WorstCaseInput, loose: LoosePair)
   const steps = worked(arranged, { side: worst.side, beam, kg: worst.kg, otherKg: NaN });
   return [...stated.flatMap((one, i) => loosened(pair, loose, worst, one, i)), ...steps].map((step, i, all) => ({
     ...step,
-    what: `Worst case: ${step.what.charAt(0).toLowerCase()}${step.what.slice(1)}`,
+    what: `Worst case: ${inside(step.what)}`,
     // The utilisation of the finding is that of the stated case.
     result: i === all.length - 1 && step.result.symbol === 'u' ? { ...step.result, symbol: 'u_worst' } : step.result,
   }));

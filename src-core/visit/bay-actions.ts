@@ -7,9 +7,8 @@
  */
 import type { LevelAudit } from '../audit/types';
 import { damagedPart, unloadForBeam } from '../checks/beam-damage';
-import { joined } from '../checks/beam-sag';
 import { say, type Text } from '../checks/finding';
-import { opening } from '../checks/phrase';
+import { joined, opening } from '../checks/phrase';
 import type { Bay, Id, Run } from '../site/site';
 import type { Action, ActionInput, ActionKind, LevelRef } from './actions';
 import { closingOf } from './follow-up';

@@ -1,9 +1,8 @@
 /** What damaged, bent and sagging beams ask for, as the site has them: their level, and both beams where one is set. */
 import type { LevelAudit } from '../audit/types';
 import { damagedPart, whyRed, unloadForBeam } from '../checks/beam-damage';
-import { joined } from '../checks/beam-sag';
 import { say } from '../checks/finding';
-import { opening } from '../checks/phrase';
+import { joined, opening } from '../checks/phrase';
 import type { Bay, BeamDamage, BeamSag, Level, Run } from '../site/site';
 import type { Action, ActionInput } from './actions';
 import { sagKey, type Since } from './bay-actions';

@@ -1,9 +1,8 @@
 /** What damaged and leaning frames ask for: the bays on both sides, and those tied to them from behind. */
-import { joined } from '../checks/beam-sag';
 import { countsAsTied } from '../checks/damage';
 import { classOfDamage, MEMBER_WORDS, type DamageJudged } from '../checks/damage-class';
 import { say, type Text } from '../checks/finding';
-import { opening } from '../checks/phrase';
+import { joined, listed, opening } from '../checks/phrase';
 import { resolveRules, type ResolvedRules } from '../checks/rule-sets';
 import { baysBehind } from '../site/behind';
 import type { Bay, Damage, Frame, Id, Run, Site } from '../site/site';
@@ -150,6 +149,5 @@ function unload(at: FrameAt): Text {
 
 function bayNames(at: FrameAt): string {
   const names = baysAtFrame(at).map(({ bay }) => `bay ${bay.name}`);
-  if (names.length === 0) return 'the frame';
-  return names.length === 1 ? (names[0] ?? '') : `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`;
+  return names.length === 0 ? 'the frame' : listed(names);
 }

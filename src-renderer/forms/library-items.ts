@@ -1,4 +1,5 @@
 /** The site's libraries as the page lists them: where they stand, what they are called, a first entry of each. */
+import { opening } from '../../src-core/checks/phrase';
 import { addEntry } from '../../src-core/site/edits';
 import type { Library } from '../../src-core/site/lookup';
 import type { BayTemplate, BeamType, Floor, FrameType, Id, LoadNotice, Pallet, Site, UnitLoad } from '../../src-core/site/site';
@@ -145,7 +146,7 @@ export const freshItem = <K extends LibraryKind>(kind: K, id: Id, name: string, 
 export function freeName(site: Site, kind: LibraryKind): string {
   const { item } = libraryOf(kind);
   const taken = new Set(itemsOf(site, kind).map((one) => one.name));
-  const base = item.charAt(0).toUpperCase() + item.slice(1);
+  const base = opening(item);
   for (let number = taken.size + 1; ; number++) if (!taken.has(`${base} ${number}`)) return `${base} ${number}`;
 }
 
