@@ -199,12 +199,12 @@ export const COMMANDS: readonly Command[] = [
     shell.ask({ kind: 'keep-template' }),
   ),
   command('duplicate-bay', 'Rack', 'Duplicate this bay', ['Mod+Shift+D'], hasBay, ({ open }) => duplicateBayHere(open)),
-  command('remove-bay', 'Rack', 'Remove this bay', [], hasBay, ({ open }) => removeBayHere(open)),
+  command('remove-bay', 'Rack', 'Delete this bay', [], hasBay, ({ open }) => removeBayHere(open)),
   command('bay-left', 'Rack', 'Move this bay left in its run', ['Mod+Shift+ArrowLeft'], still, (at) => moveBayHere(at, -1)),
   command('bay-right', 'Rack', 'Move this bay right in its run', ['Mod+Shift+ArrowRight'], still, (at) => moveBayHere(at, 1)),
   command('add-level', 'Rack', 'Add a level on top', [], hasBay, ({ open }) => addLevelOnTop(open)),
   command('duplicate-level', 'Rack', 'Duplicate this level on top', [], hasLevel, ({ open }) => duplicateLevelHere(open)),
-  command('remove-level', 'Rack', 'Remove this level', [], hasLevel, ({ open }) => removeLevelHere(open)),
+  command('remove-level', 'Rack', 'Delete this level', [], hasLevel, ({ open }) => removeLevelHere(open)),
   command('raise-level', 'Rack', 'Raise this level by one hole', ['Alt+ArrowUp'], stillOnLevel, ({ open }) => shiftLevelHere(open, 1)),
   command('lower-level', 'Rack', 'Lower this level by one hole', ['Alt+ArrowDown'], stillOnLevel, ({ open }) => shiftLevelHere(open, -1)),
   command('swap-level-up', 'Rack', 'Swap this level with the one above', ['Mod+Shift+ArrowUp'], stillOnLevel, ({ open }) =>
@@ -231,7 +231,7 @@ export const COMMANDS: readonly Command[] = [
   command('duplicate-run', 'Rack', 'Duplicate this run', [], hasRun, ({ open }) => open.run && copyRun(open, open.run)),
   command('run-up', 'Rack', 'Move this run up in the site', [], hasRun, ({ open }) => open.run && shiftRun(open, open.run, -1)),
   command('run-down', 'Rack', 'Move this run down in the site', [], hasRun, ({ open }) => open.run && shiftRun(open, open.run, 1)),
-  command('remove-run', 'Rack', 'Remove this run', [], hasRun, ({ open }) => open.run && removeRunFrom(open, open.run)),
+  command('remove-run', 'Rack', 'Delete this run', [], hasRun, ({ open }) => open.run && removeRunFrom(open, open.run)),
 
   // ------------------------------------------------------------ go to
   command('find', 'Go to', 'Find a bay or goods by name…', ['Mod+F'], always, ({ shell }) => shell.ask({ kind: 'find' })),
@@ -272,7 +272,7 @@ export const COMMANDS: readonly Command[] = [
     always,
     ({ open }) => open.switchUnits(),
   ),
-  command('preferences', 'View', 'Light or dark, text size, numbers…', ['Mod+,'], always, ({ shell }) =>
+  command('preferences', 'View', 'Preferences: colours, text size, numbers…', ['Mod+,'], always, ({ shell }) =>
     shell.ask({ kind: 'preferences' }),
   ),
   command('commands', 'View', 'All commands', ['Mod+K'], always, ({ shell }) => shell.ask({ kind: 'commands' })),

@@ -123,9 +123,9 @@ test('after goods, a level, a bay and a run are taken out the focus is on what i
     await goods(page, 'a4-l3-g2').waitFor({ state: 'detached' });
     await eventually(() => page.evaluate(() => (document.activeElement as HTMLElement | null)?.dataset['level'])).toBe('3');
 
-    await command(page, 'Remove this level');
+    await command(page, 'Delete this level');
     await eventually(() => page.evaluate(() => (document.activeElement as HTMLElement | null)?.dataset['level'])).toBe('2');
-    await command(page, 'Remove this bay');
+    await command(page, 'Delete this bay');
     await eventually(() => focused(page)).toMatch(/^Bay A5/);
 
     await command(page, 'Layout of runs and bays');

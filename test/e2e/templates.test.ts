@@ -153,11 +153,11 @@ test('bays, runs and levels are renamed, moved and deleted by keys and by the mo
     await eventually(async () => (await names())[0]).toContain('A2');
     await page.keyboard.press('Control+Shift+ArrowUp');
     await says(page).toMatch(/^Levels 1 and 2 of bay A2 swapped, each with its beams and goods\./);
-    await command(page, 'Remove this level');
+    await command(page, 'Delete this level');
     await says(page).toMatch(/^Level 2 of bay A2 deleted with its goods\. Undo brings it back\./);
     await command(page, 'Move this run down in the site');
     await says(page).toBe('Run A moved down.');
-    await command(page, 'Remove this run');
+    await command(page, 'Delete this run');
     await says(page).toMatch(/^Run A with 5 bays deleted\. Undo brings it back\./);
     for (let i = 0; i < 5; i += 1) await page.keyboard.press('Control+Z');
     await goToBay(page, 'A2');
