@@ -45,7 +45,8 @@ export function joinVisits(
 }
 
 const ADDED = ' (brought in)';
-const broughtIn = (name: string): string => `${name.slice(0, LIMITS.nameLength - ADDED.length)}${ADDED}`;
+/** A letter of two code units is not cut in half. */
+const broughtIn = (name: string): string => `${name.slice(0, LIMITS.nameLength - ADDED.length).replace(/[\ud800-\udbff]$/, '')}${ADDED}`;
 
 /** A visit with photos that had to be kept under other names. */
 export const withPhotoNames = (visit: Visit, names: ReadonlyMap<string, string>): Visit =>

@@ -39,6 +39,10 @@ describe('visits', () => {
     const [step] = joinVisits(here(long), [{ ...changed, name: long.name }], 'keep-both', writeVisit, copyId);
     expect(step?.visit.name).toMatch(/^x+ \(brought in\)$/);
     expect(() => writeVisit(step?.visit ?? round)).not.toThrow();
+    // Cut in the middle of a letter that takes two code units.
+    const wide = { ...round, name: '🏗'.repeat(100) };
+    const [cut] = joinVisits(here(wide), [{ ...changed, name: wide.name }], 'keep-both', writeVisit, copyId);
+    expect(cut?.visit.name).toMatch(/^🏗+ \(brought in\)$/u);
   });
 
   test('photos under other names are found again', () => {
