@@ -44,7 +44,7 @@ const OTHER_LETTERS = 1.2;
 const widths = new Map<string, number>();
 
 /** In parts of the text's size. Kept, as every bay of a run is asked at every edit. */
-function textWidth(text: string): number {
+function roughWidth(text: string): number {
   const known = widths.get(text);
   if (known !== undefined) return known;
   const width = [...text].reduce((sum, letter) => sum + (LETTERS.find(([kind]) => kind.test(letter))?.[1] ?? OTHER_LETTERS), 0);
@@ -58,6 +58,6 @@ const BUTTON = { least: 3.25, padding: 0.6, mark: 1.25, gap: 0.3, text: 0.78125 
 /** px that the button of a bay takes: for its drawing, and for its mark and name. The strip needs it before it is drawn. */
 export function buttonWidth(bay: BayDrawn, rate: number, rem: number): number {
   const { least, padding, mark, gap, text } = BUTTON;
-  const name = (mark + gap + text * textWidth(bay.name) + padding) * rem;
+  const name = (mark + gap + text * roughWidth(bay.name) + padding) * rem;
   return Math.max(least * rem, drawingWidth(bay, rate) + padding * rem, name);
 }
