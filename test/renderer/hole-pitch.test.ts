@@ -1,19 +1,13 @@
-import { afterEach, expect, test } from 'vitest';
+import { expect, test } from 'vitest';
 import { moveLevel } from '../../src-core/site/edits';
 import { freshItem } from '../../src-renderer/forms/library-items';
-import { OpenSite } from '../../src-renderer/open-site.svelte';
+import type { OpenSite } from '../../src-renderer/open-site.svelte';
 import { shiftLevelHere } from '../../src-renderer/rack-edits';
-import { MemoryHost } from './memory-host';
-import { smallSite } from './sites';
-
-let opened: OpenSite | null = null;
-afterEach(() => opened?.close());
+import { openedSite } from './opened';
 
 /** Levels at 1500, 3000 and 4500 mm; the level of this number is chosen. */
 function openSite(number: number): OpenSite {
-  const site = smallSite();
-  const open = new OpenSite({ host: new MemoryHost(), id: site.id, site, revision: null, savedAt: null, today: () => '2026-12-01' });
-  opened = open;
+  const open = openedSite();
   open.select({ levelId: open.bay?.levels[number - 1]?.id ?? null });
   return open;
 }
@@ -29,6 +23,15 @@ test('a level goes up and down by one hole of 50 mm', () => {
   shiftLevelHere(open, -1);
   shiftLevelHere(open, -1);
   expect(heights(open)).toEqual([1500, 2950, 4500]);
+});
+
+test('in a site of pounds and inches a level goes by a hole of 2 in where the holes are not known', () => {
+  const open = openSite(2);
+  open.edit('Units', (site) => ({ ...site, units: 'us' }));
+  put(open, 3048);
+  shiftLevelHere(open, 1);
+  // 3048 mm = 120 in; 122 in = 3098.8 mm.
+  expect(heights(open)).toEqual([1500, 3098.8, 4500]);
 });
 
 test('a level between two holes comes onto the pitch', () => {
