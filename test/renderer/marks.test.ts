@@ -47,7 +47,7 @@ test('an upright bears the worst class of its damages, as it is on the day, and 
   // Amber counts as red after four weeks (facts F-84).
   expect(marks(site, '2026-06-30').left.class).toBe('amber');
   expect(marks(site, '2026-07-01').left.class).toBe('red');
-  const unread = editFrame(site, 'A-frame-3', { damages: [bow({ id: 'g', acrossMm: null }), bow({ id: 'f' })] });
+  const unread = editFrame(site, 'A-frame-3', { damages: [bow({ id: 'd3', acrossMm: null }), bow({ id: 'd4' })] });
   expect(marks(unread).right.class).toBe('unclassed');
 });
 
