@@ -24,7 +24,8 @@ export const damagesBefore = (site: Site): ReadonlySet<Id> =>
 export const sameFind = <T extends SeenDamage | SagReading>(one: T, other: T): boolean =>
   ('id' in one ? one.id : '') === ('id' in other ? other.id : '') && differences(one, other).length === 0;
 
-const placeOf = (damage: SeenDamage): Id => (damage.on === 'frame' ? damage.frameId : damage.levelId);
+/** The frame or level that it is at. */
+export const placeOf = (damage: SeenDamage): Id => (damage.on === 'frame' ? damage.frameId : damage.levelId);
 
 /** Stays where it is, unless the visit has it somewhere else by now, or took it out after it had brought it. */
 function stays(id: Id, at: Id, { damages, was, places }: Finds): boolean {

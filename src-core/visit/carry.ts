@@ -1,6 +1,6 @@
 /** Carries what a bay's visit found into the site, so that its checks know of it from then on. */
 import type { Answer, Bay, Frame, Id, Level, Site } from '../site/site';
-import { carrySags, damagesBefore, sameFind, withBeamDamages, withFrameDamages, type Finds } from './carry-finds';
+import { carrySags, damagesBefore, placeOf, sameFind, withBeamDamages, withFrameDamages, type Finds } from './carry-finds';
 import { differences } from './differences';
 import { bayOf, finishBay, markCarried } from './edits';
 import { closingOf, type FollowUp } from './follow-up';
@@ -38,8 +38,7 @@ export function finishInto(
   const before = bayOf(visit, bayId);
   const known = damagesBefore(site);
   const was = before.carried;
-  const settled = (damage: SeenDamage): boolean =>
-    !known.has(damage.id) && ['damage', 'beam-damage'].some((kind) => closingOf(followUp, `${kind}:${damage.id}`) !== null);
+  const settled = isSettled(known, followUp);
   const asCarried = (damage: SeenDamage): boolean => was?.damages.some((one) => sameFind(one, damage)) ?? false;
   let after = visit;
   for (const damage of before.damages)
@@ -56,6 +55,49 @@ export function finishInto(
     site: carried(site, carrying),
     visit: markCarried(after, bayId, { damages: seen.damages.filter(({ id }) => own.has(id) || !known.has(id)), sags: seen.sags }),
   };
+}
+
+/** Closed, and so taken off the site. */
+const isSettled =
+  (known: ReadonlySet<Id>, followUp: FollowUp) =>
+  ({ id }: SeenDamage): boolean =>
+    !known.has(id) && ['damage', 'beam-damage'].some((kind) => closingOf(followUp, `${kind}:${id}`) !== null);
+
+/**
+ * Damages that finishing a bay of the visit put into the site and that it has no longer, though nobody said
+ * that they were put right: undone, most likely. Where their frame or level is gone as well, there is nothing to say.
+ */
+export function lostDamages(site: Site, visit: Visit, followUp: FollowUp): readonly SeenDamage[] {
+  const known = damagesBefore(site);
+  const places = placesOf(site);
+  const settled = isSettled(known, followUp);
+  return visit.bays.flatMap(({ finished, carried, damages }) =>
+    finished && carried !== null
+      ? damages.filter((damage) => !known.has(damage.id) && !settled(damage) && places.has(placeOf(damage)))
+      : [],
+  );
+}
+
+/** The site with those damages as they were seen, and nothing else of the visit. */
+export const withLost = (site: Site, damages: readonly SeenDamage[]): Site =>
+  withFinds(site, { damages, was: null, places: placesOf(site) });
+
+function withFinds(site: Site, finds: Finds): Site {
+  const runs = mapped(site.runs, (run) => {
+    const frames = mapped(run.frames, (frame) => {
+      const damages = withFrameDamages(frame, finds);
+      return damages === frame.damages ? frame : { ...frame, damages };
+    });
+    const bays = mapped(run.bays, (bay) => {
+      const levels = mapped(bay.levels, (level) => {
+        const beamDamages = withBeamDamages(level, finds);
+        return beamDamages === level.beamDamages ? level : { ...level, beamDamages };
+      });
+      return levels === bay.levels ? bay : { ...bay, levels };
+    });
+    return frames === run.frames && bays === run.bays ? run : { ...run, frames, bays };
+  });
+  return runs === site.runs ? site : { ...site, runs };
 }
 
 const swapDamage = (visit: Visit, bayId: Id, oldId: Id, damage: SeenDamage): Visit => {

@@ -5,7 +5,7 @@ import { editFrame } from '../../../src-core/site/edits';
 import { findFrame, findLevel } from '../../../src-core/site/lookup';
 import type { Site } from '../../../src-core/site/site';
 import { actionsOf, stillOpen, type OpenAction } from '../../../src-core/visit/actions';
-import { finishInto } from '../../../src-core/visit/carry';
+import { finishInto, lostDamages, withLost } from '../../../src-core/visit/carry';
 import { answer, markLock, recordDamage, recordSag, resumeBay } from '../../../src-core/visit/edits';
 import { closeAction, newFollowUp, type FollowUp } from '../../../src-core/visit/follow-up';
 import { afterClosing } from '../../../src-core/visit/repair';
@@ -119,4 +119,20 @@ test('a level that was unloaded does not sag again by an old reading when its ba
   // Read again: that counts.
   const read = finish(relieved.site, recordSag(resumeBay(visit, BAY), BAY, { ...deep, loadedMm: 9 }), relieved.book);
   expect(findLevel(read.site, LEVEL).level.sags).toMatchObject([{ loadedMm: 9, unloadedMm: 1 }]);
+});
+
+test('what was carried and undone is told as lost until it is put back; what was closed is not', () => {
+  const before = siteOf();
+  const { site, visit } = finish(before, recordDamage(recordDamage(visitOn('2026-06-02'), BAY, damaged), BAY, dent));
+  const lost = (of: Site, book = NONE) => lostDamages(of, visit, book).map(({ id }) => id);
+  expect(lost(site)).toEqual([]);
+  expect(lost(before)).toEqual(['d9', 'dent']);
+  expect(withLost(before, lostDamages(before, visit, NONE))).toEqual(site);
+  const first = done(site, [visit]);
+  expect(lost(first.site, first.book)).toEqual([]);
+  // One of the two repaired, and the visit undone all the same: only the other one is lost.
+  expect(lost(before, first.book)).toHaveLength(1);
+  // Nothing is lost with the bay or frame itself.
+  expect(lostDamages({ ...before, runs: [] }, visit, NONE)).toEqual([]);
+  expect(lostDamages(before, resumeBay(visit, BAY), NONE)).toEqual([]);
 });
