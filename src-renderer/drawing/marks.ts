@@ -1,5 +1,4 @@
 /** What was found at a bay's frames and beams, as it is marked in its drawings: the class of its damage, and what stays bent. */
-import { damagedPart } from '../../src-core/checks/beam-damage';
 import { classOfDamage, MEMBER_WORDS, type DamageClass } from '../../src-core/checks/damage-class';
 import { opening } from '../../src-core/checks/phrase';
 import { resolveRules } from '../../src-core/checks/rule-sets';
@@ -68,7 +67,7 @@ export function bayMarks(site: Site, run: Run, bay: Bay, today: string, reading:
 const damageOf = ({ beamDamages }: Level, number: number): readonly Found[] =>
   beamDamages.map((damage) => ({
     id: damage.id,
-    part: opening(damagedPart(damage, `level ${number}`)),
+    part: opening(`${damage.member === 'connector' ? 'connector of the ' : ''}${damage.beam} beam of level ${number}`),
     class: 'red',
     word: DAMAGE_CLASS_WORDS.red.word,
   }));

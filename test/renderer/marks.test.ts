@@ -62,7 +62,7 @@ test('a damaged beam is red; a measured set is marked without a class, and a sag
   const at = marks(site).levels.get('A2-level-1');
   expect(at).toMatchObject({ class: 'red', set: true });
   expect(at?.found.map(({ part, word }) => `${part}: ${word}`)).toEqual([
-    'A connector of the rear beam of level 1: Red',
+    'Connector of the rear beam of level 1: Red',
     'Front beam of level 1: stays bent 2\u00a0mm down, 3\u00a0mm sideways',
   ]);
 });
