@@ -92,6 +92,11 @@ export class Findings {
     return { ...light, verdict, bays, frames };
   }
 
+  /** Runs whose audit broke down, the run that is looked at among them. */
+  troublesWith(run: Run | null, { trouble }: Near): ReadonlyMap<Id, string> {
+    return trouble === null || run === null ? this.troubles : new SvelteMap([...this.troubles, [run.id, trouble]]);
+  }
+
   /** A bay of the run with every calculation; null where its audit breaks down. */
   wholeBay(site: Site, runId: Id, bayId: Id): BayAudit | null {
     return orNull(() => auditBay(site, runId, bayId, this.today(), this.#cache));

@@ -1,7 +1,7 @@
 /** Brings the focus to the form that was asked for, or to what is left beside something that was taken out. */
 import { tick } from 'svelte';
 import type { Neighbour } from './neighbours';
-import type { Task } from './open-site.svelte';
+import type { Task } from './tasks';
 
 export async function focusTask({ kind, id, field }: Task): Promise<void> {
   await tick();

@@ -3,55 +3,27 @@
  * on disk. Every part of the page reads this and changes the site only through it.
  */
 import { createContext } from 'svelte';
-import { SvelteMap } from 'svelte/reactivity';
 import type { FrameAudit, LevelAudit, RunAudit } from '../src-core/audit/types';
 import type { Host } from '../src-core/host';
-import { everyId } from '../src-core/site/lookup';
 import type { Id, Level, Placement, Site } from '../src-core/site/site';
 import { formatQuantity, type Reading } from '../src-core/units/format';
 import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
 import { VERDICT_WORDS } from '../src-core/words/verdict-words';
 import type { WorkerLike } from './audit-link';
 import { Findings } from './findings.svelte';
-import { bayPlace, besideChosenBay, frameOfDamage, framePlace, levelPlace, nameOfPlace, placementPlace, type Target } from './places';
+import { nameOfPlace, placementPlace, type Target } from './places';
 import type { Neighbour } from './neighbours';
-import { moved, putDown } from './put-down';
+import { allMoved, moved, putDown, type Move } from './put-down';
 import { refusal, type Refused } from './refusal';
 import { Saving, type SavedState } from './saving.svelte';
 import { completed, existing, firstOf, NOTHING, type Selection } from './selection';
+import { choiceFor, followed, formFor, taskOfField, type Task } from './tasks';
+import { todayHere } from './today';
+import { Typed } from './typed.svelte';
 import { amend, record, redo, startHistory, undo, type UndoHistory } from './undo-history';
 
 export type { Target } from './places';
 export type { Selection } from './selection';
-
-/** What the side panel is asked to show, and the field in it that is to be filled. */
-export interface Task {
-  readonly kind: string;
-  readonly id: Id;
-  /** `kind:id:field`, whole; null where the form alone is wanted. */
-  readonly field: string | null;
-}
-
-/** Text typed into a field, and the units and locale it was typed in. */
-export interface Draft {
-  readonly text: string;
-  readonly reading: Reading;
-  /** What the field is called. */
-  readonly label: string;
-}
-
-/** What is filled in by half and counts for nothing yet: a row of a table, a survey, new goods. */
-export interface Half {
-  /** What it is called: "Span 3". */
-  readonly label: string;
-  readonly typed: object;
-}
-
-/** One unit load and where it goes. */
-export interface Move {
-  readonly placementId: Id;
-  readonly target: Target;
-}
 
 export interface OpenSiteOptions {
   readonly host: Host;
@@ -94,10 +66,8 @@ export class OpenSite {
   lastTemplate: Id | null = null;
   /** ISO date of today. */
   readonly today: () => string;
-  /** Text typed into fields that could not be taken over yet, by field, so that it outlives the form. */
-  readonly drafts = new SvelteMap<string, Draft>();
-  /** What is half filled in, by its field, so that it outlives its form as well. */
-  readonly halves = new SvelteMap<string, Half>();
+  /** What is typed into forms and not taken over yet. */
+  readonly typed = new Typed();
 
   #history = $state.raw<UndoHistory<Site>>() as UndoHistory<Site>;
   /** A change that is shown and checked but not made yet, while something is dragged or carried. */
@@ -159,7 +129,7 @@ export class OpenSite {
     this.#wanted = completed(this.site, before, part);
     this.refusedMove = null;
     if (before.bayId !== null && this.selection.bayId !== before.bayId) this.#trail = [...this.#trail.slice(-99), before];
-    this.#follow();
+    if (this.task !== null) this.task = followed(this.task, this.selection);
     if (this.carried !== null && part.placementIds && !part.placementIds.includes(this.carried)) this.putBack();
   };
 
@@ -176,15 +146,6 @@ export class OpenSite {
     this.goingOn = { ...neighbour.focus };
   };
 
-  /** Forms of bay and level stay with what is chosen. */
-  #follow(): void {
-    const { task, selection } = this;
-    if (task === null) return;
-    const id = { level: selection.levelId, bay: selection.bayId, frames: selection.bayId }[task.kind];
-    if (id === null) this.task = null;
-    else if (id !== undefined && id !== task.id) this.task = { kind: task.kind, id, field: null };
-  }
-
   /** Findings of every run by its id, without their calculations. A new run has none until the audit has seen it. */
   get audits(): ReadonlyMap<Id, RunAudit> {
     return this.findings.audits;
@@ -192,10 +153,7 @@ export class OpenSite {
 
   /** Runs whose audit broke down, with what it said. */
   get auditTroubles(): ReadonlyMap<Id, string> {
-    const { trouble } = this.#near;
-    return trouble === null || this.run === null
-      ? this.findings.troubles
-      : new SvelteMap([...this.findings.troubles, [this.run.id, trouble]]);
+    return this.findings.troublesWith(this.run, this.#near);
   }
 
   /** True while findings of some run are older than the site. */
@@ -318,8 +276,8 @@ export class OpenSite {
   /** Several at once, as one step of undo. */
   moveAll = (moves: readonly Move[], merge?: string): Refused | null => {
     const placementIds = moves.map(({ placementId }) => placementId);
-    const all = (site: Site) => moves.reduce((next, { placementId, target }) => moved(next, placementId, target), site);
-    const refused = this.editGoods(`Move ${moves.length} unit loads`, (site) => this.roomFor(all(site), placementIds), merge ?? null);
+    const change = (site: Site) => this.roomFor(allMoved(site, moves), placementIds);
+    const refused = this.editGoods(`Move ${moves.length} unit loads`, change, merge ?? null);
     if (refused === null) this.select({ placementIds });
     return refused;
   };
@@ -344,14 +302,12 @@ export class OpenSite {
   /** The same for several that go together. */
   tryMoves = (moves: readonly Move[]): void => {
     const before = this.#history.value;
-    if (moves.some(({ placementId }) => placementPlace(before, placementId) === null)) return;
-    const there = moves.reduce((site, { placementId, target }) => moved(site, placementId, target), before);
+    const placementIds = moves.map(({ placementId }) => placementId);
+    if (placementIds.some((id) => placementPlace(before, id) === null)) return;
+    const there = allMoved(before, moves);
     this.#tried = moves;
     try {
-      this.#trial = this.roomFor(
-        there,
-        moves.map(({ placementId }) => placementId),
-      );
+      this.#trial = this.roomFor(there, placementIds);
     } catch (error) {
       // Shown where it is held; putting it down there says why it cannot stay.
       if (!(error instanceof RangeError)) throw error;
@@ -398,24 +354,14 @@ export class OpenSite {
   // ------------------------------------------------------------ forms
 
   /** Opens the form that holds a field, named `kind:id:field` as findings name what is missing. */
-  openField = (field: string): void => {
-    const [kind = '', id = '', ...rest] = field.split(':');
-    this.#open({ kind, id, field: rest.length > 0 ? field : null });
-  };
+  openField = (field: string): void => this.#open(taskOfField(field));
 
   openTask = (kind: string, id: Id): void => this.#open({ kind, id, field: null });
 
   #open(task: Task): void {
-    const { kind, id } = task;
-    const bay = bayPlace(this.site, id);
-    const frame = kind === 'damage' ? frameOfDamage(this.site, id) : framePlace(this.site, id);
-    if (bay) this.select({ runId: bay.run.id, bayId: id });
-    else if (levelPlace(this.site, id)) this.select({ levelId: id });
-    else if (placementPlace(this.site, id)) this.select({ placementIds: [id] });
-    else if (frame && !besideChosenBay(this.run, this.bay, frame.frame))
-      this.select({ bayId: frame.run.bays[Math.max(0, frame.index - 1)]?.id ?? null });
-    else if (kind === 'run') this.select({ runId: id });
-    this.task = frame ? { ...task, kind: 'frame', id: frame.frame.id } : task;
+    const choice = choiceFor(task, this);
+    if (choice !== null) this.select(choice);
+    this.task = formFor(task, this.site);
     this.asked = this.task;
     this.#onTask(this.task);
   }
@@ -424,22 +370,10 @@ export class OpenSite {
     this.task = null;
   };
 
-  /** What was typed and not taken over, or filled in by half, by name; what it was typed for still stands. */
+  /** What was typed and not taken over, or filled in by half, by name. */
   get unfinished(): readonly string[] {
-    const standing = everyId(this.site);
-    const here = (key: string) => {
-      const [, id] = key.split(':');
-      return id === undefined || standing.includes(id);
-    };
-    const labels = [...this.halves, ...this.drafts].flatMap(([key, { label }]) => (here(key) ? [label] : []));
-    return labels.filter((label, i) => labels.indexOf(label) === i);
+    return this.typed.unfinishedIn(this.site);
   }
-
-  /** Forgets what was typed in a field and in the rows under it. */
-  dropTyped = (field: string): void => {
-    for (const kept of [this.halves, this.drafts])
-      for (const key of [...kept.keys()]) if (key === field || key.startsWith(`${field}.`)) kept.delete(key);
-  };
 
   // ------------------------------------------------------------ disk
 
@@ -463,8 +397,3 @@ export class OpenSite {
 }
 
 export const [useOpenSite, setOpenSite] = createContext<OpenSite>();
-
-function todayHere(): string {
-  const now = new Date();
-  return `${now.getFullYear()}-${String(now.getMonth() + 1).padStart(2, '0')}-${String(now.getDate()).padStart(2, '0')}`;
-}

@@ -12,6 +12,15 @@ import { nameOfPlace, placementPlace, type PlacementPlace, type Target } from '.
 export const moved = (site: Site, placementId: Id, target: Target): Site =>
   movePlacement(site, placementId, { ...target, atMm: Number(target.atMm.toFixed(4)) });
 
+/** One unit load and where it goes. */
+export interface Move {
+  readonly placementId: Id;
+  readonly target: Target;
+}
+
+export const allMoved = (site: Site, moves: readonly Move[]): Site =>
+  moves.reduce((next, { placementId, target }) => moved(next, placementId, target), site);
+
 export interface PutDown {
   /** The site before anything was moved. */
   readonly before: Site;

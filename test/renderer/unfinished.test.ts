@@ -4,17 +4,17 @@ import { shellOn } from './opened';
 
 test('what is filled in by half is named, and leaving the site asks first', async () => {
   const { shell, open } = await shellOn();
-  open.halves.set('notice:notice:levelKg', { label: 'Rated: height 3', typed: { heightMm: 1800 } });
-  open.drafts.set('bay:gone:clearEntryMm', { text: '1e3', reading: open.reading, label: 'Clear entry' });
+  open.typed.halves.set('notice:notice:levelKg', { label: 'Rated: height 3', typed: { heightMm: 1800 } });
+  open.typed.drafts.set('bay:gone:clearEntryMm', { text: '1e3', reading: open.reading, label: 'Clear entry' });
   expect(open.unfinished).toEqual(['Rated: height 3']);
   const bayId = open.bay?.id ?? '';
-  open.drafts.set(`bay:${bayId}:clearEntryMm`, { text: '1e3', reading: open.reading, label: 'Clear entry' });
+  open.typed.drafts.set(`bay:${bayId}:clearEntryMm`, { text: '1e3', reading: open.reading, label: 'Clear entry' });
   expect(open.unfinished).toEqual(['Rated: height 3', 'Clear entry']);
   shell.leave();
   expect(shell.dialog).toEqual({ kind: 'leave' });
   shell.close();
-  open.dropTyped('notice:notice:levelKg');
-  open.dropTyped(`bay:${bayId}:clearEntryMm`);
+  open.typed.drop('notice:notice:levelKg');
+  open.typed.drop(`bay:${bayId}:clearEntryMm`);
   shell.leave();
   await expect.poll(() => shell.open).toBeNull();
 });
@@ -22,10 +22,10 @@ test('what is filled in by half is named, and leaving the site asks first', asyn
 test('dropping a table drops the cells typed in it, and nothing beside it', async () => {
   const { open } = await shellOn();
   const draft = (label: string) => ({ text: '5', reading: open.reading, label });
-  open.drafts.set('notice:notice:table.2.heightMm', draft('Height 3'));
-  open.drafts.set('notice:notice:tables', draft('Another'));
-  open.halves.set('notice:notice:table', { label: 'Row 3', typed: {} });
-  open.dropTyped('notice:notice:table');
+  open.typed.drafts.set('notice:notice:table.2.heightMm', draft('Height 3'));
+  open.typed.drafts.set('notice:notice:tables', draft('Another'));
+  open.typed.halves.set('notice:notice:table', { label: 'Row 3', typed: {} });
+  open.typed.drop('notice:notice:table');
   expect(open.unfinished).toEqual(['Another']);
 });
 
@@ -35,7 +35,7 @@ test('what was typed for an entry that is gone is no longer asked about', async 
     ...site,
     runs: site.runs.map((run) => ({ ...run, bays: run.bays.map((bay) => ({ ...bay, noticeId: null })) })),
   }));
-  open.halves.set('notice:notice:levelKg', { label: 'Row', typed: {} });
+  open.typed.halves.set('notice:notice:levelKg', { label: 'Row', typed: {} });
   open.edit('Delete', (site) => removeEntry(site, 'notices', 'notice'));
   expect(open.unfinished).toEqual([]);
   open.undo();
