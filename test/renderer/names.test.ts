@@ -71,9 +71,9 @@ test('two states are told apart in sentences: goods moved, taken off, bays chang
 
 test('times, sizes and counts are said as people say them', () => {
   const noon = new Date(2026, 11, 1, 12, 0);
-  expect(sayTime(new Date(2026, 11, 1, 9, 5).toISOString(), 'en-GB', noon)).toBe('today 09:05');
-  expect(sayTime(new Date(2026, 4, 3, 9, 5).toISOString(), 'en-GB', noon)).toBe('3 May 2026 09:05');
-  expect(sayTime(new Date(2026, 11, 1, 9, 5, 7).toISOString(), 'en-GB', noon, true)).toBe('today 09:05:07');
+  expect(sayTime(new Date(2026, 11, 1, 9, 5).toISOString(), 'en-GB', noon)).toBe('today 9:05');
+  expect(sayTime(new Date(2026, 4, 3, 9, 5).toISOString(), 'en-GB', noon)).toBe('3 May 2026 9:05');
+  expect(sayTime(new Date(2026, 11, 1, 9, 5, 7).toISOString(), 'en-GB', noon, true)).toBe('today 9:05:07');
   expect(sayTime('no time', 'en-GB')).toBe('at an unknown time');
   expect(sayBytes(22_400_000, 'en-GB')).toBe('22 MB');
   expect(sayBytes(3_450, 'en-GB')).toBe('3.5 kB');
