@@ -83,10 +83,14 @@ const tooLarge = (bytes: number): string =>
 
 /** The first few problems as sentences, with their places. */
 export function sentences(problems: readonly Problem[], most = 20): string {
-  const lines = problems.slice(0, most).map(({ path, message }) => (path === '' ? `The file: ${message}` : `${path}: ${message}`));
+  const lines = problems.slice(0, most).map(({ path, message }) => (path === '' ? ofTheFile(message) : `${path}: ${message}`));
   if (problems.length > most) lines.push(`And ${problems.length - most} more.`);
   return lines.join('\n');
 }
+
+/** "The file is empty." rather than "The file: Is empty." */
+const ofTheFile = (message: string): string =>
+  /^(Is|Breaks) /.test(message) ? `The file ${message.charAt(0).toLowerCase()}${message.slice(1)}` : `The file: ${message}`;
 
 export const misnamed = (name: string, id: string): string =>
   `${name} holds the site with the id ${id}, so it is a copy made outside the program. Import it to have it as a site of its own.`;
