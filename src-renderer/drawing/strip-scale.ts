@@ -53,11 +53,11 @@ function roughWidth(text: string): number {
 }
 
 /** Sizes of a bay's button, rem. */
-const BUTTON = { least: 3.25, padding: 0.6, mark: 1.25, gap: 0.3, text: 0.78125 };
+const BUTTON = { least: 3.25, padding: 0.6, mark: 1.25, gap: 0.3, text: 0.78125, widest: 10 };
 
-/** px that the button of a bay takes: for its drawing, and for its mark and name. The strip needs it before it is drawn. */
+/** px that the button of a bay takes: for its drawing, and for its mark and name, of which a long one is cut. The strip needs it before it is drawn. */
 export function buttonWidth(bay: BayDrawn, rate: number, rem: number): number {
-  const { least, padding, mark, gap, text } = BUTTON;
-  const name = (mark + gap + text * roughWidth(bay.name) + padding) * rem;
+  const { least, padding, mark, gap, text, widest } = BUTTON;
+  const name = Math.min(widest, mark + gap + text * roughWidth(bay.name) + padding) * rem;
   return Math.max(least * rem, drawingWidth(bay, rate) + padding * rem, name);
 }
