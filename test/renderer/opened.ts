@@ -3,6 +3,7 @@ import { afterEach } from 'vitest';
 import { writeSiteFile } from '../../src-core/site/envelope';
 import type { Site } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
+import type { WorkerLike } from '../../src-renderer/audit-link';
 import { OpenSite } from '../../src-renderer/open-site.svelte';
 import { Shell } from '../../src-renderer/shell.svelte';
 import { MemoryHost } from './memory-host';
@@ -19,6 +20,18 @@ export function openedSite(site: Site = smallSite()): OpenSite {
   const open = new OpenSite({ host: new MemoryHost(), id: site.id, site, revision: null, savedAt: null, today: () => TODAY });
   opened.push(open);
   return open;
+}
+
+/** On the disk of a host, whose file is the site’s text alone. */
+export async function savedSite(
+  site: Site = smallSite(),
+  makeWorker: (() => WorkerLike) | null = null,
+): Promise<{ readonly open: OpenSite; readonly host: MemoryHost }> {
+  const host = new MemoryHost();
+  const { revision, savedAt } = await host.saveSite({ id: site.id, body: writeSite(site), baseRevision: null });
+  const open = new OpenSite({ host, id: site.id, site, revision, savedAt, makeWorker, today: () => TODAY });
+  opened.push(open);
+  return { open, host };
 }
 
 /** A site's file as the hosts give it out; they prove the checksum, and the page only reads what is inside. */
