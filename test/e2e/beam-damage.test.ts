@@ -90,12 +90,19 @@ test('a bay that is taken up again takes back what it wrongly put into the site'
   }),
 );
 
+/** Who and how, and the button that takes it off. */
+async function putRight(page: Page, button: string): Promise<void> {
+  await type(field(page, 'Done by'), 'F. Fitter');
+  await type(field(page, 'How'), 'Beam replaced, order 4711');
+  await enter(page.getByRole('button', { name: button }));
+}
+
 test('damage and sag are entered, corrected, undone and taken off in the form of the level, by keyboard', { timeout: 180_000 }, () =>
   withProgram(async ({ page }) => {
     await openDemo(page);
     await goToBay(page, 'A1');
     await goToLevel(page, 2);
-    await command(page, 'Level: height, beams, locks');
+    await command(page, 'Level: height, beams, damage');
     const record = page.getByRole('button', { name: 'Record damage of a beam' });
     await enter(record);
     await eventually(() => verdict(page)).toContain('Over');
@@ -112,7 +119,12 @@ test('damage and sag are entered, corrected, undone and taken off in the form of
     expect(await page.getByRole('button', { name: 'Undo', exact: true }).getAttribute('title')).toBe(
       'Undo: Change damage of level 2 of bay A1',
     );
-    await enter(page.getByRole('button', { name: 'Replaced or repaired: take it off' }));
+    await enter(page.getByRole('button', { name: 'Replaced or repaired: take it off…' }));
+    // What leaves the rack says who did it and how, wherever it is taken off.
+    expect(await field(page, 'Done by').evaluate((one) => one === document.activeElement)).toBe(true);
+    await enter(page.getByRole('button', { name: 'Beam replaced: take the damage off the level' }));
+    await page.getByText('Say who did it, when, and how').waitFor();
+    await putRight(page, 'Beam replaced: take the damage off the level');
     await eventually(() => verdict(page)).toContain('Within');
     expect(await record.evaluate((one) => one === document.activeElement)).toBe(true);
 
@@ -123,7 +135,8 @@ test('damage and sag are entered, corrected, undone and taken off in the form of
     await eventually(() => verdict(page)).toContain('Over');
     expect(await axeFindings(page, [], 'aside')).toEqual([]);
     expect(await lostText(page)).toEqual([]);
-    await enter(page.getByRole('button', { name: 'Replaced or repaired: take it off' }));
+    await enter(page.getByRole('button', { name: 'Replaced or repaired: take it off…' }));
+    await putRight(page, 'Beam replaced: take the damage off the level');
     await type(field(front, 'Set, down'), '0');
     await type(field(front, 'Set, sideways'), '0');
     await eventually(() => verdict(page)).toContain('Within');
@@ -136,7 +149,8 @@ test('damage and sag are entered, corrected, undone and taken off in the form of
     await eventually(() => verdict(page)).toContain('Within');
     await enter(page.getByRole('button', { name: 'Redo', exact: true }));
     await eventually(() => verdict(page)).toContain('Over');
-    await enter(front.getByRole('button', { name: 'Replaced: take the reading off' }));
+    await enter(front.getByRole('button', { name: 'Replaced: take the reading off…' }));
+    await putRight(page, 'Both beams replaced: take their readings off the level');
     await eventually(() => verdict(page)).toContain('Within');
     // What cannot be is refused where it was typed.
     await type(field(front, 'Sag, loaded'), '-1');
