@@ -37,16 +37,20 @@ const SAME = 1;
 /** Whether two stretches lie over one another; those that touch do not. */
 export const overlaps = (a: Standing, b: Standing): boolean => a.at < b.at + b.width - TOUCH && b.at < a.at + a.width - TOUCH;
 
+// Tenths of a millimetre, in which an inch is whole; rounded so that a gap is never taken short.
+const NOISE = 1e-6;
+const tenthUp = (mm: number): number => Math.ceil(mm * 10 - NOISE) / 10;
+const tenthDown = (mm: number): number => Math.floor(mm * 10 + NOISE) / 10;
+
 /** The places where the unit load keeps its gaps, from left to right. */
 export function catchingPlaces({ entry, gaps, width, others }: Opening): readonly Place[] {
-  // Whole millimetres: rounded so that a gap of 3 in is never taken short.
   const wanted: Place[] = [
-    { at: Math.ceil(gaps.upright), by: 'left upright' },
-    { at: Math.floor(entry - gaps.upright - width), by: 'right upright' },
-    { at: Math.round((entry - width) / 2), by: 'middle of the beam' },
+    { at: tenthUp(gaps.upright), by: 'left upright' },
+    { at: tenthDown(entry - gaps.upright - width), by: 'right upright' },
+    { at: tenthDown((entry - width) / 2), by: 'middle of the beam' },
     ...others.flatMap((other): Place[] => [
-      { at: Math.floor(other.at - gaps.loads - width), by: 'neighbour' },
-      { at: Math.ceil(other.at + other.width + gaps.loads), by: 'neighbour' },
+      { at: tenthDown(other.at - gaps.loads - width), by: 'neighbour' },
+      { at: tenthUp(other.at + other.width + gaps.loads), by: 'neighbour' },
     ]),
   ];
   const keepsGaps = (at: number) =>

@@ -39,9 +39,15 @@ test('touching unit loads do not overlap', () => {
   expect(overlaps({ at: 0, width: 800 }, { at: 790, width: 800 })).toBe(true);
 });
 
-test('a gap of 3 in is kept in whole millimetres and never taken short', () => {
-  const inches = { ...empty, gaps: { upright: 76.2, loads: 76.2 }, others: [{ at: 77, width: 800 }] };
+test('a gap of 3 in is kept as it is and never taken short', () => {
+  const inches = { ...empty, gaps: { upright: 76.2, loads: 76.25 }, others: [{ at: 77, width: 800 }] };
   const places = catchingPlaces(inches).map((place) => place.at);
-  // 77 + 800 + 76.2 = 953.2 up to 954; 2 700 − 76.2 − 800 = 1 823.8 down to 1 823.
-  expect(places).toEqual([954, 1823]);
+  // 77 + 800 + 76.25 = 953.25 up to 953.3; 2 700 − 76.2 − 800 = 1 823.8.
+  expect(places).toEqual([953.3, 1823.8]);
+});
+
+test('two loads of 42 in with gaps of 4 in fill an entry of 96 in', () => {
+  // 2 × 42 + 3 × 4 = 96 in, 1066.8, 101.6 and 2438.4 mm.
+  const tight = { entry: 2438.4, gaps: { upright: 101.6, loads: 101.6 }, width: 1066.8, others: [{ at: 101.6, width: 1066.8 }] };
+  expect(catchingPlaces(tight).map((place) => place.at)).toEqual([1270]);
 });
