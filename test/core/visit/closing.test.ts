@@ -7,6 +7,7 @@ import type { Site } from '../../../src-core/site/site';
 import { actionsOf, stillOpen, type OpenAction } from '../../../src-core/visit/actions';
 import { finishInto, lostDamages, withLost } from '../../../src-core/visit/carry';
 import { answer, markLock, recordDamage, recordSag, resumeBay } from '../../../src-core/visit/edits';
+import { doneList } from '../../../src-core/visit/done';
 import { closeAction, newFollowUp, type FollowUp } from '../../../src-core/visit/follow-up';
 import { afterClosing } from '../../../src-core/visit/repair';
 import { startVisit, type Visit } from '../../../src-core/visit/visit';
@@ -135,4 +136,25 @@ test('what was carried and undone is told as lost until it is put back; what was
   // Nothing is lost with the bay or frame itself.
   expect(lostDamages({ ...before, runs: [] }, visit, NONE)).toEqual([]);
   expect(lostDamages(before, resumeBay(visit, BAY), NONE)).toEqual([]);
+});
+
+test('what was done is told with who and how, though the damage has left the site', () => {
+  const { site, visit } = finish(
+    siteOf(),
+    recordSag(recordDamage(recordDamage(visitOn('2026-06-02'), BAY, damaged), BAY, dent), BAY, { ...deep, unloadedMm: 4 }),
+  );
+  let now = { site, book: NONE };
+  for (let i = 0; i < 3; i++) now = done(now.site, [visit], now.book);
+  expect(open(now.site, [visit], now.book)).toEqual([]);
+  const actions = actionsOf({ site: now.site, audit: auditSite(now.site, TODAY), visits: [visit], followUp: now.book, today: TODAY });
+  const list = (visits: readonly Visit[]) => doneList(now.site, visits, now.book, actions).map(({ what }) => plain(what));
+  expect(list([visit]).toSorted()).toEqual([
+    'Damage: front upright of frame A-F2.',
+    'Damage: the front beam of level 1 of bay A2.',
+    // The visit still says of the sag what was found.
+    expect.stringContaining('Unloaded, the front beam of level 1 of bay A2 stays bent down by 4 mm'),
+  ]);
+  const later = doneList(now.site, [], now.book, []).map(({ what }) => plain(what));
+  expect(later.toSorted()).toEqual(['Damage of a beam.', 'Damage of a frame.', 'Sag: the front beam of level 1 of bay A2.']);
+  expect(doneList(now.site, [visit], now.book, actions)[0]?.closing).toMatchObject({ person: 'F. Fitter', how: 'Part replaced' });
 });
