@@ -272,7 +272,7 @@ export const COMMANDS: readonly Command[] = [
     always,
     ({ open }) => open.switchUnits(),
   ),
-  command('preferences', 'View', 'Preferences: colours, text size, numbers…', ['Mod+,'], always, ({ shell }) =>
+  command('preferences', 'View', 'Preferences: colours, text, numbers…', ['Mod+,'], always, ({ shell }) =>
     shell.ask({ kind: 'preferences' }),
   ),
   command('commands', 'View', 'All commands', ['Mod+K'], always, ({ shell }) => shell.ask({ kind: 'commands' })),
