@@ -134,7 +134,7 @@ test('as JSON: the same verdicts, utilisations at full precision, all cautions',
   expect(files[0]).toMatchObject({ read: true, site: 'Test depot', ruleSet: 'european', verdict: 'close' });
   const one = files[0].bays[0].levels[0];
   expect(one).toMatchObject({ level: 1, totalKg: 2400, ratedKg: 2500, verdict: 'close', fullComplement: true });
-  // scenario S1 of the domain scenarios
+  // scenario S1 of test/reference/scenarios.md
   expect(one.utilisation.total).toBeCloseTo(0.96, 12);
   expect(one.utilisation.bending).toBeCloseTo(2488.8889 / 2500, 7);
   expect(one.utilisation.endShear).toBeCloseTo(0.96, 12);

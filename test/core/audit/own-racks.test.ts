@@ -1,4 +1,4 @@
-/** Whole racks through the audit, in the style of the domain scenarios: each one's arithmetic stands beside it. */
+/** Whole racks through the audit, in the style of test/reference/scenarios.md: each one's arithmetic stands beside it. */
 import { expect, test } from 'vitest';
 import type { Rules, Run, Site, UnitLoad } from '../../../src-core/site/site';
 import { STANDARD_GRAVITY } from '../../../src-core/units/quantity';

@@ -1,5 +1,5 @@
 /**
- * Whole racks through the audit: scenarios S5, S7 and S10 of the domain scenarios (invented; every figure
+ * Whole racks through the audit: scenarios S5, S7 and S10 of test/reference/scenarios.md (invented; every figure
  * checked there by a script), and S1 on runners.
  */
 import { expect, test } from 'vitest';

@@ -1,5 +1,5 @@
 /**
- * Scenarios S1, S2, S6, S7 and S10 of the domain scenarios (invented racks; every figure is statics,
+ * Scenarios S1, S2, S6, S7 and S10 of test/reference/scenarios.md (invented racks; every figure is statics,
  * checked there by a script): the parts that concern the beams of a level, to every printed digit.
  */
 import { expect, test } from 'vitest';

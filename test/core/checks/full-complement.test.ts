@@ -8,7 +8,7 @@ import { expectWorked } from '../worked';
 const load = (name: string, left: number, massKg = 800, width = 800): ComplementGoods => ({ name, massKg, from: 'weighed', left, width });
 const THREE = [load('a', 75), load('b', 950), load('c', 1825)];
 const rated: LevelRating = { kg: 2500, by: 'the notice', from: 'load notice LN-1', notes: [], missing: [] };
-// Scenario S1 of the domain scenarios: 2 488.9, 2 400 and 2 483.8 kg.
+// Scenario S1 of test/reference/scenarios.md: 2 488.9, 2 400 and 2 483.8 kg.
 const even = { total: 2400, bending: 2488.9, endShear: 2400, deflection: 2483.8 };
 
 const judge = (change: Partial<FullComplementInput>, changed: RuleChoice['changed'] = []) =>

@@ -32,7 +32,7 @@ const check = (goods: LevelTotalInput['goods'], rating: LevelRating) =>
   });
 
 test('2 400 kg of 2 500 kg is 0.96, close', () => {
-  // scenario S1 of the domain scenarios
+  // scenario S1 of test/reference/scenarios.md
   const found = check([load('a', 800), load('b', 800), load('c', 800)], rated(2500));
   expect(found.verdict).toBe('close');
   expect(found.utilisation).toBeCloseTo(0.96, 12);

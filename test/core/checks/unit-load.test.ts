@@ -15,7 +15,7 @@ const load = (placementId: string, massKg: number | null): Weighed => ({
 });
 
 test('three pallets of 800 kg against 833 kg give one finding, for the heaviest', () => {
-  // scenario S1 of the domain scenarios: each 800 ≤ 833
+  // scenario S1 of test/reference/scenarios.md: each 800 ≤ 833
   const found = unitLoad({ place, goods: [load('a', 800), load('b', 790), load('c', 800)], limit, closeAbove: 0.9 });
   expect(found).toHaveLength(1);
   expect(found[0]?.verdict).toBe('close');

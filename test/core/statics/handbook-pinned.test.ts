@@ -1,5 +1,5 @@
 /**
- * The simply supported beams of the handbook of closed forms, each row coded here as it is printed.
+ * The simply supported beams of test/reference/handbook.md, each row coded here as it is printed.
  * Published homes as remembered: AISC Steel Construction Manual Table 3-23, Roark's Formulas for Stress
  * and Strain Table 8.1, fixed-end-moment tables (Hibbeler), slope-deflection with Monforton and Wu's fixity
  * factor (1963); each result verified with SymPy by exact integration of EI·δ'''' = w.

@@ -1,5 +1,5 @@
 /**
- * Bay scenario S10 of the domain scenarios, "the safety officer's bay": no notice, three pallets of
+ * Bay scenario S10 of test/reference/scenarios.md, "the safety officer's bay": no notice, three pallets of
  * 620 kg declared, beams measured as boxes 120 × 50 × 1.5, sag 17 mm loaded and 4 mm unloaded, the left
  * frame's front upright bent 8 mm along and 4 mm across, one diagonal 12 mm, one lock missing.
  */
