@@ -8,8 +8,11 @@ export interface Found {
   readonly selection: { readonly bayId: Id; readonly levelId?: Id | null; readonly placementIds?: readonly Id[] };
 }
 
+/** No longer list is read to its end. */
+export const MOST_FOUND = 60;
+
 /** What matches every word sought, bays first, at most this many. */
-export function findIn(site: Site, sought: string, most = 60): readonly Found[] {
+export function findIn(site: Site, sought: string, most = MOST_FOUND): readonly Found[] {
   const words = sought.toLowerCase().split(/\s+/).filter(Boolean);
   if (words.length === 0) return [];
   const matches = (text: string) => words.every((word) => text.toLowerCase().includes(word));
@@ -19,7 +22,7 @@ export function findIn(site: Site, sought: string, most = 60): readonly Found[] 
   for (const run of site.runs) {
     for (const bay of run.bays) {
       if (matches(`${run.name} ${bay.name}`)) {
-        bays.push({ key: bay.id, name: `Bay ${bay.name}`, where: run.name, selection: { bayId: bay.id } });
+        bays.push({ key: bay.id, name: `Bay ${bay.name}`, where: `run ${run.name}`, selection: { bayId: bay.id } });
       }
       for (const [number, level] of [null, ...bay.levels].entries()) {
         const place = number === 0 ? 'floor' : `level ${number}`;
@@ -30,7 +33,7 @@ export function findIn(site: Site, sought: string, most = 60): readonly Found[] 
           goods.push({
             key: placement.id,
             name,
-            where: `${run.name}, bay ${bay.name}, ${place}`,
+            where: `run ${run.name}, bay ${bay.name}, ${place}`,
             selection: { bayId: bay.id, levelId: level?.id ?? null, placementIds: [placement.id] },
           });
         }

@@ -31,7 +31,7 @@ test('runs are lettered, and the first free letter is taken', () => {
 test('bays are found by name with their run, goods by name with their place; all words must match', () => {
   const site = smallSite();
   expect(findIn(site, 'A2').map((one) => one.name)).toEqual(['Bay A2']);
-  expect(findIn(site, 'crate').map((one) => one.where)).toEqual(['A, bay A1, level 1', 'A, bay A1, level 1']);
+  expect(findIn(site, 'crate').map((one) => one.where)).toEqual(['run A, bay A1, level 1', 'run A, bay A1, level 1']);
   expect(findIn(site, 'crate a1')).toHaveLength(2);
   expect(findIn(site, 'crate a2')).toEqual([]);
   expect(findIn(site, '  ')).toEqual([]);
