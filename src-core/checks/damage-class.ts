@@ -122,7 +122,7 @@ function notMeasured({ id, member, alongMm, acrossMm }: FoundDamage): readonly M
 
 const judgement = ({ id }: FoundDamage): Missing => ({
   input: 'a competent person’s judgement of the base plate',
-  how: 'No limit in millimetres is published for base plates: have a competent person judge it, repair it, and then remove the entry.',
+  how: 'No limit in millimetres is published for base plates: have a competent person judge it, have it repaired, and then take the damage off.',
   field: `damage:${id}:member`,
 });
 
