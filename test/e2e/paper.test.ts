@@ -14,6 +14,7 @@ import { BesideStore } from '../../src-main/beside-store';
 import { foldersIn } from '../../src-main/file-names';
 import { nodeFs } from '../../src-main/fs-port';
 import { SiteStore } from '../../src-main/site-store';
+import { VERSION } from '../../src-main/version';
 import { PAPER_TITLES } from '../../src-renderer/paper/titles';
 import { siteOf } from '../core/visit/make-run';
 import { greyPng } from './grey-png';
@@ -149,7 +150,7 @@ describe.each([1, 200])('%i bays', (bays) => {
         for (const needed of [
           `Page${i + 1}of${pages.length}`,
           `Testdepot·sitechecksum${checksum}`,
-          'Tallybeam0.1.0',
+          `Tallybeam${VERSION}`,
           'Ruleset:European',
           'Beamspan:clearentrybetweenuprights',
           'Ratings:',
