@@ -3,20 +3,20 @@ import { mkdirSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { app, BrowserWindow, dialog, ipcMain, Menu, protocol, session } from 'electron';
 import Store from 'electron-store';
-import { answerPageRequest, APP_SCHEME, PAGE_ADDRESS } from './app-protocol';
+import { answerPageRequest, APP_SCHEME, PAGE_ADDRESS } from './window/app-protocol';
 import { readDemo } from './demo';
-import { askForSitesFolder } from './folder-dialog';
-import { carryHost, type Carrier } from './ipc';
-import { holdForJournal } from './leaving';
+import { askForSitesFolder } from './window/folder-dialog';
+import { carryHost, type Carrier } from './window/ipc';
+import { holdForJournal } from './window/leaving';
 import { Machine, type PageHost } from './local-host';
-import { lockContents, lockSession } from './lock-down';
-import { menuTemplate } from './menu';
+import { lockContents, lockSession } from './window/lock-down';
+import { menuTemplate } from './window/menu';
 import { readPageFiles } from './page-files';
-import { savePdf } from './pdf';
+import { savePdf } from './window/pdf';
 import { Settings } from './settings';
 import { userFolder } from './user-folder';
 import { VERSION } from './version';
-import { makeWindow, showAgain } from './window';
+import { makeWindow, showAgain } from './window/window';
 
 /** The folder of the build; this program is in `main` below it. */
 const BUILT = resolve(import.meta.dirname, '..');

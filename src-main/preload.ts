@@ -2,7 +2,7 @@
 import { contextBridge, ipcRenderer } from 'electron';
 import type { Host } from '../src-core/host';
 import { hostOver, type HostAnswer } from '../src-core/host-wire';
-import { channelOf } from './channels';
+import { channelOf } from './window/channels';
 
 const UNHEARD: HostAnswer = {
   ok: false,

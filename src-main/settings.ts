@@ -8,7 +8,7 @@ import { existsSync, mkdirSync, readFileSync, renameSync } from 'node:fs';
 import { join } from 'node:path';
 import { MACHINE_LOCALE, type Preferences } from '../src-core/host';
 import { argumentFault, isPreference } from '../src-core/host-wire';
-import { stampOf } from './file-names';
+import { stampOf } from './store/file-names';
 import { HostError, troubleOf } from './trouble';
 
 export interface SettingsFile {

@@ -5,7 +5,7 @@
 import { spawn } from 'node:child_process';
 import { once } from 'node:events';
 import { fileURLToPath } from 'node:url';
-import { findElectron, windowHindrance } from './electron-program';
+import { findElectron, windowHindrance } from './window/electron-program';
 import { serveUntilStopped } from './serve-command';
 
 /** Longest wait for Electron's program file, ms. */

@@ -1,6 +1,6 @@
 /** What goes wrong at the machine, told in words: what was not done, why, and how to mend it. */
 import type { HostErrorCode, HostFailure } from '../src-core/host';
-import { systemCode } from './fs-port';
+import { systemCode } from './store/fs-port';
 
 export class HostError extends Error implements HostFailure {
   override readonly name = 'HostError';

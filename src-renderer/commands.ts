@@ -4,12 +4,12 @@
  */
 import { formatQuantity } from '../src-core/units/format';
 import { lengthOf, type UnitSystem } from '../src-core/units/quantity';
-import { changeBay, changeLevel, nudge } from './goods-moves';
-import { copyGoods, cutGoods, deleteGoods, duplicateGoods, mirrorGoods, pasteGoods, spaceEvenly } from './goods-edits';
+import { changeBay, changeLevel, nudge } from './editing/goods-moves';
+import { copyGoods, cutGoods, deleteGoods, duplicateGoods, mirrorGoods, pasteGoods, spaceEvenly } from './editing/goods-edits';
 import { pressed, type KeyPress } from './keys';
-import { copyLevelHere, pasteLevelHere } from './level-clipboard';
-import type { OpenSite } from './open-site.svelte';
-import { allBays, framePlace } from './places';
+import { copyLevelHere, pasteLevelHere } from './editing/level-clipboard';
+import type { OpenSite } from './state/open-site.svelte';
+import { allBays, framePlace } from './editing/places';
 import {
   addBayAfter,
   addLevelOnTop,
@@ -23,8 +23,8 @@ import {
   shiftLevelHere,
   shiftRun,
   swapLevelHere,
-} from './rack-edits';
-import type { Screen, Shell } from './shell.svelte';
+} from './editing/rack-edits';
+import type { Screen, Shell } from './state/shell.svelte';
 
 export interface Surroundings {
   readonly shell: Shell;

@@ -1,8 +1,8 @@
 import { mount } from 'svelte';
 import App from './App.svelte';
 import { connect } from './host';
-import { Shell } from './shell.svelte';
-import { startWorker } from './start-worker';
+import { Shell } from './state/shell.svelte';
+import { startWorker } from './auditing/start-worker';
 import './tokens.css';
 import './base.css';
 import './forms/forms.css';

@@ -3,9 +3,9 @@
  * drawing and verdict show it; letting go keeps it, Escape or a lost pointer takes it back.
  */
 import type { Id } from '../../src-core/site/site';
-import type { OpenSite, Target } from '../open-site.svelte';
-import { placementPlace, type PlacementPlace } from '../places';
-import type { Move } from '../put-down';
+import type { OpenSite, Target } from '../state/open-site.svelte';
+import { placementPlace, type PlacementPlace } from '../editing/places';
+import type { Move } from '../editing/put-down';
 import type { BayDrawn } from './bay-model';
 import { dropAt, type Carrying, type Drop } from './drop';
 

@@ -4,11 +4,11 @@ import { addEntry } from '../../src-core/site/edits';
 import type { Library } from '../../src-core/site/lookup';
 import type { BayTemplate, BeamType, Floor, FrameType, Id, LoadNotice, Pallet, Site, UnitLoad } from '../../src-core/site/site';
 import type { UnitSystem } from '../../src-core/units/quantity';
-import { firstBay } from '../first-sizes';
-import { newId } from '../ids';
-import type { OpenSite } from '../open-site.svelte';
-import type { Refusal, Refused } from '../refusal';
-import type { Shell } from '../shell.svelte';
+import { firstBay } from '../editing/first-sizes';
+import { newId } from '../editing/ids';
+import type { OpenSite } from '../state/open-site.svelte';
+import type { Refusal, Refused } from '../state/refusal';
+import type { Shell } from '../state/shell.svelte';
 import { NEEDED_SIZES } from './needed-sizes';
 import { NO_SOURCE } from './options';
 

@@ -13,7 +13,7 @@ import { visitReport } from '../../src-core/paper/visit-report';
 import type { Id, Site } from '../../src-core/site/site';
 import { actionsOf } from '../../src-core/visit/actions';
 import type { Visit } from '../../src-core/visit/visit';
-import { checksumOf, type Rounds } from '../rounds.svelte';
+import { checksumOf, type Rounds } from '../state/rounds.svelte';
 
 export interface PaperWish {
   readonly kind: PaperKind;

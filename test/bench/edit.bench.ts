@@ -7,7 +7,7 @@ import { auditBay, auditFrame } from '../../src-core/audit/audit';
 import { createAuditCache } from '../../src-core/audit/cache';
 import { movePlacement } from '../../src-core/site/edits';
 import type { Site } from '../../src-core/site/site';
-import { AuditLink } from '../../src-renderer/audit-link';
+import { AuditLink } from '../../src-renderer/auditing/audit-link';
 import { CloningWorker } from '../renderer/cloning-worker';
 import { depotOf, placementsOf, type Depot } from './large-site';
 

@@ -8,7 +8,7 @@ import { join, resolve } from 'node:path';
 import { _electron as electron } from 'playwright-core';
 import { expect, test } from 'vitest';
 import { HOST_METHODS } from '../../src-core/host-wire';
-import { findElectron, windowHindrance } from '../../src-main/electron-program';
+import { findElectron, windowHindrance } from '../../src-main/window/electron-program';
 
 const top = resolve(import.meta.dirname, '../..');
 const hindrance = windowHindrance(process.platform, process.env, process.getuid?.() === 0);

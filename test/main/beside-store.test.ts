@@ -5,11 +5,11 @@ import type { AppendRecord } from '../../src-core/host';
 import { closeAction, newFollowUp, writeFollowUp } from '../../src-core/visit/follow-up';
 import { note } from '../../src-core/visit/edits';
 import { writeVisit } from '../../src-core/visit/read-visit';
-import { BesideStore, PHOTO_BYTES } from '../../src-main/beside-store';
-import { foldersIn } from '../../src-main/file-names';
-import { nodeFs } from '../../src-main/fs-port';
-import { RecordStore } from '../../src-main/record-store';
-import { sweep } from '../../src-main/sweep';
+import { BesideStore, PHOTO_BYTES } from '../../src-main/store/beside-store';
+import { foldersIn } from '../../src-main/store/file-names';
+import { nodeFs } from '../../src-main/store/fs-port';
+import { RecordStore } from '../../src-main/store/record-store';
+import { sweep } from '../../src-main/store/sweep';
 import { round } from '../core/visit/make-visit';
 import { clock, newFolder } from '../storage/folder';
 

@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import { existsSync, mkdirSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { expect, test } from 'vitest';
-import { nodeFs, type FsPort } from '../../src-main/fs-port';
+import { nodeFs, type FsPort } from '../../src-main/store/fs-port';
 import { Settings } from '../../src-main/settings';
 import { bodyOf, numberIn } from '../storage/make';
 import { hostContract } from './host-contract';

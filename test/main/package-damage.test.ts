@@ -4,8 +4,8 @@ import { unzipSync, zipSync, type Zippable } from 'fflate';
 import { describe, expect, test } from 'vitest';
 import type { HostFailure } from '../../src-core/host';
 import { readListing, writeListing } from '../../src-core/package/listing';
-import { sha256 } from '../../src-main/checked-site';
-import { readPackage, writePackage } from '../../src-main/package-file';
+import { sha256 } from '../../src-main/store/checked-site';
+import { readPackage, writePackage } from '../../src-main/store/package-file';
 import { drawn } from '../storage/make';
 import { failure, flipped, machineWith, packageOf, PHOTO, send } from './make-package';
 

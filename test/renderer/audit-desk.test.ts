@@ -5,8 +5,8 @@ import { createAuditCache } from '../../src-core/audit/cache';
 import type { RunAudit } from '../../src-core/audit/types';
 import { editBay, editEntry, movePlacement, removeBay } from '../../src-core/site/edits';
 import type { Id, Site } from '../../src-core/site/site';
-import { AuditLink } from '../../src-renderer/audit-link';
-import { lightRun } from '../../src-renderer/light-audit';
+import { AuditLink } from '../../src-renderer/auditing/audit-link';
+import { lightRun } from '../../src-renderer/auditing/light-audit';
 import { depotOf } from '../bench/large-site';
 import { CloningWorker } from './cloning-worker';
 

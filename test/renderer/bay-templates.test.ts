@@ -4,11 +4,11 @@ import { editEntry, editFrame, editLevel } from '../../src-core/site/edits';
 import { planOfBay } from '../../src-core/site/new-site';
 import type { Bay, BayTemplate, Run } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
-import { firstTemplate, goodsWords, keepTemplate, planFacts, templateNameFor } from '../../src-renderer/bay-templates';
+import { firstTemplate, goodsWords, keepTemplate, planFacts, templateNameFor } from '../../src-renderer/editing/bay-templates';
 import { addLibraryItem } from '../../src-renderer/forms/library-items';
-import type { OpenSite } from '../../src-renderer/open-site.svelte';
-import { addBayAfter, addBays, copyBay, layOutRun, shiftBay, shiftRun } from '../../src-renderer/rack-edits';
-import { usedBy } from '../../src-renderer/used-by';
+import type { OpenSite } from '../../src-renderer/state/open-site.svelte';
+import { addBayAfter, addBays, copyBay, layOutRun, shiftBay, shiftRun } from '../../src-renderer/editing/rack-edits';
+import { usedBy } from '../../src-renderer/editing/used-by';
 import { openedSite } from './opened';
 
 function runOf(open: OpenSite, index = 0): Run {

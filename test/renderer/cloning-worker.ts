@@ -1,7 +1,7 @@
 /** The audit worker's work without a thread: messages are cloned both ways as if there were one, and kept to be counted. */
-import { AuditDesk } from '../../src-renderer/audit-desk';
-import type { WorkerLike } from '../../src-renderer/audit-link';
-import type { FromWorker, ToWorker } from '../../src-renderer/audit-protocol';
+import { AuditDesk } from '../../src-renderer/auditing/audit-desk';
+import type { WorkerLike } from '../../src-renderer/auditing/audit-link';
+import type { FromWorker, ToWorker } from '../../src-renderer/auditing/audit-protocol';
 
 export class CloningWorker implements WorkerLike {
   onmessage: WorkerLike['onmessage'] = null;

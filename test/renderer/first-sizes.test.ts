@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { firstBay } from '../../src-renderer/first-sizes';
+import { firstBay } from '../../src-renderer/editing/first-sizes';
 import { entryText } from '../../src-core/units/format';
 
 /** The sizes of the proposed bay as its fields show them. */

@@ -1,8 +1,8 @@
 import { expect, test } from 'vitest';
 import { moveLevel } from '../../src-core/site/edits';
 import { freshItem } from '../../src-renderer/forms/library-items';
-import type { OpenSite } from '../../src-renderer/open-site.svelte';
-import { shiftLevelHere } from '../../src-renderer/rack-edits';
+import type { OpenSite } from '../../src-renderer/state/open-site.svelte';
+import { shiftLevelHere } from '../../src-renderer/editing/rack-edits';
 import { openedSite } from './opened';
 
 /** Levels at 1500, 3000 and 4500 mm; the level of this number is chosen. */

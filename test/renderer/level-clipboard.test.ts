@@ -3,10 +3,10 @@ import { expect, test } from 'vitest';
 import { editLevel, removeEntry, removePlacements } from '../../src-core/site/edits';
 import type { Bay } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
-import { copyGoods } from '../../src-renderer/goods-edits';
-import { copyLevelHere, pasteLevelHere, pasteLevelInto } from '../../src-renderer/level-clipboard';
-import type { OpenSite } from '../../src-renderer/open-site.svelte';
-import { duplicateLevelHere, fillLike, swapLevelHere } from '../../src-renderer/rack-edits';
+import { copyGoods } from '../../src-renderer/editing/goods-edits';
+import { copyLevelHere, pasteLevelHere, pasteLevelInto } from '../../src-renderer/editing/level-clipboard';
+import type { OpenSite } from '../../src-renderer/state/open-site.svelte';
+import { duplicateLevelHere, fillLike, swapLevelHere } from '../../src-renderer/editing/rack-edits';
 import { openedSite } from './opened';
 import { smallSite } from './sites';
 

@@ -1,10 +1,10 @@
 import { expect, test } from 'vitest';
 import { editBay, editEntry, movePlacement, removeBay, removePlacement } from '../../src-core/site/edits';
 import { findIn } from '../../src-renderer/find';
-import { frameNameBetween, nextName, nextRunName } from '../../src-renderer/names';
+import { frameNameBetween, nextName, nextRunName } from '../../src-renderer/editing/names';
 import { countOf, sayBytes, sayTime } from '../../src-renderer/say';
-import { differences } from '../../src-renderer/site-differences';
-import { usedBy } from '../../src-renderer/used-by';
+import { differences } from '../../src-renderer/state/site-differences';
+import { usedBy } from '../../src-renderer/editing/used-by';
 import { smallSite } from './sites';
 
 test.each([

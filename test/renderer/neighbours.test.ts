@@ -1,9 +1,9 @@
 /** What is chosen and has the focus after something was taken out, in the small site: three bays, crates p1 and p2 on the lowest level of the first. */
 import { expect, test } from 'vitest';
 import { removeBay } from '../../src-core/site/edits';
-import { deleteGoods } from '../../src-renderer/goods-edits';
-import type { OpenSite } from '../../src-renderer/open-site.svelte';
-import { copyRun, removeBayHere, removeLevelHere, removeRunFrom } from '../../src-renderer/rack-edits';
+import { deleteGoods } from '../../src-renderer/editing/goods-edits';
+import type { OpenSite } from '../../src-renderer/state/open-site.svelte';
+import { copyRun, removeBayHere, removeLevelHere, removeRunFrom } from '../../src-renderer/editing/rack-edits';
 import { openedSite } from './opened';
 
 const bays = (open: OpenSite) => open.site.runs[0]?.bays ?? [];

@@ -3,9 +3,9 @@ import { afterEach } from 'vitest';
 import { writeSiteFile } from '../../src-core/site/envelope';
 import type { Site } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
-import type { WorkerLike } from '../../src-renderer/audit-link';
-import { OpenSite } from '../../src-renderer/open-site.svelte';
-import { Shell } from '../../src-renderer/shell.svelte';
+import type { WorkerLike } from '../../src-renderer/auditing/audit-link';
+import { OpenSite } from '../../src-renderer/state/open-site.svelte';
+import { Shell } from '../../src-renderer/state/shell.svelte';
 import { MemoryHost } from './memory-host';
 import { smallSite } from './sites';
 

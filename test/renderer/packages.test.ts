@@ -2,9 +2,9 @@ import { beforeEach, describe, expect, test, vi } from 'vitest';
 import type { PackageLook } from '../../src-core/host';
 import { writeSiteFile } from '../../src-core/site/envelope';
 import { writeSite } from '../../src-core/site/write';
-import * as offering from '../../src-renderer/offer-file';
-import { sayContents, sayMissing } from '../../src-renderer/packages.svelte';
-import { Shell } from '../../src-renderer/shell.svelte';
+import * as offering from '../../src-renderer/state/offer-file';
+import { sayContents, sayMissing } from '../../src-renderer/state/packages.svelte';
+import { Shell } from '../../src-renderer/state/shell.svelte';
 import { MemoryHost } from './memory-host';
 import { smallSite } from './sites';
 

@@ -1,10 +1,10 @@
 import { expect, test } from 'vitest';
 import { addEntry, placeGoods } from '../../src-core/site/edits';
 import { COMMANDS } from '../../src-renderer/commands';
-import { copyGoods, duplicateGoods, pasteGoods, putGoods } from '../../src-renderer/goods-edits';
+import { copyGoods, duplicateGoods, pasteGoods, putGoods } from '../../src-renderer/editing/goods-edits';
 import { freshItem } from '../../src-renderer/forms/library-items';
-import { changeBay, changeLevel, nudge } from '../../src-renderer/goods-moves';
-import type { OpenSite } from '../../src-renderer/open-site.svelte';
+import { changeBay, changeLevel, nudge } from '../../src-renderer/editing/goods-moves';
+import type { OpenSite } from '../../src-renderer/state/open-site.svelte';
 import { shellOn } from './opened';
 
 /** Two crates 800 mm wide stand at 75 and 950 mm on the lowest level of an entry of 2700 mm; trucks are not known, so gaps are 75 mm. */

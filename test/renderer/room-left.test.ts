@@ -1,6 +1,6 @@
 import { afterEach, expect, test, vi } from 'vitest';
 import { formatText } from '../../src-core/units/format';
-import { inSlices, roomSaid, type RoomQuestion } from '../../src-renderer/room-left';
+import { inSlices, roomSaid, type RoomQuestion } from '../../src-renderer/editing/room-left';
 import { completeSite, TODAY } from '../core/audit/complete-site';
 import type { Site } from '../../src-core/site/site';
 

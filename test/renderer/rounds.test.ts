@@ -4,8 +4,8 @@ import { finishBay, markLock, note, sign } from '../../src-core/visit/edits';
 import { closeAction, setResponsible } from '../../src-core/visit/follow-up';
 import { readVisit } from '../../src-core/visit/read-visit';
 import { startVisit, type Visit } from '../../src-core/visit/visit';
-import { OpenSite } from '../../src-renderer/open-site.svelte';
-import { Rounds } from '../../src-renderer/rounds.svelte';
+import { OpenSite } from '../../src-renderer/state/open-site.svelte';
+import { Rounds } from '../../src-renderer/state/rounds.svelte';
 import { siteOf } from '../core/visit/make-run';
 import { MemoryHost } from './memory-host';
 

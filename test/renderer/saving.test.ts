@@ -1,6 +1,6 @@
 import { afterEach, beforeEach, expect, test, vi } from 'vitest';
 import type { Site } from '../../src-core/site/site';
-import { Saving } from '../../src-renderer/saving.svelte';
+import { Saving } from '../../src-renderer/state/saving.svelte';
 import { MemoryHost } from './memory-host';
 import { smallSite } from './sites';
 

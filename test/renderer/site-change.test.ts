@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import type { Bay, Run, Site } from '../../src-core/site/site';
-import { applyChange, changeOf, runsTouched } from '../../src-renderer/site-change';
+import { applyChange, changeOf, runsTouched } from '../../src-renderer/state/site-change';
 import { smallSite } from './sites';
 
 const firstRun = (site: Site): Run => {

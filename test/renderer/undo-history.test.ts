@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
-import { amend, record, redo, startHistory, undo, type UndoHistory } from '../../src-renderer/undo-history';
+import { amend, record, redo, startHistory, undo, type UndoHistory } from '../../src-renderer/state/undo-history';
 
 /** Values are objects, because the program tells states apart by identity. */
 const value = (n: number) => ({ n });

@@ -4,12 +4,12 @@ import { afterEach, beforeEach, expect, test, vi } from 'vitest';
 import { editBay, editEntry } from '../../src-core/site/edits';
 import type { BayPlan } from '../../src-core/site/new-site';
 import { writeSite } from '../../src-core/site/write';
-import { keepTemplate } from '../../src-renderer/bay-templates';
-import { deleteGoods, duplicateGoods, mirrorGoods, putGoods, spaceEvenly } from '../../src-renderer/goods-edits';
-import { changeBay, changeLevel, nudge } from '../../src-renderer/goods-moves';
-import { copyLevelHere, pasteLevelHere, pasteLevelInto } from '../../src-renderer/level-clipboard';
-import { firstBay } from '../../src-renderer/first-sizes';
-import type { OpenSite } from '../../src-renderer/open-site.svelte';
+import { keepTemplate } from '../../src-renderer/editing/bay-templates';
+import { deleteGoods, duplicateGoods, mirrorGoods, putGoods, spaceEvenly } from '../../src-renderer/editing/goods-edits';
+import { changeBay, changeLevel, nudge } from '../../src-renderer/editing/goods-moves';
+import { copyLevelHere, pasteLevelHere, pasteLevelInto } from '../../src-renderer/editing/level-clipboard';
+import { firstBay } from '../../src-renderer/editing/first-sizes';
+import type { OpenSite } from '../../src-renderer/state/open-site.svelte';
 import {
   addBayAfter,
   addBays,
@@ -26,7 +26,7 @@ import {
   shiftLevelHere,
   shiftRun,
   swapLevelHere,
-} from '../../src-renderer/rack-edits';
+} from '../../src-renderer/editing/rack-edits';
 import { savedSite } from './opened';
 import { smallSite } from './sites';
 import { writingWorker } from './writing-worker';

@@ -1,8 +1,8 @@
 import type { Site } from '../../src-core/site/site';
 import { writeSite } from '../../src-core/site/write';
-import type { WorkerLike } from '../../src-renderer/audit-link';
-import type { FromWorker } from '../../src-renderer/audit-protocol';
-import { applyChange } from '../../src-renderer/site-change';
+import type { WorkerLike } from '../../src-renderer/auditing/audit-link';
+import type { FromWorker } from '../../src-renderer/auditing/audit-protocol';
+import { applyChange } from '../../src-renderer/state/site-change';
 
 /** A worker that keeps the site by the changes it is sent, cloned as on their way to a thread, and writes it; it audits nothing. */
 export function writingWorker(): WorkerLike {

@@ -5,10 +5,10 @@
  */
 import { createHash } from 'node:crypto';
 import { expect, test } from 'vitest';
-import type { FsPort } from '../../src-main/fs-port';
-import { foldersIn } from '../../src-main/file-names';
-import { Journal } from '../../src-main/journal';
-import { SiteStore } from '../../src-main/site-store';
+import type { FsPort } from '../../src-main/store/fs-port';
+import { foldersIn } from '../../src-main/store/file-names';
+import { Journal } from '../../src-main/store/journal';
+import { SiteStore } from '../../src-main/store/site-store';
 import { clock } from './folder';
 import { bodyOf, drawn, numberIn } from './make';
 import { afterPowerCut, MemoryDisk, unsynced, type Fate, type Operation } from './memory-fs';

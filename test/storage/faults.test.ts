@@ -1,8 +1,8 @@
 /** Every call of a save, a journal line and a removal made to fail, with every fault that disks answer. */
 import { describe, expect, test } from 'vitest';
-import { foldersIn } from '../../src-main/file-names';
-import { nodeFs, type FsPort } from '../../src-main/fs-port';
-import { Journal } from '../../src-main/journal';
+import { foldersIn } from '../../src-main/store/file-names';
+import { nodeFs, type FsPort } from '../../src-main/store/fs-port';
+import { Journal } from '../../src-main/store/journal';
 import { HostError } from '../../src-main/trouble';
 import { faultyFs } from './faulty-fs';
 import { clock, contentOf, newFolder, siteText, storeIn } from './folder';

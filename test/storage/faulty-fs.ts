@@ -1,5 +1,5 @@
 /** A file system in which one call fails, or every later call of the same kind. */
-import type { FsPort, OpenFile } from '../../src-main/fs-port';
+import type { FsPort, OpenFile } from '../../src-main/store/fs-port';
 
 export interface Fault {
   /** The call that fails, counted from 0. */

@@ -3,9 +3,9 @@ import { mkdtempSync, readFileSync, readdirSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach } from 'vitest';
-import type { FsPort } from '../../src-main/fs-port';
-import { nodeFs } from '../../src-main/fs-port';
-import { SiteStore } from '../../src-main/site-store';
+import type { FsPort } from '../../src-main/store/fs-port';
+import { nodeFs } from '../../src-main/store/fs-port';
+import { SiteStore } from '../../src-main/store/site-store';
 
 const made: string[] = [];
 afterEach(() => made.splice(0).forEach((folder) => rmSync(folder, { recursive: true, force: true })));

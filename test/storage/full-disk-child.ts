@@ -4,10 +4,10 @@
  */
 import { readFileSync, readdirSync } from 'node:fs';
 import { join } from 'node:path';
-import { foldersIn } from '../../src-main/file-names';
-import { nodeFs } from '../../src-main/fs-port';
-import { Journal } from '../../src-main/journal';
-import { SiteStore } from '../../src-main/site-store';
+import { foldersIn } from '../../src-main/store/file-names';
+import { nodeFs } from '../../src-main/store/fs-port';
+import { Journal } from '../../src-main/store/journal';
+import { SiteStore } from '../../src-main/store/site-store';
 import { bodyOf } from './make';
 
 const [folder = ''] = process.argv.slice(2);

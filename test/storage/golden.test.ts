@@ -4,7 +4,7 @@ import { join } from 'node:path';
 import { describe, expect, test } from 'vitest';
 import { SITE_FILE_VERSION } from '../../src-core/site/envelope';
 import { writeSite } from '../../src-core/site/write';
-import { checkBytes } from '../../src-main/checked-site';
+import { checkBytes } from '../../src-main/store/checked-site';
 import { goldenFindings, type GoldenFinding } from '../fixtures/golden';
 import { newFolder, storeIn } from './folder';
 

@@ -4,12 +4,12 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { readSite } from '../../src-core/site/read';
 import { writeSite } from '../../src-core/site/write';
-import { sha256 } from '../../src-main/checked-site';
-import { foldersIn, machineTag } from '../../src-main/file-names';
-import { nodeFs, type FsPort } from '../../src-main/fs-port';
-import { Journal } from '../../src-main/journal';
-import { changeLine, replay, wholeLine } from '../../src-main/journal-lines';
-import { withTimeLimit } from '../../src-main/time-limit';
+import { sha256 } from '../../src-main/store/checked-site';
+import { foldersIn, machineTag } from '../../src-main/store/file-names';
+import { nodeFs, type FsPort } from '../../src-main/store/fs-port';
+import { Journal } from '../../src-main/store/journal';
+import { changeLine, replay, wholeLine } from '../../src-main/store/journal-lines';
+import { withTimeLimit } from '../../src-main/store/time-limit';
 import { clock, contentOf, newFolder } from './folder';
 
 let session = 0;

@@ -5,7 +5,7 @@
 import { writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { writeSiteFile } from '../../src-core/site/envelope';
-import { sha256 } from '../../src-main/checked-site';
+import { sha256 } from '../../src-main/store/checked-site';
 import { Machine } from '../../src-main/local-host';
 import { Settings } from '../../src-main/settings';
 import { bodyOf, numbered, numberIn } from './make';

@@ -4,10 +4,10 @@ import { once } from 'node:events';
 import { mkdirSync, mkdtempSync, readdirSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { makerOfTemp } from '../../src-main/file-names';
-import { nodeFs } from '../../src-main/fs-port';
-import { JournalFiles, latestOf } from '../../src-main/journal-files';
-import { SiteStore } from '../../src-main/site-store';
+import { makerOfTemp } from '../../src-main/store/file-names';
+import { nodeFs } from '../../src-main/store/fs-port';
+import { JournalFiles, latestOf } from '../../src-main/store/journal-files';
+import { SiteStore } from '../../src-main/store/site-store';
 import { bundled } from './bundled';
 import { bodyOf, drawn, numberIn } from './make';
 

@@ -4,7 +4,7 @@
  * that were not synced may be kept in any selection.
  */
 import { dirname } from 'node:path';
-import type { FsPort, OpenFile } from '../../src-main/fs-port';
+import type { FsPort, OpenFile } from '../../src-main/store/fs-port';
 
 type File = number;
 interface Data {

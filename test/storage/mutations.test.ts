@@ -8,7 +8,7 @@ import { expect, test } from 'vitest';
 import { SITE_FILE_VERSION } from '../../src-core/site/envelope';
 import { isRecord } from '../../src-core/site/fields';
 import { writeSite } from '../../src-core/site/write';
-import { checkBytes, checkImport, sha256 } from '../../src-main/checked-site';
+import { checkBytes, checkImport, sha256 } from '../../src-main/store/checked-site';
 import { drawn } from './make';
 
 const original = readFileSync(join(import.meta.dirname, `../fixtures/site-v${SITE_FILE_VERSION}.tallybeam.json`));

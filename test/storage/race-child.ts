@@ -1,6 +1,6 @@
 /** One of two programs that save the same site at the same moment; started by races.test.ts. */
-import { nodeFs, type FsPort, type OpenFile } from '../../src-main/fs-port';
-import { SiteStore } from '../../src-main/site-store';
+import { nodeFs, type FsPort, type OpenFile } from '../../src-main/store/fs-port';
+import { SiteStore } from '../../src-main/store/site-store';
 import { bodyOf } from './make';
 
 export interface Round {

@@ -3,9 +3,9 @@ import { copyFileSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync,
 import { join } from 'node:path';
 import { describe, expect, test } from 'vitest';
 import { readSite } from '../../src-core/site/read';
-import { foldersIn, machineTag } from '../../src-main/file-names';
-import { nodeFs } from '../../src-main/fs-port';
-import { sweep } from '../../src-main/sweep';
+import { foldersIn, machineTag } from '../../src-main/store/file-names';
+import { nodeFs } from '../../src-main/store/fs-port';
+import { sweep } from '../../src-main/store/sweep';
 import { contentOf, newFolder, siteText, storeIn } from './folder';
 import { bodyOf, numbered, numberIn } from './make';
 

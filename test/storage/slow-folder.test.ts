@@ -1,6 +1,6 @@
 import { expect, test, vi } from 'vitest';
-import { nodeFs, type FsPort } from '../../src-main/fs-port';
-import { withTimeLimit } from '../../src-main/time-limit';
+import { nodeFs, type FsPort } from '../../src-main/store/fs-port';
+import { withTimeLimit } from '../../src-main/store/time-limit';
 import { contentOf, newFolder, siteText, storeIn } from './folder';
 import { bodyOf, numberIn } from './make';
 

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { answerPageRequest, APP_SCHEME, isOwnAddress, isOwnBlob, PAGE_ADDRESS } from '../../../src-main/app-protocol';
+import { answerPageRequest, APP_SCHEME, isOwnAddress, isOwnBlob, PAGE_ADDRESS } from '../../../src-main/window/app-protocol';
 import { CONTENT_SECURITY_POLICY } from '../../../src-main/csp';
 import type { PageFile } from '../../../src-main/page-files';
 

@@ -10,9 +10,9 @@ import ts from 'typescript';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { HOST_METHODS } from '../../../src-core/host-wire';
 import { CONTENT_SECURITY_POLICY } from '../../../src-main/csp';
-import { channelOf } from '../../../src-main/channels';
-import { programName } from '../../../src-main/electron-program';
-import { LOCKS } from '../../../src-main/window';
+import { channelOf } from '../../../src-main/window/channels';
+import { programName } from '../../../src-main/window/electron-program';
+import { LOCKS } from '../../../src-main/window/window';
 import { buildInto } from './built';
 
 const folder = mkdtempSync(join(tmpdir(), 'built-window-'));

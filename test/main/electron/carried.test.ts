@@ -1,7 +1,7 @@
 /** The contract of every host, over IPC: through the preload as the page calls it, to a machine on a real folder. */
 import type { WebContents as ElectronContents } from 'electron';
 import type { Host } from '../../../src-core/host';
-import { carryHost } from '../../../src-main/ipc';
+import { carryHost } from '../../../src-main/window/ipc';
 import '../../../src-main/preload';
 import { hostContract } from '../host-contract';
 import { startMachine, temporaryFolder } from '../machine';

@@ -3,9 +3,9 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import type { BrowserWindow as ElectronWindow } from 'electron';
 import { afterEach, beforeEach, expect, test } from 'vitest';
-import { askForSitesFolder } from '../../../src-main/folder-dialog';
-import { nodeFs, type FsPort } from '../../../src-main/fs-port';
-import { asFileName, savePdf } from '../../../src-main/pdf';
+import { askForSitesFolder } from '../../../src-main/window/folder-dialog';
+import { nodeFs, type FsPort } from '../../../src-main/store/fs-port';
+import { asFileName, savePdf } from '../../../src-main/window/pdf';
 import { BrowserWindow, standIn } from '../electron-stand-in';
 
 let folder = '';

@@ -3,8 +3,8 @@ import type { WebContents as ElectronContents } from 'electron';
 import { afterAll, beforeEach, describe, expect, test } from 'vitest';
 import type { Host } from '../../../src-core/host';
 import { HOST_METHODS, type HostAnswer, type HostMethod } from '../../../src-core/host-wire';
-import { channelOf } from '../../../src-main/channels';
-import { carryHost } from '../../../src-main/ipc';
+import { channelOf } from '../../../src-main/window/channels';
+import { carryHost } from '../../../src-main/window/ipc';
 import { HostError } from '../../../src-main/trouble';
 import { standIn, WebContents, type StandInFrame } from '../electron-stand-in';
 

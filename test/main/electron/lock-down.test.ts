@@ -3,7 +3,7 @@ import { createRequire } from 'node:module';
 import { dirname, join, resolve } from 'node:path';
 import type { Session, WebContents as ElectronContents } from 'electron';
 import { expect, test } from 'vitest';
-import { lockContents, lockSession } from '../../../src-main/lock-down';
+import { lockContents, lockSession } from '../../../src-main/window/lock-down';
 import { Session as StandInSession, StandInEvent, WebContents } from '../electron-stand-in';
 
 const top = resolve(import.meta.dirname, '../../..');

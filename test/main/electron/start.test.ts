@@ -2,7 +2,7 @@ import { existsSync, mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync
 import { tmpdir } from 'node:os';
 import { dirname, join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
-import { findElectron, programName, windowHindrance } from '../../../src-main/electron-program';
+import { findElectron, programName, windowHindrance } from '../../../src-main/window/electron-program';
 
 let folder = '';
 beforeEach(() => {

@@ -4,11 +4,11 @@ import { join } from 'node:path';
 import Conf from 'conf';
 import type { BrowserWindow as ElectronWindow } from 'electron';
 import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
-import { holdForJournal } from '../../../src-main/leaving';
-import { menuTemplate } from '../../../src-main/menu';
+import { holdForJournal } from '../../../src-main/window/leaving';
+import { menuTemplate } from '../../../src-main/window/menu';
 import { Settings } from '../../../src-main/settings';
-import { LOCKS, makeWindow, showAgain } from '../../../src-main/window';
-import { placeOnScreen } from '../../../src-main/window-place';
+import { LOCKS, makeWindow, showAgain } from '../../../src-main/window/window';
+import { placeOnScreen } from '../../../src-main/window/window-place';
 import { BrowserWindow, standIn, StandInEvent } from '../electron-stand-in';
 
 let folder = '';
