@@ -7,9 +7,9 @@ import { lockContents, lockSession } from '../../../src-main/window/lock-down';
 import { Session as StandInSession, StandInEvent, WebContents } from '../electron-stand-in';
 
 const top = resolve(import.meta.dirname, '../../..');
-const sources = readdirSync(join(top, 'src-main'))
+const sources = readdirSync(join(top, 'src-main'), { recursive: true, encoding: 'utf8' })
   .filter((name) => name.endsWith('.ts'))
-  .map((name) => ({ name, text: readFileSync(join(top, 'src-main', name), 'utf8') }));
+  .map((name) => ({ name: name.replaceAll('\\', '/'), text: readFileSync(join(top, 'src-main', name), 'utf8') }));
 
 function locked() {
   const session = new StandInSession();
@@ -120,8 +120,8 @@ test('only what the page made itself can be saved from it', () => {
 
 test('one file makes windows, one listens to the page, and none opens anything outside', () => {
   const having = (pattern: RegExp) => sources.filter(({ text }) => pattern.test(text)).map(({ name }) => name);
-  expect(having(/new BrowserWindow\(|new WebContentsView\(|new BaseWindow\(/)).toEqual(['window.ts']);
-  expect(having(/ipcMain\s*\.\s*(handle|handleOnce|on|once)\b/)).toEqual(['ipc.ts']);
+  expect(having(/new BrowserWindow\(|new WebContentsView\(|new BaseWindow\(/)).toEqual(['window/window.ts']);
+  expect(having(/ipcMain\s*\.\s*(handle|handleOnce|on|once)\b/)).toEqual(['window/ipc.ts']);
   expect(having(/openExternal|openPath|\bshell\b/)).toEqual([]);
   expect(having(/contextBridge/)).toEqual(['preload.ts']);
   expect(having(/ipcRenderer/)).toEqual(['preload.ts']);
