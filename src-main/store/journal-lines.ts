@@ -89,8 +89,13 @@ export function replay(text: string): Replay | null {
 /** The body in the present form, so that unsaved edits outlive a newer program. */
 function raised(body: string, version: number): string {
   if (version >= SITE_VERSION) return body;
-  const reading = readSite(raiseSite(JSON.parse(body), version));
-  return reading.ok ? writeSite(reading.site) : body;
+  try {
+    const reading = readSite(raiseSite(JSON.parse(body), version));
+    return reading.ok ? writeSite(reading.site) : body;
+  } catch {
+    // No site at all: whoever is offered it says so, and the other journals are still read.
+    return body;
+  }
 }
 
 /** Only lines that this program wrote have the right checksum, so their content is as it writes it. */

@@ -1,26 +1,13 @@
 /** Where things are in a site, as the page asks for it: null where the id is not there (any more). */
 import type { PlaceTarget } from '../../src-core/site/edits';
+import type { BayPlace, LevelPlace, PlacementPlace as CorePlacementPlace } from '../../src-core/site/lookup';
 import type { Bay, Frame, Id, Level, Placement, Run, Site, UnitLoad } from '../../src-core/site/site';
 
 export type Target = PlaceTarget;
 
-export interface BayPlace {
-  readonly run: Run;
-  readonly bay: Bay;
-  /** The bay's number in its run, from 0 at the left. */
-  readonly index: number;
-}
+export type { BayPlace, LevelPlace };
 
-export interface LevelPlace extends BayPlace {
-  readonly level: Level;
-  /** From 0 at the lowest. */
-  readonly levelIndex: number;
-}
-
-export interface PlacementPlace extends BayPlace {
-  /** Null where the goods stand on the floor of the bay. */
-  readonly level: Level | null;
-  readonly placement: Placement;
+export interface PlacementPlace extends CorePlacementPlace {
   readonly unitLoad: UnitLoad;
 }
 

@@ -79,6 +79,13 @@ describe('lines', () => {
     expect(found).toMatchObject({ edits: ['Move pallet', 'Change notes'], damagedLines: 0 });
   });
 
+  test('what a first journal holds that is no site is given back as it is', () => {
+    for (const whole of ['rubbish', '{"runs":3}']) {
+      const json = JSON.stringify({ ...said, whole, edits: [] });
+      expect(replay(`${sha256(json).slice(0, 16)} ${json}\n`)?.body).toBe(whole);
+    }
+  });
+
   test('nothing usable is nothing', () => {
     for (const text of ['', '\n\n', 'rubbish', '0123456789abcdef {"whole":"x"}', changeLine(said, 'a', 'b')])
       expect(replay(text)).toBeNull();
