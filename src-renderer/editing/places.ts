@@ -1,7 +1,7 @@
 /** Where things are in a site, as the page asks for it: null where the id is not there (any more). */
 import type { PlaceTarget } from '../../src-core/site/edits';
 import type { BayPlace, LevelPlace, PlacementPlace as CorePlacementPlace } from '../../src-core/site/lookup';
-import type { Bay, Frame, Id, Level, Placement, Run, Site, UnitLoad } from '../../src-core/site/site';
+import type { Bay, Frame, Id, Level, Run, Site, UnitLoad } from '../../src-core/site/site';
 
 export type Target = PlaceTarget;
 
